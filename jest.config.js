@@ -9,6 +9,7 @@ const angular = {
   transform: {
     '^.+\\.(ts|js|mjs|html|svg)$': ['jest-preset-angular', { tsconfig: '<rootDir>/tsconfig.spec.json', stringifyContentPathRegex: '\\.(html|svg)$' }],
   },
+  moduleNameMapper: { '^@contract/(.*)$': '<rootDir>/openapi/types/$1', '^@widget/(.*)$': '<rootDir>/widget/src/$1' },
   transformIgnorePatterns: ['node_modules/(?!.*\\.mjs$|d3-|internmap|@angular)'],
 };
 

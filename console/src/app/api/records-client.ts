@@ -1,0 +1,54 @@
+import { HttpClient } from '@angular/common/http';
+import { Injectable, inject } from '@angular/core';
+import { Observable } from 'rxjs';
+import type { RecordRevision, RecordRows, RecordSet, RecordSetDetail, RecordSetList } from './contract';
+import { Page, queryOf } from './page';
+import { Upload, upload } from './upload';
+
+export interface RecordSetNew {
+  readonly name: string;
+  readonly description: string;
+  readonly file: File;
+}
+
+@Injectable({ providedIn: 'root' })
+export class RecordsClient {
+  private readonly http = inject(HttpClient);
+
+  list(page: Page = {}): Observable<RecordSetList> {
+    return this.http.get<RecordSetList>('/api/record-sets', { params: queryOf(page) });
+  }
+
+  read(id: string): Observable<RecordSetDetail> {
+    return this.http.get<RecordSetDetail>(`/api/record-sets/${id}`);
+  }
+
+  readRevision(id: string): Observable<RecordRevision> {
+    return this.http.get<RecordRevision>(`/api/record-revisions/${id}`);
+  }
+
+  readRows(revisionId: string, page: Page): Observable<RecordRows> {
+    return this.http.get<RecordRows>(`/api/record-revisions/${revisionId}/rows`, { params: queryOf(page) });
+  }
+
+  /** Unsubscribe to cancel. The service reads the fields before the file, so they go first. */
+  bringIn(recordSet: RecordSetNew): Observable<Upload<RecordSet>> {
+    const form = new FormData();
+    form.append('name', recordSet.name);
+    if (recordSet.description !== '') form.append('description', recordSet.description);
+    form.append('file', recordSet.file);
+    return upload<RecordSet>(this.http, '/api/record-sets', form);
+  }
+
+  /** Unsubscribe to cancel. */
+  bringInRevision(recordSetId: string, file: File): Observable<Upload<RecordRevision>> {
+    const form = new FormData();
+    form.append('file', file);
+    return upload<RecordRevision>(this.http, `/api/record-sets/${recordSetId}/revisions`, form);
+  }
+
+  /** Where the browser can fetch the uploaded file, byte for byte. */
+  originalUrl(revisionId: string): string {
+    return `/api/record-revisions/${revisionId}/original`;
+  }
+}

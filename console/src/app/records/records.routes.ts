@@ -1,0 +1,3 @@
+import { Routes } from '@angular/router';
+
+export const recordsRoutes: Routes = [];
