@@ -4,9 +4,9 @@ import type { InputKind, InputTransform, MissingRule, TargetTransform, UnseenLev
  * A finished fit as frozen data: plain JSON, no NaN or infinity anywhere, everything that is needed to evaluate a case
  * and to describe the inputs. The model is additive on one scale (the target's own, or its logarithm):
  *
- *   additive value = typical + Σ over inputs of effect(input's reading)
+ *   additive value = typical + Σ over inputs of contribution,   contribution = Σ over its columns of weight · (x − centre) / scale
  *
- * Each effect is centred on the records (its weighted mean over them is 0), so it is the input's contribution.
+ * Every column is centred on the records, so contributions have weighted mean 0 over them and the typical case gets 0.
  */
 export interface Formula {
   readonly format: 'tarebeam-formula/1';
@@ -64,55 +64,32 @@ export interface FormulaInput {
   readonly mass: number;
   /** A float lifts: a plain numeric input whose weight is negative. */
   readonly hangs: 'load' | 'float';
-  readonly effect: InputEffect;
   readonly coding: InputCoding;
+  /** Standardised weight of each column of `coding`; contribution = Σ weight · column. */
+  readonly weights: readonly number[];
 }
 
-/** What a reading adds on the additive scale. `ifMissing` applies when the reading is missing. */
-export type InputEffect =
-  | {
-      readonly form: 'linear';
-      readonly transform: 'none' | 'log' | 'square-root';
-      readonly centre: number;
-      readonly slope: number;
-      /** (transformed − centre) · slope + offset */
-      readonly offset: number;
-      readonly ifMissing: number;
-    }
-  | {
-      readonly form: 'spline';
-      readonly knots: readonly number[];
-      readonly centres: readonly number[];
-      /** Σ (basis − centre) · slope + offset */
-      readonly slopes: readonly number[];
-      readonly offset: number;
-      readonly ifMissing: number;
-    }
-  | {
-      readonly form: 'levels';
-      /** In the order of the input's `levels`. */
-      readonly byLevel: readonly number[];
-      /** A level the records never held. */
-      readonly other: number;
-      readonly ifMissing: number;
-    };
-
-/** How a reading becomes standardised columns (x − centre) / scale; used for leverage. A scale of 0 marks a column left out. */
+/**
+ * How a reading becomes standardised columns (x − centre) / scale; a scale of 0 marks a column that is left out (always 0).
+ * linear: the transformed reading. spline: the columns of the natural cubic spline on `knots`. levels: a 0/1 column for each
+ * level, all 0 for a level the records never held. With `missingIndicator` a last 0/1 column marks a missing reading.
+ */
 export interface InputCoding {
   readonly form: 'linear' | 'spline' | 'levels';
+  readonly transform: 'none' | 'log' | 'square-root';
   readonly knots: readonly number[];
-  /** Value put in for a missing reading, on the transformed scale; null for levels. */
-  readonly fill: number | null;
   readonly centres: readonly number[];
   readonly scales: readonly number[];
-  /** Whether the last column is the indicator of a missing reading. */
   readonly missingIndicator: boolean;
 }
 
 /** One model fitted without one fold, with the held-out residuals of that fold. */
 export interface FoldModel {
   readonly typicalAdditive: number;
-  readonly effects: readonly InputEffect[];
+  /** Weights of the columns of all inputs, in order. */
+  readonly weights: readonly number[];
+  /** For each input its own coding where it differs from the formula's (the knots of a spline), else null; null when none does. */
+  readonly codings: readonly (InputCoding | null)[] | null;
   /**
    * Absolute held-out residuals on the additive scale, ascending, with the number of records that each stands for.
    * Long lists are thinned upward: every record is stood for by a residual at least as large, so intervals only widen.

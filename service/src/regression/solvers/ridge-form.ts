@@ -1,0 +1,46 @@
+/**
+ * A ridge problem reduced so that any λ is cheap. In coordinates scaled by √p:
+ *   (A + λI) x = c,  residual(λ) = ‖y‖²/n after the free columns − c·x − λ x·x  (per record).
+ */
+export interface RidgeForm {
+  /** Columns without a penalty. */
+  readonly freeCount: number;
+  /** Of A, ascending, not negative. */
+  readonly eigenvalues: Float64Array;
+  /** Mean squared target that the held columns have to explain. */
+  readonly targetSquare: number;
+  /** Standardised weights of all kept columns, one array a λ. */
+  weights(lambdas: readonly number[]): Float64Array[];
+  /** Mean squared residual and squared length of x at λ. */
+  parts(lambda: number): RidgeParts;
+}
+
+export interface RidgeParts {
+  readonly residualSquare: number;
+  readonly penaltySquare: number;
+}
+
+/** Directions weaker than this share of the strongest count as null. */
+export const NULL_SHARE = 1e-10;
+
+/** Trace of the hat matrix without the intercept: free columns + Σ d/(d + λ). */
+export function degreesOfFreedom(form: RidgeForm, lambda: number): number {
+  const floor = nullFloor(form);
+  let total = form.freeCount;
+  for (const eigenvalue of form.eigenvalues) if (eigenvalue > floor) total += eigenvalue / (eigenvalue + lambda);
+  return total;
+}
+
+export function nullFloor(form: RidgeForm): number {
+  const { eigenvalues } = form;
+  return eigenvalues.length === 0 ? 0 : NULL_SHARE * eigenvalues[eigenvalues.length - 1];
+}
+
+/** Largest ÷ smallest singular value of the held columns; null when a direction is missing. */
+export function conditionOf(form: RidgeForm): number | null {
+  const { eigenvalues } = form;
+  if (eigenvalues.length === 0) return 1;
+  const smallest = eigenvalues[0];
+  const largest = eigenvalues[eigenvalues.length - 1];
+  return smallest > Number.EPSILON * eigenvalues.length * largest ? Math.sqrt(largest / smallest) : null;
+}
