@@ -1,0 +1,23 @@
+import { isSameUnit } from './unit-words';
+
+describe('isSameUnit', () => {
+  it.each([
+    ['m', 'm'],
+    ['Metres', 'm'],
+    ['hrs.', 'hours'],
+    ['m²', 'm2'],
+    ['knots', 'knots'],
+  ])('takes %s for %s', (typed, unit) => {
+    expect(isSameUnit(typed, unit)).toBe(true);
+  });
+
+  it.each([
+    ['ft', 'm'],
+    ['mm', 'm'],
+    ['kg', 't'],
+    ['min', 'h'],
+    ['', 'm'],
+  ])('does not take %s for %s', (typed, unit) => {
+    expect(isSameUnit(typed, unit)).toBe(false);
+  });
+});
