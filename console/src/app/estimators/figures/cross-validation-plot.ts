@@ -1,5 +1,5 @@
 import { area, line } from 'd3-shape';
-import type { FitResult, PathPoint } from '../desk-types';
+import type { FitResult, PathPoint } from '../../api/contract';
 import { acrossScale, extentOf, ticksOf, upScale, type PlotFrame, type Tick } from './plot-frame';
 
 export type PenaltyAxis = 'log-lambda' | 'degrees-of-freedom';

@@ -1,5 +1,5 @@
 import { line } from 'd3-shape';
-import type { FitResult, Weight } from '../desk-types';
+import type { FitResult, Weight } from '../../api/contract';
 import { acrossScale, extentOf, ticksOf, upScale, type PlotFrame, type Tick } from './plot-frame';
 
 export interface PathLine {

@@ -1,5 +1,5 @@
 /** Invented answers of the service for specs: the refit labour estimator of the Marl Bay Yard Federation. */
-import type { Edition, EditionSummary, Estimator, Evaluation, Fit, FitResult, FitSummary, RecordRevision, Specification } from '../desk-types';
+import type { Edition, EditionSummary, Estimator, Evaluation, Fit, FitResult, FitSummary, RecordRevision, Specification } from '../../api/contract';
 
 export const ines = { id: 'person00ines', name: 'Ines Caldwell' };
 export const tomas = { id: 'person0tomas', name: 'Tomas Lindqvist' };

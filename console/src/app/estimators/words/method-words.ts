@@ -1,4 +1,5 @@
-import type { Method, PenaltyRule, ValidationScheme } from '../desk-types';
+import type { Method } from '../../api/contract';
+import type { PenaltyRule, ValidationScheme } from '../desk-types';
 
 /** One line each, for the person who chooses. */
 export interface Choice<Value extends string> {

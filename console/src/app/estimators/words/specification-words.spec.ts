@@ -1,6 +1,6 @@
 import { rulesFor } from './method-words';
 import { inputRemarks, specificationWords } from './specification-words';
-import type { Specification } from '../desk-types';
+import type { Specification } from '../../api/contract';
 
 const specification: Specification = {
   target: { column: 'hours', transform: 'log' },

@@ -1,4 +1,4 @@
-import type { Specification, SpecificationInput } from '../desk-types';
+import type { Specification, SpecificationInput } from '../../api/contract';
 import { methodName } from './method-words';
 import { exact, percent, withUnit } from './precision';
 
