@@ -1,0 +1,68 @@
+import { join } from 'node:path';
+import type { Knex } from 'knex';
+import type { Logger } from 'pino';
+import { systemClock, type Clock } from './clock';
+import type { Config } from './config';
+import { openDatabase } from './database/connection';
+import { Database } from './database/database';
+import { loadContract, type Contract } from './http/contract';
+import { Journal } from './journal/journal';
+import { PeopleStore } from './people/people-store';
+import { SignInService } from './people/sign-in-service';
+import { SignInThrottle } from './people/sign-in-throttle';
+import { Settings } from './settings/settings';
+
+export interface ComposeOptions {
+  readonly config: Config;
+  readonly log: Logger;
+  readonly clock?: Clock;
+  /** In tests: an answer that does not fit the contract is an error. */
+  readonly validateAnswers?: boolean;
+  /** How often ended sessions are swept out; 0 never. */
+  readonly sessionCleanupMs?: number;
+}
+
+export interface Services {
+  readonly config: Config;
+  readonly log: Logger;
+  readonly clock: Clock;
+  readonly knex: Knex;
+  readonly database: Database;
+  readonly deskContract: Contract;
+  readonly partnerContract: Contract;
+  readonly validateAnswers: boolean;
+  readonly sessionCleanupMs: number;
+  readonly journal: Journal;
+  readonly settings: Settings;
+  readonly people: PeopleStore;
+  readonly signIns: SignInService;
+  close(): Promise<void>;
+}
+
+export const databasePathOf = (config: Config): string => join(config.dataFolder, 'tarebeam.sqlite');
+
+/** Builds every service once: the only place that does. */
+export function compose(options: ComposeOptions): Services {
+  const { config, log, clock = systemClock, validateAnswers = false, sessionCleanupMs = 15 * 60 * 1000 } = options;
+  const knex = openDatabase(databasePathOf(config));
+  const database = new Database(knex);
+  const journal = new Journal(database, clock);
+  const people = new PeopleStore(database);
+  const throttle = new SignInThrottle(database, clock);
+  return {
+    config,
+    log,
+    clock,
+    knex,
+    database,
+    deskContract: loadContract('desk'),
+    partnerContract: loadContract('partner'),
+    validateAnswers,
+    sessionCleanupMs,
+    journal,
+    settings: new Settings(database),
+    people,
+    signIns: new SignInService(people, throttle, journal, clock),
+    close: () => database.close(),
+  };
+}
