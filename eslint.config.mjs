@@ -16,6 +16,7 @@ const service = {
   plugins: { boundaries },
   settings: {
     'boundaries/include': ['service/src/**/*.ts'],
+    'import/resolver': { node: { extensions: ['.ts', '.js', '.json'] } },
     'boundaries/elements': [
       { type: 'regression', pattern: 'service/src/regression/**/*', mode: 'full' },
       { type: 'store', pattern: 'service/src/*/*-store.ts', mode: 'full' },

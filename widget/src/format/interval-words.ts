@@ -25,7 +25,10 @@ const SHARES: Readonly<Record<string, string>> = {
 };
 
 /** "nine of ten such cases come to between 440 and 590 hours". Natural frequencies are read more safely than percentages. */
-export function intervalInWords({ level, low, high }: StatedInterval, { unit, precision, locale }: WordsOptions): string {
+export function intervalInWords(
+  { level, low, high }: StatedInterval,
+  { unit, precision, locale }: WordsOptions,
+): string {
   const figure = (end: number): string => formatStepped(end, precision.endStep, locale);
   const share = shareInWords(level);
   if (low !== null && high !== null) {

@@ -22,7 +22,13 @@ type DecimalSeparator = ',' | '.';
  * anything it cannot read, and which separator it accepts depends on the browser's language.
  */
 export function readNumber(text: string, { unit, locale }: ReadingOptions = {}): NumberReading {
-  const cleaned = withoutLeadingUnit(text.normalize('NFKC').replace(/\p{Cf}/gu, '').trim(), unit);
+  const cleaned = withoutLeadingUnit(
+    text
+      .normalize('NFKC')
+      .replace(/\p{Cf}/gu, '')
+      .trim(),
+    unit,
+  );
   if (cleaned === '') {
     return { ok: false, reason: 'empty' };
   }
@@ -33,7 +39,9 @@ export function readNumber(text: string, { unit, locale }: ReadingOptions = {}):
   const [, sign, body, rest] = parts;
   const reading = readBody(sign === '' || sign === '+' ? 1 : -1, body, locale);
   if (rest !== '' && !(unit && isSameUnit(rest, unit))) {
-    return /^[\d.,]/.test(rest) ? { ok: false, reason: 'not-a-number' } : { ok: false, reason: 'other-unit', typedUnit: rest };
+    return /^[\d.,]/.test(rest)
+      ? { ok: false, reason: 'not-a-number' }
+      : { ok: false, reason: 'other-unit', typedUnit: rest };
   }
   return reading;
 }

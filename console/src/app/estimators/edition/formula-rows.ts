@@ -1,5 +1,5 @@
 import type { Edition, Weight } from '../../api/contract';
-import { significant } from '../words/precision';
+import { formatFigure } from '../../ui/figure';
 
 /** One term of the formula, in original units. */
 export interface FormulaRow {
@@ -19,12 +19,12 @@ export function formulaRows(edition: Pick<Edition, 'weights'>): readonly Formula
 
 /** What the terms add up to: the value itself, or its logarithm. */
 export function formulaWords(edition: Edition): string {
-  const sum = `${significant(edition.intercept, 6)} plus the terms below`;
+  const sum = `${formatFigure(edition.intercept, { significant: 6 })} plus the terms below`;
   if (edition.scale === 'original') return `Estimate, in ${edition.unit || 'target units'} = ${sum}.`;
   const smearing = smearingOf(edition);
   return smearing === null
     ? `Natural logarithm of the estimate = ${sum}.`
-    : `Estimate = ${significant(smearing, 6)} × e to the power of (${sum}). The first factor, the smearing factor, turns a median into a mean.`;
+    : `Estimate = ${formatFigure(smearing, { significant: 6 })} × e to the power of (${sum}). The first factor, the smearing factor, turns a median into a mean.`;
 }
 
 /** The contract's edition may carry the smearing factor of a logged target; older answers do not. */

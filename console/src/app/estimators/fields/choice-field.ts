@@ -1,35 +1,46 @@
 import { Component, input, model } from '@angular/core';
 import type { Choice } from '../words/method-words';
-import { nextFieldId } from './field-id';
+
+let choiceFieldCount = 0;
 
 /** Radio buttons, each with its one-line explanation. */
 @Component({
   selector: 'tb-choice-field',
   template: `
-    <fieldset>
-      <legend class="label">{{ label() }}</legend>
+    <fieldset class="tb-choices">
+      <legend>{{ label() }}</legend>
       @for (choice of choices(); track choice.value) {
-        <label class="choice">
-          <input
-            type="radio"
-            [name]="id"
-            [value]="choice.value"
-            [checked]="choice.value === value()"
-            [attr.aria-describedby]="id + choice.value"
-            (change)="value.set(choice.value)"
-          />
-          <span class="name">{{ choice.name }}</span>
-        </label>
-        <p class="explanation" [id]="id + choice.value">{{ choice.explanation }}</p>
+        <div>
+          <label class="tb-choice">
+            <input
+              type="radio"
+              [name]="id"
+              [value]="choice.value"
+              [checked]="choice.value === value()"
+              [attr.aria-describedby]="id + choice.value"
+              (change)="value.set(choice.value)"
+            />
+            <span>{{ choice.name }}</span>
+          </label>
+          <p class="tb-small" [id]="id + choice.value">{{ choice.explanation }}</p>
+        </div>
       }
     </fieldset>
   `,
-  styleUrls: ['./field.scss', './choice-field.scss'],
+  styles: `
+    .tb-choice:has(:checked) span {
+      font-weight: 600;
+    }
+
+    p {
+      margin: 0 0 0 calc(1.125rem + var(--tb-space-2));
+    }
+  `,
 })
 export class ChoiceField<Value extends string> {
   readonly label = input.required<string>();
   readonly choices = input.required<readonly Choice<Value>[]>();
   readonly value = model.required<Value>();
 
-  protected readonly id = nextFieldId();
+  protected readonly id = `tb-choice-field-${++choiceFieldCount}`;
 }

@@ -38,12 +38,7 @@ describe('fields', () => {
     host.error.set('Enter a length.');
     await fixture.whenStable();
     expect(field('Length').getAttribute('aria-invalid')).toBe('true');
-    expect(saidBeside('Length')).toBe('Enter a length. Recorded 6 to 18 m.');
-  });
-
-  it('say the unit in the label, because a suffix is not read aloud', async () => {
-    await show();
-    expect(field('Length, in m').getAttribute('aria-invalid')).toBeNull();
+    expect(saidBeside('Length')).toBe('Recorded 6 to 18 m. Enter a length.');
   });
 
   it('give back what is typed, on one line or several', async () => {

@@ -1,15 +1,27 @@
-import { Component, ElementRef, computed, input, model, viewChild } from '@angular/core';
-import { nextFieldId } from './field-id';
+import { Component, input, model } from '@angular/core';
+import { Field, FieldInput } from '../../ui/field';
 
 export interface Option {
   readonly value: string;
   readonly name: string;
 }
 
+/** A labelled choice of one from a list, as a two-way value. */
 @Component({
   selector: 'tb-select-field',
-  templateUrl: './select-field.html',
-  styleUrl: './field.scss',
+  imports: [Field, FieldInput],
+  template: `
+    <tb-field [label]="label()" [hint]="hint()" [error]="error()">
+      <select tbInput #control [disabled]="disabled()" (change)="value.set(control.value)">
+        @if (empty(); as words) {
+          <option value="" [selected]="value() === ''">{{ words }}</option>
+        }
+        @for (option of options(); track option.value) {
+          <option [value]="option.value" [selected]="option.value === value()">{{ option.name }}</option>
+        }
+      </select>
+    </tb-field>
+  `,
 })
 export class SelectField {
   readonly label = input.required<string>();
@@ -17,19 +29,7 @@ export class SelectField {
   readonly value = model('');
   /** Words of the empty choice; without them there is none. */
   readonly empty = input<string>();
-  readonly hint = input('');
+  readonly hint = input<string>();
   readonly error = input<string>();
-  readonly optional = input(false);
   readonly disabled = input(false);
-
-  protected readonly id = nextFieldId();
-  protected readonly describedBy = computed(() => {
-    const parts = [this.error() ? `${this.id}-wrong` : '', this.hint() ? `${this.id}-hint` : ''].filter(Boolean);
-    return parts.length > 0 ? parts.join(' ') : null;
-  });
-  private readonly control = viewChild.required<ElementRef<HTMLSelectElement>>('control');
-
-  focus(): void {
-    this.control().nativeElement.focus();
-  }
 }

@@ -1,31 +1,39 @@
-import { Component, ElementRef, computed, input, model, viewChild } from '@angular/core';
-import { nextFieldId } from './field-id';
+import { Component, input, model } from '@angular/core';
+import { Field, FieldInput } from '../../ui/field';
 
+/** A labelled line or paragraph of text, as a two-way value. */
 @Component({
   selector: 'tb-text-field',
-  templateUrl: './text-field.html',
-  styleUrl: './field.scss',
+  imports: [Field, FieldInput],
+  template: `
+    <tb-field [label]="optional() ? label() + ' (optional)' : label()" [hint]="hint()" [error]="error()" [unit]="unit()">
+      @if (lines() > 1) {
+        <textarea tbInput #text [rows]="lines()" [value]="value()" (input)="value.set(text.value)"></textarea>
+      } @else {
+        <input
+          tbInput
+          #text
+          type="text"
+          autocomplete="off"
+          [attr.inputmode]="keypad()"
+          [attr.spellcheck]="keypad() === 'text' ? null : false"
+          [value]="value()"
+          (input)="value.set(text.value)"
+        />
+      }
+    </tb-field>
+  `,
 })
 export class TextField {
   readonly label = input.required<string>();
   readonly value = model('');
-  readonly hint = input('');
+  readonly hint = input<string>();
   readonly error = input<string>();
-  readonly unit = input('');
+  /** Say it in the hint as well: the end of a field is not read aloud. */
+  readonly unit = input<string>();
   readonly optional = input(false);
-  /** A decimal keypad; numbers that may be negative ask for none, because some keypads have no minus. */
+  /** Numbers that may be negative ask for no keypad, because some have no minus. */
   readonly keypad = input<'text' | 'decimal' | 'numeric'>('text');
   /** More than one line makes a text area. */
   readonly lines = input(1);
-
-  protected readonly id = nextFieldId();
-  protected readonly describedBy = computed(() => {
-    const parts = [this.error() ? `${this.id}-wrong` : '', this.hint() ? `${this.id}-hint` : ''].filter(Boolean);
-    return parts.length > 0 ? parts.join(' ') : null;
-  });
-  private readonly control = viewChild.required<ElementRef<HTMLInputElement | HTMLTextAreaElement>>('control');
-
-  focus(): void {
-    this.control().nativeElement.focus();
-  }
 }

@@ -19,7 +19,7 @@ describe('a specification in words', () => {
       'Method: ridge.',
       'Penalty: the strongest within one standard error of the least held-out error.',
       'Held out: 9 folds that keep each yard together, seed 7.',
-      'Intervals are to hold 90 % of cases.',
+      'Intervals are to hold 90% of cases.',
     ]);
   });
 
@@ -30,7 +30,7 @@ describe('a specification in words', () => {
 
   it('states a prior with the unit of the target', () => {
     const words = specificationWords({ ...specification, penalty: { rule: 'prior', value: 25 } }, 'h');
-    expect(words).toContain('Penalty: from the prior that a standardised weight has a standard deviation of 25\u00a0h.');
+    expect(words).toContain('Penalty: from the prior that a standardised weight has a standard deviation of 25 h.');
   });
 
   it('names the gap of a forward validation', () => {

@@ -1,6 +1,7 @@
 import type { Specification, SpecificationInput } from '../../api/contract';
 import { methodName } from './method-words';
-import { exact, percent, withUnit } from './precision';
+import { formatShare } from '../../ui/figure';
+import { exact } from './exact';
 
 /** The specification read back as sentences, in the order in which it was asked for. */
 export function specificationWords(specification: Specification, unit: string): readonly string[] {
@@ -10,7 +11,7 @@ export function specificationWords(specification: Specification, unit: string): 
     methodWords(specification),
     ...penaltyWords(specification, unit),
     validationWords(specification),
-    `Intervals are to hold ${percent(specification.intervalLevel ?? 0.9)} of cases.`,
+    `Intervals are to hold ${formatShare(specification.intervalLevel ?? 0.9)} of cases.`,
     ...(specification.weightColumn ? [`Records weigh as ${specification.weightColumn} says.`] : []),
     ...(specification.intercept === false ? ['The formula is forced through the origin.'] : []),
   ];
@@ -49,7 +50,7 @@ function penaltyWords(specification: Specification, unit: string): readonly stri
     case 'evidence':
       return ['Penalty: where the evidence (marginal likelihood) is greatest.'];
     case 'prior':
-      return [`Penalty: from the prior that a standardised weight has a standard deviation of ${withUnit(figure, unit)}.`];
+      return [`Penalty: from the prior that a standardised weight has a standard deviation of ${unit ? `${figure} ${unit}` : figure}.`];
     case 'fixed':
       return [`Penalty: λ fixed at ${figure}.`];
   }
