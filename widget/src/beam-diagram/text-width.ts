@@ -1,0 +1,41 @@
+/**
+ * Widths of characters in ems, on the wide side of common sans-serif faces: the page's own font is not known when the
+ * layout is made, and a layout that leaves a little too much room never overlaps.
+ */
+const NARROW = 0.36;
+const WIDE = 0.98;
+const CAPITAL = 0.74;
+const FIGURE = 0.64;
+const OTHER = 0.6;
+
+export function textWidth(text: string, fontSize: number): number {
+  return [...text].reduce((sum, character) => sum + widthOf(character), 0) * fontSize;
+}
+
+/** Cut to fit, with an ellipsis; at least one character stays. */
+export function shortenTo(text: string, width: number, fontSize: number): string {
+  if (textWidth(text, fontSize) <= width) {
+    return text;
+  }
+  const characters = [...text];
+  while (characters.length > 1 && textWidth(`${characters.join('')}…`, fontSize) > width) {
+    characters.pop();
+  }
+  return `${characters.join('').trimEnd()}…`;
+}
+
+function widthOf(character: string): number {
+  if (/[ijlftr.,:;'’|()[\]!\s-]/.test(character)) {
+    return NARROW;
+  }
+  if (/[mwMW…@%&]/.test(character)) {
+    return WIDE;
+  }
+  if (/[\d+−×–=]/.test(character)) {
+    return FIGURE;
+  }
+  if (/\p{Lu}/u.test(character)) {
+    return CAPITAL;
+  }
+  return /[\u1100-\uffdc]/u.test(character) ? WIDE * 1.1 : OTHER;
+}
