@@ -13,7 +13,7 @@ export const signInRedirect: HttpInterceptorFn = (request, next) => {
       const ended = error instanceof HttpErrorResponse && error.status === 401 && !ownsItsRefusal(request.url);
       if (ended) {
         session.forget();
-        void router.navigate(['/sign-in'], { queryParams: { return: router.url } });
+        void router.navigate(['/sign-in'], { queryParams: { return: router.url, ended: true } });
       }
       return throwError(() => error);
     }),

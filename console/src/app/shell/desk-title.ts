@@ -18,7 +18,6 @@ export class DeskTitle extends TitleStrategy {
   }
 
   override updateTitle(snapshot: RouterStateSnapshot): void {
-    this.pageTitle.clear();
     this.routeTitle.set(this.buildTitle(snapshot));
   }
 

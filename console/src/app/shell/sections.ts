@@ -14,7 +14,7 @@ export const SECTIONS = {
   estimators: { label: 'Estimators', path: 'estimators', roles: DESK_ROLES },
   partners: { label: 'Partners', path: 'partners', roles: DESK_ROLES },
   people: { label: 'People', path: 'people', roles: ['administrator'] },
-  journal: { label: 'Journal', path: 'journal', roles: DESK_ROLES },
+  journal: { label: 'Journal', path: 'journal', roles: ['administrator'] },
   settings: { label: 'Settings', path: 'settings', roles: ['administrator'] },
   partnerArea: { label: 'Partner area', path: 'partner-area', roles: ['partner-developer'] },
 } as const satisfies Record<string, Section>;

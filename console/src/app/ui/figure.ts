@@ -1,5 +1,8 @@
+import { formatStepped, withUnit } from '@widget/format/number-format';
+import { precisionFor } from '@widget/format/precision';
+
 export interface FigureOptions {
-  readonly unit?: string;
+  readonly unit?: string | null;
   /** How far off the figure may be (a standard error, half an interval): it decides how many digits are honest. */
   readonly uncertainty?: number | null;
   /** Digits that count, where no uncertainty is known. */
@@ -10,8 +13,7 @@ export interface FigureOptions {
 /** Stands where there is no figure. */
 export const NO_FIGURE = '–';
 
-const MINUS = '\u2212';
-const NARROW_SPACE = '\u202f';
+const LOCALE = 'en-GB';
 const DEFAULT_SIGNIFICANT = 4;
 
 /**
@@ -21,40 +23,25 @@ const DEFAULT_SIGNIFICANT = 4;
  */
 export function formatFigure(value: number | null | undefined, options: FigureOptions = {}): string {
   if (value === null || value === undefined || !Number.isFinite(value)) return NO_FIGURE;
-  const rounded = roundTo(value, decimalsOf(value, options));
-  const text = signOf(rounded, options) + numberText(Math.abs(rounded), Math.max(0, decimalsOf(value, options)));
-  return options.unit ? `${text}${NARROW_SPACE}${options.unit}` : text;
+  const figure = formatStepped(value, stepOf(value, options), LOCALE);
+  const plus = options.signed && value > 0 && /[1-9]/.test(figure) ? '+' : '';
+  return withUnit(plus + figure, options.unit);
 }
 
-function decimalsOf(value: number, { uncertainty, significant }: FigureOptions): number {
-  if (uncertainty && Number.isFinite(uncertainty)) return 1 - Math.floor(Math.log10(Math.abs(uncertainty)));
-  if (Number.isInteger(value)) return 0;
+function stepOf(value: number, { uncertainty, significant }: FigureOptions): number {
+  if (uncertainty && Number.isFinite(uncertainty)) return stepFor(value, Math.abs(uncertainty));
+  if (Number.isInteger(value)) return 1;
   const magnitude = Math.floor(Math.log10(Math.abs(value)));
-  return Math.max(0, (significant ?? DEFAULT_SIGNIFICANT) - 1 - magnitude);
+  return Math.min(1, Number(`1e${magnitude - (significant ?? DEFAULT_SIGNIFICANT) + 1}`));
 }
 
-/** Number#toFixed stops at 100 decimals; a double has no more than 17 digits that count. */
-const MOST_DECIMALS = 17;
-
-function roundTo(value: number, decimals: number): number {
-  if (decimals >= 0) return Number(value.toFixed(Math.min(decimals, MOST_DECIMALS)));
-  const step = 10 ** -decimals;
-  return Math.round(value / step) * step;
-}
-
-function numberText(value: number, decimals: number): string {
-  const digits = Math.min(decimals, MOST_DECIMALS);
-  return value.toLocaleString('en-GB', { minimumFractionDigits: digits, maximumFractionDigits: digits });
-}
-
-function signOf(value: number, { signed }: FigureOptions): string {
-  if (value < 0) return MINUS;
-  return signed && value > 0 ? '+' : '';
+function stepFor(value: number, uncertainty: number): number {
+  return precisionFor({ value, low: value - uncertainty, high: value + uncertainty }).step;
 }
 
 /** A count: whole, with thousands marked. */
 export function formatCount(count: number): string {
-  return count.toLocaleString('en-GB', { maximumFractionDigits: 0 });
+  return count.toLocaleString(LOCALE, { maximumFractionDigits: 0 });
 }
 
 /** `1 row`, `2,391 rows`. */
@@ -62,7 +49,7 @@ export function countOf(count: number, one: string, many = `${one}s`): string {
   return `${formatCount(count)} ${count === 1 ? one : many}`;
 }
 
-/** A share as a percentage: whole, but never rounded to 0 % or 100 % when it is neither. */
+/** A share as a percentage: whole, but never rounded to 0% or 100% when it is neither. */
 export function formatShare(share: number): string {
   if (share > 0 && share < 0.005) return 'under 1%';
   if (share < 1 && share > 0.995) return 'over 99%';
