@@ -129,3 +129,14 @@ export function usedInputs(draft: FitDraft): readonly InputDraft[] {
 export function isTaken(draft: FitDraft, column: string): boolean {
   return column === draft.target || column === draft.weightColumn;
 }
+
+/** The same change to several inputs. */
+export interface InputsChange {
+  readonly columns: readonly string[];
+  readonly change: Partial<InputDraft>;
+}
+
+export function withInputs(draft: FitDraft, { columns, change }: InputsChange): FitDraft {
+  const touched = new Set(columns);
+  return { ...draft, inputs: draft.inputs.map((input) => (touched.has(input.column) ? { ...input, ...change } : input)) };
+}

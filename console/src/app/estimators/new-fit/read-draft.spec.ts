@@ -1,6 +1,6 @@
 import { revision } from '../testing/refit-labour';
 import { draftOn, emptyDraft, usedInputs, type FitDraft } from './fit-draft';
-import { readDraft, ruleInEffect } from './read-draft';
+import { problemsByInput, readDraft, ruleInEffect } from './read-draft';
 
 const ready: FitDraft = { ...draftOn(revision, emptyDraft), target: 'hours' };
 
@@ -86,5 +86,17 @@ describe('a draft of a fit', () => {
     expect(next.target).toBe('hours');
     expect(next.inputs.map((input) => input.label)).toEqual(['The hours', 'The length', 'The displacement']);
     expect(next.groupColumn).toBe('');
+  });
+
+  it('keeps complaints about inputs under their columns', () => {
+    const problems = new Map([
+      ['specification/inputs/1/transform', 'Displacement has zeros.'],
+      ['specification/inputs/1', 'It cannot be on the log scale.'],
+      ['specification/target/column', 'No.'],
+    ]);
+    expect([...problemsByInput(problems, ready)]).toEqual([
+      ['input:displacement', 'Displacement has zeros. It cannot be on the log scale.'],
+      ['specification/target/column', 'No.'],
+    ]);
   });
 });

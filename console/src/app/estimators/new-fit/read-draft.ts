@@ -92,3 +92,20 @@ function validationOf(draft: FitDraft, number: NumberReader, problems: Map<strin
   if (draft.groupColumn === '') problems.set('specification/validation/column', 'Choose the column that names the groups.');
   return { scheme: 'grouped', folds, column: draft.groupColumn, seed };
 }
+
+/**
+ * Complaints about inputs come by position among those that were sent. Positions shift as soon as one is ticked, so they
+ * are kept under `input:` and the column's name.
+ */
+export function problemsByInput(problems: DraftProblems, draft: FitDraft): DraftProblems {
+  const sent = usedInputs(draft);
+  const named = new Map<string, string>();
+  for (const [path, words] of problems) {
+    const position = /^specification\/inputs\/(\d+)(\/|$)/.exec(path)?.[1];
+    const column = position === undefined ? undefined : sent[Number(position)]?.column;
+    const key = column === undefined ? path : `input:${column}`;
+    const before = named.get(key);
+    named.set(key, before === undefined ? words : `${before} ${words}`);
+  }
+  return named;
+}
