@@ -1,4 +1,4 @@
-import { isSameUnit } from './unit-words';
+import { isSameUnit, unitInWords } from './unit-words';
 
 describe('isSameUnit', () => {
   it.each([
@@ -19,5 +19,16 @@ describe('isSameUnit', () => {
     ['', 'm'],
   ])('does not take %s for %s', (typed, unit) => {
     expect(isSameUnit(typed, unit)).toBe(false);
+  });
+});
+
+describe('unitInWords', () => {
+  it.each([
+    ['m', 'metres'],
+    ['t', 'tonnes'],
+    ['m²', 'square metres'],
+    ['knots', 'knots'],
+  ])('reads %s as %s', (unit, words) => {
+    expect(unitInWords(unit)).toBe(words);
   });
 });

@@ -1,28 +1,39 @@
+interface UnitWords {
+  /** How the unit is read aloud. */
+  readonly name: string;
+  readonly written: readonly string[];
+}
+
 /** The ways people write a unit. All of one row mean the same; nothing is converted. */
-const SAME_UNIT: readonly (readonly string[])[] = [
-  ['m', 'metre', 'metres', 'meter', 'meters'],
-  ['mm', 'millimetre', 'millimetres', 'millimeter', 'millimeters'],
-  ['cm', 'centimetre', 'centimetres', 'centimeter', 'centimeters'],
-  ['km', 'kilometre', 'kilometres', 'kilometer', 'kilometers'],
-  ['m2', 'sq m', 'sqm', 'square metre', 'square metres'],
-  ['m3', 'cu m', 'cubic metre', 'cubic metres'],
-  ['t', 'tonne', 'tonnes'],
-  ['kg', 'kgs', 'kilo', 'kilos', 'kilogram', 'kilograms'],
-  ['g', 'gram', 'grams'],
-  ['l', 'litre', 'litres', 'liter', 'liters'],
-  ['h', 'hr', 'hrs', 'hour', 'hours'],
-  ['min', 'mins', 'minute', 'minutes'],
-  ['s', 'sec', 'secs', 'second', 'seconds'],
-  ['d', 'day', 'days'],
-  ['y', 'yr', 'yrs', 'year', 'years'],
-  ['kw', 'kilowatt', 'kilowatts'],
-  ['%', 'percent', 'per cent'],
+const UNITS: readonly UnitWords[] = [
+  { name: 'metres', written: ['m', 'metre', 'metres', 'meter', 'meters'] },
+  { name: 'millimetres', written: ['mm', 'millimetre', 'millimetres', 'millimeter', 'millimeters'] },
+  { name: 'centimetres', written: ['cm', 'centimetre', 'centimetres', 'centimeter', 'centimeters'] },
+  { name: 'kilometres', written: ['km', 'kilometre', 'kilometres', 'kilometer', 'kilometers'] },
+  { name: 'square metres', written: ['m2', 'sq m', 'sqm', 'square metre', 'square metres'] },
+  { name: 'cubic metres', written: ['m3', 'cu m', 'cubic metre', 'cubic metres'] },
+  { name: 'tonnes', written: ['t', 'tonne', 'tonnes'] },
+  { name: 'kilograms', written: ['kg', 'kgs', 'kilo', 'kilos', 'kilogram', 'kilograms'] },
+  { name: 'grams', written: ['g', 'gram', 'grams'] },
+  { name: 'litres', written: ['l', 'litre', 'litres', 'liter', 'liters'] },
+  { name: 'hours', written: ['h', 'hr', 'hrs', 'hour', 'hours'] },
+  { name: 'minutes', written: ['min', 'mins', 'minute', 'minutes'] },
+  { name: 'seconds', written: ['s', 'sec', 'secs', 'second', 'seconds'] },
+  { name: 'days', written: ['d', 'day', 'days'] },
+  { name: 'years', written: ['y', 'yr', 'yrs', 'year', 'years'] },
+  { name: 'kilowatts', written: ['kw', 'kilowatt', 'kilowatts'] },
+  { name: 'per cent', written: ['%', 'percent', 'per cent'] },
 ];
 
 export function isSameUnit(typed: string, unit: string): boolean {
   const left = plain(typed);
   const right = plain(unit);
-  return left === right || SAME_UNIT.some((words) => words.includes(left) && words.includes(right));
+  return left === right || UNITS.some(({ written }) => written.includes(left) && written.includes(right));
+}
+
+/** "metres" for "m"; a unit that is not known is read as it is written. */
+export function unitInWords(unit: string): string {
+  return UNITS.find(({ written }) => written.includes(plain(unit)))?.name ?? unit;
 }
 
 /** NFKC turns "m²" into "m2". */
