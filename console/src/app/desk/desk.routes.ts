@@ -1,3 +1,4 @@
 import { Routes } from '@angular/router';
+import { DeskPage } from './desk-page';
 
-export const deskRoutes: Routes = [];
+export const deskRoutes: Routes = [{ path: '', component: DeskPage }];

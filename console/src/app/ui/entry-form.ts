@@ -15,7 +15,7 @@ export class EntryForm<FieldName extends string> {
   private readonly element = inject<ElementRef<HTMLElement>>(ElementRef);
   private readonly destroyRef = inject(DestroyRef);
   private readonly injector = inject(Injector);
-  private readonly found = signal<Complaints<FieldName>>({});
+  private readonly found = signal<Complaints<FieldName> | undefined>(undefined);
   private readonly refusal = signal<Problem | undefined>(undefined);
   private readonly sending = signal(false);
 
@@ -25,7 +25,7 @@ export class EntryForm<FieldName extends string> {
 
   /** The complaint about a field, ours first. */
   errorOf(field: FieldName): string | undefined {
-    return this.found()[field] ?? errorOf(this.refusal(), field);
+    return this.found()?.[field] ?? errorOf(this.refusal(), field);
   }
 
   /** Shows the complaints; true when there are none. */
