@@ -12,6 +12,7 @@ import { requestId } from './http/request-id';
 import { requestLog } from './http/request-log';
 import { noStore, securityHeaders } from './http/security-headers';
 import { sessions } from './http/sessions';
+import { mountPeople } from './people/people-router';
 import { mountSession } from './people/session-router';
 import { sessionPassport } from './people/session-passport';
 
@@ -39,12 +40,25 @@ function deskApi(services: Services, secure: boolean): express.Router {
     guard: deskGuard(csrf),
     validateAnswers: services.validateAnswers,
   });
-  mountSession(routes, { passport, csrf, settings: services.settings, requireOwnSite: requireOwnSite(config.publicUrl) });
+  mountSession(routes, {
+    passport,
+    csrf,
+    settings: services.settings,
+    requireOwnSite: requireOwnSite(config.publicUrl),
+  });
+  mountPeople(routes, { people: services.peopleService, invitations: services.invitationService });
   routes.refuseOtherMethods();
 
   const router = express.Router();
   router.use(noStore, express.json({ limit: '1mb' }), cookieParser());
-  router.use(...sessions({ knex: services.knex, secret: config.sessionSecret, secure, cleanupIntervalMs: services.sessionCleanupMs }));
+  router.use(
+    ...sessions({
+      knex: services.knex,
+      secret: config.sessionSecret,
+      secure,
+      cleanupIntervalMs: services.sessionCleanupMs,
+    }),
+  );
   router.use(passport.initialize(), passport.session());
   router.use(routes.router, noSuchAddress);
   return router;

@@ -7,6 +7,10 @@ import { openDatabase } from './database/connection';
 import { Database } from './database/database';
 import { loadContract, type Contract } from './http/contract';
 import { Journal } from './journal/journal';
+import { MailService, openTransport } from './mail/mail-service';
+import { InvitationService } from './people/invitation-service';
+import { InvitationsStore } from './people/invitations-store';
+import { PeopleService } from './people/people-service';
 import { PeopleStore } from './people/people-store';
 import { SignInService } from './people/sign-in-service';
 import { SignInThrottle } from './people/sign-in-throttle';
@@ -36,6 +40,9 @@ export interface Services {
   readonly settings: Settings;
   readonly people: PeopleStore;
   readonly signIns: SignInService;
+  readonly mail: MailService;
+  readonly peopleService: PeopleService;
+  readonly invitationService: InvitationService;
   close(): Promise<void>;
 }
 
@@ -48,6 +55,9 @@ export function compose(options: ComposeOptions): Services {
   const database = new Database(knex);
   const journal = new Journal(database, clock);
   const people = new PeopleStore(database);
+  const settings = new Settings(database);
+  const mail = new MailService(openTransport(config), settings, log);
+  const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
   return {
     config,
@@ -60,9 +70,24 @@ export function compose(options: ComposeOptions): Services {
     validateAnswers,
     sessionCleanupMs,
     journal,
-    settings: new Settings(database),
+    settings,
     people,
     signIns: new SignInService(people, throttle, journal, clock),
-    close: () => database.close(),
+    mail,
+    peopleService: new PeopleService({ database, people, invitations, journal, clock }),
+    invitationService: new InvitationService({
+      database,
+      people,
+      invitations,
+      journal,
+      mail,
+      settings,
+      clock,
+      publicUrl: config.publicUrl,
+    }),
+    close: async () => {
+      mail.close();
+      await database.close();
+    },
   };
 }

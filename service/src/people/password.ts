@@ -12,7 +12,9 @@ function derive(password: string, salt: Buffer): Promise<Buffer> {
   return limit(
     () =>
       new Promise<Buffer>((resolve, reject) => {
-        scrypt(password.normalize('NFKC'), salt, keyBytes, cost, (error, key) => (error ? reject(error) : resolve(key)));
+        scrypt(password.normalize('NFKC'), salt, keyBytes, cost, (error, key) =>
+          error ? reject(error) : resolve(key),
+        );
       }),
   );
 }

@@ -28,6 +28,10 @@ export interface NewPerson {
   readonly createdAt: string;
 }
 
+type PersonChangeColumns = Partial<
+  Pick<PersonRow, 'name' | 'email' | 'partnerId' | 'state' | 'passwordHash' | 'lastSignInAt'>
+>;
+
 export const emailKeyOf = (email: string): string => email.trim().toLowerCase();
 
 export class PeopleStore {
@@ -35,22 +39,30 @@ export class PeopleStore {
 
   async insert(person: NewPerson): Promise<void> {
     const { roles, ...columns } = person;
-    await this.database.table<PersonRow>('people').insert({ ...columns, emailKey: emailKeyOf(person.email), lastSignInAt: null });
+    await this.table().insert({ ...columns, emailKey: emailKeyOf(person.email), lastSignInAt: null });
     await this.insertRoles(person.id, roles);
   }
 
   async findById(id: string): Promise<PersonRecord | null> {
-    return this.withRoles(await this.database.table<PersonRow>('people').where({ id }).first());
+    const [person] = await this.withRoles(await this.table().where({ id }));
+    return person ?? null;
   }
 
   async findByEmail(email: string): Promise<PersonRecord | null> {
-    return this.withRoles(await this.database.table<PersonRow>('people').where({ emailKey: emailKeyOf(email) }).first());
+    const [person] = await this.withRoles(await this.table().where({ emailKey: emailKeyOf(email) }));
+    return person ?? null;
   }
 
   async list(limit: number, offset: number): Promise<PersonRecord[]> {
-    const rows = await this.database.table<PersonRow>('people').orderBy([{ column: 'name' }, { column: 'id' }]).limit(limit).offset(offset);
-    const people = await Promise.all(rows.map((row) => this.withRoles(row)));
-    return people.filter((person): person is PersonRecord => person !== null);
+    const rows = await this.table()
+      .orderBy([{ column: 'name' }, { column: 'id' }])
+      .limit(limit)
+      .offset(offset);
+    return this.withRoles(rows);
+  }
+
+  async partnerExists(partnerId: string): Promise<boolean> {
+    return (await this.database.connection('partners').where({ id: partnerId }).first('id')) !== undefined;
   }
 
   async count(): Promise<number> {
@@ -68,8 +80,11 @@ export class PeopleStore {
     return Number(row?.['total'] ?? 0);
   }
 
-  async update(id: string, change: Partial<Pick<PersonRow, 'name' | 'state' | 'passwordHash' | 'lastSignInAt'>>): Promise<void> {
-    await this.database.table<PersonRow>('people').where({ id }).update(change);
+  async update(id: string, change: PersonChangeColumns): Promise<void> {
+    const emailKey = change.email === undefined ? {} : { emailKey: emailKeyOf(change.email) };
+    await this.table()
+      .where({ id })
+      .update({ ...change, ...emailKey });
   }
 
   async replaceRoles(id: string, roles: readonly Role[]): Promise<void> {
@@ -77,23 +92,20 @@ export class PeopleStore {
     await this.insertRoles(id, roles);
   }
 
+  private table() {
+    return this.database.table<PersonRow>('people');
+  }
+
   private async insertRoles(personId: string, roles: readonly Role[]): Promise<void> {
     await this.database.table<RoleRow>('personRoles').insert(roles.map((role) => ({ personId, role })));
   }
 
-  private async withRoles(row: PersonRow | undefined): Promise<PersonRecord | null> {
-    if (!row) return null;
-    const roles = await this.database.table<RoleRow>('personRoles').where({ personId: row.id }).orderBy('role');
-    return {
-      id: row.id,
-      name: row.name,
-      email: row.email,
-      partnerId: row.partnerId,
-      roles: roles.map((entry) => entry.role),
-      state: row.state,
-      passwordHash: row.passwordHash,
-      createdAt: row.createdAt,
-      lastSignInAt: row.lastSignInAt,
-    };
+  private async withRoles(rows: readonly PersonRow[]): Promise<PersonRecord[]> {
+    const ids = rows.map((row) => row.id);
+    const roles = await this.database.table<RoleRow>('personRoles').whereIn('personId', ids).orderBy('role');
+    return rows.map(({ emailKey: _, ...person }) => ({
+      ...person,
+      roles: roles.filter((entry) => entry.personId === person.id).map((entry) => entry.role),
+    }));
   }
 }

@@ -11,6 +11,11 @@ export function requireAccess(operationId: string): RequestHandler {
     const person = personOf(request);
     if (access === 'signed-in' || access?.some((role) => person.roles.includes(role))) return next();
     const who = (access ?? []).join(' or ');
-    return next(new DeskError('not-permitted', `Ask ${who === '' ? 'an administrator' : `someone with the role ${who}`} to do this.`));
+    return next(
+      new DeskError(
+        'not-permitted',
+        `Ask ${who === '' ? 'an administrator' : `someone with the role ${who}`} to do this.`,
+      ),
+    );
   };
 }

@@ -11,12 +11,15 @@ export type SessionPassport = InstanceType<typeof Passport>;
 export function sessionPassport(signIns: SignInService): SessionPassport {
   const passport = new Passport();
   passport.use(
-    new LocalStrategy({ usernameField: 'email', passReqToCallback: true }, (request: Request, email: string, password: string, done) => {
-      signIns.signIn({ email, password, address: request.ip ?? 'unknown' }).then(
-        (person) => done(null, person),
-        (error: unknown) => done(error),
-      );
-    }),
+    new LocalStrategy(
+      { usernameField: 'email', passReqToCallback: true },
+      (request: Request, email: string, password: string, done) => {
+        signIns.signIn({ email, password, address: request.ip ?? 'unknown' }).then(
+          (person) => done(null, person),
+          (error: unknown) => done(error),
+        );
+      },
+    ),
   );
   passport.serializeUser<string>((person, done) => done(null, (person as SignedInPerson).id));
   passport.deserializeUser<string>((id, done) => {

@@ -18,13 +18,26 @@ export interface SessionRouterParts {
 export function mountSession(routes: ContractRoutes<operations>, parts: SessionRouterParts): void {
   const authenticate = parts.passport.authenticate('local') as RequestHandler;
 
-  async function answer(request: Parameters<typeof personOf>[0], response: Parameters<RequestHandler>[1]): Promise<Session> {
+  async function answer(
+    request: Parameters<typeof personOf>[0],
+    response: Parameters<RequestHandler>[1],
+  ): Promise<Session> {
     const { id, name, email, roles, partnerId } = personOf(request);
     const { deskName } = await parts.settings.read();
-    return { person: { id, name, email, roles: [...roles], partnerId }, csrfToken: parts.csrf.issueToken(request, response), deskName };
+    return {
+      person: { id, name, email, roles: [...roles], partnerId },
+      csrfToken: parts.csrf.issueToken(request, response),
+      deskName,
+    };
   }
-  const run = (handler: RequestHandler, request: Parameters<RequestHandler>[0], response: Parameters<RequestHandler>[1]): Promise<void> =>
-    new Promise((resolve, reject) => handler(request, response, (error?: unknown) => (error ? reject(error) : resolve())));
+  const run = (
+    handler: RequestHandler,
+    request: Parameters<RequestHandler>[0],
+    response: Parameters<RequestHandler>[1],
+  ): Promise<void> =>
+    new Promise((resolve, reject) =>
+      handler(request, response, (error?: unknown) => (error ? reject(error) : resolve())),
+    );
 
   routes.answer('readHealth', () => ({ status: 'ok' as const }));
   routes.answer('readSession', ({ request, response }) => answer(request, response));
@@ -35,7 +48,9 @@ export function mountSession(routes: ContractRoutes<operations>, parts: SessionR
     return answer(request, response);
   });
   routes.answer('signOut', async ({ request, response }) => {
-    await new Promise<void>((resolve, reject) => request.session.destroy((error) => (error ? reject(error) : resolve())));
+    await new Promise<void>((resolve, reject) =>
+      request.session.destroy((error) => (error ? reject(error) : resolve())),
+    );
     response.clearCookie('tarebeam').clearCookie('XSRF-TOKEN').setHeader('Clear-Site-Data', '"cache", "storage"');
     return undefined;
   });

@@ -32,7 +32,13 @@ export class SignInService {
     }
     await this.throttle.recordSuccess(subjects);
     await this.people.update(person.id, { lastSignInAt: timeText(this.clock) });
-    await this.journal.write({ actorId: person.id, action: 'signed-in', subjectKind: 'person', subjectId: person.id, summary: `${person.name} signed in` });
+    await this.journal.write({
+      actorId: person.id,
+      action: 'signed-in',
+      subjectKind: 'person',
+      subjectId: person.id,
+      summary: `${person.name} signed in`,
+    });
     return toSignedIn(person);
   }
 

@@ -43,7 +43,9 @@ export class SignInThrottle {
   }
 
   async recordSuccess(subjects: SignInSubjects): Promise<void> {
-    await this.table().where({ subject: `account:${subjects.account}` }).delete();
+    await this.table()
+      .where({ subject: `account:${subjects.account}` })
+      .delete();
   }
 
   private async countFailure(subject: string, free: number): Promise<void> {
