@@ -1,9 +1,24 @@
+import { shapeOf, toColumnModel, type Moments } from './design/moments';
+import { resolveSpecification } from './design/resolve-specification';
+import { RegressionError } from './errors';
+import { allRows, prepareContext, segmentMoments, type FitContext } from './fit-context';
+import { buildFormula } from './formula/build-formula';
 import type { Formula } from './formula/formula';
+import { assembleResult, gaussianOf, leverageOf, type FinishedFit } from './fit-result';
+import { holdOut, smearingOf } from './inference/held-out';
+import { hatFeatures } from './inference/hat-features';
+import { leaveOneOutErrors } from './inference/leave-one-out';
+import { leverageMatrix } from './inference/lever';
 import type { RecordTable } from './records';
 import type { FitResult } from './result';
-import type { FoldAnswer, FoldTask } from './selection/fold-task';
+import { choosePenalty } from './selection/choice';
+import { generalisedErrors, planPenalty, type PenaltyPlan } from './selection/choose-penalty';
+import { combineFolds, type CrossValidation } from './selection/cross-validation';
+import { runFoldPaths } from './selection/fold-runs';
+import { trainingPart, type FoldAnswer, type FoldTask } from './selection/fold-task';
+import { losesDigits } from './selection/route';
+import { solvePath, type PathSolution, type TrainingPart } from './solvers/solve-path';
 import type { FitSpecification } from './specification';
-import { RegressionError } from './errors';
 
 export interface FitProgress {
   readonly stage: 'reading' | 'moments' | 'path' | 'validation' | 'diagnostics';
@@ -24,10 +39,103 @@ export interface FittedRecords {
 }
 
 /**
- * Fits one specification to one table of records. Pure: no clock, no files; the same records and specification give the
- * same bits. Throws RegressionError.
+ * Fits one specification to one table of records. The conventions are those of conventions.ts. Pure: no clock, no files; the
+ * same records and specification give the same bits. Throws RegressionError.
  */
 export async function fitRecords(records: RecordTable, specification: FitSpecification, hooks: FitHooks = {}): Promise<FittedRecords> {
   hooks.onProgress?.({ stage: 'reading', done: 0, total: records.rowCount });
-  throw new RegressionError('bad-specification', `The method ${specification.method} is not available yet.`);
+  const context = prepareContext(records, resolveSpecification(specification), hooks);
+  const fit = await finishFit(await readyForPath(context));
+  context.progress({ stage: 'diagnostics', done: 0, total: 1 });
+  const lever = fit.lever;
+  const formula = buildFormula(fit.context, {
+    model: fit.model,
+    smearing: fit.smearing,
+    heldOut: fit.heldOut,
+    gaussian: gaussianOf(fit),
+    leverage: lever === null ? null : leverageOf(fit, lever),
+  });
+  const result = await assembleResult(fit);
+  context.progress({ stage: 'diagnostics', done: 1, total: 1 });
+  return { result, formula };
+}
+
+interface ReadyFit {
+  readonly context: FitContext;
+  readonly moments: readonly Moments[];
+  readonly part: TrainingPart;
+  readonly plan: PenaltyPlan;
+}
+
+/** The records as the solvers want them; moments give way to the orthogonal route where they would lose digits. */
+async function readyForPath(context: FitContext): Promise<ReadyFit> {
+  const { design, specification } = context;
+  const moments = await segmentMoments(context);
+  const part = trainingPart(design, context.route, allRows(context), moments);
+  context.progress({ stage: 'path', done: 0, total: 1 });
+  const plan = planPenalty(part, design.columns, specification, context.settings.kind);
+  if (context.route !== 'moments' || !losesDigits(part, plan, context.settings.kind)) return { context, moments, part, plan };
+  return readyForPath({ ...context, route: 'orthogonal' });
+}
+
+async function finishFit({ context, moments, part, plan }: ReadyFit): Promise<FinishedFit> {
+  const { design, specification, settings } = context;
+  const answers = await runFoldPaths(context, moments, plan.lambdas);
+  const crossValidation = combineFolds(answers, plan.lambdas.length);
+  const choice = choosePenalty(groundOf(context, part, plan, crossValidation), specification.penalty.rule);
+  const solution = solvePath(part, design.columns, settings, plan.lambdas);
+  refuseDependent(context, part, solution);
+  const lambda = plan.lambdas[choice.at];
+  const weights = solution.weights[choice.at];
+  const model = toColumnModel(part.problem, weights, shapeOf(design));
+  const heldOut = holdOut(context, answers.map((answer) => answer.models[choice.at]));
+  const all = context.plan.segmentStarts.slice(0, -1).map((_, segment) => segment);
+  return {
+    context,
+    part,
+    plan,
+    crossValidation,
+    choice,
+    solution,
+    lambda,
+    weights,
+    model,
+    heldOut,
+    smearing: specification.target.transform === 'log' ? smearingOf(context, design, model, all) : 1,
+    lever: leverageMatrix({ context, part, penalties: plan.penalties, lambda, weights, dependent: solution.dependent }),
+    foldsConverged: answers.every((answer) => answer.converged),
+  };
+}
+
+/** Multiplications of leave-one-out errors that are cheap enough to give them unasked. */
+const CHEAP_LEAVE_ONE_OUT = 1e8;
+
+function groundOf(context: FitContext, part: TrainingPart, plan: PenaltyPlan, crossValidation: CrossValidation): Parameters<typeof choosePenalty>[0] {
+  const { specification, design, read, settings } = context;
+  const { lambdas, form, penalties } = plan;
+  const plainRidge = form !== null && settings.kind === 'ridge';
+  const cost = read.count * part.problem.size * (part.problem.size + lambdas.length);
+  const wanted = plainRidge && (specification.penalty.rule === 'leave-one-out' || cost <= CHEAP_LEAVE_ONE_OUT);
+  return {
+    lambdas,
+    crossValidation,
+    generalised: plainRidge ? generalisedErrors(form, part.problem.weightSum, specification.intercept, lambdas) : null,
+    leaveOneOut: wanted ? leaveOneOutErrors(design, part.problem, hatFeatures(part.problem, penalties), lambdas) : null,
+    evidence: plan.evidence?.lambda ?? null,
+    settled: plan.settled,
+  };
+}
+
+/** The final fit never drops a column silently: least squares with dependent inputs has no single answer. */
+function refuseDependent(context: FitContext, part: TrainingPart, solution: PathSolution): void {
+  if (solution.dependent.length === 0) return;
+  const { columns } = context.design;
+  const column = columns[part.problem.kept[solution.dependent[0]]];
+  const name = context.specification.inputs[column.input].column;
+  const label = column.label === undefined ? name : `${name} (${column.label})`;
+  throw new RegressionError(
+    'not-identifiable',
+    `${label} is an exact combination of other inputs (or there are more inputs than records), so least squares has no single answer. Leave it out, or hold the weights with a penalty.`,
+    name,
+  );
 }

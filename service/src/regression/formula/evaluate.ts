@@ -1,5 +1,7 @@
-import type { Formula } from './formula';
-import { RegressionError } from '../errors';
+import { cvPlusInterval } from './cv-plus-interval';
+import type { Formula, FormulaInput } from './formula';
+import { leverageAt } from './leverage';
+import { codeReading, readCase, type Reading } from './read-case';
 
 /** One reading an input; a date is an ISO 8601 day ("2026-03-31") or days since 1970-01-01; null or absent is missing. */
 export type CaseInputs = Readonly<Record<string, number | string | null>>;
@@ -44,7 +46,67 @@ export interface Evaluation {
   readonly flags: readonly EvaluationFlag[];
 }
 
-/** Evaluates one case. Throws RegressionError `input-missing`, `input-not-suitable` or `unknown-level`, naming the input. */
+/** A case this much above the records' largest leverage is flagged; the margin covers the rounding of the packed matrix. */
+const LEVERAGE_MARGIN = 1 + 1e-6;
+
+/**
+ * Evaluates one case: additive value = typical + Σ contributions. Deterministic: the same formula and case give the same bits.
+ * Throws RegressionError `input-missing`, `input-not-suitable` or `unknown-level`, naming the input.
+ * Cost: the number of columns times the number of folds.
+ */
 export function evaluateFormula(formula: Formula, inputs: CaseInputs): Evaluation {
-  throw new RegressionError('input-missing', `No evaluation of ${formula.target.name} for ${Object.keys(inputs).length} inputs yet.`);
+  const flags: EvaluationFlag[] = [];
+  const readings = readCase(formula, inputs, flags);
+  const columns = formula.inputs.map((input, at) => codeReading(input.coding, readings[at]));
+  const contributions = formula.inputs.map((input, at) => contributionOf(input, columns[at]));
+  const additive = contributions.reduce((sum, { contribution }) => sum + contribution, formula.typicalAdditive);
+  const flat = columns.flatMap((part) => Array.from(part));
+  const leverage = formula.leverage === null ? null : leverageAt(formula.leverage, flat);
+  if (formula.leverage !== null && leverage !== null && leverage > formula.leverage.largest * LEVERAGE_MARGIN) {
+    flags.push({ code: 'jointly-unusual', message: 'No record combines such readings: each may be in range, but together they are unlike anything recorded.' });
+  }
+  const { logged, smearing } = { logged: formula.target.transform === 'log', smearing: formula.target.smearing };
+  const median = logged ? Math.exp(additive) : additive;
+  const gaussian = gaussianInterval(formula, additive, leverage);
+  const ofFolds = formula.interval.folds.length > 0 ? foldInterval(formula, readings, flat) : null;
+  return {
+    value: logged ? median * smearing : median,
+    median,
+    interval: ofFolds ?? gaussian ?? { level: formula.interval.level, low: median, high: median },
+    gaussianInterval: gaussian,
+    typical: formula.typical,
+    scale: logged ? 'log' : 'original',
+    contributions,
+    flags,
+  };
+}
+
+function contributionOf(input: FormulaInput, columns: Float64Array): Contribution {
+  const contribution = columns.reduce((sum, value, at) => sum + value * input.weights[at], 0);
+  const { mass, hangs } = input;
+  const along = mass === 0 ? 0 : contribution / mass;
+  const arm = along === 0 ? 0 : hangs === 'float' ? -along : along;
+  return { input: input.name, arm, mass, contribution, hangs };
+}
+
+function foldInterval(formula: Formula, readings: readonly Reading[], flat: readonly number[]): EvaluationInterval {
+  const bases = formula.interval.folds.map((fold) => {
+    const columns = fold.codings === null ? flat : formula.inputs.flatMap((input, at) => Array.from(codeReading(fold.codings?.[at] ?? input.coding, readings[at])));
+    return columns.reduce((sum, value, at) => sum + value * fold.weights[at], fold.typicalAdditive);
+  });
+  const { low, high } = cvPlusInterval(formula.interval.folds, bases, formula.interval.level);
+  return onTargetScale(formula, low, high);
+}
+
+/** additive ± quantile · σ · √(1 + h) */
+function gaussianInterval(formula: Formula, additive: number, leverage: number | null): EvaluationInterval | null {
+  const { gaussian } = formula.interval;
+  if (gaussian === null || leverage === null) return null;
+  const half = gaussian.quantile * gaussian.residualSd * Math.sqrt(1 + leverage);
+  return onTargetScale(formula, additive - half, additive + half);
+}
+
+function onTargetScale(formula: Formula, low: number, high: number): EvaluationInterval {
+  const logged = formula.target.transform === 'log';
+  return { level: formula.interval.level, low: logged ? Math.exp(low) : low, high: logged ? Math.exp(high) : high };
 }

@@ -1,0 +1,145 @@
+import { DUALITY_GAP } from '../conventions';
+import { cholesky, solveCholesky } from '../linear-algebra/cholesky';
+import { allowedPull, bestWeight, relativeGap, type HeldPenalty } from './held-penalty';
+import type { HeldProblem } from './project-free';
+
+export interface DescentAnswer {
+  readonly weights: Float64Array;
+  readonly gap: number;
+  readonly iterations: number;
+  readonly converged: boolean;
+}
+
+/** Carried from one λ to the next, weaker one. */
+export interface DescentState {
+  readonly weights: Float64Array;
+  /** c − A b for every held column. */
+  readonly gradient: Float64Array;
+}
+
+const MOST_SWEEPS = 20000;
+const SWEEPS_BEFORE_POLISH = 30;
+const MOST_POLISHED = 600;
+
+export function startingState(held: HeldProblem): DescentState {
+  return { weights: new Float64Array(held.size), gradient: held.cross.slice() };
+}
+
+/**
+ * Elastic net by coordinate descent with covariance updates (Friedman, Hastie and Tibshirani 2010) on a working set found by
+ * the sequential strong rule and extended until no column outside violates its condition (Tibshirani et al. 2012), stopped
+ * by the relative duality gap. When it is slow, or `polish` asks for it, the weights are solved exactly on the active set.
+ * Updates `state` in place. `previous` is the penalty of the λ before, for the strong rule; null starts with no screening.
+ */
+export function descend(held: HeldProblem, penalty: HeldPenalty, previous: HeldPenalty | null, state: DescentState, polish: boolean): DescentAnswer {
+  const working = workingSet(held, penalty, previous, state);
+  const inside = new Uint8Array(held.size);
+  working.forEach((j) => (inside[j] = 1));
+  let tolerance = 1e-7;
+  let iterations = 0;
+  let polished = false;
+  for (;;) {
+    iterations += sweepUntilStill(held, penalty, state, working, tolerance);
+    if (polish || iterations > SWEEPS_BEFORE_POLISH) polished = solveActive(held, penalty, state, working);
+    refreshGradient(held, state);
+    if (addViolators(held, penalty, state, working, inside)) continue;
+    const gap = relativeGap(held, penalty, state.weights, state.gradient);
+    const done = gap <= DUALITY_GAP && (!polish || polished || tolerance < 1e-12);
+    if (done || iterations >= MOST_SWEEPS || tolerance < 1e-30) {
+      return { weights: state.weights.slice(), gap, iterations, converged: gap <= DUALITY_GAP };
+    }
+    tolerance *= 1e-2;
+  }
+}
+
+/** Columns in use, and those that may come in: pull ≥ 2·threshold − previous threshold. */
+function workingSet(held: HeldProblem, penalty: HeldPenalty, previous: HeldPenalty | null, state: DescentState): number[] {
+  const working: number[] = [];
+  for (let j = 0; j < held.size; j += 1) {
+    const screen = previous === null ? 0 : 2 * penalty.absolute[j] - previous.absolute[j];
+    if (state.weights[j] !== 0 || allowedPull(state.gradient[j], penalty.signs[j]) >= screen) working.push(j);
+  }
+  return working;
+}
+
+/** Sweeps over the working set until no step lowers the objective by more than tolerance · yy. Returns the sweeps made. */
+function sweepUntilStill(held: HeldProblem, penalty: HeldPenalty, state: DescentState, working: number[], tolerance: number): number {
+  const limit = tolerance * tolerance * held.targetSquare;
+  for (let sweep = 1; sweep <= MOST_SWEEPS; sweep += 1) {
+    const full = sweepOnce(held, penalty, state, working, working);
+    if (full <= limit) return sweep;
+    const active = working.filter((j) => state.weights[j] !== 0);
+    for (; sweep <= MOST_SWEEPS; sweep += 1) {
+      if (sweepOnce(held, penalty, state, active, working) <= limit) break;
+      if (sweep % 50 === 0) break;
+    }
+    if (sweep > 2 * SWEEPS_BEFORE_POLISH && working.length <= MOST_POLISHED) return sweep;
+  }
+  return MOST_SWEEPS;
+}
+
+/** One sweep; returns the largest curvature · step². */
+function sweepOnce(held: HeldProblem, penalty: HeldPenalty, state: DescentState, columns: readonly number[], working: readonly number[]): number {
+  const { gram, size } = held;
+  const { weights, gradient } = state;
+  let largest = 0;
+  for (let at = 0; at < columns.length; at += 1) {
+    const j = columns[at];
+    const curvature = gram[j * size + j];
+    const old = weights[j];
+    const next = curvature > 0 ? bestWeight(gradient[j] + curvature * old, curvature, penalty, j) : 0;
+    const step = next - old;
+    if (step === 0) continue;
+    weights[j] = next;
+    const row = j * size;
+    for (let other = 0; other < working.length; other += 1) gradient[working[other]] -= step * gram[row + working[other]];
+    largest = Math.max(largest, curvature * step * step);
+  }
+  return largest;
+}
+
+/** gradient = c − A b for all held columns, afresh. */
+function refreshGradient(held: HeldProblem, { weights, gradient }: DescentState): void {
+  const { size, gram, cross } = held;
+  gradient.set(cross);
+  for (let k = 0; k < size; k += 1) {
+    const weight = weights[k];
+    if (weight === 0) continue;
+    const row = k * size;
+    for (let j = 0; j < size; j += 1) gradient[j] -= weight * gram[row + j];
+  }
+}
+
+function addViolators(held: HeldProblem, penalty: HeldPenalty, state: DescentState, working: number[], inside: Uint8Array): boolean {
+  let added = false;
+  for (let j = 0; j < held.size; j += 1) {
+    if (inside[j] === 1 || allowedPull(state.gradient[j], penalty.signs[j]) <= penalty.absolute[j]) continue;
+    inside[j] = 1;
+    working.push(j);
+    added = true;
+  }
+  return added;
+}
+
+/**
+ * (A + square)_AA b_A = c_A − absolute · sign(b_A) on the active set; kept only when every sign stays as it is, which makes it
+ * the exact optimum for that active set. Returns whether it was kept.
+ */
+function solveActive(held: HeldProblem, penalty: HeldPenalty, state: DescentState, working: readonly number[]): boolean {
+  const active = working.filter((j) => state.weights[j] !== 0);
+  const count = active.length;
+  if (count === 0) return true;
+  if (count > MOST_POLISHED) return false;
+  const matrix = new Float64Array(count * count);
+  active.forEach((row, i) => {
+    for (let j = 0; j <= i; j += 1) matrix[i * count + j] = held.gram[row * held.size + active[j]];
+    matrix[i * count + i] += penalty.square[row];
+  });
+  const factor = cholesky(matrix, count);
+  if (factor.dependent >= 0) return false;
+  const right = active.map((j) => held.cross[j] - penalty.absolute[j] * Math.sign(state.weights[j]));
+  const solved = solveCholesky(factor, right);
+  if (active.some((j, i) => Math.sign(solved[i]) !== Math.sign(state.weights[j]))) return false;
+  active.forEach((j, i) => (state.weights[j] = solved[i]));
+  return true;
+}
