@@ -12,6 +12,8 @@ import { requestId } from './http/request-id';
 import { requestLog } from './http/request-log';
 import { noStore, securityHeaders } from './http/security-headers';
 import { sessions } from './http/sessions';
+import { mountEstimators } from './estimators/estimators-router';
+import { mountKeys } from './keys/keys-router';
 import { mountPeople } from './people/people-router';
 import { mountSession } from './people/session-router';
 import { sessionPassport } from './people/session-passport';
@@ -46,6 +48,8 @@ function deskApi(services: Services, secure: boolean): express.Router {
     settings: services.settings,
     requireOwnSite: requireOwnSite(config.publicUrl),
   });
+  mountEstimators(routes, services.estimators);
+  mountKeys(routes, services.keys);
   mountPeople(routes, { people: services.peopleService, invitations: services.invitationService });
   routes.refuseOtherMethods();
 

@@ -5,8 +5,13 @@ import { systemClock, type Clock } from './clock';
 import type { Config } from './config';
 import { openDatabase } from './database/connection';
 import { Database } from './database/database';
+import { EditionsStore } from './editions/editions-store';
+import { EstimatorsService } from './estimators/estimators-service';
+import { EstimatorsStore } from './estimators/estimators-store';
 import { loadContract, type Contract } from './http/contract';
 import { Journal } from './journal/journal';
+import { KeysService } from './keys/keys-service';
+import { KeysStore } from './keys/keys-store';
 import { MailService, openTransport } from './mail/mail-service';
 import { InvitationService } from './people/invitation-service';
 import { InvitationsStore } from './people/invitations-store';
@@ -42,6 +47,8 @@ export interface Services {
   readonly signIns: SignInService;
   readonly mail: MailService;
   readonly peopleService: PeopleService;
+  readonly estimators: EstimatorsService;
+  readonly keys: KeysService;
   readonly invitationService: InvitationService;
   close(): Promise<void>;
 }
@@ -55,6 +62,8 @@ export function compose(options: ComposeOptions): Services {
   const database = new Database(knex);
   const journal = new Journal(database, clock);
   const people = new PeopleStore(database);
+  const estimators = new EstimatorsStore(database);
+  const editions = new EditionsStore(database);
   const settings = new Settings(database);
   const mail = new MailService(openTransport(config), settings, log);
   const invitations = new InvitationsStore(database);
@@ -72,6 +81,8 @@ export function compose(options: ComposeOptions): Services {
     journal,
     settings,
     people,
+    estimators: new EstimatorsService({ database, estimators, editions, journal, clock }),
+    keys: new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock }),
     signIns: new SignInService(people, throttle, journal, clock),
     mail,
     peopleService: new PeopleService({ database, people, invitations, journal, clock }),
