@@ -29,6 +29,10 @@ export interface InfluentialRecord {
   readonly residual: number;
 }
 
+export function hasDiagnostics(diagnostics: Diagnostics): boolean {
+  return Object.values(diagnostics).some((rows: readonly unknown[]) => rows.length > 0);
+}
+
 type Plain = Readonly<Record<string, unknown>>;
 
 export function diagnosticsOf(result: object): Diagnostics {

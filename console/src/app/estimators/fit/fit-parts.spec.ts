@@ -19,7 +19,7 @@ describe('the weights of a fit', () => {
 
 describe('the penalty and its equivalents', () => {
   it('are λ, λ·n, effective degrees of freedom and the prior', () => {
-    expect(penaltyEquivalents(result, 'h').map((row) => row.figure)).toEqual(['1', '2,391', '2.50', '0.790\u202fh']);
+    expect(penaltyEquivalents(result, 'h').map((row) => row.figure)).toEqual(['1', '2,391', '2.50', '0.790\u00a0h']);
   });
 
   it('have no prior where nothing holds the weights', () => {

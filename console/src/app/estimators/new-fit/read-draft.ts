@@ -1,5 +1,5 @@
 import type { FitNew, Specification, SpecificationInput } from '../../api/contract';
-import { readNumber } from '../try/read-number';
+import { typedNumber } from '../words/typed-number';
 import { rulesFor } from '../words/method-words';
 import { type FitDraft, type InputDraft, usedInputs } from './fit-draft';
 
@@ -28,7 +28,7 @@ const levelNumber: Bounds = { words: 'a percentage above 50 and below 100', hold
 export function readDraft(draft: FitDraft): DraftReading {
   const problems = new Map<string, string>();
   const number = (field: string, text: string, bounds: Bounds): number => {
-    const reading = readNumber(text);
+    const reading = typedNumber(text);
     if ('value' in reading && bounds.holds(reading.value)) return reading.value;
     problems.set(field, 'problem' in reading ? reading.problem : `Enter ${bounds.words}.`);
     return Number.NaN;

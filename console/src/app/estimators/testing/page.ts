@@ -15,7 +15,8 @@ export type PageRole = keyof typeof roles;
 
 export function nameOf(element: Element): string {
   const named = element.getAttribute('aria-labelledby');
-  const text = element.getAttribute('aria-label') ?? (named ? document.getElementById(named)?.textContent : element.textContent) ?? '';
+  const caption = element.querySelector('caption')?.textContent;
+  const text = element.getAttribute('aria-label') ?? (named ? document.getElementById(named)?.textContent : (caption ?? element.textContent)) ?? '';
   return tidy(text);
 }
 

@@ -2,6 +2,7 @@ import { provideHttpClient } from '@angular/common/http';
 import { HttpTestingController, provideHttpClientTesting, type TestRequest } from '@angular/common/http/testing';
 import { Component, type Provider, type Type } from '@angular/core';
 import { TestBed, type ComponentFixture } from '@angular/core/testing';
+import { MATERIAL_ANIMATIONS } from '@angular/material/core';
 import { Router, provideRouter } from '@angular/router';
 import type { ProblemDetails, Role } from '../../api/contract';
 import { SessionStore } from '../../api/session-store';
@@ -81,6 +82,7 @@ export async function show<Page>(
       provideHttpClientTesting(),
       provideRouter([{ path: '**', component: Elsewhere }]),
       { provide: SessionStore, useValue: people },
+      { provide: MATERIAL_ANIMATIONS, useValue: { animationsDisabled: true } },
       ...providers,
     ],
   });

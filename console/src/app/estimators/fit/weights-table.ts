@@ -1,0 +1,43 @@
+import { Component, computed, input, signal } from '@angular/core';
+import type { Weight } from '../../api/contract';
+import { formatFigure } from '../../ui/figure';
+import { TableBox } from '../../ui/table-box';
+import { droppedInputs, weightGroups, type WeightPart } from './weight-groups';
+
+/** Longer tables open on the heaviest inputs. */
+const SHOWN_AT_FIRST = 25;
+
+/** Weights by input, in original units and standardised, a category's levels under their input. */
+@Component({
+  selector: 'tb-weights-table',
+  imports: [TableBox],
+  templateUrl: './weights-table.html',
+  styleUrl: './weights-table.scss',
+})
+export class WeightsTable {
+  readonly weights = input.required<readonly Weight[]>();
+  readonly intercept = input<number>();
+  /** Unit of the scale that the weights add on; empty on the log scale. */
+  readonly scaleUnit = input.required<string>();
+
+  protected readonly all = signal(false);
+  private readonly groups = computed(() => weightGroups(this.weights()));
+  protected readonly dropped = computed(() => droppedInputs(this.groups()));
+  protected readonly kept = computed(() => this.groups().filter((group) => !this.dropped().includes(group.input)));
+  protected readonly shown = computed(() => (this.all() ? this.kept() : this.kept().slice(0, SHOWN_AT_FIRST)));
+  protected readonly hasErrors = computed(() => this.weights().some((weight) => weight.standardError !== null && weight.standardError !== undefined));
+  protected readonly interceptText = computed(() => formatFigure(this.intercept(), { significant: 4 }));
+
+  /** Digits by the standard error where there is one; four that count where not. */
+  protected original(part: WeightPart): string {
+    return formatFigure(part.value, part.standardError ? { uncertainty: part.standardError } : { significant: 4 });
+  }
+
+  protected standardised(part: WeightPart): string {
+    return formatFigure(part.standardised, { significant: 3 });
+  }
+
+  protected error(part: WeightPart): string {
+    return formatFigure(part.standardError, { significant: 2 });
+  }
+}
