@@ -14,6 +14,8 @@ import { noStore, securityHeaders } from './http/security-headers';
 import { sessions } from './http/sessions';
 import { mountEstimators } from './estimators/estimators-router';
 import { mountKeys } from './keys/keys-router';
+import { mountJournal } from './journal/journal-router';
+import { mountSettings } from './settings/settings-router';
 import { mountPeople } from './people/people-router';
 import { mountSession } from './people/session-router';
 import { sessionPassport } from './people/session-passport';
@@ -51,6 +53,8 @@ function deskApi(services: Services, secure: boolean): express.Router {
   mountEstimators(routes, services.estimators);
   mountKeys(routes, services.keys);
   mountPeople(routes, { people: services.peopleService, invitations: services.invitationService });
+  mountJournal(routes, services.journalService);
+  mountSettings(routes, services.settingsService);
   routes.refuseOtherMethods();
 
   const router = express.Router();

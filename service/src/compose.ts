@@ -12,6 +12,8 @@ import { loadContract, type Contract } from './http/contract';
 import { Journal } from './journal/journal';
 import { KeysService } from './keys/keys-service';
 import { KeysStore } from './keys/keys-store';
+import { JournalService } from './journal/journal-service';
+import { JournalStore } from './journal/journal-store';
 import { MailService, openTransport } from './mail/mail-service';
 import { InvitationService } from './people/invitation-service';
 import { InvitationsStore } from './people/invitations-store';
@@ -20,6 +22,7 @@ import { PeopleStore } from './people/people-store';
 import { SignInService } from './people/sign-in-service';
 import { SignInThrottle } from './people/sign-in-throttle';
 import { Settings } from './settings/settings';
+import { SettingsService } from './settings/settings-service';
 
 export interface ComposeOptions {
   readonly config: Config;
@@ -50,6 +53,8 @@ export interface Services {
   readonly estimators: EstimatorsService;
   readonly keys: KeysService;
   readonly invitationService: InvitationService;
+  readonly journalService: JournalService;
+  readonly settingsService: SettingsService;
   close(): Promise<void>;
 }
 
@@ -96,6 +101,8 @@ export function compose(options: ComposeOptions): Services {
       clock,
       publicUrl: config.publicUrl,
     }),
+    journalService: new JournalService(new JournalStore(database)),
+    settingsService: new SettingsService(database, settings, journal),
     close: async () => {
       mail.close();
       await database.close();

@@ -20,6 +20,8 @@ export class Journal {
   ) {}
 
   async write(note: JournalNote): Promise<void> {
-    await this.database.table('journal').insert({ ...note, summary: note.summary.slice(0, 500), at: timeText(this.clock) });
+    await this.database
+      .table('journal')
+      .insert({ ...note, summary: note.summary.slice(0, 500), at: timeText(this.clock) });
   }
 }
