@@ -15,6 +15,7 @@ import type { FitAccuracy, FitPenalty, FitReport, FitResult, FitWeight, PathPoin
 import type { Choice } from './selection/choice';
 import type { PenaltyPlan } from './selection/choose-penalty';
 import type { CrossValidation } from './selection/cross-validation';
+import type { OriginalUnits } from './solvers/original-units';
 import type { PathSolution, TrainingPart } from './solvers/solve-path';
 import { LongSum } from './linear-algebra/double-double';
 
@@ -30,6 +31,8 @@ export interface FinishedFit {
   /** Standardised, of the kept columns. */
   readonly weights: Float64Array;
   readonly model: ColumnModel;
+  /** Least squares solved in original units; null elsewhere. */
+  readonly original: OriginalUnits | null;
   readonly heldOut: HeldOut;
   readonly smearing: number;
   readonly lever: LeverageMatrix | null;
@@ -66,7 +69,8 @@ function penaltyOf({ context, lambda, part, solution, choice, plan }: FinishedFi
 }
 
 /** b₀ = ȳ − Σ b_j x̄_j, summed in twice the precision. */
-function interceptOf({ context, model }: FinishedFit): number {
+function interceptOf({ context, model, original }: FinishedFit): number {
+  if (original !== null) return original.intercept;
   const { design } = context;
   const sum = new LongSum();
   sum.add(design.targetCentre);
@@ -77,7 +81,7 @@ function interceptOf({ context, model }: FinishedFit): number {
   return sum.value();
 }
 
-function weightsOf({ context, model, solution, part }: FinishedFit, errors: Float64Array | null): FitWeight[] {
+function weightsOf({ context, model, original, solution, part }: FinishedFit, errors: Float64Array | null): FitWeight[] {
   const { design, specification } = context;
   const dependent = new Set(solution.dependent.map((at) => part.problem.kept[at]));
   return design.columns.map((column, at) => {
@@ -87,7 +91,7 @@ function weightsOf({ context, model, solution, part }: FinishedFit, errors: Floa
     return {
       input: specification.inputs[column.input].column,
       ...(column.label === undefined ? {} : { level: column.label }),
-      value: scale === 0 ? 0 : model.weights[at] / scale,
+      value: original?.values[at] ?? (scale === 0 ? 0 : model.weights[at] / scale),
       standardised: model.weights[at],
       ...(Number.isFinite(error) ? { standardError: error } : {}),
       centre: design.centres[at],

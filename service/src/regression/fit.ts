@@ -17,6 +17,7 @@ import { combineFolds, type CrossValidation } from './selection/cross-validation
 import { runFoldPaths } from './selection/fold-runs';
 import { trainingPart, type FoldAnswer, type FoldTask } from './selection/fold-task';
 import { losesDigits } from './selection/route';
+import { leastSquaresInOriginalUnits } from './solvers/original-units';
 import { solvePath, type PathSolution, type TrainingPart } from './solvers/solve-path';
 import type { FitSpecification } from './specification';
 
@@ -87,7 +88,9 @@ async function finishFit({ context, moments, part, plan }: ReadyFit): Promise<Fi
   refuseDependent(context, part, solution);
   const lambda = plan.lambdas[choice.at];
   const weights = solution.weights[choice.at];
-  const model = toColumnModel(part.problem, weights, shapeOf(design));
+  const exact = settings.kind === 'least-squares' && context.route === 'orthogonal';
+  const original = exact ? leastSquaresInOriginalUnits(context.read, design, context.plan) : null;
+  const model = original?.model ?? toColumnModel(part.problem, weights, shapeOf(design));
   const heldOut = holdOut(context, answers.map((answer) => answer.models[choice.at]));
   const all = context.plan.segmentStarts.slice(0, -1).map((_, segment) => segment);
   return {
@@ -100,6 +103,7 @@ async function finishFit({ context, moments, part, plan }: ReadyFit): Promise<Fi
     lambda,
     weights,
     model,
+    original,
     heldOut,
     smearing: specification.target.transform === 'log' ? smearingOf(context, design, model, all) : 1,
     lever: leverageMatrix({ context, part, penalties: plan.penalties, lambda, weights, dependent: solution.dependent }),
