@@ -16,6 +16,7 @@ import { mountEstimators } from './estimators/estimators-router';
 import { mountKeys } from './keys/keys-router';
 import { mountJournal } from './journal/journal-router';
 import { mountSettings } from './settings/settings-router';
+import { mountPartners } from './partners/partners-router';
 import { mountPeople } from './people/people-router';
 import { mountSession } from './people/session-router';
 import { sessionPassport } from './people/session-passport';
@@ -55,6 +56,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
   mountPeople(routes, { people: services.peopleService, invitations: services.invitationService });
   mountJournal(routes, services.journalService);
   mountSettings(routes, services.settingsService);
+  mountPartners(routes, { partners: services.partners, sites: services.sites });
   routes.refuseOtherMethods();
 
   const router = express.Router();

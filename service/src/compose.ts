@@ -15,6 +15,10 @@ import { KeysStore } from './keys/keys-store';
 import { JournalService } from './journal/journal-service';
 import { JournalStore } from './journal/journal-store';
 import { MailService, openTransport } from './mail/mail-service';
+import { PartnersService } from './partners/partners-service';
+import { PartnersStore } from './partners/partners-store';
+import { SitesService } from './partners/sites-service';
+import { SitesStore } from './partners/sites-store';
 import { InvitationService } from './people/invitation-service';
 import { InvitationsStore } from './people/invitations-store';
 import { PeopleService } from './people/people-service';
@@ -52,6 +56,8 @@ export interface Services {
   readonly peopleService: PeopleService;
   readonly estimators: EstimatorsService;
   readonly keys: KeysService;
+  readonly partners: PartnersService;
+  readonly sites: SitesService;
   readonly invitationService: InvitationService;
   readonly journalService: JournalService;
   readonly settingsService: SettingsService;
@@ -73,6 +79,9 @@ export function compose(options: ComposeOptions): Services {
   const mail = new MailService(openTransport(config), settings, log);
   const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
+  const partners = new PartnersStore(database);
+  const sites = new SitesStore(database);
+  const keys = new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock });
   return {
     config,
     log,
@@ -87,7 +96,9 @@ export function compose(options: ComposeOptions): Services {
     settings,
     people,
     estimators: new EstimatorsService({ database, estimators, editions, journal, clock }),
-    keys: new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock }),
+    keys,
+    partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
+    sites: new SitesService({ database, partners, sites, journal, clock }),
     signIns: new SignInService(people, throttle, journal, clock),
     mail,
     peopleService: new PeopleService({ database, people, invitations, journal, clock }),
