@@ -71,7 +71,9 @@ describe('EstimatesClient', () => {
   });
 
   it('says that no answer came when the call is refused on the way', async () => {
-    const failure = await failureOf(client({ fetch: () => Promise.reject(new TypeError('x')) }).describe('refit-labour'));
+    const failure = await failureOf(
+      client({ fetch: () => Promise.reject(new TypeError('x')) }).describe('refit-labour'),
+    );
     expect(failure.code).toBe('unreachable');
   });
 

@@ -31,7 +31,13 @@ export function estimatorExample(): PublishedEstimator {
         displacement: { type: 'number', title: 'Displacement', 'x-unit': 't', 'x-range': [1.1, 24], 'x-order': 2 },
         hull: { type: 'string', title: 'Hull material', enum: ['GRP', 'steel', 'wood'], 'x-order': 3 },
         winter: { type: 'boolean', title: 'Winter booking', 'x-order': 5 },
-        booked: { type: 'string', format: 'date', title: 'Booked', 'x-range': ['2020-01-02', '2026-06-30'], 'x-order': 6 },
+        booked: {
+          type: 'string',
+          format: 'date',
+          title: 'Booked',
+          'x-range': ['2020-01-02', '2026-06-30'],
+          'x-order': 6,
+        },
       },
     },
   };

@@ -25,7 +25,8 @@ export function readEstimator(answer: unknown): PublishedEstimator {
 /** RFC 9457; a member of the wrong type is ignored, as the RFC has it. */
 export function readProblem(answer: unknown, status: number, retryAfter: string | null): EstimatesError {
   const problem: Unknown = isObject(answer) ? answer : {};
-  const text = (member: unknown): string | undefined => (typeof member === 'string' && member !== '' ? member : undefined);
+  const text = (member: unknown): string | undefined =>
+    typeof member === 'string' && member !== '' ? member : undefined;
   const seconds = typeof problem['retryAfter'] === 'number' ? problem['retryAfter'] : Number(retryAfter ?? NaN);
   const code = text(problem['code']);
   return new EstimatesError(
@@ -43,9 +44,11 @@ export function readProblem(answer: unknown, status: number, retryAfter: string 
 
 function readFieldProblems(errors: unknown): readonly FieldProblem[] {
   const list: readonly unknown[] = Array.isArray(errors) ? errors : [];
-  return list.filter(isObject).flatMap(({ detail, pointer }) =>
-    typeof detail === 'string' ? [{ detail, input: typeof pointer === 'string' ? inputOf(pointer) : null }] : [],
-  );
+  return list
+    .filter(isObject)
+    .flatMap(({ detail, pointer }) =>
+      typeof detail === 'string' ? [{ detail, input: typeof pointer === 'string' ? inputOf(pointer) : null }] : [],
+    );
 }
 
 /** The pointer is a URI fragment ("#/inputs/length_overall"), escaped by RFC 6901 and then by percent. */
