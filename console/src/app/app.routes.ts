@@ -34,7 +34,7 @@ export const routes: Routes = [
       section(SECTIONS.people, () => import('./people/people.routes').then((m) => m.peopleRoutes)),
       section(SECTIONS.journal, () => import('./journal/journal.routes').then((m) => m.journalRoutes)),
       section(SECTIONS.settings, () => import('./settings/settings.routes').then((m) => m.settingsRoutes)),
-      section(SECTIONS.partnerArea, () => import('./partner-area/partner-area.routes').then((m) => m.partnerAreaRoutes)),
+      section(SECTIONS.partnerArea, () => import('./partners/partner-area.routes').then((m) => m.partnerAreaRoutes)),
       section({ label: 'Estimate', path: 'estimates', roles: DESK_ROLES }, () =>
         import('./estimates/estimates.routes').then((m) => m.estimatesRoutes),
       ),

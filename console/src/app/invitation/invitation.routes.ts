@@ -1,3 +1,5 @@
 import { Routes } from '@angular/router';
 
-export const invitationRoutes: Routes = [];
+export const invitationRoutes: Routes = [
+  { path: ':token', loadComponent: () => import('./invitation-page').then((m) => m.InvitationPage) },
+];

@@ -1,3 +1,5 @@
 import { Routes } from '@angular/router';
 
-export const peopleRoutes: Routes = [];
+export const peopleRoutes: Routes = [
+  { path: '', title: 'People', loadComponent: () => import('./people-page').then((m) => m.PeoplePage) },
+];

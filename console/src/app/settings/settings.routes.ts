@@ -1,3 +1,5 @@
 import { Routes } from '@angular/router';
 
-export const settingsRoutes: Routes = [];
+export const settingsRoutes: Routes = [
+  { path: '', title: 'Settings', loadComponent: () => import('./settings-page').then((m) => m.SettingsPage) },
+];

@@ -1,0 +1,34 @@
+import type { JournalFilter } from '../api/contract';
+
+/** The filter as the address holds it; days as date fields give them. */
+export interface JournalQuery {
+  readonly action: string;
+  readonly actorId: string;
+  readonly subjectKind: string;
+  readonly subjectId: string;
+  readonly fromDay: string;
+  readonly toDay: string;
+}
+
+export const EMPTY_QUERY: JournalQuery = { action: '', actorId: '', subjectKind: '', subjectId: '', fromDay: '', toDay: '' };
+
+/** Both days belong to the span, and begin and end where the reader is. */
+export function filterOf(query: JournalQuery, page: { readonly limit: number; readonly offset: number }): JournalFilter {
+  const { action, actorId, subjectKind, subjectId } = query;
+  return { action, actorId, subjectKind, subjectId, from: timeOf(query.fromDay, '00:00:00'), to: timeOf(query.toDay, '23:59:59.999'), ...page };
+}
+
+/** Undefined for no day, and for an address that somebody mistyped. */
+function timeOf(day: string, time: string): string | undefined {
+  const moment = new Date(`${day}T${time}`);
+  return Number.isNaN(moment.getTime()) ? undefined : moment.toISOString();
+}
+
+/** Query parameters of the address: an empty field leaves its parameter out. */
+export function addressOf(query: JournalQuery): Record<string, string | null> {
+  return Object.fromEntries(Object.entries(query).map(([name, value]) => [name, value === '' ? null : value]));
+}
+
+export function isFiltered(query: JournalQuery): boolean {
+  return Object.values(query).some((value) => value !== '');
+}

@@ -1,3 +1,0 @@
-import { Routes } from '@angular/router';
-
-export const partnerAreaRoutes: Routes = [];
