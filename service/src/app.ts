@@ -12,6 +12,7 @@ import { requestId } from './http/request-id';
 import { requestLog } from './http/request-log';
 import { noStore, securityHeaders } from './http/security-headers';
 import { sessions } from './http/sessions';
+import { mountDesk } from './desk/desk-router';
 import { mountEstimators } from './estimators/estimators-router';
 import { mountKeys } from './keys/keys-router';
 import { mountJournal } from './journal/journal-router';
@@ -57,6 +58,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
   mountJournal(routes, services.journalService);
   mountSettings(routes, services.settingsService);
   mountPartners(routes, { partners: services.partners, sites: services.sites });
+  mountDesk(routes, services.desk);
   routes.refuseOtherMethods();
 
   const router = express.Router();

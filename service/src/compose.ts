@@ -5,6 +5,8 @@ import { systemClock, type Clock } from './clock';
 import type { Config } from './config';
 import { openDatabase } from './database/connection';
 import { Database } from './database/database';
+import { DeskService } from './desk/desk-service';
+import { DeskStore } from './desk/desk-store';
 import { EditionsStore } from './editions/editions-store';
 import { EstimatorsService } from './estimators/estimators-service';
 import { EstimatorsStore } from './estimators/estimators-store';
@@ -59,6 +61,7 @@ export interface Services {
   readonly partners: PartnersService;
   readonly sites: SitesService;
   readonly invitationService: InvitationService;
+  readonly desk: DeskService;
   readonly journalService: JournalService;
   readonly settingsService: SettingsService;
   close(): Promise<void>;
@@ -79,6 +82,7 @@ export function compose(options: ComposeOptions): Services {
   const mail = new MailService(openTransport(config), settings, log);
   const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
+  const journalService = new JournalService(new JournalStore(database));
   const partners = new PartnersStore(database);
   const sites = new SitesStore(database);
   const keys = new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock });
@@ -112,7 +116,8 @@ export function compose(options: ComposeOptions): Services {
       clock,
       publicUrl: config.publicUrl,
     }),
-    journalService: new JournalService(new JournalStore(database)),
+    desk: new DeskService({ desk: new DeskStore(database), editions, journal: journalService, settings, clock }),
+    journalService,
     settingsService: new SettingsService(database, settings, journal),
     close: async () => {
       mail.close();
