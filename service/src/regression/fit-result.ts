@@ -37,9 +37,11 @@ export interface FinishedFit {
   readonly smearing: number;
   readonly lever: LeverageMatrix | null;
   readonly foldsConverged: boolean;
+  /** When asked for. */
+  readonly nestedRmse: number | null;
 }
 
-export async function assembleResult(fit: FinishedFit): Promise<FitResult> {
+export function assembleResult(fit: FinishedFit): FitResult {
   const training = trainingFit(fit);
   const errors = standardErrors(fit, training);
   return {
@@ -50,7 +52,7 @@ export async function assembleResult(fit: FinishedFit): Promise<FitResult> {
     accuracy: accuracyOf(fit, training),
     path: pathOf(fit),
     report: reportOf(fit),
-    diagnostics: await diagnose(fit, training),
+    diagnostics: diagnose(fit, training),
   };
 }
 
@@ -120,6 +122,7 @@ function accuracyOf(fit: FinishedFit, training: TrainingFit): FitAccuracy {
     coverageGaussian: coverage.gaussian,
     coverageByQuarter: coverage.byQuarter,
     trainingRmse: Math.sqrt(training.residualSquare),
+    ...(fit.nestedRmse === null ? {} : { nestedRmse: fit.nestedRmse }),
   };
 }
 

@@ -9,6 +9,7 @@ import { holdOut, smearingOf } from './inference/held-out';
 import { hatFeatures } from './inference/hat-features';
 import { leaveOneOutErrors } from './inference/leave-one-out';
 import { leverageMatrix } from './inference/lever';
+import { nestedError } from './inference/nested';
 import type { RecordTable } from './records';
 import type { FitResult } from './result';
 import { choosePenalty } from './selection/choice';
@@ -56,7 +57,7 @@ export async function fitRecords(records: RecordTable, specification: FitSpecifi
     gaussian: gaussianOf(fit),
     leverage: lever === null ? null : leverageOf(fit, lever),
   });
-  const result = await assembleResult(fit);
+  const result = assembleResult(fit);
   context.progress({ stage: 'diagnostics', done: 1, total: 1 });
   return { result, formula };
 }
@@ -108,6 +109,7 @@ async function finishFit({ context, moments, part, plan }: ReadyFit): Promise<Fi
     smearing: specification.target.transform === 'log' ? smearingOf(context, design, model, all) : 1,
     lever: leverageMatrix({ context, part, penalties: plan.penalties, lambda, weights, dependent: solution.dependent }),
     foldsConverged: answers.every((answer) => answer.converged),
+    nestedRmse: specification.extras.nestedFolds === true ? await nestedError(context, moments, plan.lambdas, answers) : null,
   };
 }
 

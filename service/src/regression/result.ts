@@ -63,7 +63,7 @@ export interface FitAccuracy {
   readonly coverageByQuarter: readonly QuarterCoverage[];
   /** In-sample root mean squared residual on the additive scale, for comparison only. */
   readonly trainingRmse: number;
-  /** Held-out rmse of the whole procedure, penalty choice included; when asked for. */
+  /** Held-out rmse (additive scale) of the whole procedure, penalty choice included; when asked for. */
   readonly nestedRmse?: number;
 }
 
@@ -107,6 +107,8 @@ export interface FitDiagnostics {
   readonly varianceInflation: readonly { readonly input: string; readonly level?: string; readonly factor: number | null }[];
   /** Belsley, Kuh and Welsch (1980), chapter 3: columns scaled to length 1, not centred, with the intercept. */
   readonly conditionIndices: readonly ConditionIndex[];
+  /** What the proportions of a condition index belong to, in order. */
+  readonly conditionColumns: readonly { readonly input: string; readonly level?: string }[];
   readonly sharedLoad: readonly SharedLoadGroup[];
   readonly influential: readonly InfluentialRecord[];
   readonly residuals: readonly ResidualPoint[];
@@ -116,14 +118,17 @@ export interface FitDiagnostics {
 
 export interface ConditionIndex {
   readonly index: number | null;
-  /** Share of each coefficient's variance: intercept first, then columns in the order of `weights` that are kept. */
+  /** Share of each coefficient's variance, in the order of `conditionColumns`. */
   readonly proportions: readonly number[];
 }
 
 /** Inputs that carry the same information, and how each method splits the load among them (standardised weights). */
 export interface SharedLoadGroup {
-  readonly members: readonly { readonly input: string; readonly level?: string }[];
+  readonly members: readonly { readonly input: string }[];
+  readonly found: 'correlation' | 'near-null direction';
+  /** Smallest |correlation| (for inputs of several columns, canonical) between two members. */
   readonly smallestCorrelation: number;
+  /** Null when least squares has no single answer. */
   readonly leastSquares: readonly number[] | null;
   readonly ridge: readonly number[];
   readonly lasso: readonly number[];
