@@ -48,6 +48,12 @@ export class SignInThrottle {
       .delete();
   }
 
+  /** Rows that count no longer. */
+  async forgetOld(): Promise<void> {
+    const moment = new Date(this.clock.now().getTime() - forgetAfterMs).toISOString();
+    await this.table().where('lastFailedAt', '<', moment).delete();
+  }
+
   private async countFailure(subject: string, free: number): Promise<void> {
     const now = this.clock.now().getTime();
     const before = await this.table().where({ subject }).first();
