@@ -14,6 +14,7 @@ import { noStore, securityHeaders } from './http/security-headers';
 import { sessions } from './http/sessions';
 import { mountDesk } from './desk/desk-router';
 import { mountEstimators } from './estimators/estimators-router';
+import { mountFits } from './fits/fits-router';
 import { mountKeys } from './keys/keys-router';
 import { mountJournal } from './journal/journal-router';
 import { mountSettings } from './settings/settings-router';
@@ -53,6 +54,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
     requireOwnSite: requireOwnSite(config.publicUrl),
   });
   mountEstimators(routes, services.estimators);
+  mountFits(routes, services.fits);
   mountKeys(routes, services.keys);
   mountPeople(routes, { people: services.peopleService, invitations: services.invitationService });
   mountJournal(routes, services.journalService);

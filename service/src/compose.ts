@@ -2,6 +2,7 @@ import { join } from 'node:path';
 import type { Knex } from 'knex';
 import type { Logger } from 'pino';
 import { systemClock, type Clock } from './clock';
+import { composeFits } from './compose-fits';
 import type { Config } from './config';
 import { openDatabase } from './database/connection';
 import { Database } from './database/database';
@@ -10,10 +11,15 @@ import { DeskStore } from './desk/desk-store';
 import { EditionsStore } from './editions/editions-store';
 import { EstimatorsService } from './estimators/estimators-service';
 import { EstimatorsStore } from './estimators/estimators-store';
+import type { FitRunner } from './fits/fit-runner';
+import type { FitsService } from './fits/fits-service';
 import { loadContract, type Contract } from './http/contract';
 import { Journal } from './journal/journal';
 import { KeysService } from './keys/keys-service';
 import { KeysStore } from './keys/keys-store';
+import { Schedule } from './jobs/schedule';
+import { sweepInvitations } from './jobs/sweep-invitations';
+import { sweepSignInAttempts } from './jobs/sweep-sign-in-attempts';
 import { JournalService } from './journal/journal-service';
 import { JournalStore } from './journal/journal-store';
 import { MailService, openTransport } from './mail/mail-service';
@@ -36,6 +42,8 @@ export interface ComposeOptions {
   readonly clock?: Clock;
   /** In tests: an answer that does not fit the contract is an error. */
   readonly validateAnswers?: boolean;
+  /** Node's own arguments for the thread of a fit; none when compiled. */
+  readonly fitThreadArguments?: readonly string[];
   /** How often ended sessions are swept out; 0 never. */
   readonly sessionCleanupMs?: number;
 }
@@ -58,12 +66,16 @@ export interface Services {
   readonly peopleService: PeopleService;
   readonly estimators: EstimatorsService;
   readonly keys: KeysService;
+  readonly fits: FitsService;
+  readonly fitRunner: FitRunner;
   readonly partners: PartnersService;
   readonly sites: SitesService;
   readonly invitationService: InvitationService;
   readonly desk: DeskService;
   readonly journalService: JournalService;
   readonly settingsService: SettingsService;
+  /** Recurring work; idle until started. */
+  readonly schedule: Schedule;
   close(): Promise<void>;
 }
 
@@ -83,9 +95,15 @@ export function compose(options: ComposeOptions): Services {
   const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
   const journalService = new JournalService(new JournalStore(database));
+  const schedule = new Schedule([sweepInvitations(invitations, clock), sweepSignInAttempts(throttle)], log);
   const partners = new PartnersStore(database);
   const sites = new SitesStore(database);
   const keys = new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock });
+  const { fits, fitRunner } = composeFits({
+    ...{ database, estimators, editions, journal, clock, log },
+    databasePath: databasePathOf(config),
+    threadArguments: options.fitThreadArguments ?? [],
+  });
   return {
     config,
     log,
@@ -101,6 +119,8 @@ export function compose(options: ComposeOptions): Services {
     people,
     estimators: new EstimatorsService({ database, estimators, editions, journal, clock }),
     keys,
+    fits,
+    fitRunner,
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),
     signIns: new SignInService(people, throttle, journal, clock),
@@ -119,7 +139,10 @@ export function compose(options: ComposeOptions): Services {
     desk: new DeskService({ desk: new DeskStore(database), editions, journal: journalService, settings, clock }),
     journalService,
     settingsService: new SettingsService(database, settings, journal),
+    schedule,
     close: async () => {
+      await schedule.stop();
+      await fitRunner.close();
       mail.close();
       await database.close();
     },

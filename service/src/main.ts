@@ -11,6 +11,7 @@ async function start(): Promise<void> {
   const log = pino({ level: process.env['LOG_LEVEL'] ?? 'info' });
   const services = compose({ config, log });
   await migrate(services.knex, join(__dirname, '..', '..', 'migrations'));
+  services.fitRunner.open();
   const server = createServer(createApp(services));
   server.listen(config.port, () => log.info(`Console ${config.publicUrl}/`));
 }

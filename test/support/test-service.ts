@@ -60,7 +60,7 @@ export async function startTestService(): Promise<TestService> {
   const config = readConfig({ DATA_DIR: folder, DEMO: 'off', SESSION_SECRET: 'a secret that only the tests know of' });
   await copyTemplateDatabase(databasePathOf(config));
   const clock = new TestClock();
-  const services = compose({ config, log: pino({ level: 'silent' }), clock, validateAnswers: true, sessionCleanupMs: 0 });
+  const services = compose({ config, log: pino({ level: 'silent' }), clock, validateAnswers: true, sessionCleanupMs: 0, fitThreadArguments: ['-r', join(__dirname, 'typescript-hook.js')] });
   const app = createApp(services);
 
   async function addPerson(roles: readonly Role[], options: { name?: string; partnerId?: string } = {}): Promise<TestPerson> {
