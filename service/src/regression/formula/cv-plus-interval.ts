@@ -43,7 +43,7 @@ function fromTop(folds: readonly FoldResiduals[], bases: readonly number[], rank
   }
 }
 
-const DIGITS = 10;
+const DIGITS = 12;
 
 /**
  * Ascending residuals thinned to at most `limit` steps: finest in the upper third, where intervals are read off. Each step
