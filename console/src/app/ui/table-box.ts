@@ -7,7 +7,6 @@ import { Component, input } from '@angular/core';
   styles: `
     :host {
       display: block;
-      max-width: 100%;
       overflow-x: auto;
       // Room for the focus ring of whatever stands at the edge.
       padding: 2px;
