@@ -4,7 +4,7 @@ import { Component, type Provider, type Type } from '@angular/core';
 import { TestBed, type ComponentFixture } from '@angular/core/testing';
 import { MATERIAL_ANIMATIONS } from '@angular/material/core';
 import { Router, provideRouter } from '@angular/router';
-import type { ProblemDetails, Role } from '../../api/contract';
+import type { PersonReference, ProblemDetails, Role } from '../../api/contract';
 import { SessionStore } from '../../api/session-store';
 
 @Component({ template: '' })
@@ -73,9 +73,10 @@ export async function show<Page>(
   inputs: Readonly<Record<string, unknown>>,
   roles: readonly Role[] = ['analyst'],
   providers: readonly Provider[] = [],
+  person: PersonReference = { id: 'person00none', name: 'Nobody in particular' },
 ): Promise<Screen<Page>> {
   Object.defineProperty(globalThis, 'IntersectionObserver', { value: NothingInView, configurable: true, writable: true });
-  const people = { holds: (...wanted: readonly Role[]) => roles.some((role) => wanted.includes(role)), person: () => undefined };
+  const people = { holds: (...wanted: readonly Role[]) => roles.some((role) => wanted.includes(role)), person: () => person };
   TestBed.configureTestingModule({
     providers: [
       provideHttpClient(),
