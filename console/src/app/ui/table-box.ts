@@ -7,6 +7,8 @@ import { Component, input } from '@angular/core';
   styles: `
     :host {
       display: block;
+      // What is read and not seen is placed absolutely: kept inside the box, it cannot widen the page.
+      position: relative;
       overflow-x: auto;
       // Room for the focus ring of whatever stands at the edge.
       padding: 2px;
