@@ -6,3 +6,18 @@ setupZonelessTestEnv({
   errorOnUnknownProperties: true,
   teardown: { destroyAfterEach: true, rethrowErrors: true },
 });
+
+/** jsdom lays nothing out, so nothing ever comes into view. A spec that needs to see more puts its own in place. */
+class NothingInView implements IntersectionObserver {
+  readonly root = null;
+  readonly rootMargin = '';
+  readonly thresholds: readonly number[] = [];
+  observe(): void {}
+  unobserve(): void {}
+  disconnect(): void {}
+  takeRecords(): IntersectionObserverEntry[] {
+    return [];
+  }
+}
+
+globalThis.IntersectionObserver ??= NothingInView;

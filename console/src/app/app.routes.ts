@@ -10,7 +10,11 @@ function section({ label, path, roles }: Section, loadChildren: Route['loadChild
 }
 
 export const routes: Routes = [
-  { path: 'sign-in', title: 'Sign in', loadComponent: () => import('./sign-in/sign-in-page').then((m) => m.SignInPage) },
+  {
+    path: 'sign-in',
+    title: 'Sign in',
+    loadComponent: () => import('./sign-in/sign-in-page').then((m) => m.SignInPage),
+  },
   {
     path: 'invitations',
     title: 'Set your password',

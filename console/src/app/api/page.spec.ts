@@ -2,7 +2,10 @@ import { of, toArray } from 'rxjs';
 import { Page, everyItem, queryOf } from './page';
 
 describe('everyItem', () => {
-  function listOf(total: number): { read: (page: Page) => ReturnType<typeof of<{ items: number[]; total: number }>>; asked: Page[] } {
+  function listOf(total: number): {
+    read: (page: Page) => ReturnType<typeof of<{ items: number[]; total: number }>>;
+    asked: Page[];
+  } {
     const all = Array.from({ length: total }, (_, index) => index);
     const asked: Page[] = [];
     const read = (page: Page) => {

@@ -44,7 +44,13 @@ describe('problemOf', () => {
 
 describe('errorOf', () => {
   it('finds the complaint about a field by its pointer', () => {
-    const error = { ...raggedFile, errors: [{ detail: 'Enter a slug', pointer: '#/slug' }, { detail: 'Too long', pointer: '#/a~1b/0' }] };
+    const error = {
+      ...raggedFile,
+      errors: [
+        { detail: 'Enter a slug', pointer: '#/slug' },
+        { detail: 'Too long', pointer: '#/a~1b/0' },
+      ],
+    };
     const problem = problemOf(new HttpErrorResponse({ status: 422, error }));
     expect(errorOf(problem, 'slug')).toBe('Enter a slug');
     expect(errorOf(problem, 'a/b/0')).toBe('Too long');

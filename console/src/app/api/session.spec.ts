@@ -49,7 +49,10 @@ describe('the session', () => {
 
   afterEach(() => http.verify());
 
-  async function goTo(url: string, answer: (call: ReturnType<HttpTestingController['expectOne']>) => void): Promise<void> {
+  async function goTo(
+    url: string,
+    answer: (call: ReturnType<HttpTestingController['expectOne']>) => void,
+  ): Promise<void> {
     const arrival = harness.navigateByUrl(url);
     await taskTurn(); // The router reaches its guards after a few microtasks.
     answer(http.expectOne('/api/session'));
@@ -94,7 +97,9 @@ describe('the session', () => {
 
   it('leaves a refused sign-in to the sign-in screen', () => {
     const before = TestBed.inject(Router).url;
-    TestBed.inject(SessionStore).signIn({ email: 'ines@marlbay.example', password: 'wrong' }).subscribe({ error: jest.fn() });
+    TestBed.inject(SessionStore)
+      .signIn({ email: 'ines@marlbay.example', password: 'wrong' })
+      .subscribe({ error: jest.fn() });
     http.expectOne('/api/session').flush({ code: 'sign-in-refused' }, { status: 401, statusText: 'Unauthorized' });
     expect(TestBed.inject(Router).url).toBe(before);
   });

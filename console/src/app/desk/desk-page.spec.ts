@@ -57,7 +57,15 @@ const BUSY_DESK: DeskOverview = {
   estimatesToday: 41,
   estimatesLast30Days: 1873,
   recent: [
-    { id: 7, at: '2026-11-03T12:00:00Z', actor: null, action: 'edition.superseded', subjectKind: 'edition', subjectId: 'edition3', summary: 'Edition 3 of Refit labour was superseded' },
+    {
+      id: 7,
+      at: '2026-11-03T12:00:00Z',
+      actor: null,
+      action: 'edition.superseded',
+      subjectKind: 'edition',
+      subjectId: 'edition3',
+      summary: 'Edition 3 of Refit labour was superseded',
+    },
   ],
 };
 
@@ -111,6 +119,21 @@ describe('DeskPage', () => {
     expect(figures.map((figure) => figure.textContent?.trim())).toContain('38\u00a0h');
   });
 
+  it('looks again while a fit is under way, and leaves off when none is', async () => {
+    const first = await open('viewer');
+    jest.useFakeTimers();
+    first.flush(BUSY_DESK);
+    TestBed.tick();
+    jest.advanceTimersByTime(5000);
+    TestBed.tick();
+    http.expectOne('/api/desk').flush({ ...BUSY_DESK, fitsUnderWay: [] });
+    TestBed.tick();
+    jest.advanceTimersByTime(60_000);
+    TestBed.tick();
+    http.expectNone('/api/desk');
+    jest.useRealTimers();
+  });
+
   it('offers an analyst of an empty desk the first step', async () => {
     (await open('analyst')).flush(EMPTY_DESK);
     await fixture.whenStable();
@@ -125,9 +148,14 @@ describe('DeskPage', () => {
   });
 
   it('says what went wrong and reads again when asked', async () => {
-    (await open('viewer')).flush({ code: 'unavailable', title: 'The desk is busy', detail: 'Wait.', requestId: 'r1' }, { status: 503, statusText: 'Unavailable' });
+    (await open('viewer')).flush(
+      { code: 'unavailable', title: 'The desk is busy', detail: 'Wait.', requestId: 'r1' },
+      { status: 503, statusText: 'Unavailable' },
+    );
     await fixture.whenStable();
-    expect((fixture.nativeElement as HTMLElement).querySelector('[role="alert"]')?.textContent).toContain('The desk is busy');
+    expect((fixture.nativeElement as HTMLElement).querySelector('[role="alert"]')?.textContent).toContain(
+      'The desk is busy',
+    );
     (fixture.nativeElement as HTMLElement).querySelector('button')?.click();
     await fixture.whenStable();
     http.expectOne('/api/desk').flush(BUSY_DESK);

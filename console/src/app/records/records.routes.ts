@@ -1,3 +1,18 @@
 import { Routes } from '@angular/router';
+import { withRole } from '../api/session-guard';
 
-export const recordsRoutes: Routes = [];
+export const recordsRoutes: Routes = [
+  { path: '', loadComponent: () => import('./records-page').then((m) => m.RecordsPage) },
+  {
+    path: 'bring-in',
+    title: 'Bring in records',
+    canActivate: [withRole('analyst')],
+    loadComponent: () => import('./bring-in/bring-in-page').then((m) => m.BringInPage),
+  },
+  {
+    path: 'revisions/:id',
+    title: 'Revision',
+    loadComponent: () => import('./revision/revision-page').then((m) => m.RevisionPage),
+  },
+  { path: ':id', title: 'Record set', loadComponent: () => import('./record-set-page').then((m) => m.RecordSetPage) },
+];

@@ -17,5 +17,10 @@ import { SessionStore } from '../api/session-store';
 })
 export class NotPermittedPage {
   private readonly session = inject(SessionStore);
-  protected readonly roles = computed(() => this.session.roles().map((role) => ROLE_NAMES[role].toLowerCase()).join(', '));
+  protected readonly roles = computed(() =>
+    this.session
+      .roles()
+      .map((role) => ROLE_NAMES[role].toLowerCase())
+      .join(', '),
+  );
 }

@@ -1,3 +1,4 @@
+import { NgTemplateOutlet } from '@angular/common';
 import { Component, ElementRef, computed, inject, signal } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { NavigationEnd, Router, RouterLink, RouterLinkActive } from '@angular/router';
@@ -10,7 +11,7 @@ import { SECTION_LIST } from './sections';
 /** Desk name, the sections this person may use, and the person. On narrow screens the sections fold away. */
 @Component({
   selector: 'tb-top-band',
-  imports: [RouterLink, RouterLinkActive],
+  imports: [NgTemplateOutlet, RouterLink, RouterLinkActive],
   templateUrl: './top-band.html',
   styleUrl: './top-band.scss',
   host: { '(keydown.escape)': 'close()', '(document:pointerdown)': 'closeIfOutside($event)' },
@@ -22,7 +23,12 @@ export class TopBand {
   protected readonly session = inject(SessionStore);
 
   protected readonly sections = computed(() => SECTION_LIST.filter(({ roles }) => this.session.holds(...roles)));
-  protected readonly roleNames = computed(() => this.session.roles().map((role) => ROLE_NAMES[role]).join(', '));
+  protected readonly roleNames = computed(() =>
+    this.session
+      .roles()
+      .map((role) => ROLE_NAMES[role])
+      .join(', '),
+  );
   protected readonly open = signal<'sections' | 'person' | undefined>(undefined);
 
   constructor() {

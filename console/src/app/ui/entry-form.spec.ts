@@ -15,7 +15,14 @@ class Host {
 }
 
 function refusal(pointer: string): HttpErrorResponse {
-  const error = { type: '', title: 'Taken', status: 409, code: 'email-taken', requestId: 'r1', errors: [{ detail: 'In use.', pointer }] };
+  const error = {
+    type: '',
+    title: 'Taken',
+    status: 409,
+    code: 'email-taken',
+    requestId: 'r1',
+    errors: [{ detail: 'In use.', pointer }],
+  };
   return new HttpErrorResponse({ status: 409, error });
 }
 

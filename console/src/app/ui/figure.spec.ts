@@ -32,9 +32,12 @@ describe('formatFigure', () => {
     expect(formatFigure(0.2, { signed: true, uncertainty: 12 })).toBe('0');
   });
 
-  it.each([null, undefined, Number.NaN, Number.POSITIVE_INFINITY])('puts a dash where there is no figure (%s)', (value) => {
-    expect(formatFigure(value)).toBe('–');
-  });
+  it.each([null, undefined, Number.NaN, Number.POSITIVE_INFINITY])(
+    'puts a dash where there is no figure (%s)',
+    (value) => {
+      expect(formatFigure(value)).toBe('–');
+    },
+  );
 });
 
 describe('counts, shares and sizes', () => {

@@ -31,7 +31,10 @@ export function listView<Item>(items: () => readonly Item[], options: ListViewOp
   const passing = computed(() => items().filter((item) => passes(item, filter(), options)));
   const sorted = computed(() => sortedBy(passing(), sort(), options));
   // Whatever changes the list starts it again from the top.
-  const offset = linkedSignal<unknown, number>({ source: () => [filter(), sort(), items().length], computation: () => 0 });
+  const offset = linkedSignal<unknown, number>({
+    source: () => [filter(), sort(), items().length],
+    computation: () => 0,
+  });
   return {
     rows: computed(() => sorted().slice(offset(), offset() + ROWS_A_PAGE)),
     total: computed(() => passing().length),

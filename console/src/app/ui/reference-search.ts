@@ -22,7 +22,8 @@ export class ReferenceSearch {
 
   protected submit(): void {
     const reference = this.reference().replace(/\s/g, '').toLowerCase();
-    if (this.form.accept({ reference: complaintAbout(reference) })) void this.router.navigate(['/estimates', reference]);
+    if (this.form.accept({ reference: complaintAbout(reference) }))
+      void this.router.navigate(['/estimates', reference]);
   }
 }
 

@@ -12,7 +12,7 @@ export interface Stamp {
   selector: 'tb-status-stamp',
   template: '{{ stamp().word }}',
   styleUrl: './status-stamp.scss',
-  host: { '[class]': "stamp().tone" },
+  host: { '[class]': 'stamp().tone' },
 })
 export class StatusStamp {
   readonly stamp = input.required<Stamp>();

@@ -5,9 +5,12 @@ describe('complaints about typed text', () => {
     expect(emailComplaint(text)).toBeUndefined();
   });
 
-  it.each(['', 'name', 'name@partner', 'two words@partner.example', `${'a'.repeat(250)}@x.example`])('complains about %p', (text) => {
-    expect(emailComplaint(text)).toBeDefined();
-  });
+  it.each(['', 'name', 'name@partner', 'two words@partner.example', `${'a'.repeat(250)}@x.example`])(
+    'complains about %p',
+    (text) => {
+      expect(emailComplaint(text)).toBeDefined();
+    },
+  );
 
   it('asks for a name that is blank, and says how far one is too long', () => {
     expect(nameComplaint('  ', 'the partner’s name')).toBe('Enter the partner’s name');

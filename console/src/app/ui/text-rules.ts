@@ -13,5 +13,7 @@ export function emailComplaint(text: string): string | undefined {
   const address = text.trim();
   if (address === '') return 'Enter an e-mail address';
   if (address.length > LONGEST_EMAIL) return `An e-mail address has at most ${LONGEST_EMAIL} characters`;
-  return /^[^\s@]+@[^\s@]+\.[^\s@]+$/.test(address) ? undefined : 'Enter an e-mail address such as name@partner.example';
+  return /^[^\s@]+@[^\s@]+\.[^\s@]+$/.test(address)
+    ? undefined
+    : 'Enter an e-mail address such as name@partner.example';
 }

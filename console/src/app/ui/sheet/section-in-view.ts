@@ -17,7 +17,9 @@ export class SectionInView {
   private watch(sections: readonly SheetSection[]): void {
     this.observer?.disconnect();
     this.visible.clear();
-    this.observer = new IntersectionObserver((entries) => this.take(entries, sections), { rootMargin: '0px 0px -60% 0px' });
+    this.observer = new IntersectionObserver((entries) => this.take(entries, sections), {
+      rootMargin: '0px 0px -60% 0px',
+    });
     sections.forEach(({ element }) => this.observer?.observe(element));
   }
 

@@ -1,0 +1,108 @@
+import { RecordsScreen } from '../testing/records-screen';
+import { REVISION, ROWS } from '../testing/refits';
+
+const PATH = '/api/record-revisions/revision2';
+const ROWS_PATH = `${PATH}/rows`;
+
+describe('RevisionPage', () => {
+  async function openReady(...roles: Parameters<typeof RecordsScreen.open>[1][]): Promise<RecordsScreen> {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', ...roles);
+    await screen.answer(PATH, REVISION);
+    await screen.answer(ROWS_PATH, ROWS);
+    return screen;
+  }
+
+  it('says what it is reading while it waits', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
+    expect(screen.text).toContain('Reading the revision');
+    screen.call(PATH);
+  });
+
+  it('says what went wrong', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
+    await screen.refuse(PATH, 404, { code: 'not-found', detail: 'Nothing is kept at this address.' });
+    expect(screen.page.querySelector('[role="alert"]')?.textContent).toContain('Nothing is kept at this address.');
+  });
+
+  it('tells of each column its kind, unit, gaps, range and mean, with honest digits', async () => {
+    const screen = await openReady('viewer');
+    const cells = [...screen.page.querySelectorAll('tb-columns-table tbody tr')].map((row) =>
+      [...row.children].slice(0, 7).map((cell) => cell.textContent?.trim()),
+    );
+    expect(cells).toEqual([
+      ['Length overall', 'Number', 'm', '12 (1%)', '312', '5.2 to 24.6', '11.8'],
+      ['Finished', 'Date', '–', 'none', '312', '15 Oct 2020 to 14 Oct 2026', '–'],
+      ['Hull material', 'Category', '–', '2 (under 1%)', '4', '–', '–'],
+    ]);
+  });
+
+  it('draws the shape of each column and says it in words', async () => {
+    const screen = await openReady('viewer');
+    const svg = screen.page.querySelector('tb-columns-table svg[role="img"]');
+    expect(svg?.querySelector('title')?.textContent).toBe('Length overall');
+    expect(svg?.querySelector('desc')?.textContent).toContain('1,990 rows between');
+    expect(screen.page.querySelector('tb-level-bars')?.textContent).toContain(
+      'GRP 75%, wood 15%, steel 8% and 1 other',
+    );
+  });
+
+  it('opens a column to its figures, which can be read as a table', async () => {
+    const screen = await openReady('viewer');
+    await screen.press('Length overall');
+    expect(screen.button('Length overall').getAttribute('aria-expanded')).toBe('true');
+    expect(screen.text).toContain('5.2 to 24.6 m');
+    await screen.press('Show as table');
+    const firstBin = screen.page.querySelector('figure tbody tr');
+    expect([...(firstBin?.children ?? [])].map((cell) => cell.textContent)).toEqual(['5', '10', '900']);
+  });
+
+  it('shows rows with the gaps named and the figures lined up', async () => {
+    const screen = await openReady('viewer');
+    const cells = [...screen.page.querySelectorAll('tb-rows-table tbody tr')].map((row) =>
+      [...row.children].map((cell) => cell.textContent?.trim()),
+    );
+    expect(cells).toEqual([
+      ['1', '12.25', '15 Oct 2020', 'GRP'],
+      ['2', '9.00', '22 Oct 2020', 'missing'],
+    ]);
+  });
+
+  it('asks for the next page of rows', async () => {
+    const screen = await openReady('viewer');
+    await screen.press('Next');
+    const call = screen.call(ROWS_PATH);
+    expect(call.request.params.toString()).toBe('limit=25&offset=25');
+  });
+
+  it('lets the rows fail without taking the columns along', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
+    await screen.answer(PATH, REVISION);
+    await screen.refuse(ROWS_PATH, 503, { code: 'unavailable', detail: 'Try again in a minute.' });
+    expect(screen.page.querySelector('tb-rows-table [role="alert"]')).not.toBeNull();
+    expect(screen.page.querySelector('tb-columns-table')).not.toBeNull();
+  });
+
+  it('gives the checksum and the way to the file as it was brought in', async () => {
+    const screen = await openReady('viewer');
+    expect(screen.text).toContain(REVISION.sha256);
+    const link = screen.page.querySelector('a[download]');
+    expect(link?.getAttribute('href')).toBe('/api/record-revisions/revision2/original');
+    expect(screen.text).toContain('UTF-8, separated by semicolon, decimal comma');
+  });
+
+  it('leads an analyst to a fit of an estimator on these records', async () => {
+    const screen = await openReady('analyst');
+    await screen.answer('/api/estimators', {
+      items: [{ slug: 'refit-labour', name: 'Refit labour', targetName: 'Labour', unit: 'h' }],
+      total: 1,
+    });
+    const link = screen.page.querySelector('tb-start-fit a');
+    expect(link?.getAttribute('href')).toBe('/estimators/refit-labour/new-fit?recordSet=records1&revision=revision2');
+  });
+
+  it('sends an analyst without an estimator to name one', async () => {
+    const screen = await openReady('analyst');
+    await screen.answer('/api/estimators', { items: [], total: 0 });
+    expect(screen.text).toContain('No estimator to fit for yet');
+  });
+});

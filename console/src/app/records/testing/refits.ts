@@ -1,0 +1,115 @@
+import type {
+  RecordColumn,
+  RecordRevision,
+  RecordRows,
+  RecordSetDetail,
+  RecordSetSummary,
+  RevisionSummary,
+} from '../../api/contract';
+
+/** Invented records of the demonstration's yards, for specs. */
+const INES = { id: 'person01', name: 'Ines Caldwell' };
+
+export function revisionSummary(number: number): RevisionSummary {
+  return {
+    id: `revision${number}`,
+    number,
+    sha256: String(number).repeat(64),
+    rowCount: 2000 + number,
+    columnCount: 3,
+    byteCount: 184_320,
+    fileName: `refits-${number}.csv`,
+    createdAt: '2026-10-21T09:14:00Z',
+    createdBy: INES,
+  };
+}
+
+export const LENGTH: RecordColumn = {
+  name: 'Length overall',
+  position: 0,
+  kind: 'numeric',
+  unit: 'm',
+  missingCount: 12,
+  distinctCount: 312,
+  minimum: 5.2,
+  maximum: 24.6,
+  mean: 11.83217,
+  standardDeviation: 3.214,
+  histogram: { edges: [5, 10, 25], counts: [900, 1090] },
+  levels: [],
+};
+
+export const FINISHED: RecordColumn = {
+  ...LENGTH,
+  name: 'Finished',
+  position: 1,
+  kind: 'date',
+  unit: null,
+  missingCount: 0,
+  minimum: 18_550,
+  maximum: 20_740,
+  mean: 19_700,
+  standardDeviation: 600,
+  histogram: { edges: [18_550, 20_740], counts: [2002] },
+};
+
+export const HULL: RecordColumn = {
+  ...LENGTH,
+  name: 'Hull material',
+  position: 2,
+  kind: 'category',
+  unit: null,
+  missingCount: 2,
+  distinctCount: 4,
+  minimum: null,
+  maximum: null,
+  mean: null,
+  standardDeviation: null,
+  histogram: null,
+  levels: [
+    { value: 'GRP', count: 1500 },
+    { value: 'wood', count: 300 },
+    { value: 'steel', count: 150 },
+    { value: 'aluminium', count: 50 },
+  ],
+};
+
+export const REVISION: RecordRevision = {
+  ...revisionSummary(2),
+  recordSetId: 'records1',
+  recordSetName: 'Refits, nine yards',
+  columns: [LENGTH, FINISHED, HULL],
+  reading: { encoding: 'UTF-8', delimiter: ';', decimal: ',', header: true },
+};
+
+export const ROWS: RecordRows = {
+  total: 2002,
+  offset: 0,
+  columns: ['Length overall', 'Finished', 'Hull material'],
+  rows: [
+    [12.25, 18_550, 'GRP'],
+    [9, 18_557, null],
+  ],
+};
+
+export const RECORD_SET: RecordSetDetail = {
+  id: 'records1',
+  name: 'Refits, nine yards',
+  description: 'One row a finished job.',
+  createdAt: '2023-10-21T09:00:00Z',
+  createdBy: INES,
+  revision: REVISION,
+  revisions: [revisionSummary(1), revisionSummary(2)],
+};
+
+export function recordSetSummary(id: string, name: string, rowCount: number): RecordSetSummary {
+  return {
+    id,
+    name,
+    description: '',
+    createdAt: '2023-10-21T09:00:00Z',
+    createdBy: INES,
+    revision: { ...revisionSummary(1), rowCount },
+    revisionCount: 1,
+  };
+}
