@@ -90,14 +90,21 @@ describe('SignInPage', () => {
     await submit();
     const email = page.querySelector<HTMLInputElement>('input[name="email"]');
     expect(email?.getAttribute('aria-invalid')).toBe('true');
-    expect(page.querySelector(`#${email?.getAttribute('aria-describedby')}`)?.textContent).toContain('Enter your e-mail');
+    expect(page.querySelector(`#${email?.getAttribute('aria-describedby')}`)?.textContent).toContain(
+      'Enter your e-mail',
+    );
     expect(document.activeElement).toBe(email);
   });
 
   it('says what to do when the desk refuses, and keeps what was typed', async () => {
     await open('/sign-in');
     await signInAs('ines@marlbay.example', 'wrong');
-    const refusal = { code: 'sign-in-refused', title: 'Not signed in', detail: 'Check both and try again.', requestId: 'r1' };
+    const refusal = {
+      code: 'sign-in-refused',
+      title: 'Not signed in',
+      detail: 'Check both and try again.',
+      requestId: 'r1',
+    };
     http.expectOne('/api/session').flush(refusal, { status: 401, statusText: 'Unauthorized' });
     await harness.fixture.whenStable();
     expect(page.querySelector('[role="alert"]')?.textContent).toContain('Check both and try again.');
@@ -108,7 +115,13 @@ describe('SignInPage', () => {
     await open('/sign-in');
     await signInAs('ines@marlbay.example', 'wrong');
     jest.useFakeTimers();
-    const refusal = { code: 'sign-in-throttled', title: 'Too many attempts', detail: 'Wait.', requestId: 'r1', retryAfter: 2 };
+    const refusal = {
+      code: 'sign-in-throttled',
+      title: 'Too many attempts',
+      detail: 'Wait.',
+      requestId: 'r1',
+      retryAfter: 2,
+    };
     http.expectOne('/api/session').flush(refusal, { status: 429, statusText: 'Too Many Requests' });
     TestBed.tick();
     jest.advanceTimersByTime(0);
