@@ -54,7 +54,7 @@ export class EstimatorsService {
         'estimators.slug',
         () => new DeskError('slug-taken', `${slug} names another estimator. Choose another public name.`),
       );
-      await journal.write({ actorId: person.id, action: 'estimator-created', subjectKind: 'estimator', subjectId: id, summary: `${person.name} named the estimator ${name} (${slug})` });
+      await journal.write({ actorId: person.id, action: 'estimator-created', subjectKind: 'estimator', subjectId: slug, summary: `${person.name} named the estimator ${name} (${slug})` });
     });
     return this.read(slug);
   }
@@ -66,7 +66,7 @@ export class EstimatorsService {
       requireSameUnit(record, change);
       await estimators.update(record.id, change);
       const what = Object.keys(change).join(', ');
-      await journal.write({ actorId: person.id, action: 'estimator-changed', subjectKind: 'estimator', subjectId: record.id, summary: `${person.name} changed ${what} of ${slug}` });
+      await journal.write({ actorId: person.id, action: 'estimator-changed', subjectKind: 'estimator', subjectId: slug, summary: `${person.name} changed ${what} of ${slug}` });
     });
     return this.read(slug);
   }
