@@ -12,6 +12,7 @@ export interface Config {
   readonly partnerPageUrl: string;
   readonly sessionSecret: string;
   readonly smtpUrl: string | null;
+  readonly logLevel: string;
   readonly administrator: { readonly email: string; readonly password: string } | null;
 }
 
@@ -42,6 +43,9 @@ function parseOrigin(text: string): string | undefined {
   const url = new URL(text);
   return /^https?:$/.test(url.protocol) && url.pathname === '/' && url.search === '' ? url.origin : undefined;
 }
+
+const logLevels: readonly string[] = ['silent', 'error', 'warn', 'info', 'debug'];
+const parseLogLevel = (text: string): string | undefined => (logLevels.includes(text) ? text : undefined);
 
 const parseSwitch = (text: string): boolean | undefined => (text === 'on' ? true : text === 'off' ? false : undefined);
 
@@ -82,6 +86,7 @@ export function readConfig(environment: Environment): Config {
   const demonstration = read(environment, 'DEMO', 'on', 'on or off', parseSwitch);
   const publicUrl = read(environment, 'PUBLIC_URL', `http://localhost:${port}`, 'an http:// or https:// address without a path', parseOrigin);
   const smtpUrl = readSmtpUrl(environment);
+  const logLevel = read(environment, 'LOG_LEVEL', 'warn', `one of ${logLevels.join(', ')}`, parseLogLevel);
   const administrator = readAdministrator(environment);
   mkdirSync(dataFolder, { recursive: true });
   return {
@@ -93,6 +98,7 @@ export function readConfig(environment: Environment): Config {
     partnerPageUrl: `http://localhost:${partnerPagePort}`,
     sessionSecret: sessionSecretOf(environment, dataFolder),
     smtpUrl,
+    logLevel,
     administrator,
   };
 }

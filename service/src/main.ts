@@ -1,23 +1,62 @@
-import { createServer } from 'node:http';
-import { join } from 'node:path';
+import { createServer, type Server } from 'node:http';
+import type { Express } from 'express';
 import { pino } from 'pino';
 import { createApp } from './app';
-import { compose } from './compose';
-import { ConfigurationError, readConfig } from './config';
+import { compose, type Services } from './compose';
+import { ConfigurationError, readConfig, type Config } from './config';
+import { migrationsFolder } from './database/migrations-folder';
 import { migrate } from './database/migrator';
+import { createPartnerPage } from './partner-page/partner-page';
+import { enterFirstAdministrator } from './people/first-administrator';
+import { welcome } from './welcome';
+
+async function listen(app: Express, port: number, variable: string): Promise<Server> {
+  const server = createServer(app);
+  return new Promise((resolve, reject) => {
+    server.once('error', (error: NodeJS.ErrnoException) =>
+      reject(error.code === 'EADDRINUSE' ? new ConfigurationError(variable, String(port), 'a port that no other program uses') : error),
+    );
+    server.listen(port, () => resolve(server));
+  });
+}
+
+/** Takes no new calls, lets the running ones end, then closes the database. A second signal ends at once. */
+function stopOnSignal(servers: readonly Server[], services: Services): void {
+  const stop = (): void => {
+    for (const server of servers) {
+      server.close();
+      server.closeIdleConnections();
+    }
+    setTimeout(() => servers.forEach((server) => server.closeAllConnections()), 2000).unref();
+    void services.close().then(() => process.exit(0));
+  };
+  for (const signal of ['SIGINT', 'SIGTERM'] as const) {
+    process.once(signal, stop);
+  }
+}
+
+async function open(config: Config, services: Services): Promise<void> {
+  await migrate(services.knex, migrationsFolder);
+  if (!config.demonstration) await enterFirstAdministrator({ ...services, administrator: config.administrator });
+  services.fitRunner.open();
+  services.schedule.start();
+}
 
 async function start(): Promise<void> {
   const config = readConfig(process.env);
-  const log = pino({ level: process.env['LOG_LEVEL'] ?? 'info' });
+  const log = pino({ level: config.logLevel });
   const services = compose({ config, log });
-  await migrate(services.knex, join(__dirname, '..', '..', 'migrations'));
-  services.fitRunner.open();
-  const server = createServer(createApp(services));
-  server.listen(config.port, () => log.info(`Console ${config.publicUrl}/`));
+  await open(config, services);
+  const servers = [
+    await listen(createApp(services), config.port, 'PORT'),
+    await listen(createPartnerPage(config), config.partnerPagePort, 'PARTNER_PAGE_PORT'),
+  ];
+  stopOnSignal(servers, services);
+  console.log(welcome(config));
 }
 
 start().catch((error: unknown) => {
   // A wrong setting is told in one line, without a stack.
   console.error(error instanceof ConfigurationError ? error.message : error);
-  process.exitCode = 1;
+  process.exit(1);
 });
