@@ -79,6 +79,22 @@ describe('Shell', () => {
     expect(document.activeElement).toBe(button('Ines Caldwell'));
   });
 
+  it('leads from the reference of an estimate to the estimate', async () => {
+    await open('viewer');
+    await press('Search');
+    const reference = shell.querySelector<HTMLInputElement>('#search-panel input') as HTMLInputElement;
+    expect(document.activeElement).toBe(reference);
+    reference.value = ' 4K2M 9X7Q 1B ';
+    reference.dispatchEvent(new Event('input'));
+    await press('Find');
+    expect(TestBed.inject(Router).url).toBe('/estimates/4k2m9x7q1b');
+  });
+
+  it('has nothing to search for a partner developer', async () => {
+    await open('partner-developer');
+    expect(button('Search')).toBeUndefined();
+  });
+
   it('signs out and leaves nothing behind', async () => {
     await open('viewer');
     await press('Ines Caldwell');

@@ -1,23 +1,27 @@
 import { NgTemplateOutlet } from '@angular/common';
-import { Component, ElementRef, computed, inject, signal } from '@angular/core';
+import { Component, ElementRef, Injector, afterNextRender, computed, inject, signal } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { NavigationEnd, Router, RouterLink, RouterLinkActive } from '@angular/router';
 import { filter } from 'rxjs';
-import { ROLE_NAMES } from '../api/roles';
+import { DESK_ROLES, ROLE_NAMES } from '../api/roles';
 import { SessionStore } from '../api/session-store';
 import { Announcer } from '../ui/announcer';
+import { ReferenceSearch } from '../ui/reference-search';
 import { SECTION_LIST } from './sections';
+
+type Panel = 'sections' | 'search' | 'person';
 
 /** Desk name, the sections this person may use, and the person. On narrow screens the sections fold away. */
 @Component({
   selector: 'tb-top-band',
-  imports: [NgTemplateOutlet, RouterLink, RouterLinkActive],
+  imports: [NgTemplateOutlet, ReferenceSearch, RouterLink, RouterLinkActive],
   templateUrl: './top-band.html',
   styleUrl: './top-band.scss',
   host: { '(keydown.escape)': 'close()', '(document:pointerdown)': 'closeIfOutside($event)' },
 })
 export class TopBand {
   private readonly router = inject(Router);
+  private readonly injector = inject(Injector);
   private readonly announcer = inject(Announcer);
   private readonly element = inject<ElementRef<HTMLElement>>(ElementRef);
   protected readonly session = inject(SessionStore);
@@ -29,15 +33,22 @@ export class TopBand {
       .map((role) => ROLE_NAMES[role])
       .join(', '),
   );
-  protected readonly open = signal<'sections' | 'person' | undefined>(undefined);
+  protected readonly mayFind = computed(() => this.session.holds(...DESK_ROLES));
+  protected readonly open = signal<Panel | undefined>(undefined);
 
   constructor() {
     const arrivals = this.router.events.pipe(filter((event) => event instanceof NavigationEnd));
     arrivals.pipe(takeUntilDestroyed()).subscribe(() => this.open.set(undefined));
   }
 
-  protected toggle(panel: 'sections' | 'person'): void {
+  protected toggle(panel: Panel): void {
     this.open.update((open) => (open === panel ? undefined : panel));
+    if (this.open() === 'search') this.focusSearch();
+  }
+
+  private focusSearch(): void {
+    const focus = (): void => this.element.nativeElement.querySelector<HTMLElement>('#search-panel input')?.focus();
+    afterNextRender({ read: focus }, { injector: this.injector });
   }
 
   protected close(): void {

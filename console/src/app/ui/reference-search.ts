@@ -1,5 +1,4 @@
 import { Component, inject, signal } from '@angular/core';
-import { FormsModule } from '@angular/forms';
 import { Router } from '@angular/router';
 import { EntryForm } from './entry-form';
 import { Field, FieldInput } from './field';
@@ -10,7 +9,7 @@ const REFERENCE = /^[0-9a-z]{8,32}$/;
 /** Leads from an estimate's reference to where its number came from. Stands wherever the desk may be asked. */
 @Component({
   selector: 'tb-reference-search',
-  imports: [Field, FieldInput, FormsModule],
+  imports: [Field, FieldInput],
   templateUrl: './reference-search.html',
   styleUrl: './reference-search.scss',
 })
@@ -20,7 +19,8 @@ export class ReferenceSearch {
   protected readonly form = new EntryForm<'reference'>();
   protected readonly reference = signal('');
 
-  protected submit(): void {
+  protected submit(event: Event): void {
+    event.preventDefault();
     const reference = this.reference().replace(/\s/g, '').toLowerCase();
     if (this.form.accept({ reference: complaintAbout(reference) }))
       void this.router.navigate(['/estimates', reference]);
