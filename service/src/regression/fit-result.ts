@@ -162,7 +162,7 @@ function reportOf(fit: FinishedFit): FitReport {
   };
 }
 
-function warningsOf({ context, solution, foldsConverged, lever, choice, plan }: FinishedFit): string[] {
+function warningsOf({ context, solution, foldsConverged, lever, choice, plan, weights }: FinishedFit): string[] {
   const { read, design, specification } = context;
   const warnings = [...read.warnings];
   const constant = design.columns.filter((column) => column.leftOut === 'constant');
@@ -172,7 +172,8 @@ function warningsOf({ context, solution, foldsConverged, lever, choice, plan }: 
   }
   if (!solution.converged) warnings.push('The path did not reach the duality gap at every penalty.');
   if (!foldsConverged) warnings.push('Some folds did not reach the duality gap.');
-  if (lever === null) warnings.push('Too many inputs (or none with a weight) for a check of unusual combinations; ranges are still checked.');
+  if (weights.every((weight) => weight === 0)) warnings.push('Every weight is 0 at the chosen penalty: the estimate is the same for every case.');
+  else if (lever === null) warnings.push('Too many inputs for a check of unusual combinations; ranges are still checked.');
   const heldOutCount = read.count;
   if (Math.ceil(specification.intervalLevel * (heldOutCount + 1) - 1e-9) > heldOutCount) {
     warnings.push('Too few records for an interval of this level; the widest held-out residual is used.');

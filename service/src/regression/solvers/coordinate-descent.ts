@@ -1,5 +1,5 @@
 import { DUALITY_GAP } from '../conventions';
-import { cholesky, solveCholesky } from '../linear-algebra/cholesky';
+import { solveOnActiveSet } from './active-set';
 import { allowedPull, bestWeight, relativeGap, type HeldPenalty } from './held-penalty';
 import type { HeldProblem } from './project-free';
 
@@ -40,7 +40,7 @@ export function descend(held: HeldProblem, penalty: HeldPenalty, previous: HeldP
   let polished = false;
   for (;;) {
     iterations += sweepUntilStill(held, penalty, state, working, tolerance);
-    if (polish || iterations > SWEEPS_BEFORE_POLISH) polished = solveActive(held, penalty, state, working);
+    if (polish || iterations > SWEEPS_BEFORE_POLISH) polished = solveOnActiveSet(held, penalty, state.weights, MOST_POLISHED);
     refreshGradient(held, state);
     if (addViolators(held, penalty, state, working, inside)) continue;
     const gap = relativeGap(held, penalty, state.weights, state.gradient);
@@ -119,27 +119,4 @@ function addViolators(held: HeldProblem, penalty: HeldPenalty, state: DescentSta
     added = true;
   }
   return added;
-}
-
-/**
- * (A + square)_AA b_A = c_A − absolute · sign(b_A) on the active set; kept only when every sign stays as it is, which makes it
- * the exact optimum for that active set. Returns whether it was kept.
- */
-function solveActive(held: HeldProblem, penalty: HeldPenalty, state: DescentState, working: readonly number[]): boolean {
-  const active = working.filter((j) => state.weights[j] !== 0);
-  const count = active.length;
-  if (count === 0) return true;
-  if (count > MOST_POLISHED) return false;
-  const matrix = new Float64Array(count * count);
-  active.forEach((row, i) => {
-    for (let j = 0; j <= i; j += 1) matrix[i * count + j] = held.gram[row * held.size + active[j]];
-    matrix[i * count + i] += penalty.square[row];
-  });
-  const factor = cholesky(matrix, count);
-  if (factor.dependent >= 0) return false;
-  const right = active.map((j) => held.cross[j] - penalty.absolute[j] * Math.sign(state.weights[j]));
-  const solved = solveCholesky(factor, right);
-  if (active.some((j, i) => Math.sign(solved[i]) !== Math.sign(state.weights[j]))) return false;
-  active.forEach((j, i) => (state.weights[j] = solved[i]));
-  return true;
 }
