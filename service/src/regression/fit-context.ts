@@ -42,13 +42,14 @@ export function prepareContext(records: RecordTable, specification: ResolvedSpec
   if (design.columns.every((column) => column.leftOut !== undefined)) {
     throw new RegressionError('no-usable-input', 'Every input has the same reading in all records, so nothing can be learnt from them.');
   }
+  const kind = solverKind(specification.method, design.columns);
   return {
     specification,
     read,
     plan,
     design,
-    route: chooseRoute(design),
-    settings: { kind: solverKind(specification.method, design.columns), mixing: specification.mixing, polish: true },
+    route: chooseRoute(design, kind),
+    settings: { kind, mixing: specification.mixing, polish: true },
     designPerFold: specification.inputs.some((input) => input.transform === 'spline'),
     run: hooks.runFolds ?? runHere,
     progress: hooks.onProgress ?? (() => undefined),

@@ -141,9 +141,13 @@ function pathOf({ context, plan, solution, crossValidation, part }: FinishedFit)
 }
 
 const ROUTE_NAMES = {
-  'least-squares': { moments: 'Cholesky of the moments', orthogonal: 'QR of the records with refinement' },
-  ridge: { moments: 'tridiagonal form of the moments', orthogonal: 'QR and SVD of the records' },
-  descent: { moments: 'coordinate descent on the moments', orthogonal: 'coordinate descent on moments of centred records' },
+  'least-squares': { moments: 'Cholesky of the moments', orthogonal: 'QR of the records with refinement', wide: 'QR of the records with refinement' },
+  ridge: { moments: 'tridiagonal form of the moments', orthogonal: 'QR and SVD of the records', wide: 'tridiagonal form of the dual' },
+  descent: {
+    moments: 'coordinate descent on the moments',
+    orthogonal: 'coordinate descent on moments of centred records',
+    wide: 'coordinate descent on a working set of the records',
+  },
 } as const;
 
 function reportOf(fit: FinishedFit): FitReport {

@@ -120,8 +120,9 @@ function groundOf(context: FitContext, part: TrainingPart, plan: PenaltyPlan, cr
   const { specification, design, read, settings } = context;
   const { lambdas, form, penalties } = plan;
   const plainRidge = form !== null && settings.kind === 'ridge';
+  refuseWideLeaveOneOut(context);
   const cost = read.count * part.problem.size * (part.problem.size + lambdas.length);
-  const wanted = plainRidge && (specification.penalty.rule === 'leave-one-out' || cost <= CHEAP_LEAVE_ONE_OUT);
+  const wanted = plainRidge && context.route !== 'wide' && (specification.penalty.rule === 'leave-one-out' || cost <= CHEAP_LEAVE_ONE_OUT);
   return {
     lambdas,
     crossValidation,
@@ -130,6 +131,12 @@ function groundOf(context: FitContext, part: TrainingPart, plan: PenaltyPlan, cr
     evidence: plan.evidence?.lambda ?? null,
     settled: plan.settled,
   };
+}
+
+/** The hat matrix by columns that leave-one-out needs does not exist on the wide route. */
+function refuseWideLeaveOneOut({ route, specification }: FitContext): void {
+  if (route !== 'wide' || specification.penalty.rule !== 'leave-one-out') return;
+  throw new RegressionError('bad-specification', 'Leave-one-out is not offered for so many inputs beside so few records. Choose generalised cross-validation or folds.');
 }
 
 /** The final fit never drops a column silently: least squares with dependent inputs has no single answer. */

@@ -128,3 +128,8 @@ export function problemOfRows(rows: StandardisedRows): StandardisedProblem {
   }
   return { ...rows.problem, gram, cross };
 }
+
+/** The problem on the wide route: no products of columns are formed (`gram` and `cross` are empty). */
+export function withoutGram(rows: StandardisedRows): StandardisedProblem {
+  return { ...rows.problem, gram: new Float64Array(0), cross: new Float64Array(0) };
+}

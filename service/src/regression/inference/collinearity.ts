@@ -3,7 +3,7 @@ import type { DesignMatrix } from '../design/design-matrix';
 import type { ReadRecords } from '../design/read-records';
 import { factorise, upper } from '../linear-algebra/householder-qr';
 import type { ConditionIndex, FitDiagnostics } from '../result';
-import type { TrainingPart } from '../solvers/solve-path';
+import { isWide, type TrainingPart } from '../solvers/solve-path';
 import { symmetricEigen } from './condition';
 
 /** Beyond this many columns an eigendecomposition for diagnostics costs more than the fit. */
@@ -40,7 +40,7 @@ export function collinearity(
   positions: readonly number[],
   labels: readonly LabelledColumn[],
 ): Pick<FitDiagnostics, 'varianceInflation' | 'conditionIndices' | 'conditionColumns'> {
-  if (positions.length === 0 || positions.length > MOST_COLUMNS) return { varianceInflation: [], conditionIndices: [], conditionColumns: [] };
+  if (positions.length === 0 || positions.length > MOST_COLUMNS || isWide(part)) return { varianceInflation: [], conditionIndices: [], conditionColumns: [] };
   const factors = varianceInflation(part, positions);
   return {
     varianceInflation: labels.map((label, at) => ({ ...label, factor: factors[at] })),

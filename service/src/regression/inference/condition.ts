@@ -3,13 +3,14 @@ import type { StandardisedProblem } from '../design/moments';
 import { upper } from '../linear-algebra/householder-qr';
 import { tridiagonalise } from '../linear-algebra/tridiagonal';
 import { tridiagonalEigenvalues } from '../linear-algebra/tridiagonal-eigenvalues';
-import type { TrainingPart } from '../solvers/solve-path';
+import { isWide, type TrainingPart } from '../solvers/solve-path';
 import { triangularOf } from './lever';
 
 /** Largest ÷ smallest singular value of the standardised columns at `positions`; null when it is beyond double precision. */
 export function conditionNumber(part: TrainingPart, positions: readonly number[]): number | null {
   const size = positions.length;
   if (size === 0) return 1;
+  if (isWide(part)) return null;
   const qr = triangularOf(part, positions);
   if (qr === null) return conditionOfGram(part.problem, positions);
   const steps = Math.min(qr.diagonal.length, size);

@@ -4,6 +4,7 @@ import { factorise, solveUpper, type QrForm } from '../linear-algebra/householde
 import type { ColumnPenalties } from '../solvers/column-penalties';
 import type { TrainingPart } from '../solvers/solve-path';
 import { hatFeatures, penalisedInverse } from './hat-features';
+import { dotAt } from '../solvers/wide-problem';
 import type { LeverageMatrix } from './influence';
 
 /** Beyond this many columns no leverage matrix is kept: it would dwarf the formula, and no two cases would be alike anyway. */
@@ -43,13 +44,20 @@ function inverseFor(request: LeverRequest, positions: readonly number[]): Float6
   if (context.settings.kind === 'ridge') return penalisedInverse(hatFeatures(part.problem, penalties), lambda);
   if (context.settings.kind === 'least-squares' && part.rows !== null) return inverseFromRows(part, positions);
   const square = lambda * (1 - context.settings.mixing);
-  const { gram, size } = part.problem;
+  const entry = productsOf(part);
   const matrix = (extra: number): Float64Array =>
     Float64Array.from(
-      positions.flatMap((row) => positions.map((column) => gram[row * size + column] + (row === column ? square * penalties.factors[row] + extra : 0))),
+      positions.flatMap((row) => positions.map((column) => entry(row, column) + (row === column ? square * penalties.factors[row] + extra : 0))),
     );
   const factor = cholesky(matrix(0), positions.length);
   return invertCholesky(factor.dependent < 0 ? factor : cholesky(matrix(SMALL_RIDGE), positions.length));
+}
+
+/** S_ij; on the wide route from the rows. */
+function productsOf({ problem, rows }: TrainingPart): (row: number, column: number) => number {
+  if (rows === null || problem.gram.length > 0) return (row, column) => problem.gram[row * problem.size + column];
+  const { x, rowCount } = rows;
+  return (row, column) => dotAt(x, row * rowCount, x, column * rowCount, rowCount) / problem.weightSum;
 }
 
 /** R of the independent columns of a part's rows. */

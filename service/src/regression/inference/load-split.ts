@@ -8,7 +8,7 @@ import { penaltiesOf, type ColumnPenalties } from '../solvers/column-penalties';
 import { leastSquaresFromMoments } from '../solvers/least-squares';
 import { projectFree } from '../solvers/project-free';
 import { ridgeFromMoments } from '../solvers/ridge-moments';
-import { descendPath } from '../solvers/solve-path';
+import { descendPath, isWide } from '../solvers/solve-path';
 import { findSharedLoad } from './shared-load';
 
 const MOST_INPUTS = 150;
@@ -26,7 +26,7 @@ export function sharedLoad(fit: FinishedFit): SharedLoadGroup[] {
     const positions = Array.from(problem.kept.keys()).filter((position) => context.design.columns[problem.kept[position]].input === at);
     return positions.length === 0 ? [] : [{ name: input.column, positions }];
   });
-  if (inputs.length > MOST_INPUTS || problem.size > MOST_COLUMNS) return [];
+  if (inputs.length > MOST_INPUTS || problem.size > MOST_COLUMNS || isWide(part)) return [];
   const groups = findSharedLoad({ gram: problem.gram, size: problem.size, inputs });
   if (groups.length === 0) return [];
   const splits = solveThreeWays(fit);

@@ -14,74 +14,118 @@ export interface Tridiagonal {
   readonly betas: Float64Array;
 }
 
-/** `matrix` (row-major, symmetric) is overwritten. Cost 4/3 n³. */
+/** The last reflection, not yet applied to the trailing block: A ← A − v wᵀ − w vᵀ. */
+interface Pending {
+  readonly v: Float64Array;
+  readonly w: Float64Array;
+}
+
+/**
+ * `matrix` (row-major, symmetric; only its lower triangle is used) is overwritten. Each step applies the reflection before and
+ * multiplies by the new one in a single pass over the lower triangle, so that memory is read once. Cost 4/3 n³.
+ */
 export function tridiagonalise(matrix: Float64Array, size: number): Tridiagonal {
   const diagonal = new Float64Array(size);
   const offDiagonal = new Float64Array(size);
   const betas = new Float64Array(size);
-  const product = new Float64Array(size);
-  for (let k = 0; k < size - 1; k += 1) {
+  const reflectors = new Float64Array(size * size);
+  let pending: Pending = { v: new Float64Array(size), w: new Float64Array(size) };
+  for (let k = 0; k < size; k += 1) {
+    updateColumn(matrix, size, k, pending);
     diagonal[k] = matrix[k * size + k];
-    const row = matrix.subarray(k * size, (k + 1) * size);
-    [betas[k], offDiagonal[k]] = makeReflector(row, k + 1, size);
-    if (betas[k] !== 0) reflectBothSides(matrix, size, k, betas[k], product);
+    if (k === size - 1) break;
+    const v = new Float64Array(size);
+    for (let i = k + 1; i < size; i += 1) v[i] = matrix[i * size + k];
+    [betas[k], offDiagonal[k]] = makeReflector(v, k + 1, size);
+    reflectors.set(v, k * size);
+    const product = updateAndMultiply(matrix, size, k + 1, pending, v);
+    pending = { v, w: halfStep(product, v, betas[k], k + 1, size) };
+    if (betas[k] === 0) pending = { v: new Float64Array(size), w: new Float64Array(size) };
   }
-  if (size > 0) diagonal[size - 1] = matrix[size * size - 1];
-  return { size, diagonal, offDiagonal, reflectors: matrix, betas };
+  return { size, diagonal, offDiagonal, reflectors, betas };
 }
 
-/** Turns row[from…] into the vector v with (I − βvvᵀ) row = (α, 0, …); returns β and α. */
-function makeReflector(row: Float64Array, from: number, size: number): [number, number] {
+/** Column k of the trailing block with the pending reflection applied. */
+function updateColumn(matrix: Float64Array, size: number, k: number, { v, w }: Pending): void {
+  for (let i = k; i < size; i += 1) matrix[i * size + k] -= v[i] * w[k] + w[i] * v[k];
+}
+
+/** Turns vector[from…] into v with (I − βvvᵀ) vector = (α, 0, …); returns β and α. */
+function makeReflector(vector: Float64Array, from: number, size: number): [number, number] {
   let largest = 0;
-  for (let j = from; j < size; j += 1) largest = Math.max(largest, Math.abs(row[j]));
+  for (let j = from; j < size; j += 1) largest = Math.max(largest, Math.abs(vector[j]));
   if (largest === 0) return [0, 0];
   let tail = 0;
-  for (let j = from + 1; j < size; j += 1) tail += (row[j] / largest) ** 2;
-  if (tail === 0) return [0, row[from]];
-  const head = row[from] / largest;
+  for (let j = from + 1; j < size; j += 1) tail += (vector[j] / largest) ** 2;
+  if (tail === 0) return [0, vector[from]];
+  const head = vector[from] / largest;
   const norm = Math.sqrt(head * head + tail);
   const alpha = head > 0 ? -norm : norm;
-  row[from] = head - alpha;
-  for (let j = from + 1; j < size; j += 1) row[j] /= largest;
+  vector[from] = head - alpha;
+  for (let j = from + 1; j < size; j += 1) vector[j] /= largest;
   return [2 / ((head - alpha) ** 2 + tail), alpha * largest];
 }
 
-/** A ← H A H on the trailing block: p = βAv, w = p − (β pᵀv / 2) v, A ← A − v wᵀ − w vᵀ; lower triangle mirrored as it goes. */
-function reflectBothSides(matrix: Float64Array, size: number, k: number, beta: number, product: Float64Array): void {
-  const vectorAt = k * size;
+/** A ← A − v wᵀ − w vᵀ on the block from `from` on, and A·next in the same pass; two rows at a time. */
+function updateAndMultiply(matrix: Float64Array, size: number, from: number, { v, w }: Pending, next: Float64Array): Float64Array {
+  const product = new Float64Array(size);
+  let i = from;
+  for (; i + 1 < size; i += 2) {
+    updateRowPair(matrix, size, i, from, v, w, next, product);
+  }
+  if (i < size) updateRow(matrix, size, i, from, v, w, next, product);
+  return product;
+}
+
+/* eslint-disable max-params -- the innermost passes: an object would be built for every row */
+function updateRow(matrix: Float64Array, size: number, i: number, from: number, v: Float64Array, w: Float64Array, next: Float64Array, product: Float64Array): void {
+  const at = i * size;
+  const vi = v[i], wi = w[i], ni = next[i];
+  let sum = 0;
+  for (let j = from; j < i; j += 1) {
+    const value = matrix[at + j] - (vi * w[j] + wi * v[j]);
+    matrix[at + j] = value;
+    sum += value * next[j];
+    product[j] += value * ni;
+  }
+  const value = matrix[at + i] - 2 * vi * wi;
+  matrix[at + i] = value;
+  product[i] += sum + value * ni;
+}
+
+function updateRowPair(matrix: Float64Array, size: number, i: number, from: number, v: Float64Array, w: Float64Array, next: Float64Array, product: Float64Array): void {
+  const first = i * size, second = first + size;
+  const v0 = v[i], w0 = w[i], n0 = next[i], v1 = v[i + 1], w1 = w[i + 1], n1 = next[i + 1];
+  let s0 = 0, s1 = 0;
+  for (let j = from; j < i; j += 1) {
+    const vj = v[j], wj = w[j], nj = next[j];
+    const a = matrix[first + j] - (v0 * wj + w0 * vj);
+    const b = matrix[second + j] - (v1 * wj + w1 * vj);
+    matrix[first + j] = a;
+    matrix[second + j] = b;
+    s0 += a * nj;
+    s1 += b * nj;
+    product[j] += a * n0 + b * n1;
+  }
+  const corner = matrix[first + i] - 2 * v0 * w0;
+  const below = matrix[second + i] - (v1 * w0 + w1 * v0);
+  const last = matrix[second + i + 1] - 2 * v1 * w1;
+  matrix[first + i] = corner;
+  matrix[second + i] = below;
+  matrix[second + i + 1] = last;
+  product[i] += s0 + corner * n0 + below * n1;
+  product[i + 1] += s1 + below * n0 + last * n1;
+}
+/* eslint-enable max-params */
+
+/** w = βp − (β² pᵀv / 2) v. */
+function halfStep(product: Float64Array, v: Float64Array, beta: number, from: number, size: number): Float64Array {
+  const w = new Float64Array(size);
   let inner = 0;
-  for (let i = k + 1; i < size; i += 1) {
-    product[i] = beta * dot(matrix, i * size, vectorAt, k + 1, size);
-    inner += product[i] * matrix[vectorAt + i];
-  }
-  const half = (beta * inner) / 2;
-  for (let i = k + 1; i < size; i += 1) product[i] -= half * matrix[vectorAt + i];
-  for (let i = k + 1; i < size; i += 1) rankTwoRow(matrix, size, { row: i * size, vectorAt, from: k + 1, v: matrix[vectorAt + i] }, product);
-}
-
-function dot(matrix: Float64Array, rowAt: number, vectorAt: number, from: number, size: number): number {
-  let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
-  let j = from;
-  for (; j + 3 < size; j += 4) {
-    s0 += matrix[rowAt + j] * matrix[vectorAt + j];
-    s1 += matrix[rowAt + j + 1] * matrix[vectorAt + j + 1];
-    s2 += matrix[rowAt + j + 2] * matrix[vectorAt + j + 2];
-    s3 += matrix[rowAt + j + 3] * matrix[vectorAt + j + 3];
-  }
-  for (; j < size; j += 1) s0 += matrix[rowAt + j] * matrix[vectorAt + j];
-  return s0 + s1 + (s2 + s3);
-}
-
-interface RankTwoRow {
-  readonly row: number;
-  readonly vectorAt: number;
-  readonly from: number;
-  readonly v: number;
-}
-
-function rankTwoRow(matrix: Float64Array, size: number, { row, vectorAt, from, v }: RankTwoRow, product: Float64Array): void {
-  const w = product[row / size];
-  for (let j = from; j < size; j += 1) matrix[row + j] -= v * product[j] + w * matrix[vectorAt + j];
+  for (let i = from; i < size; i += 1) inner += product[i] * v[i];
+  const half = (beta * beta * inner) / 2;
+  for (let i = from; i < size; i += 1) w[i] = beta * product[i] - half * v[i];
+  return w;
 }
 
 /** vectors ← Qᵀ vectors (count columns, row-major n × count). */

@@ -1,7 +1,8 @@
 import type { TrainingPart, SolverKind } from '../solvers/solve-path';
 import { penaltiesOf, type ColumnPenalties } from '../solvers/column-penalties';
 import { projectFree } from '../solvers/project-free';
-import { ridgeForm } from '../solvers/solve-path';
+import { isWide, ridgeForm } from '../solvers/solve-path';
+import { wideProblem } from '../solvers/wide-problem';
 import { degreesOfFreedom, type RidgeForm } from '../solvers/ridge-form';
 import type { DesignColumn } from '../design/design-matrix';
 import type { ResolvedSpecification } from '../design/resolve-specification';
@@ -32,7 +33,7 @@ export function planPenalty(part: TrainingPart, columns: readonly DesignColumn[]
 }
 
 function descentGrid(part: TrainingPart, penalties: ColumnPenalties, specification: ResolvedSpecification): number[] {
-  const held = projectFree(part.problem, penalties);
+  const held = part.rows !== null && isWide(part) ? wideProblem(part.rows, penalties) : projectFree(part.problem, penalties);
   return lassoPath(held, penalties, specification.mixing, part.problem.size >= part.problem.weightSum);
 }
 

@@ -1,7 +1,7 @@
 import type { DesignMatrix } from '../design/design-matrix';
 import { addMoments, squaredError, standardise, toColumnModel, shapeOf, type ColumnModel, type Moments } from '../design/moments';
 import { sumOfSquares, weightedResiduals } from '../design/predict';
-import { problemOfRows, standardisedRows, type RowSpan } from '../design/standardised-rows';
+import { problemOfRows, standardisedRows, withoutGram, type RowSpan } from '../design/standardised-rows';
 import { crossProduct } from '../linear-algebra/cross-product';
 import { solvePath, type SolverSettings, type TrainingPart } from '../solvers/solve-path';
 import type { Route } from './route';
@@ -61,7 +61,7 @@ export function trainingPart(design: DesignMatrix, route: Route, spans: readonly
   const usable = design.columns.map((column) => column.leftOut === undefined);
   if (route === 'moments') return { problem: standardise(addMoments(moments), shapeOf(design), usable), rows: null };
   const rows = standardisedRows(design, spans, usable);
-  return { problem: problemOfRows(rows), rows };
+  return { problem: route === 'wide' ? withoutGram(rows) : problemOfRows(rows), rows };
 }
 
 function runPath(task: PathTask): PathAnswer {

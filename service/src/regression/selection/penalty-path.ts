@@ -33,7 +33,7 @@ export function penaltyForDegrees(form: RidgeForm, degrees: number): number {
 }
 
 /** From the smallest λ that zeroes every held weight down to the ratio of the conventions. */
-export function lassoPath(held: HeldProblem, penalties: ColumnPenalties, mixing: number, wide: boolean): number[] {
+export function lassoPath(held: Pick<HeldProblem, 'held' | 'cross'>, penalties: ColumnPenalties, mixing: number, wide: boolean): number[] {
   let strongest = 0;
   held.held.forEach((column, j) => {
     const factor = penalties.factors[column];

@@ -5,16 +5,20 @@ import type { DesignMatrix } from '../design/design-matrix';
 
 /**
  * moments: everything from sums of products. orthogonal: QR and SVD of the rows, where that is cheap or where moments would
- * lose digits.
+ * lose digits. wide: many more columns than records, where no columns × columns matrix is formed.
  */
-export type Route = 'moments' | 'orthogonal';
+export type Route = 'moments' | 'orthogonal' | 'wide';
 
 /** Multiplications of one orthogonal fit that still count as cheap. */
 const CHEAP_ORTHOGONAL = 2e7;
 
-export function chooseRoute(design: DesignMatrix): Route {
+/** Columns per record from which the dual is cheaper. */
+const WIDE_RATIO = 1.5;
+
+export function chooseRoute(design: DesignMatrix, kind: SolverKind): Route {
   const columns = design.columns.filter((column) => column.leftOut === undefined).length;
-  return design.rowCount * columns * Math.min(columns, design.rowCount) <= CHEAP_ORTHOGONAL ? 'orthogonal' : 'moments';
+  if (design.rowCount * columns * Math.min(columns, design.rowCount) <= CHEAP_ORTHOGONAL) return 'orthogonal';
+  return kind !== 'least-squares' && columns > WIDE_RATIO * design.rowCount ? 'wide' : 'moments';
 }
 
 /** Beyond this ratio of largest to smallest penalised eigenvalue a solution from moments keeps fewer than about eight digits. */

@@ -5,7 +5,7 @@
 export interface RidgeForm {
   /** Columns without a penalty. */
   readonly freeCount: number;
-  /** Of A, ascending, not negative. */
+  /** Of A, ascending, not negative; in the dual only those that records can give. */
   readonly eigenvalues: Float64Array;
   /** Mean squared target that the held columns have to explain. */
   readonly targetSquare: number;
@@ -34,13 +34,4 @@ export function degreesOfFreedom(form: RidgeForm, lambda: number): number {
 export function nullFloor(form: RidgeForm): number {
   const { eigenvalues } = form;
   return eigenvalues.length === 0 ? 0 : NULL_SHARE * eigenvalues[eigenvalues.length - 1];
-}
-
-/** Largest ÷ smallest singular value of the held columns; null when a direction is missing. */
-export function conditionOf(form: RidgeForm): number | null {
-  const { eigenvalues } = form;
-  if (eigenvalues.length === 0) return 1;
-  const smallest = eigenvalues[0];
-  const largest = eigenvalues[eigenvalues.length - 1];
-  return smallest > Number.EPSILON * eigenvalues.length * largest ? Math.sqrt(largest / smallest) : null;
 }

@@ -4,10 +4,12 @@ import type { StandardisedRows } from '../design/standardised-rows';
 import { RegressionError } from '../errors';
 import { penaltiesOf, type ColumnPenalties } from './column-penalties';
 import { descend, startingState } from './coordinate-descent';
+import { descendWide } from './descent-wide';
 import { penaltyAt, type HeldPenalty } from './held-penalty';
 import { leastSquaresFromMoments, leastSquaresFromRows, type LeastSquaresAnswer } from './least-squares';
 import { projectFree, type HeldProblem } from './project-free';
 import { degreesOfFreedom, type RidgeForm } from './ridge-form';
+import { ridgeFromDual } from './ridge-dual';
 import { ridgeFromMoments } from './ridge-moments';
 import { ridgeFromRows } from './ridge-orthogonal';
 import { activeDegrees } from './active-degrees';
@@ -51,11 +53,18 @@ export function solvePath(part: TrainingPart, columns: readonly DesignColumn[], 
   const penalties = penaltiesOf(columns, part.problem.kept);
   if (settings.kind === 'least-squares') return solveLeastSquares(part, lambdas);
   if (settings.kind === 'ridge') return solveRidge(ridgeForm(part, penalties), lambdas);
+  if (part.rows !== null && isWide(part)) return descendWide(part.rows, penalties, settings, lambdas);
   return solveDescent(part.problem, penalties, settings, lambdas);
 }
 
 export function ridgeForm(part: TrainingPart, penalties: ColumnPenalties): RidgeForm {
-  return part.rows === null ? ridgeFromMoments(part.problem, penalties) : ridgeFromRows(part.rows, penalties);
+  if (part.rows === null) return ridgeFromMoments(part.problem, penalties);
+  return isWide(part) ? ridgeFromDual(part.rows, penalties) : ridgeFromRows(part.rows, penalties);
+}
+
+/** Whether the part has columns but no products of them. */
+export function isWide({ problem }: TrainingPart): boolean {
+  return problem.size > 0 && problem.gram.length === 0;
 }
 
 function solveLeastSquares(part: TrainingPart, lambdas: readonly number[]): PathSolution {
