@@ -2,6 +2,7 @@ import { join } from 'node:path';
 import type { Knex } from 'knex';
 import type { Logger } from 'pino';
 import { systemClock, type Clock } from './clock';
+import { composeEditions, type EditionsRoom } from './compose-editions';
 import { composeFits } from './compose-fits';
 import type { Config } from './config';
 import { openDatabase } from './database/connection';
@@ -48,7 +49,7 @@ export interface ComposeOptions {
   readonly sessionCleanupMs?: number;
 }
 
-export interface Services {
+export interface Services extends EditionsRoom {
   readonly config: Config;
   readonly log: Logger;
   readonly clock: Clock;
@@ -99,7 +100,7 @@ export function compose(options: ComposeOptions): Services {
   const partners = new PartnersStore(database);
   const sites = new SitesStore(database);
   const keys = new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock });
-  const { fits, fitRunner } = composeFits({
+  const { fits, fitRunner, fitsStore } = composeFits({
     ...{ database, estimators, editions, journal, clock, log },
     databasePath: databasePathOf(config),
     threadArguments: options.fitThreadArguments ?? [],
@@ -121,6 +122,7 @@ export function compose(options: ComposeOptions): Services {
     keys,
     fits,
     fitRunner,
+    ...composeEditions({ database, editions, fits: fitsStore, estimators, journal, clock }),
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),
     signIns: new SignInService(people, throttle, journal, clock),

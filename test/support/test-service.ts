@@ -12,6 +12,9 @@ import { hashPassword } from '../../service/src/people/password';
 import type { Role } from '../../service/src/people/person';
 import { copyTemplateDatabase } from './template-database';
 
+// Passwords are slow to check on purpose, and a fit starts a thread.
+jest.setTimeout(60_000);
+
 export const testPassword = 'grey heron on the slip';
 
 /** A clock that stands still until a test moves it. */
