@@ -15,7 +15,7 @@ export const SECTIONS = {
   partners: { label: 'Partners', path: 'partners', roles: DESK_ROLES },
   people: { label: 'People', path: 'people', roles: ['administrator'] },
   journal: { label: 'Journal', path: 'journal', roles: ['administrator'] },
-  settings: { label: 'Settings', path: 'settings', roles: ['administrator'] },
+  settings: { label: 'Settings', path: 'settings', roles: DESK_ROLES },
   partnerArea: { label: 'Partner area', path: 'partner-area', roles: ['partner-developer'] },
 } as const satisfies Record<string, Section>;
 
