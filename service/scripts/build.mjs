@@ -31,7 +31,7 @@ const parts = [
   {
     name: 'widget',
     sources: ['widget/src', 'openapi', 'angular.json', 'tsconfig.json', 'tsconfig.widget.json'],
-    result: 'dist/widget/browser/tarebeam-form.js',
+    result: 'dist/widget/browser/main.js',
     command: [binary('ng'), 'build', 'widget'],
   },
 ];

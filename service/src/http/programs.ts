@@ -12,14 +12,17 @@ function cacheByName(response: Response, path: string): void {
   response.setHeader('Cache-Control', hashed ? 'public, max-age=31536000, immutable' : 'no-cache');
 }
 
-/** The widget's one file, for any partner's page. */
+/** The widget's one file, for any partner's page. The builder names its entry main.js whatever it is called. */
 export function widgetProgram(): Router {
   const router = Router();
   router.use(openToOtherOrigins, (_request, response, next) => {
     response.setHeader('Access-Control-Allow-Origin', '*');
     next();
   });
-  router.use(express.static(widgetFolder, { setHeaders: cacheByName, index: false }));
+  router.get('/tarebeam-form.js', (_request, response) => {
+    response.setHeader('Cache-Control', 'no-cache');
+    response.sendFile(join(widgetFolder, 'main.js'));
+  });
   return router;
 }
 
