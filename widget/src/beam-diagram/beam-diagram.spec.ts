@@ -65,19 +65,19 @@ describe('BeamDiagram', () => {
     const built = groups.find((group) => group.getAttribute('data-input') === 'built');
     expect(built?.getAttribute('data-hangs')).toBe('float');
     expect(built?.querySelector('rect')?.getAttribute('stroke-dasharray')).toBeTruthy();
-    expect(built?.querySelector('text')?.textContent).toBe('+34');
+    expect(built?.querySelector('text')?.textContent?.trim()).toBe('+34');
   });
 
   it('tables every input, the largest first, with the sum and both ends', async () => {
     const element = host(await show({ caseTexts: { displacement: '9.8 t', built: '1974', winter: 'yes' } }));
     expect(rowsOf(element)).toEqual([
-      ['Displacement', '9.8 t', '+1.4', '94', '+132 hours'],
-      ['Year built', '1974', '−1.6', '21 ↑, lifts', '+34 hours'],
-      ['Winter booking', 'yes', '−1.1', '7', '−8 hours'],
-      ['Rig', '–', '0.0', '0', '0 hours'],
-      ['Typical case', '355 hours'],
-      ['All inputs together', '+157 hours'],
-      ['This case', '512 hours'],
+      ['Displacement', '9.8 t', '+1.4', '94', '+132'],
+      ['Year built', '1974', '−1.6', '21 ↑, lifts', '+34'],
+      ['Winter booking', 'yes', '−1.1', '7', '−8'],
+      ['Rig', '–', '0.0', '0', '0'],
+      ['Typical case', '355'],
+      ['All inputs together', '+157'],
+      ['This case', '512'],
     ]);
   });
 
@@ -87,7 +87,7 @@ describe('BeamDiagram', () => {
       'Input',
       'Arm',
       'Mass',
-      'Moves by',
+      'Moves by, hours',
     ]);
   });
 
@@ -107,7 +107,7 @@ describe('BeamDiagram', () => {
       ['All inputs together', '+0.367', '× 1.44'],
       ['This case', '', '512 hours'],
     ]);
-    expect(element.querySelector('g[data-input] text')?.textContent?.replace(/\s/g, ' ')).toBe('× 1.44');
+    expect(element.querySelector('g[data-input] text')?.textContent?.trim().replace(/\s/g, ' ')).toBe('× 1.44');
   });
 
   it('is a picture alone for a printed sheet', async () => {

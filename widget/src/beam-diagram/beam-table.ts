@@ -20,6 +20,11 @@ export class BeamTable {
   protected readonly onLog = computed(() => this.evaluation().scale === 'log');
   protected readonly words = computed(() => wordsFor(this.evaluation(), this.locale()));
   protected readonly sum = computed(() => sumOf(this.evaluation().contributions));
+  /** The unit stands once in the heading, so that the columns stay narrow; a factor has none. */
+  protected readonly movesHeading = computed(() => {
+    const { unit } = this.evaluation();
+    return this.onLog() || unit === '' ? 'Moves by' : `Moves by, ${unit}`;
+  });
   protected readonly rows = computed(() =>
     [...this.evaluation().contributions]
       .sort((a, b) => Math.abs(b.contribution) - Math.abs(a.contribution) || b.mass - a.mass)
@@ -29,4 +34,8 @@ export class BeamTable {
         text: this.caseTexts()?.[contribution.input] ?? '–',
       })),
   );
+
+  protected total(value: number): string {
+    return this.onLog() ? this.words().amount(value) : this.words().bareAmount(value);
+  }
 }

@@ -11,6 +11,7 @@ export interface BeamWords {
   readonly movesInWords: (contribution: number) => string;
   /** A value of the target with its unit. */
   readonly amount: (value: number) => string;
+  readonly bareAmount: (value: number) => string;
   readonly arm: (arm: number) => string;
   readonly farArm: (arm: number) => string;
   readonly mass: (mass: number) => string;
@@ -29,6 +30,7 @@ export function wordsFor({ value, interval, unit, scale }: BeamEvaluation, local
     moves,
     movesInWords: (contribution) => (onLog ? moves(contribution) : withUnit(moves(contribution), unit)),
     amount: (amount) => withUnit(formatStepped(amount, step, locale), unit),
+    bareAmount: (amount) => formatStepped(amount, step, locale),
     arm: (arm) => formatSigned(arm, 0.1, locale),
     farArm: (arm) => `at ${formatSigned(arm, Math.abs(arm) < 10 ? 0.1 : 1, locale)} SD`,
     mass: (mass) => formatStepped(mass, onLog ? LOG_STEP : step, locale),

@@ -43,9 +43,9 @@ export function readingText(field: FormField, value: unknown, locale?: string): 
   }
 }
 
-/** ", in metres": read with the label, because a unit at the end of the field is not. */
+/** " (in metres)": read with the label, because a unit at the end of the field is not. */
 export function unitForReaders(field: FormField): string {
-  return field.kind === 'number' && field.unit ? `, in ${unitInWords(field.unit)}` : '';
+  return field.kind === 'number' && field.unit ? ` (in ${unitInWords(field.unit)})` : '';
 }
 
 export function dayText(day: string, locale?: string): string {

@@ -13,7 +13,7 @@ async function show(measured: MeasuredValue): Promise<HTMLElement> {
 describe('IntervalBar', () => {
   it('writes the ends as the interval deserves', async () => {
     const texts = [...(await show({ value: 512.3, low: 438.6, high: 592.2 })).querySelectorAll('text')];
-    expect(texts.map(({ textContent }) => textContent)).toEqual(['440', '590', '320', '710']);
+    expect(texts.map(({ textContent }) => textContent?.trim())).toEqual(['440', '590', '320', '710']);
   });
 
   it('draws an end that is not bounded with a broken outline', async () => {
