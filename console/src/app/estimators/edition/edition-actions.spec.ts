@@ -7,8 +7,8 @@ const reviewer: Actor = { id: tomas.id, analyst: false, reviewer: true };
 describe('what may be done with an edition', () => {
   it.each([
     ['draft', analyst, ['submit']],
-    ['draft', reviewer, []],
-    ['under-review', reviewer, ['put-in-force', 'send-back']],
+    ['draft', reviewer, ['withdraw']],
+    ['under-review', reviewer, ['put-in-force', 'send-back', 'withdraw']],
     ['under-review', analyst, []],
     ['in-force', reviewer, ['withdraw']],
     ['superseded', reviewer, ['withdraw']],
@@ -32,5 +32,6 @@ describe('what may be done with an edition', () => {
   it('names whom a withdrawal leaves without an answer', () => {
     expect(withdrawalConsequences(edition)[0]).toContain('Partners that ask for Refit labour get no estimate');
     expect(withdrawalConsequences({ ...edition, state: 'superseded' })[0]).toContain('Partners that pinned this edition');
+    expect(withdrawalConsequences({ ...edition, state: 'draft' })[0]).toContain('No partner has seen it');
   });
 });

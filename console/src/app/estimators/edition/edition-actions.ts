@@ -14,9 +14,9 @@ export interface Actor {
 export function actionsFor(edition: Edition, actor: Actor): readonly EditionAction[] {
   switch (edition.state) {
     case 'draft':
-      return actor.analyst ? ['submit'] : [];
+      return [...(actor.analyst ? (['submit'] as const) : []), ...(actor.reviewer ? (['withdraw'] as const) : [])];
     case 'under-review':
-      return actor.reviewer ? ['put-in-force', 'send-back'] : [];
+      return actor.reviewer ? ['put-in-force', 'send-back', 'withdraw'] : [];
     case 'in-force':
     case 'superseded':
       return actor.reviewer ? ['withdraw'] : [];
@@ -61,12 +61,17 @@ export function sendBackRequest(edition: Edition): NoteRequest {
   };
 }
 
+const readBack = 'Estimates already given can still be read back.';
+
 export function withdrawalConsequences(edition: Edition): readonly string[] {
-  return [
-    edition.state === 'in-force'
-      ? `Partners that ask for ${edition.estimatorName} get no estimate until another edition is in force.`
-      : 'Partners that pinned this edition get no more estimates from it.',
-    'Estimates already given can still be read back.',
-    'A withdrawn edition cannot be put in force again.',
-  ];
+  const last = 'A withdrawn edition cannot be put in force again.';
+  switch (edition.state) {
+    case 'draft':
+    case 'under-review':
+      return ['No partner has seen it, so nothing changes for them.', last];
+    case 'in-force':
+      return [`Partners that ask for ${edition.estimatorName} get no estimate until another edition is in force.`, readBack, last];
+    default:
+      return ['Partners that pinned this edition get no more estimates from it.', readBack, last];
+  }
 }

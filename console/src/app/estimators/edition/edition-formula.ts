@@ -1,5 +1,5 @@
 import { Component, computed, input } from '@angular/core';
-import type { Edition } from '../../api/contract';
+import type { Edition, SpecificationInput } from '../../api/contract';
 import { formatFigure } from '../../ui/figure';
 import { TableBox } from '../../ui/table-box';
 import { formulaRows, formulaWords } from './formula-rows';
@@ -51,9 +51,11 @@ import { formulaRows, formulaWords } from './formula-rows';
 })
 export class EditionFormula {
   readonly edition = input.required<Edition>();
+  /** What the fit's specification said of each input; transforms are named from it. */
+  readonly inputs = input<readonly SpecificationInput[]>([]);
 
   protected readonly words = computed(() => formulaWords(this.edition()));
   protected readonly rows = computed(() =>
-    formulaRows(this.edition()).map((row) => ({ ...row, text: formatFigure(row.weight, { significant: 6, signed: true }) })),
+    formulaRows(this.edition(), this.inputs()).map((row) => ({ ...row, text: formatFigure(row.weight, { significant: 6, signed: true }) })),
   );
 }

@@ -1,8 +1,10 @@
 import { Component, computed, input } from '@angular/core';
 import { formatReading } from '@widget/format/number-format';
 import type { Edition } from '../../api/contract';
+import { formatDay } from '../../ui/moment';
 import { TableBox } from '../../ui/table-box';
 import { caseFields, type CaseField } from '../try/case-fields';
+import { typicalText } from '../try/read-case';
 
 const LEVELS_SHOWN = 12;
 
@@ -55,18 +57,14 @@ export class EditionInputs {
   readonly inputSchema = input.required<Edition['inputSchema']>();
 
   protected readonly rows = computed(() =>
-    caseFields(this.inputSchema()).map((field) => ({ ...field, covers: covers(field), typical: typical(field) })),
+    caseFields(this.inputSchema()).map((field) => ({ ...field, covers: covers(field), typical: typicalText(field) || '–' })),
   );
 }
 
-function covers({ range, levels, kind }: CaseField): string {
-  if (levels.length > LEVELS_SHOWN) return `${levels.slice(0, LEVELS_SHOWN).join(', ')} and ${levels.length - LEVELS_SHOWN} more`;
-  if (levels.length > 0) return levels.join(', ');
+function covers({ range, days, levels, otherLevels, kind }: CaseField): string {
+  if (levels.length > LEVELS_SHOWN) return `${levels.slice(0, LEVELS_SHOWN).join('; ')} and ${levels.length - LEVELS_SHOWN} more`;
+  if (levels.length > 0) return levels.join('; ') + (otherLevels ? '; others are taken too' : '');
   if (range && kind === 'number') return `${formatReading(range.least, 'en-GB')} to ${formatReading(range.greatest, 'en-GB')}`;
-  return kind === 'date' ? 'a date' : '–';
+  return days ? `${formatDay(days.first)} to ${formatDay(days.last)}` : '–';
 }
 
-function typical({ typical: value }: CaseField): string {
-  if (value === null) return '–';
-  return typeof value === 'number' ? formatReading(Number(value.toPrecision(3)), 'en-GB') : value;
-}

@@ -6,6 +6,7 @@ import { Observable, filter, map, switchMap } from 'rxjs';
 import type { Edition, Withdrawal } from '../../api/contract';
 import { EditionsClient } from '../../api/editions-client';
 import { EstimatorsClient } from '../../api/estimators-client';
+import { FitsClient } from '../../api/fits-client';
 import { problemOf, type Problem } from '../../api/problem';
 import { SessionStore } from '../../api/session-store';
 import { Announcer } from '../../ui/announcer';
@@ -17,6 +18,7 @@ import { LoadingState } from '../../ui/loading-state';
 import { DayPipe, MomentPipe } from '../../ui/moment-pipes';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
+import type { SheetMenuItem } from '../../ui/sheet/sheet-menu';
 import { SheetSection } from '../../ui/sheet/sheet-section';
 import { EDITION_STAMPS } from '../../ui/stamps';
 import { TryCase } from '../try/try-case';
@@ -52,6 +54,7 @@ import { WithdrawDialog } from './withdraw-dialog';
 export class EditionPage {
   private readonly editions = inject(EditionsClient);
   private readonly estimators = inject(EstimatorsClient);
+  private readonly fits = inject(FitsClient);
   private readonly session = inject(SessionStore);
   private readonly confirm = inject(Confirm);
   private readonly dialog = inject(MatDialog);
@@ -63,6 +66,12 @@ export class EditionPage {
 
   protected readonly edition = load(() => this.editions.read(this.id()));
   protected readonly estimator = load(() => this.estimators.read(this.slug()));
+  private readonly fitId = computed(() => this.edition.value()?.fitId);
+  /** The specification behind the edition: by which transforms its inputs enter the formula. */
+  protected readonly fit = load(() => {
+    const id = this.fitId();
+    return id === undefined ? undefined : this.fits.read(id);
+  });
   protected readonly problem = signal<Problem | undefined>(undefined);
 
   private readonly actor = computed<Actor>(() => ({
@@ -77,6 +86,11 @@ export class EditionPage {
   protected readonly actions = computed<readonly EditionAction[]>(() => {
     const edition = this.edition.value();
     return edition ? actionsFor(edition, this.actor()) : [];
+  });
+  /** What is seldom done stands in the menu. */
+  protected readonly menu = computed<readonly SheetMenuItem[]>(() => {
+    const edition = this.edition.value();
+    return edition && this.actions().includes('withdraw') ? [{ label: 'Withdraw', run: () => this.withdraw(edition) }] : [];
   });
   protected readonly whyNot = computed(() => {
     const edition = this.edition.value();
@@ -108,7 +122,7 @@ export class EditionPage {
     );
   }
 
-  protected withdraw(edition: Edition): void {
+  private withdraw(edition: Edition): void {
     const opened = this.dialog.open<WithdrawDialog, Edition, Withdrawal>(WithdrawDialog, { data: edition, autoFocus: 'textarea' });
     this.run(
       opened.afterClosed().pipe(

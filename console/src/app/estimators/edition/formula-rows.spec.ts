@@ -6,9 +6,14 @@ describe('the formula of an edition', () => {
     expect(formulaRows(edition).map((row) => row.times)).toEqual([
       'length',
       'displacement',
-      '1 when hull is GRP, else 0',
-      '1 when hull is steel, else 0',
+      '1 when hull is “GRP”, else 0',
+      '1 when hull is “steel”, else 0',
     ]);
+  });
+
+  it('says by what transform a reading enters', () => {
+    const [length] = formulaRows(edition, [{ column: 'length', transform: 'log' }]);
+    expect(length.times).toBe('the natural logarithm of length');
   });
 
   it('leaves out weights of zero', () => {

@@ -1,5 +1,6 @@
-import type { Edition, Weight } from '../../api/contract';
+import type { Edition, SpecificationInput, Weight } from '../../api/contract';
 import { formatFigure } from '../../ui/figure';
+import { readingWords, termWords } from '../words/reading-words';
 
 /** One term of the formula, in original units. */
 export interface FormulaRow {
@@ -11,10 +12,10 @@ export interface FormulaRow {
 }
 
 /** Intercept first, then every weight in the order of the edition. Weights of 0 add nothing and are left out. */
-export function formulaRows(edition: Pick<Edition, 'weights'>): readonly FormulaRow[] {
+export function formulaRows(edition: Pick<Edition, 'weights'>, inputs: readonly SpecificationInput[] = []): readonly FormulaRow[] {
   return edition.weights
     .filter((weight) => weight.value !== 0)
-    .map((weight) => ({ input: weight.input, part: partOf(weight), weight: weight.value, times: timesOf(weight) }));
+    .map((weight) => ({ input: weight.input, part: partOf(weight), weight: weight.value, times: timesOf(weight, inputs) }));
 }
 
 /** What the terms add up to: the value itself, or its logarithm. */
@@ -37,8 +38,7 @@ function partOf(weight: Weight): string {
   return weight.level ?? weight.term ?? '';
 }
 
-function timesOf(weight: Weight): string {
-  if (weight.level) return `1 when ${weight.input} is ${weight.level}, else 0`;
-  if (weight.term) return `the ${weight.term} of ${weight.input}`;
-  return weight.input;
+function timesOf(weight: Weight, inputs: readonly SpecificationInput[]): string {
+  if (weight.level) return `1 when ${weight.input} is “${weight.level}”, else 0`;
+  return weight.term ? termWords(weight.input, weight.term) : readingWords(weight.input, inputs);
 }

@@ -41,6 +41,7 @@ const LONGEST_NOTE = 2000;
       <button type="button" class="tb-danger-button" (click)="withdraw()">Withdraw</button>
     </mat-dialog-actions>
   `,
+  styleUrl: '../../ui/confirm-dialog.scss',
 })
 export class WithdrawDialog {
   private readonly opened = inject<MatDialogRef<WithdrawDialog, Withdrawal>>(MatDialogRef);

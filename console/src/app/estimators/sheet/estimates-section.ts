@@ -19,6 +19,11 @@ const LOCALE = 'en-GB';
   selector: 'tb-estimates-section',
   imports: [LoadingState, MomentPipe, Pager, ProblemNotice, RouterLink, TableBox],
   templateUrl: './estimates-section.html',
+  styles: `
+    .name {
+      white-space: nowrap;
+    }
+  `,
 })
 export class EstimatesSection {
   private readonly client = inject(EstimatesClient);

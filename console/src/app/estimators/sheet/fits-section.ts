@@ -18,6 +18,11 @@ import { methodName, ruleName } from '../words/method-words';
   selector: 'tb-fits-section',
   imports: [LoadingState, MomentPipe, Pager, ProblemNotice, RouterLink, StatusStamp, TableBox],
   templateUrl: './fits-section.html',
+  styles: `
+    .name {
+      white-space: nowrap;
+    }
+  `,
 })
 export class FitsSection {
   private readonly client = inject(FitsClient);

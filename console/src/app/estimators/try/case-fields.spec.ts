@@ -25,7 +25,9 @@ describe('the fields of a case', () => {
       unit: 'm',
       help: 'Without the bowsprit.',
       range: { least: 6.1, greatest: 18.4 },
+      days: null,
       levels: [],
+      otherLevels: false,
       typical: 11.2,
       required: true,
       order: 1,
@@ -45,6 +47,18 @@ describe('the fields of a case', () => {
   it('find the levels of a category that may be missing', () => {
     const [rig] = caseFields({ properties: { rig: { anyOf: [{ enum: ['sloop', 'ketch'] }, { type: 'null' }] } } });
     expect(rig).toMatchObject({ kind: 'choice', levels: ['sloop', 'ketch'] });
+  });
+
+  it('take levels that the records never held, where the edition does', () => {
+    const known = { type: 'string', enum: ['sloop', 'ketch'] };
+    const [rig, hull] = caseFields({ properties: { rig: { anyOf: [known, { type: 'string', minLength: 1 }] }, hull: known } });
+    expect(rig).toMatchObject({ kind: 'choice', levels: ['sloop', 'ketch'], otherLevels: true });
+    expect(hull.otherLevels).toBe(false);
+  });
+
+  it('know the recorded days of a date', () => {
+    const [booked] = caseFields({ properties: { booked: { type: 'string', format: 'date', 'x-range': ['2021-01-04', '2026-10-30'] } } });
+    expect(booked).toMatchObject({ kind: 'date', range: null, days: { first: '2021-01-04', last: '2026-10-30' } });
   });
 
   it('are none when the schema has none', () => {

@@ -7,7 +7,11 @@ export interface CaseField {
   readonly help: string;
   /** Recorded least and greatest. */
   readonly range: { readonly least: number; readonly greatest: number } | null;
+  /** First and last recorded day. */
+  readonly days: { readonly first: string; readonly last: string } | null;
   readonly levels: readonly string[];
+  /** Levels that the records never held may be given too. */
+  readonly otherLevels: boolean;
   readonly typical: string | number | null;
   readonly required: boolean;
   readonly order: number;
@@ -32,7 +36,9 @@ function fieldOf(name: string, property: Plain, place: { readonly required: bool
     unit: textOf(property['x-unit']),
     help: textOf(property['x-help']) || textOf(property['description']),
     range: rangeOf(property['x-range']),
+    days: daysOf(property['x-range']),
     levels: levelsOf(property),
+    otherLevels: alternatives(property).some(isAnyText),
     typical: typicalOf(property['x-typical']),
     required: place.required,
     order: typeof property['x-order'] === 'number' ? property['x-order'] : place.position,
@@ -60,6 +66,15 @@ function levelsOf(property: Plain): readonly string[] {
 function rangeOf(value: unknown): CaseField['range'] {
   const [least, greatest] = Array.isArray(value) ? value : [asPlain(value)['min'], asPlain(value)['max']];
   return typeof least === 'number' && typeof greatest === 'number' ? { least, greatest } : null;
+}
+
+function daysOf(value: unknown): CaseField['days'] {
+  const [first, last] = asArray(value);
+  return typeof first === 'string' && typeof last === 'string' ? { first, last } : null;
+}
+
+function isAnyText(option: Plain): boolean {
+  return asList(option['type']).includes('string') && option['enum'] === undefined && option['format'] === undefined;
 }
 
 function typicalOf(value: unknown): CaseField['typical'] {

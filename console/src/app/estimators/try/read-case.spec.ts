@@ -9,6 +9,12 @@ describe('a case', () => {
     expect(typicalDraft(fields)).toEqual({ length: '11.2', displacement: '7.1', hull: 'GRP' });
   });
 
+  it('starts from a year that is whole and a length to a tenth', () => {
+    const year = { ...fields[0], name: 'year', typical: 1993.7, range: { least: 1958, greatest: 2024 } };
+    const length = { ...fields[0], typical: 11.2187 };
+    expect(typicalDraft([year, length])).toEqual({ year: '1994', length: '11.2' });
+  });
+
   it('is read as numbers and levels', () => {
     expect(readCase(fields, { length: '12,6', displacement: '9.8 t', hull: 'steel' })).toEqual({ inputs: { length: 12.6, displacement: 9.8, hull: 'steel' } });
   });

@@ -1,5 +1,7 @@
 import { formatReading, withUnit } from '@widget/format/number-format';
+import { precisionFor, roundTo } from '@widget/format/precision';
 import type { Inputs } from '../../api/contract';
+import { formatDay } from '../../ui/moment';
 import { typedNumber } from '../words/typed-number';
 import type { CaseField } from './case-fields';
 
@@ -13,9 +15,16 @@ export function typicalDraft(fields: readonly CaseField[]): CaseDraft {
   return Object.fromEntries(fields.map((field) => [field.name, typicalText(field)]));
 }
 
-function typicalText({ typical }: CaseField): string {
-  if (typical === null) return '';
-  return typeof typical === 'number' ? String(Number(typical.toPrecision(3))) : typical;
+/** The typical reading, as finely as the recorded range deserves: 11.2 m, and a whole number where whole ones were recorded. */
+export function typicalText({ typical, range }: CaseField): string {
+  if (typical === null || typeof typical === 'string') return typical ?? '';
+  return String(roundTo(typical, range ? stepWithin(range) : precisionFor({ value: typical, low: null, high: null }).step));
+}
+
+function stepWithin({ least, greatest }: NonNullable<CaseField['range']>): number {
+  if (Number.isInteger(least) && Number.isInteger(greatest)) return 1;
+  // Two digits that count of a fifth of the half range: finer than anyone measures, coarser than the mean's many digits.
+  return precisionFor({ value: 0, low: least / 5, high: greatest / 5 }).step;
 }
 
 /** Reads the form; an optional field left empty is sent as missing. */
@@ -53,7 +62,11 @@ function readingText({ unit }: CaseField, value: Inputs[string]): string {
 }
 
 /** What the records cover, under the field. */
-export function fieldHint({ help, range, unit, kind }: CaseField): string | undefined {
-  const covers = range && kind === 'number' ? `Recorded ${formatReading(range.least, 'en-GB')} to ${withUnit(formatReading(range.greatest, 'en-GB'), unit)}.` : '';
-  return [help, covers].filter(Boolean).join(' ') || undefined;
+export function fieldHint(field: CaseField): string | undefined {
+  return [field.help, coveredWords(field)].filter(Boolean).join(' ') || undefined;
+}
+
+function coveredWords({ range, days, unit }: CaseField): string {
+  if (range) return `Recorded ${formatReading(range.least, 'en-GB')} to ${withUnit(formatReading(range.greatest, 'en-GB'), unit)}.`;
+  return days ? `Recorded ${formatDay(days.first)} to ${formatDay(days.last)}.` : '';
 }

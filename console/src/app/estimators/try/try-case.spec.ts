@@ -63,6 +63,18 @@ describe('trying a case', () => {
     expect(find('alert', /The inputs are not right/).textContent).toContain('Give a length below 40 m.');
   });
 
+  it('takes another level where the edition does, and suggests the recorded ones', async () => {
+    const rig = { title: 'Rig', anyOf: [{ type: 'string', enum: ['sloop', 'ketch'] }, { type: 'string', minLength: 1 }] };
+    const screen = await show(TryCase, { editionId: 'edition00004', inputSchema: { properties: { rig }, required: ['rig'] } });
+    type('Rig', 'yawl');
+    await screen.settle();
+    const list = document.getElementById(field('Rig').getAttribute('list')!);
+    expect([...list!.querySelectorAll('option')].map((option) => option.value)).toEqual(['sloop', 'ketch']);
+    await screen.press(find('button', 'Work out the estimate'));
+    const request = await screen.answer(url, evaluation, 'POST');
+    expect(request.request.body).toEqual({ inputs: { rig: 'yawl' } });
+  });
+
   it('goes back to the typical case', async () => {
     const screen = await opened();
     type('Length overall', '18');

@@ -43,6 +43,10 @@ export class TryCase {
     return this.complaints()[field.name] ?? errorOf(this.problem(), `inputs/${field.name}`);
   }
 
+  protected listId(field: CaseField): string {
+    return `levels-${this.editionId()}-${field.order}`;
+  }
+
   protected type(name: string, text: string): void {
     this.draft.update((draft) => ({ ...draft, [name]: text }));
   }
