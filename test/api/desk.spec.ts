@@ -1,6 +1,9 @@
 import { newId } from '../../service/src/database/new-id';
 import { startTestService, type TestAgent, type TestPerson, type TestService } from '../support/test-service';
 
+// A sign-in hashes for half a second on purpose, and longer where other tests share the processor.
+jest.setTimeout(30_000);
+
 describe('the desk', () => {
   let service: TestService;
   let analyst: TestPerson;
@@ -73,7 +76,7 @@ describe('the desk', () => {
       reading: '{}',
     };
     revisionId = await insert('recordRevisions', { recordSetId, number: 1, ...file, ...made() });
-  }, 30_000);
+  });
   afterAll(() => service.close());
 
   const read = async (agent = administrator) => (await agent.get('/api/desk').expect(200)).body;

@@ -3,6 +3,9 @@ import supertest from 'supertest';
 import { enterFirstAdministrator } from '../../service/src/people/first-administrator';
 import { startTestService, type TestService } from '../support/test-service';
 
+// A sign-in hashes for half a second on purpose, and longer where other tests share the processor.
+jest.setTimeout(30_000);
+
 describe('the first administrator', () => {
   let service: TestService;
   let logged: string[];

@@ -1,5 +1,8 @@
 import { startTestService, type TestAgent, type TestService } from '../support/test-service';
 
+// A sign-in hashes for half a second on purpose, and longer where other tests share the processor.
+jest.setTimeout(30_000);
+
 describe('the journal', () => {
   let service: TestService;
   let administrator: TestAgent;

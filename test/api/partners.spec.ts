@@ -1,5 +1,8 @@
 import { startTestService, type TestAgent, type TestService } from '../support/test-service';
 
+// A sign-in hashes for half a second on purpose, and longer where other tests share the processor.
+jest.setTimeout(30_000);
+
 describe('partners', () => {
   let service: TestService;
   let administrator: TestAgent;
@@ -7,7 +10,7 @@ describe('partners', () => {
   beforeAll(async () => {
     service = await startTestService();
     administrator = await service.as('administrator');
-  }, 30_000);
+  });
   afterAll(() => service.close());
 
   const enter = async (name = `Partner ${++counter}`): Promise<{ id: string; name: string }> => {
@@ -121,7 +124,7 @@ describe('partners', () => {
     expect((await developer.delete(`/api/partners/${other.id}/sites/${site.id}`)).status).toBe(404);
     expect((await developer.get('/api/partners')).status).toBe(403);
     expect((await developer.patch(`/api/partners/${own.id}`).send({ name: 'Mine' })).status).toBe(403);
-  }, 20_000);
+  });
 
   it('leave an entry in the journal for every change', async () => {
     const { id, name } = await enter();

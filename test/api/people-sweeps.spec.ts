@@ -6,6 +6,9 @@ import { startTestService, type TestService } from '../support/test-service';
 
 const dayMs = 24 * 60 * 60 * 1000;
 
+// A sign-in hashes for half a second on purpose, and longer where other tests share the processor.
+jest.setTimeout(30_000);
+
 describe('sweeping', () => {
   let service: TestService;
   beforeAll(async () => void (service = await startTestService()));

@@ -6,6 +6,9 @@ import { startTestService, testPassword, type TestAgent, type TestService } from
 const dayMs = 24 * 60 * 60 * 1000;
 const goodPassword = 'copper kettle nine ferries';
 
+// A sign-in hashes for half a second on purpose, and longer where other tests share the processor.
+jest.setTimeout(30_000);
+
 describe('people', () => {
   let service: TestService;
   let administrator: TestAgent;
