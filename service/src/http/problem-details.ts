@@ -17,6 +17,7 @@ function translate(error: unknown): DeskError | null {
   if ((error as { code?: string }).code === 'EBADCSRFTOKEN') {
     return new DeskError('request-forged', 'Send the header X-XSRF-TOKEN with the value of the cookie XSRF-TOKEN.');
   }
+  if (error.status === 404) return new DeskError('not-found', 'There is nothing at this address.', { cause: error });
   if (error.status === 413) return new DeskError('body-too-large', 'Send a smaller body.', { cause: error });
   if (error.type === 'entity.parse.failed') {
     return new DeskError('body-unreadable', 'The body is not valid JSON. Mend it and send it again.', { cause: error });
