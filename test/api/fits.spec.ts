@@ -54,6 +54,14 @@ describe('fits', () => {
     expect(texts[0].formula).toContain('"format":"tarebeam-formula/1"');
   });
 
+  it('use the records that the filter keeps', async () => {
+    const id = await finished({ ...ridge, inputs: inputs.slice(0, 2), rowFilter: { column: 'hull', equals: ['steel', 'wood'] } });
+    const { body } = await analyst.get(`/api/fits/${id}`);
+    const kept = boatColumns().flatMap((column) => ('codes' in column ? column.codes.filter((code) => code > 0) : []));
+    expect(body.result.report.recordCount).toBe(kept.length);
+    expect(kept.length).toBeLessThan(120);
+  });
+
   it('are listed newest first, with what was chosen', async () => {
     service.clock.advance(1000);
     const newest = await finished({ ...ridge, penalty: { rule: 'fixed', value: 0.5 } });
@@ -87,6 +95,8 @@ describe('fits', () => {
     ['a transform of a category', { ...ridge, inputs: [{ column: 'hull', transform: 'spline' }] }, '#/specification/inputs/0/transform'],
     ['gaps that are refused', { ...ridge, inputs: [{ column: 'ballast' }] }, '#/specification/inputs/0/missing'],
     ['a penalty rule that the method lacks', { ...ridge, method: 'lasso', penalty: { rule: 'evidence' } }, '#/specification/penalty'],
+    ['a range over words', { ...ridge, rowFilter: { column: 'hull', from: 1 } }, '#/specification/rowFilter'],
+    ['a filter on no column', { ...ridge, rowFilter: { column: 'keel', equals: ['long'] } }, '#/specification/rowFilter/column'],
     ['a fixed penalty without its value', { ...ridge, penalty: { rule: 'fixed' } }, '#/specification/penalty'],
   ])('are refused for %s', async (_what, specification, pointer) => {
     const wrong = await start(specification);

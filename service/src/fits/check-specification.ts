@@ -29,6 +29,7 @@ export function checkSpecification(specification: Specification, records: Record
   checkTarget(specification, columns, report);
   specification.inputs.forEach((input, at) => checkInput({ specification, input, at, columns }, (field, detail) => report(`/inputs/${at}${field}`, detail)));
   checkWeight(specification, columns, report);
+  checkRowFilter(specification, columns, report);
   checkValidation(specification, columns, report);
   if (records.rowCount < 2) report('', 'A fit needs at least 2 records.');
   if (errors.length === 0) checkRules(specification, report);
@@ -43,7 +44,7 @@ function unknown(name: string): string {
 
 /** True when no record is left out of the fit, so that the column's own figures speak for the fit. */
 function everyRecordCounts(specification: Specification, columns: Columns): boolean {
-  return !specification.weightColumn && columns.get(specification.target.column)?.missingCount === 0;
+  return !specification.weightColumn && !specification.rowFilter && columns.get(specification.target.column)?.missingCount === 0;
 }
 
 function checkTarget(specification: Specification, columns: Columns, report: Report): void {
@@ -52,7 +53,7 @@ function checkTarget(specification: Specification, columns: Columns, report: Rep
   if (!column) return report('/target/column', unknown(name));
   if (column.kind !== 'numeric') return report('/target/column', `${name} is a ${column.kind} column; the target must be numeric.`);
   if (column.minimum === null) return report('/target/column', `${name} has no reading in any record.`);
-  if (transform === 'log' && !specification.weightColumn && column.minimum <= 0) {
+  if (transform === 'log' && !specification.weightColumn && !specification.rowFilter && column.minimum <= 0) {
     report('/target/transform', `The logarithm needs values above 0; the least ${name} is ${column.minimum}.`);
   }
 }
@@ -101,6 +102,16 @@ function checkWeight({ weightColumn, target }: Specification, columns: Columns, 
   else if (weightColumn === target.column) report('/weightColumn', `${weightColumn} is the target.`);
   else if (column.kind !== 'numeric') report('/weightColumn', `${weightColumn} is a ${column.kind} column; weights must be numeric.`);
   else if (column.minimum === null || column.minimum < 0) report('/weightColumn', `Weights must be 0 or more; the least ${weightColumn} is ${column.minimum ?? 'missing'}.`);
+}
+
+function checkRowFilter({ rowFilter }: Specification, columns: Columns, report: Report): void {
+  if (!rowFilter) return;
+  const { column: name, from, to } = rowFilter;
+  const column = columns.get(name);
+  if (!column) return report('/rowFilter/column', unknown(name));
+  const isOrdered = column.kind === 'numeric' || column.kind === 'date';
+  if (!isOrdered && (from !== undefined || to !== undefined)) report('/rowFilter', `${name} holds words: filter it by values, not by a range.`);
+  if (from !== undefined && to !== undefined && from > to) report('/rowFilter', `No reading lies from ${from} to ${to}.`);
 }
 
 function checkValidation({ validation, target }: Specification, columns: Columns, report: Report): void {

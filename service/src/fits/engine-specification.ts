@@ -6,12 +6,13 @@ export type SpecificationInput = components['schemas']['SpecificationInput'];
 
 /** The contract's specification as the engine takes it: null and absent are one, and the words for the form stay behind. */
 export function toEngineSpecification(specification: Specification): FitSpecification {
-  const { target, inputs, weightColumn, method, mixing, penalty, validation, intervalLevel, intercept } = specification;
+  const { target, inputs, weightColumn, rowFilter, method, mixing, penalty, validation, intervalLevel, intercept } = specification;
   return {
     target: { column: target.column, transform: target.transform ?? 'none' },
     inputs: inputs.map(toEngineInput),
     method,
     ...(weightColumn && { weightColumn }),
+    ...(rowFilter && { rowFilter }),
     ...(mixing !== undefined && { mixing }),
     ...(method !== 'least-squares' && { penalty: toEnginePenalty(penalty) }),
     ...(validation && { validation: toEngineValidation(validation) }),
@@ -36,7 +37,7 @@ function toEngineValidation(validation: NonNullable<Specification['validation']>
 
 /** Every column that a fit reads. */
 export function columnsOf(specification: Specification): readonly string[] {
-  const { target, inputs, weightColumn, validation } = specification;
-  const named = [target.column, ...inputs.map((input) => input.column), weightColumn, validation?.column];
+  const { target, inputs, weightColumn, rowFilter, validation } = specification;
+  const named = [target.column, ...inputs.map((input) => input.column), weightColumn, rowFilter?.column, validation?.column];
   return [...new Set(named.filter((name): name is string => Boolean(name)))];
 }
