@@ -1,6 +1,7 @@
 import { createHash, randomBytes } from 'node:crypto';
 import type { components } from '../../../openapi/types/desk';
 import { timeText, type Clock } from '../clock';
+import { translateUnique } from '../database/constraint-errors';
 import type { Database } from '../database/database';
 import { newId } from '../database/new-id';
 import { DeskError, notFound } from '../errors';
@@ -22,6 +23,10 @@ type Invitation = components['schemas']['Invitation'];
 
 const validMs = 7 * 24 * 60 * 60 * 1000;
 const hashOf = (token: string): string => createHash('sha256').update(token).digest('hex');
+const emailTaken = (email: string): DeskError =>
+  new DeskError('email-taken', `Someone is entered with ${email}. Change that entry instead.`, {
+    errors: [{ pointer: '#/email', detail: 'is entered already' }],
+  });
 const spent = (): DeskError => new DeskError('invitation-spent', 'Ask an administrator for a new invitation.');
 
 export interface InvitationServiceParts {
@@ -111,11 +116,7 @@ export class InvitationService {
     const partnerId = invite.partnerId ?? null;
     if (partnerId !== null && !(await people.partnerExists(partnerId))) throw unknownPartner();
     const known = await people.findByEmail(invite.email);
-    if (known?.state === 'active')
-      throw new DeskError(
-        'email-taken',
-        `${known.name} is entered with this e-mail address. Change that entry instead.`,
-      );
+    if (known?.state === 'active') throw emailTaken(invite.email);
     const id = known?.id ?? newId();
     const columns = {
       name: invite.name.trim(),
@@ -128,7 +129,12 @@ export class InvitationService {
       await people.update(id, columns);
       await people.replaceRoles(id, invite.roles);
     } else {
-      await people.insert({ id, ...columns, roles: invite.roles, createdAt: timeText(this.parts.clock) });
+      const person = { id, ...columns, roles: invite.roles, createdAt: timeText(this.parts.clock) };
+      await translateUnique(
+        () => people.insert(person),
+        'people.email_key',
+        () => emailTaken(invite.email),
+      );
     }
     return (await people.findById(id)) as PersonRecord;
   }
