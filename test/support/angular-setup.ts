@@ -21,3 +21,6 @@ class NothingInView implements IntersectionObserver {
 }
 
 globalThis.IntersectionObserver ??= NothingInView;
+
+/** Nor does anything scroll. */
+Element.prototype.scrollIntoView ??= () => {};

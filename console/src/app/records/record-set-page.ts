@@ -6,6 +6,7 @@ import { CountPipe } from '../ui/figure-pipes';
 import { load } from '../ui/load';
 import { LoadingState } from '../ui/loading-state';
 import { DayPipe } from '../ui/moment-pipes';
+import { PageHead } from '../ui/page-head';
 import { ProblemNotice } from '../ui/problem-notice';
 import { Sheet } from '../ui/sheet/sheet';
 import { SheetSection } from '../ui/sheet/sheet-section';
@@ -19,6 +20,7 @@ import { RevisionsTable } from './revisions-table';
     DayPipe,
     LoadingState,
     NewerFile,
+    PageHead,
     ProblemNotice,
     RevisionsTable,
     RouterLink,

@@ -51,7 +51,7 @@ describe('Shell', () => {
   afterEach(() => http.verify());
 
   it.each([
-    [['viewer'], ['Desk', 'Records', 'Estimators', 'Partners']],
+    [['viewer'], ['Desk', 'Records', 'Estimators', 'Partners', 'Settings']],
     [['administrator'], ['Desk', 'Records', 'Estimators', 'Partners', 'People', 'Journal', 'Settings']],
     [['partner-developer'], ['Partner area']],
   ] as [Role[], string[]][])('shows %s only the sections they may use', async (roles, expected) => {

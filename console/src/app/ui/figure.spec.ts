@@ -23,8 +23,13 @@ describe('formatFigure', () => {
   });
 
   it('joins the unit so that the line does not break between', () => {
-    expect(formatFigure(9.8, { unit: 't' })).toBe('9.800\u00a0t'.replace('9.800', formatFigure(9.8)));
-    expect(plain(formatFigure(512, { unit: 'h' }))).toBe('512 h');
+    expect(formatFigure(9.8, { unit: 't' })).toBe('9.8\u00a0t');
+  });
+
+  it('adds noughts only where the digits are known to count', () => {
+    expect(formatFigure(2.04, { significant: 2 })).toBe('2.0');
+    expect(formatFigure(0.9)).toBe('0.9');
+    expect(formatFigure(-1234.6)).toBe('−1,235');
   });
 
   it('writes the sign only when asked and only where there is one', () => {

@@ -1,5 +1,5 @@
 import { formatStepped, withUnit } from '@widget/format/number-format';
-import { precisionFor } from '@widget/format/precision';
+import { precisionFor, roundTo } from '@widget/format/precision';
 
 export interface FigureOptions {
   readonly unit?: string | null;
@@ -19,13 +19,23 @@ const DEFAULT_SIGNIFICANT = 4;
 /**
  * A figure with the digits it deserves. With an uncertainty, digits stop where its second significant digit
  * stands (512.378 ± 38 gives 512; ± 3.8 gives 512.4; ± 380 gives 510). Without one, four significant digits,
- * but a whole number stays whole.
+ * no noughts added, and a whole number stays whole.
  */
 export function formatFigure(value: number | null | undefined, options: FigureOptions = {}): string {
   if (value === null || value === undefined || !Number.isFinite(value)) return NO_FIGURE;
-  const figure = formatStepped(value, stepOf(value, options), LOCALE);
+  const step = stepOf(value, options);
+  const figure = digitsAreKnown(options) ? formatStepped(value, step, LOCALE) : formatPlain(roundTo(value, step));
   const plus = options.signed && value > 0 && /[1-9]/.test(figure) ? '+' : '';
   return withUnit(plus + figure, options.unit);
+}
+
+/** Noughts at the end say that the digits count, so they are written only where somebody knows that they do. */
+function digitsAreKnown({ uncertainty, significant }: FigureOptions): boolean {
+  return Boolean(uncertainty) || significant !== undefined;
+}
+
+function formatPlain(value: number): string {
+  return value.toLocaleString(LOCALE, { maximumSignificantDigits: 15 }).replace('-', '\u2212');
 }
 
 function stepOf(value: number, { uncertainty, significant }: FigureOptions): number {

@@ -17,7 +17,9 @@ export class ProblemNotice {
   readonly retry = output();
 
   protected readonly wait = computed(() => {
-    const seconds = this.problem().retryAfter;
-    return seconds === undefined ? undefined : formatWait(seconds);
+    const { retryAfter, detail } = this.problem();
+    // The service often says it itself.
+    if (retryAfter === undefined || detail.includes(String(retryAfter))) return undefined;
+    return formatWait(retryAfter);
   });
 }

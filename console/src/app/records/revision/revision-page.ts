@@ -6,6 +6,7 @@ import { BytesPipe, CountPipe } from '../../ui/figure-pipes';
 import { load } from '../../ui/load';
 import { LoadingState } from '../../ui/loading-state';
 import { MomentPipe } from '../../ui/moment-pipes';
+import { PageHead } from '../../ui/page-head';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
 import { SheetSection } from '../../ui/sheet/sheet-section';
@@ -24,6 +25,7 @@ const DELIMITER_WORDS: Readonly<Record<string, string>> = { ',': 'comma', ';': '
     CountPipe,
     LoadingState,
     MomentPipe,
+    PageHead,
     ProblemNotice,
     RouterLink,
     RowsTable,

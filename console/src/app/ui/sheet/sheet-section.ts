@@ -4,9 +4,9 @@ import { Component, ElementRef, inject, input } from '@angular/core';
 @Component({
   selector: 'tb-sheet-section',
   template: `
-    <section [id]="anchor()" [attr.aria-labelledby]="anchor() + '-heading'" tabindex="-1">
+    <section [id]="anchor()">
       <div class="head">
-        <h2 [id]="anchor() + '-heading'">{{ heading() }}</h2>
+        <h2 tabindex="-1">{{ heading() }}</h2>
         <ng-content select="[tbSectionAction]" />
       </div>
       <ng-content />
@@ -20,8 +20,9 @@ export class SheetSection {
   /** The part's address within the page; unique on the sheet. */
   readonly anchor = input.required<string>();
 
-  /** A reader who jumps here by keyboard goes on from here. */
-  takeFocus(): void {
-    this.element.querySelector<HTMLElement>('section')?.focus({ preventScroll: true });
+  /** Brings the part into view; a reader who jumped here by keyboard goes on from here. */
+  show(): void {
+    this.element.scrollIntoView();
+    this.element.querySelector('h2')?.focus({ preventScroll: true });
   }
 }

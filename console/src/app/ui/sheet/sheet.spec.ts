@@ -53,7 +53,7 @@ describe('Sheet', () => {
     expect(links.map((link) => link.textContent?.trim())).toEqual(['Editions', 'Fits']);
     links[1].click();
     await fixture.whenStable();
-    expect(document.activeElement?.id).toBe('fits');
+    expect(document.activeElement?.textContent).toBe('Fits');
   });
 
   it('keeps secondary actions in a menu', async () => {

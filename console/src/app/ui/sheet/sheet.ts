@@ -1,5 +1,6 @@
-import { Component, contentChildren, input } from '@angular/core';
-import { RouterLink } from '@angular/router';
+import { Component, contentChildren, effect, inject, input } from '@angular/core';
+import { toSignal } from '@angular/core/rxjs-interop';
+import { ActivatedRoute, RouterLink } from '@angular/router';
 import { PageHead, ParentLink } from '../page-head';
 import type { Stamp } from '../status-stamp';
 import { SectionInView } from './section-in-view';
@@ -21,4 +22,16 @@ export class Sheet {
 
   protected readonly sections = contentChildren(SheetSection, { descendants: true });
   protected readonly inView = new SectionInView(this.sections);
+  private readonly fragment = toSignal(inject(ActivatedRoute).fragment);
+
+  constructor() {
+    // The router scrolls when it arrives, which is before the sheet's answer has.
+    effect(() => {
+      const fragment = this.fragment();
+      if (fragment)
+        this.sections()
+          .find((section) => section.anchor() === fragment)
+          ?.show();
+    });
+  }
 }
