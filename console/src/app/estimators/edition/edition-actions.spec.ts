@@ -19,19 +19,27 @@ describe('what may be done with an edition', () => {
 
   it('leaves approval to someone else, and says why', () => {
     expect(whyNotPutInForce({ ...edition, mayPutInForce: true }, reviewer)).toBeUndefined();
-    expect(whyNotPutInForce(edition, { ...analyst, reviewer: true })).toContain('You submitted this edition, so someone else must');
-    expect(whyNotPutInForce({ ...edition, submittedBy: tomas }, { ...analyst, reviewer: true })).toContain('You drew up this edition');
+    expect(whyNotPutInForce(edition, { ...analyst, reviewer: true })).toContain(
+      'You submitted this edition, so someone else must',
+    );
+    expect(whyNotPutInForce({ ...edition, submittedBy: tomas }, { ...analyst, reviewer: true })).toContain(
+      'You drew up this edition',
+    );
     expect(whyNotPutInForce(edition, { ...reviewer, id: 'person000else' })).toBe('A reviewer must put it in force.');
   });
 
   it('names what approval replaces', () => {
-    expect(putInForceRequest({ ...edition, number: 5 }, edition).consequences[1]).toContain('Edition 4, in force now, is superseded.');
+    expect(putInForceRequest({ ...edition, number: 5 }, edition).consequences[1]).toContain(
+      'Edition 4, in force now, is superseded.',
+    );
     expect(putInForceRequest(edition, null).consequences[1]).toContain('first edition');
   });
 
   it('names whom a withdrawal leaves without an answer', () => {
     expect(withdrawalConsequences(edition)[0]).toContain('Partners that ask for Refit labour get no estimate');
-    expect(withdrawalConsequences({ ...edition, state: 'superseded' })[0]).toContain('Partners that pinned this edition');
+    expect(withdrawalConsequences({ ...edition, state: 'superseded' })[0]).toContain(
+      'Partners that pinned this edition',
+    );
     expect(withdrawalConsequences({ ...edition, state: 'draft' })[0]).toContain('No partner has seen it');
   });
 });

@@ -36,7 +36,10 @@ export function whyNotPutInForce(edition: Edition, actor: Actor): string | undef
 export function submitRequest(edition: Edition): ConfirmRequest {
   return {
     heading: `Submit edition ${edition.number} of ${edition.estimatorName} for review?`,
-    consequences: ['Reviewers are asked to read it and to put it in force or send it back.', 'You cannot put it in force yourself.'],
+    consequences: [
+      'Reviewers are asked to read it and to put it in force or send it back.',
+      'You cannot put it in force yourself.',
+    ],
     verb: 'Submit for review',
   };
 }
@@ -47,7 +50,11 @@ export function putInForceRequest(edition: Edition, inForce: EditionSummary | nu
     : 'It is the first edition of this estimator in force, so partners can ask for estimates from now on.';
   return {
     heading: `Put edition ${edition.number} of ${edition.estimatorName} in force?`,
-    consequences: [`From now on it answers every partner that asks for ${edition.estimatorName}.`, replaced, 'Your name is kept as the one who approved it.'],
+    consequences: [
+      `From now on it answers every partner that asks for ${edition.estimatorName}.`,
+      replaced,
+      'Your name is kept as the one who approved it.',
+    ],
     verb: 'Put in force',
   };
 }
@@ -55,7 +62,9 @@ export function putInForceRequest(edition: Edition, inForce: EditionSummary | nu
 export function sendBackRequest(edition: Edition): NoteRequest {
   return {
     heading: `Send edition ${edition.number} of ${edition.estimatorName} back?`,
-    consequences: [`It becomes a draft again, and ${edition.submittedBy?.name ?? edition.createdBy.name} sees your note.`],
+    consequences: [
+      `It becomes a draft again, and ${edition.submittedBy?.name ?? edition.createdBy.name} sees your note.`,
+    ],
     verb: 'Send back',
     noteLabel: 'What must change',
   };
@@ -70,7 +79,11 @@ export function withdrawalConsequences(edition: Edition): readonly string[] {
     case 'under-review':
       return ['No partner has seen it, so nothing changes for them.', last];
     case 'in-force':
-      return [`Partners that ask for ${edition.estimatorName} get no estimate until another edition is in force.`, readBack, last];
+      return [
+        `Partners that ask for ${edition.estimatorName} get no estimate until another edition is in force.`,
+        readBack,
+        last,
+      ];
     default:
       return ['Partners that pinned this edition get no more estimates from it.', readBack, last];
   }

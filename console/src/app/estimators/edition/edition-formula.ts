@@ -56,6 +56,9 @@ export class EditionFormula {
 
   protected readonly words = computed(() => formulaWords(this.edition()));
   protected readonly rows = computed(() =>
-    formulaRows(this.edition(), this.inputs()).map((row) => ({ ...row, text: formatFigure(row.weight, { significant: 6, signed: true }) })),
+    formulaRows(this.edition(), this.inputs()).map((row) => ({
+      ...row,
+      text: formatFigure(row.weight, { significant: 6, signed: true }),
+    })),
   );
 }

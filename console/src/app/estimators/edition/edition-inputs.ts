@@ -57,14 +57,19 @@ export class EditionInputs {
   readonly inputSchema = input.required<Edition['inputSchema']>();
 
   protected readonly rows = computed(() =>
-    caseFields(this.inputSchema()).map((field) => ({ ...field, covers: covers(field), typical: typicalText(field) || '–' })),
+    caseFields(this.inputSchema()).map((field) => ({
+      ...field,
+      covers: covers(field),
+      typical: typicalText(field) || '–',
+    })),
   );
 }
 
 function covers({ range, days, levels, otherLevels, kind }: CaseField): string {
-  if (levels.length > LEVELS_SHOWN) return `${levels.slice(0, LEVELS_SHOWN).join('; ')} and ${levels.length - LEVELS_SHOWN} more`;
+  if (levels.length > LEVELS_SHOWN)
+    return `${levels.slice(0, LEVELS_SHOWN).join('; ')} and ${levels.length - LEVELS_SHOWN} more`;
   if (levels.length > 0) return levels.join('; ') + (otherLevels ? '; others are taken too' : '');
-  if (range && kind === 'number') return `${formatReading(range.least, 'en-GB')} to ${formatReading(range.greatest, 'en-GB')}`;
+  if (range && kind === 'number')
+    return `${formatReading(range.least, 'en-GB')} to ${formatReading(range.greatest, 'en-GB')}`;
   return days ? `${formatDay(days.first)} to ${formatDay(days.last)}` : '–';
 }
-

@@ -6,7 +6,11 @@ import { EditionPage } from './edition-page';
 
 const url = `/api/editions/${edition.id}`;
 
-async function opened(found: Partial<Edition>, roles: readonly Role[] = ['analyst'], person = ines): Promise<Screen<EditionPage>> {
+async function opened(
+  found: Partial<Edition>,
+  roles: readonly Role[] = ['analyst'],
+  person = ines,
+): Promise<Screen<EditionPage>> {
   const screen = await show(EditionPage, { slug: 'refit-labour', id: edition.id }, roles, [], person);
   await screen.answer(url, { ...edition, ...found });
   await screen.answer('/api/estimators/refit-labour', estimator);
@@ -38,7 +42,13 @@ describe('the edition page', () => {
     const screen = await opened({});
     await screen.answer(`/api/fits/${fit.id}`, fit);
     expect(tableTexts(find('table', 'Terms of the formula')).slice(1)[0]).toEqual(['+9.73100', 'length']);
-    expect(tableTexts(find('table', 'Inputs of the edition'))[1]).toEqual(['Length overall Without the bowsprit.', 'm', '6.1 to 18.4', '11.2', 'refused']);
+    expect(tableTexts(find('table', 'Inputs of the edition'))[1]).toEqual([
+      'Length overall Without the bowsprit.',
+      'm',
+      '6.1 to 18.4',
+      '11.2',
+      'refused',
+    ]);
     expect(tableTexts(find('table', 'Inputs of the edition'))[3][2]).toBe('GRP; steel');
     expect(tableTexts(find('table', 'Who did what'))[1].slice(1, 3)).toEqual(['In force', 'Tomas Lindqvist']);
     expect(pageText()).toContain('cd'.repeat(32));
@@ -64,7 +74,9 @@ describe('the edition page', () => {
     const screen = await opened({ state: 'under-review', mayPutInForce: false }, ['analyst', 'reviewer'], ines);
     const button = find('button', 'Put in force');
     expect(button.getAttribute('aria-disabled')).toBe('true');
-    expect(document.getElementById(button.getAttribute('aria-describedby')!)?.textContent).toContain('someone else must');
+    expect(document.getElementById(button.getAttribute('aria-describedby')!)?.textContent).toContain(
+      'someone else must',
+    );
     await screen.press(button);
     expect(document.querySelector('mat-dialog-container')).toBeNull();
   });
@@ -105,14 +117,19 @@ describe('the edition page', () => {
     const screen = await opened({ state: 'under-review', mayPutInForce: true }, ['reviewer'], tomas);
     await screen.press(find('button', 'Put in force'));
     await screen.press([...document.querySelectorAll<HTMLElement>('mat-dialog-actions button')].at(-1)!);
-    await screen.refuse(`${url}/put-in-force`, { title: 'Someone else must approve it', status: 409, code: 'own-edition' }, 'POST');
+    await screen.refuse(
+      `${url}/put-in-force`,
+      { title: 'Someone else must approve it', status: 409, code: 'own-edition' },
+      'POST',
+    );
     expect(find('alert', /Someone else must approve it/)).toBeDefined();
     expect(find('heading', /^Refit labour, edition 4/).textContent).toContain('Under review');
   });
 
   it('offers a viewer nothing but reading', async () => {
     await opened({ state: 'under-review' }, ['viewer']);
-    for (const name of ['Put in force', 'Send back', 'Submit for review', /^More/]) expect(maybe('button', name)).toBeUndefined();
+    for (const name of ['Put in force', 'Send back', 'Submit for review', /^More/])
+      expect(maybe('button', name)).toBeUndefined();
     expect(() => field('What must change')).toThrow();
   });
 });

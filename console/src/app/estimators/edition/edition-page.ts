@@ -24,7 +24,15 @@ import { EDITION_STAMPS } from '../../ui/stamps';
 import { TryCase } from '../try/try-case';
 import { RevisionFacts } from '../words/revision-facts';
 import { methodName } from '../words/method-words';
-import { actionsFor, putInForceRequest, sendBackRequest, submitRequest, whyNotPutInForce, type Actor, type EditionAction } from './edition-actions';
+import {
+  actionsFor,
+  putInForceRequest,
+  sendBackRequest,
+  submitRequest,
+  whyNotPutInForce,
+  type Actor,
+  type EditionAction,
+} from './edition-actions';
 import { EditionEvents } from './edition-events';
 import { EditionFormula } from './edition-formula';
 import { EditionInputs } from './edition-inputs';
@@ -90,7 +98,9 @@ export class EditionPage {
   /** What is seldom done stands in the menu. */
   protected readonly menu = computed<readonly SheetMenuItem[]>(() => {
     const edition = this.edition.value();
-    return edition && this.actions().includes('withdraw') ? [{ label: 'Withdraw', run: () => this.withdraw(edition) }] : [];
+    return edition && this.actions().includes('withdraw')
+      ? [{ label: 'Withdraw', run: () => this.withdraw(edition) }]
+      : [];
   });
   protected readonly whyNot = computed(() => {
     const edition = this.edition.value();
@@ -123,7 +133,10 @@ export class EditionPage {
   }
 
   private withdraw(edition: Edition): void {
-    const opened = this.dialog.open<WithdrawDialog, Edition, Withdrawal>(WithdrawDialog, { data: edition, autoFocus: 'textarea' });
+    const opened = this.dialog.open<WithdrawDialog, Edition, Withdrawal>(WithdrawDialog, {
+      data: edition,
+      autoFocus: 'textarea',
+    });
     this.run(
       opened.afterClosed().pipe(
         filter((withdrawal) => withdrawal !== undefined),

@@ -12,10 +12,18 @@ export interface FormulaRow {
 }
 
 /** Intercept first, then every weight in the order of the edition. Weights of 0 add nothing and are left out. */
-export function formulaRows(edition: Pick<Edition, 'weights'>, inputs: readonly SpecificationInput[] = []): readonly FormulaRow[] {
+export function formulaRows(
+  edition: Pick<Edition, 'weights'>,
+  inputs: readonly SpecificationInput[] = [],
+): readonly FormulaRow[] {
   return edition.weights
     .filter((weight) => weight.value !== 0)
-    .map((weight) => ({ input: weight.input, part: partOf(weight), weight: weight.value, times: timesOf(weight, inputs) }));
+    .map((weight) => ({
+      input: weight.input,
+      part: partOf(weight),
+      weight: weight.value,
+      times: timesOf(weight, inputs),
+    }));
 }
 
 /** What the terms add up to: the value itself, or its logarithm. */

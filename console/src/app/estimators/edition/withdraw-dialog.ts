@@ -69,5 +69,7 @@ export class WithdrawDialog {
 
 function noteComplaint(note: string): string | undefined {
   if (note === '') return 'Say why: partners and the journal are told.';
-  return note.length > LONGEST_NOTE ? `Shorten the note to ${LONGEST_NOTE} characters; it has ${note.length}.` : undefined;
+  return note.length > LONGEST_NOTE
+    ? `Shorten the note to ${LONGEST_NOTE} characters; it has ${note.length}.`
+    : undefined;
 }

@@ -6,7 +6,12 @@ import { Field, FieldInput } from '../../ui/field';
   selector: 'tb-text-field',
   imports: [Field, FieldInput],
   template: `
-    <tb-field [label]="optional() ? label() + ' (optional)' : label()" [hint]="hint()" [error]="error()" [unit]="unit()">
+    <tb-field
+      [label]="optional() ? label() + ' (optional)' : label()"
+      [hint]="hint()"
+      [error]="error()"
+      [unit]="unit()"
+    >
       @if (lines() > 1) {
         <textarea tbInput #text [rows]="lines()" [value]="value()" (input)="value.set(text.value)"></textarea>
       } @else {

@@ -20,6 +20,8 @@ export class CrossValidationCurve {
   protected readonly end = crossValidationFrame.width - crossValidationFrame.right;
   protected readonly middle = (crossValidationFrame.left + crossValidationFrame.width - crossValidationFrame.right) / 2;
   protected readonly acrossLabel = computed(() =>
-    this.axis() === 'log-lambda' ? 'log₁₀ of the penalty λ (stronger to the right)' : 'effective degrees of freedom (stronger penalty to the left)',
+    this.axis() === 'log-lambda'
+      ? 'log₁₀ of the penalty λ (stronger to the right)'
+      : 'effective degrees of freedom (stronger penalty to the left)',
   );
 }

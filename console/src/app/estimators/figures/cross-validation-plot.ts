@@ -16,7 +16,12 @@ export interface CrossValidationMark {
 export interface CrossValidationPlot {
   readonly curve: string;
   readonly band: string;
-  readonly points: readonly { readonly at: number; readonly height: number; readonly low: number; readonly high: number }[];
+  readonly points: readonly {
+    readonly at: number;
+    readonly height: number;
+    readonly low: number;
+    readonly high: number;
+  }[];
   readonly marks: readonly CrossValidationMark[];
   readonly across: readonly Tick[];
   readonly up: readonly Tick[];
@@ -35,17 +40,33 @@ interface CurvePoint {
  * The curve in the units of the target: the root of the mean squared held-out error, with its band carried through the
  * root end by end, √(error ± standard error).
  */
-export function crossValidationPlot(result: FitResult, axis: PenaltyAxis, frame = crossValidationFrame): CrossValidationPlot | null {
+export function crossValidationPlot(
+  result: FitResult,
+  axis: PenaltyAxis,
+  frame = crossValidationFrame,
+): CrossValidationPlot | null {
   const points = result.path.flatMap((point) => curvePoint(point, axis)).sort((left, right) => left.x - right.x);
   if (points.length < 2) return null;
   const across = acrossScale(frame, extentOf(points.map((point) => point.x)));
   const up = upScale(frame, extentOf(points.flatMap((point) => [point.low, point.high])));
-  const curve = line<CurvePoint>((point) => across(point.x), (point) => up(point.error));
-  const band = area<CurvePoint>((point) => across(point.x), (point) => up(point.low), (point) => up(point.high));
+  const curve = line<CurvePoint>(
+    (point) => across(point.x),
+    (point) => up(point.error),
+  );
+  const band = area<CurvePoint>(
+    (point) => across(point.x),
+    (point) => up(point.low),
+    (point) => up(point.high),
+  );
   return {
     curve: curve(points) ?? '',
     band: band(points) ?? '',
-    points: points.map((point) => ({ at: across(point.x), height: up(point.error), low: up(point.low), high: up(point.high) })),
+    points: points.map((point) => ({
+      at: across(point.x),
+      height: up(point.error),
+      low: up(point.low),
+      high: up(point.high),
+    })),
     marks: marksOf(result, axis, across, frame),
     across: ticksOf(across, 6),
     up: ticksOf(up, 5),
@@ -56,7 +77,14 @@ function curvePoint(point: PathPoint, axis: PenaltyAxis): readonly CurvePoint[] 
   const x = positionOf(point.lambda, point.effectiveDegreesOfFreedom, axis);
   if (point.cvError === null || x === null) return [];
   const spread = point.cvStandardError ?? 0;
-  return [{ x, error: Math.sqrt(point.cvError), low: Math.sqrt(Math.max(0, point.cvError - spread)), high: Math.sqrt(point.cvError + spread) }];
+  return [
+    {
+      x,
+      error: Math.sqrt(point.cvError),
+      low: Math.sqrt(Math.max(0, point.cvError - spread)),
+      high: Math.sqrt(point.cvError + spread),
+    },
+  ];
 }
 
 function positionOf(lambda: number, degreesOfFreedom: number, axis: PenaltyAxis): number | null {

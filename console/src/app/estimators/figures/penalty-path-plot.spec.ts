@@ -27,14 +27,21 @@ describe('the penalty path', () => {
 
   it('labels nine at most and says how many lines it leaves out', () => {
     const weights = Array.from({ length: 70 }, (_, i) => ({ input: `x${i}`, value: 1, standardised: 70 - i }));
-    const path = [1, 2, 3].map((df) => ({ ...result.path[0], effectiveDegreesOfFreedom: df, standardised: weights.map((weight) => weight.standardised * df) }));
+    const path = [1, 2, 3].map((df) => ({
+      ...result.path[0],
+      effectiveDegreesOfFreedom: df,
+      standardised: weights.map((weight) => weight.standardised * df),
+    }));
     const plot = penaltyPathPlot({ ...result, weights, path })!;
     expect(plot.lines.filter((line) => line.labelled)).toHaveLength(9);
     expect(plot.leftOut).toBe(10);
   });
 
   it('keeps labels apart and inside the frame', () => {
-    const at = spreadLabels([100, 101, 102, 199, 200].map((wanted, position) => ({ position, wanted })), [0, 200]);
+    const at = spreadLabels(
+      [100, 101, 102, 199, 200].map((wanted, position) => ({ position, wanted })),
+      [0, 200],
+    );
     const heights = [...at.values()].sort((left, right) => left - right);
     for (let i = 1; i < heights.length; i += 1) expect(heights[i] - heights[i - 1]).toBeGreaterThanOrEqual(15 - 1e-9);
     expect(heights[heights.length - 1]).toBeLessThanOrEqual(200);

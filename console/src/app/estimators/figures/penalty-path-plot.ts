@@ -37,12 +37,20 @@ export function weightName(weight: Weight): string {
 
 /** Standardised weights against effective degrees of freedom. */
 export function penaltyPathPlot(result: FitResult, frame = penaltyPathFrame): PenaltyPathPlot | null {
-  const points = [...result.path].sort((left, right) => left.effectiveDegreesOfFreedom - right.effectiveDegreesOfFreedom);
+  const points = [...result.path].sort(
+    (left, right) => left.effectiveDegreesOfFreedom - right.effectiveDegreesOfFreedom,
+  );
   if (points.length < 2) return null;
-  const order = byImportance(result, points.map((point) => point.standardised));
+  const order = byImportance(
+    result,
+    points.map((point) => point.standardised),
+  );
   const drawn = order.slice(0, drawnLines);
   const across = acrossScale(frame, extentOf(points.map((point) => point.effectiveDegreesOfFreedom)));
-  const up = upScale(frame, extentOf([0, ...points.flatMap((point) => drawn.map((position) => point.standardised[position] ?? null))]));
+  const up = upScale(
+    frame,
+    extentOf([0, ...points.flatMap((point) => drawn.map((position) => point.standardised[position] ?? null))]),
+  );
   const last = points[points.length - 1];
   const labels = spreadLabels(
     drawn.slice(0, labelledLines).map((position) => ({ position, wanted: up(last.standardised[position] ?? 0) })),
@@ -77,7 +85,9 @@ export function penaltyPathPlot(result: FitResult, frame = penaltyPathFrame): Pe
 
 /** Positions of the weights, largest at the chosen point first; ties by their largest along the path. */
 function byImportance(result: FitResult, path: readonly (readonly number[])[]): readonly number[] {
-  const largest = result.weights.map((_, position) => path.reduce((most, row) => Math.max(most, Math.abs(row[position] ?? 0)), 0));
+  const largest = result.weights.map((_, position) =>
+    path.reduce((most, row) => Math.max(most, Math.abs(row[position] ?? 0)), 0),
+  );
   const chosen = result.weights.map((weight) => Math.abs(weight.standardised));
   return result.weights
     .map((_, position) => position)
@@ -90,7 +100,9 @@ export function spreadLabels(
   labels: readonly { readonly position: number; readonly wanted: number }[],
   [top, bottom]: readonly [number, number],
 ): ReadonlyMap<number, number> {
-  const placed = [...labels].sort((left, right) => left.wanted - right.wanted).map((label) => ({ ...label, at: label.wanted }));
+  const placed = [...labels]
+    .sort((left, right) => left.wanted - right.wanted)
+    .map((label) => ({ ...label, at: label.wanted }));
   let floor = top - labelGap;
   for (const label of placed) {
     label.at = Math.max(label.wanted, floor + labelGap);

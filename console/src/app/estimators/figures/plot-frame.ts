@@ -17,11 +17,16 @@ export interface Tick {
 
 /** Maps [from, to] onto the frame's width. A range of no width is opened, so that a single point stands in the middle. */
 export function acrossScale(frame: PlotFrame, range: readonly [number, number]): ScaleLinear<number, number> {
-  return scaleLinear().domain(opened(range)).range([frame.left, frame.width - frame.right]);
+  return scaleLinear()
+    .domain(opened(range))
+    .range([frame.left, frame.width - frame.right]);
 }
 
 export function upScale(frame: PlotFrame, range: readonly [number, number]): ScaleLinear<number, number> {
-  return scaleLinear().domain(opened(range)).nice(5).range([frame.height - frame.bottom, frame.top]);
+  return scaleLinear()
+    .domain(opened(range))
+    .nice(5)
+    .range([frame.height - frame.bottom, frame.top]);
 }
 
 export function ticksOf(scale: ScaleLinear<number, number>, about: number): readonly Tick[] {

@@ -8,6 +8,9 @@ export interface Diagnostics {
   readonly conditionIndices: readonly (number | null)[];
   readonly sharedLoad: readonly SharedLoad[];
   readonly influential: readonly InfluentialRecord[];
+  readonly frequencies: readonly { readonly name: string; readonly frequency: number }[];
+  readonly learning: readonly { readonly records: number; readonly rmse: number }[];
+  readonly heldOut: readonly HeldOutRecord[];
 }
 
 export interface CoverageQuarter {
@@ -17,9 +20,11 @@ export interface CoverageQuarter {
   readonly coverage: number;
 }
 
+/** Inputs that carry the same information, and how each method splits the load among them. */
 export interface SharedLoad {
   readonly members: readonly string[];
   readonly smallestCorrelation: number | null;
+  readonly splits: readonly { readonly method: string; readonly weights: readonly number[] }[];
 }
 
 export interface InfluentialRecord {
@@ -29,44 +34,77 @@ export interface InfluentialRecord {
   readonly residual: number;
 }
 
-export function hasDiagnostics(diagnostics: Diagnostics): boolean {
-  return Object.values(diagnostics).some((rows: readonly unknown[]) => rows.length > 0);
+/** One record with the estimate of the fold that had not seen it; both in target units. */
+export interface HeldOutRecord {
+  readonly row: number;
+  readonly recorded: number;
+  readonly estimate: number;
 }
 
 type Plain = Readonly<Record<string, unknown>>;
+
+/** Whether there is anything to set out in tables; held-out records have a figure of their own. */
+export function hasTables({ heldOut: _, ...tables }: Diagnostics): boolean {
+  return Object.values(tables).some((table: readonly unknown[]) => table.length > 0);
+}
 
 export function diagnosticsOf(result: object): Diagnostics {
   const whole = asPlain(result);
   const more = asPlain(whole['diagnostics']);
   return {
-    coverage: rows(asPlain(whole['accuracy'])['coverageByQuarter']).flatMap(quarterOf),
-    inflation: rows(more['varianceInflation']).map((row) => ({ name: memberName(row), factor: numberOrNull(row['factor']) })),
+    coverage: numberRows(asPlain(whole['accuracy'])['coverageByQuarter'], ['from', 'to', 'records', 'coverage']),
+    inflation: rows(more['varianceInflation']).map((row) => ({
+      name: memberName(row),
+      factor: numberOrNull(row['factor']),
+    })),
     conditionIndices: rows(more['conditionIndices']).map((row) => numberOrNull(row['index'])),
     sharedLoad: rows(more['sharedLoad']).flatMap(sharedLoadOf),
-    influential: rows(more['influential']).flatMap(influentialOf),
+    influential: numberRows(more['influential'], ['row', 'cooksDistance', 'leverage', 'residual']),
+    frequencies: rows(more['selectionFrequency']).flatMap(frequencyOf),
+    learning: numberRows(more['learningCurve'], ['records', 'rmse']),
+    heldOut: numberRows(more['residuals'], ['row', 'recorded', 'heldOutEstimate']).map(
+      ({ row, recorded, heldOutEstimate }) => ({
+        row,
+        recorded,
+        estimate: heldOutEstimate,
+      }),
+    ),
   };
-}
-
-function quarterOf(row: Plain): readonly CoverageQuarter[] {
-  const [from, to, records, coverage] = ['from', 'to', 'records', 'coverage'].map((name) => numberOrNull(row[name]));
-  if (from === null || to === null || records === null || coverage === null) return [];
-  return [{ from, to, records, coverage }];
 }
 
 function sharedLoadOf(row: Plain): readonly SharedLoad[] {
   const members = rows(row['members']).map(memberName);
-  return members.length < 2 ? [] : [{ members, smallestCorrelation: numberOrNull(row['smallestCorrelation']) }];
+  if (members.length < 2) return [];
+  const splits = [
+    { method: 'Least squares', weights: numbers(row['leastSquares']) },
+    { method: 'Ridge', weights: numbers(row['ridge']) },
+    { method: 'Lasso', weights: numbers(row['lasso']) },
+  ].filter(({ weights }) => weights.length === members.length);
+  return [{ members, smallestCorrelation: numberOrNull(row['smallestCorrelation']), splits }];
 }
 
-function influentialOf(row: Plain): readonly InfluentialRecord[] {
-  const [at, cooksDistance, leverage, residual] = ['row', 'cooksDistance', 'leverage', 'residual'].map((name) => numberOrNull(row[name]));
-  if (at === null || cooksDistance === null || leverage === null || residual === null) return [];
-  return [{ row: at, cooksDistance, leverage, residual }];
+function frequencyOf(row: Plain): readonly { readonly name: string; readonly frequency: number }[] {
+  const frequency = numberOrNull(row['frequency']);
+  return frequency === null ? [] : [{ name: memberName(row), frequency }];
+}
+
+/** Rows in which every named field is a number. */
+function numberRows<Name extends string>(
+  value: unknown,
+  names: readonly Name[],
+): readonly Readonly<Record<Name, number>>[] {
+  return rows(value)
+    .filter((row) => names.every((name) => numberOrNull(row[name]) !== null))
+    .map((row) => Object.fromEntries(names.map((name) => [name, row[name]])) as Record<Name, number>);
 }
 
 function memberName(row: Plain): string {
   const input = typeof row['input'] === 'string' ? row['input'] : '';
   return typeof row['level'] === 'string' ? `${input}: ${row['level']}` : input;
+}
+
+function numbers(value: unknown): readonly number[] {
+  return Array.isArray(value) ? value.filter((item): item is number => numberOrNull(item) !== null) : [];
 }
 
 function rows(value: unknown): readonly Plain[] {

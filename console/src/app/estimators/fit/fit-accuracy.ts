@@ -19,7 +19,9 @@ import { formatFigure, formatShare } from '../../ui/figure';
       <dt>Share of the spread explained (R²)</dt>
       <dd>{{ explained() }}</dd>
       <dt>Records inside their interval</dt>
-      <dd>{{ coverage() }} <span class="tb-small">where {{ wanted() }} were to be</span></dd>
+      <dd>
+        {{ coverage() }} <span class="tb-small">where {{ wanted() }} were to be</span>
+      </dd>
     </dl>
   `,
 })
@@ -31,7 +33,9 @@ export class FitAccuracy {
 
   private readonly accuracy = computed(() => this.result().accuracy);
   protected readonly error = computed(() => formatFigure(this.accuracy().rmse, { significant: 3, unit: this.unit() }));
-  protected readonly meanAbsolute = computed(() => formatFigure(this.accuracy().mae, { significant: 3, unit: this.unit() }));
+  protected readonly meanAbsolute = computed(() =>
+    formatFigure(this.accuracy().mae, { significant: 3, unit: this.unit() }),
+  );
   protected readonly explained = computed(() => formatFigure(this.accuracy().r2, { significant: 3 }));
   protected readonly wanted = computed(() => formatShare(this.level()));
   protected readonly coverage = computed(() => {

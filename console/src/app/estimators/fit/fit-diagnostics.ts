@@ -1,5 +1,5 @@
 import { Component, computed, input } from '@angular/core';
-import { formatFigure, formatShare } from '../../ui/figure';
+import { formatCount, formatFigure, formatShare } from '../../ui/figure';
 import { TableBox } from '../../ui/table-box';
 import type { Diagnostics } from './diagnostics';
 
@@ -25,7 +25,9 @@ export class FitDiagnostics {
     })),
   );
   protected readonly inflation = computed(() =>
-    [...this.diagnostics().inflation].sort((left, right) => (right.factor ?? Infinity) - (left.factor ?? Infinity)).slice(0, LARGEST_SHOWN),
+    [...this.diagnostics().inflation]
+      .sort((left, right) => (right.factor ?? Infinity) - (left.factor ?? Infinity))
+      .slice(0, LARGEST_SHOWN),
   );
   /** 30 and above: common practice after Belsley, Kuh and Welsch (1980), chapter 3. */
   protected readonly conditionIndices = computed(() =>
@@ -34,7 +36,25 @@ export class FitDiagnostics {
       .slice(0, LARGEST_SHOWN)
       .map((index) => (index === null ? 'without bound' : formatFigure(index, { significant: 3 }))),
   );
-  protected readonly sharedLoad = computed(() => this.diagnostics().sharedLoad);
+  protected readonly sharedLoad = computed(() =>
+    this.diagnostics().sharedLoad.map((group) => ({
+      ...group,
+      name: group.members.join(', '),
+      rows: group.members.map((member, at) => ({
+        member,
+        weights: group.splits.map(({ weights }) => formatFigure(weights[at], { significant: 3 })),
+      })),
+    })),
+  );
+  protected readonly frequencies = computed(() =>
+    [...this.diagnostics().frequencies].sort((left, right) => right.frequency - left.frequency),
+  );
+  protected readonly learning = computed(() =>
+    this.diagnostics().learning.map(({ records, rmse }) => ({
+      records: formatCount(records),
+      error: formatFigure(rmse, { significant: 3, unit: this.unit() }),
+    })),
+  );
   protected readonly influential = computed(() =>
     this.diagnostics()
       .influential.slice(0, LARGEST_SHOWN)

@@ -19,12 +19,23 @@ class Stream extends EventTarget {
   }
 }
 
-async function opened(stream = new Stream(), roles: readonly ('analyst' | 'viewer')[] = ['analyst']): Promise<Screen<FitPage>> {
-  return show(FitPage, { slug: 'refit-labour', id: fit.id }, roles, [{ provide: OPEN_EVENT_SOURCE, useValue: () => stream }]);
+async function opened(
+  stream = new Stream(),
+  roles: readonly ('analyst' | 'viewer')[] = ['analyst'],
+): Promise<Screen<FitPage>> {
+  return show(FitPage, { slug: 'refit-labour', id: fit.id }, roles, [
+    { provide: OPEN_EVENT_SOURCE, useValue: () => stream },
+  ]);
 }
 
 const url = `/api/fits/${fit.id}`;
-const running = { ...fit, state: 'running' as const, progress: { stage: 'reading', done: 0, total: 0 }, result: null, finishedAt: null };
+const running = {
+  ...fit,
+  state: 'running' as const,
+  progress: { stage: 'reading', done: 0, total: 0 },
+  result: null,
+  finishedAt: null,
+};
 
 describe('the fit page', () => {
   it('says that it reads the fit', async () => {
@@ -69,7 +80,11 @@ describe('the fit page', () => {
 
   it('says why a fit failed and in which column', async () => {
     const screen = await opened();
-    await screen.answer(url, { ...running, state: 'failed', failure: { code: 'fit-failed', message: 'A reading is missing; say what to do.', column: 'beam' } });
+    await screen.answer(url, {
+      ...running,
+      state: 'failed',
+      failure: { code: 'fit-failed', message: 'A reading is missing; say what to do.', column: 'beam' },
+    });
     expect(find('alert', /A reading is missing/).textContent).toContain('The column is beam');
   });
 
@@ -131,10 +146,32 @@ describe('the fit page', () => {
 
   it('shows diagnostics where the engine gives them', async () => {
     const screen = await opened();
-    const diagnostics = { sharedLoad: [{ members: [{ input: 'length' }, { input: 'waterline' }], smallestCorrelation: 0.973 }] };
+    const diagnostics = {
+      sharedLoad: [
+        { members: [{ input: 'length' }, { input: 'waterline' }], smallestCorrelation: 0.973, ridge: [3, 4.5] },
+      ],
+    };
     await screen.answer(url, { ...fit, result: { ...result, diagnostics } });
-    expect(pageText()).toContain('length, waterline');
+    expect(tableTexts(find('table', 'Least correlation 0.973'))).toEqual([
+      ['Input', 'Ridge'],
+      ['length', '3'],
+      ['waterline', '4.50'],
+    ]);
     expect(maybe('heading', 'Records that pull the most')).toBeUndefined();
+  });
+
+  it('sets held-out estimates against records, or shows those furthest off as a table', async () => {
+    const screen = await opened();
+    const residuals = [
+      { row: 0, recorded: 310, heldOutEstimate: 300 },
+      { row: 7, recorded: 180, heldOutEstimate: 240.4 },
+    ];
+    await screen.answer(url, { ...fit, result: { ...result, diagnostics: { residuals } } });
+    expect(find('image', /^Estimate against record\. 1 of the 2 records/)).toBeDefined();
+    await screen.press(find('button', 'how far off'));
+    expect(find('image', /^Estimate against record/).textContent).toContain('recorded minus estimated, h');
+    await screen.press([...document.querySelectorAll<HTMLElement>('figure .head button')].at(-1)!);
+    expect(tableTexts(find('table', 'Records furthest off'))[1]).toEqual(['8', '180', '240', '−60']);
   });
 
   it('draws up an edition with its change note and goes there', async () => {
@@ -143,7 +180,11 @@ describe('the fit page', () => {
     await screen.press(find('button', 'Draw up an edition'));
     type('Change note', 'New records to October.');
     await screen.press(find('button', 'Draw up the edition'));
-    const request = await screen.answer('/api/estimators/refit-labour/editions', { ...edition, id: 'edition00005' }, 'POST');
+    const request = await screen.answer(
+      '/api/estimators/refit-labour/editions',
+      { ...edition, id: 'edition00005' },
+      'POST',
+    );
     expect(request.request.body).toEqual({ fitId: fit.id, changeNote: 'New records to October.' });
     expect(screen.url).toBe('/estimators/refit-labour/editions/edition00005');
   });

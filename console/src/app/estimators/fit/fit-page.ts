@@ -20,11 +20,12 @@ import { StatusStamp } from '../../ui/status-stamp';
 import { RevisionFacts } from '../words/revision-facts';
 import { SpecificationWords } from '../words/specification-list';
 import { CrossValidationFigure } from './cross-validation-figure';
-import { diagnosticsOf, hasDiagnostics } from './diagnostics';
+import { diagnosticsOf, hasTables } from './diagnostics';
 import { FitAccuracy } from './fit-accuracy';
 import { FitDiagnostics } from './fit-diagnostics';
 import { FitProgress } from './fit-progress';
 import { FitReport } from './fit-report';
+import { HeldOutFigure } from './held-out-figure';
 import { PenaltyPathFigure } from './penalty-path-figure';
 import { PenaltyTable } from './penalty-table';
 import { WeightsTable } from './weights-table';
@@ -38,6 +39,7 @@ import { WeightsTable } from './weights-table';
     FitDiagnostics,
     FitProgress,
     FitReport,
+    HeldOutFigure,
     LoadingState,
     MomentPipe,
     PenaltyPathFigure,
@@ -72,16 +74,24 @@ export class FitPage {
   protected readonly working = signal(false);
 
   protected readonly state = computed(() => this.step()?.state ?? this.fit.value()?.state ?? 'queued');
-  protected readonly progress = computed(() => this.step()?.progress ?? this.fit.value()?.progress ?? { stage: '', done: 0, total: 0 });
+  protected readonly progress = computed(
+    () => this.step()?.progress ?? this.fit.value()?.progress ?? { stage: '', done: 0, total: 0 },
+  );
   protected readonly underWay = computed(() => !fitEnded(this.fit.value()?.state ?? 'queued'));
   protected readonly stamp = computed(() => (this.fit.value() ? FIT_STAMPS[this.state()] : undefined));
-  protected readonly result = computed(() => (this.fit.value()?.state === 'done' ? (this.fit.value()?.result ?? undefined) : undefined));
+  protected readonly result = computed(() =>
+    this.fit.value()?.state === 'done' ? (this.fit.value()?.result ?? undefined) : undefined,
+  );
   protected readonly onLog = computed(() => this.fit.value()?.specification.target.transform === 'log');
   protected readonly scaleUnit = computed(() => (this.onLog() ? '' : (this.fit.value()?.unit ?? '')));
-  protected readonly diagnostics = computed(() => {
+  private readonly found = computed(() => {
     const result = this.result();
-    const diagnostics = result && diagnosticsOf(result);
-    return diagnostics && hasDiagnostics(diagnostics) ? diagnostics : undefined;
+    return result && diagnosticsOf(result);
+  });
+  protected readonly heldOut = computed(() => this.found()?.heldOut ?? []);
+  protected readonly diagnostics = computed(() => {
+    const found = this.found();
+    return found && hasTables(found) ? found : undefined;
   });
   protected readonly mayChange = computed(() => this.session.holds('analyst'));
   protected readonly editionStamps = EDITION_STAMPS;
@@ -112,7 +122,9 @@ export class FitPage {
     this.confirm
       .askForNote({
         heading: `Draw up an edition of ${this.fit.value()?.estimatorName}?`,
-        consequences: ['The fit becomes a draft edition. Nothing that partners see changes until another person puts it in force.'],
+        consequences: [
+          'The fit becomes a draft edition. Nothing that partners see changes until another person puts it in force.',
+        ],
         verb: 'Draw up the edition',
         noteLabel: 'Change note',
         noteHint: 'What is new against the edition before, for the reviewer and for partners.',

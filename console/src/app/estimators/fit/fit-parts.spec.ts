@@ -1,5 +1,5 @@
 import { result } from '../testing/refit-labour';
-import { diagnosticsOf } from './diagnostics';
+import { diagnosticsOf, hasTables } from './diagnostics';
 import { penaltyEquivalents } from './penalty-equivalents';
 import { droppedInputs, weightGroups } from './weight-groups';
 
@@ -30,7 +30,17 @@ describe('the penalty and its equivalents', () => {
 
 describe('diagnostics beyond the contract', () => {
   it('are none when the engine gives none', () => {
-    expect(diagnosticsOf(result)).toEqual({ coverage: [], inflation: [], conditionIndices: [], sharedLoad: [], influential: [] });
+    expect(diagnosticsOf(result)).toEqual({
+      coverage: [],
+      inflation: [],
+      conditionIndices: [],
+      sharedLoad: [],
+      influential: [],
+      frequencies: [],
+      learning: [],
+      heldOut: [],
+    });
+    expect(hasTables(diagnosticsOf(result))).toBe(false);
   });
 
   it('are read where they have the expected shape and passed over where not', () => {
@@ -39,7 +49,22 @@ describe('diagnostics beyond the contract', () => {
       diagnostics: {
         varianceInflation: [{ input: 'hull', level: 'steel', factor: null }],
         conditionIndices: [{ index: 31.2, proportions: [] }],
-        sharedLoad: [{ members: [{ input: 'length' }, { input: 'waterline' }], smallestCorrelation: 0.97 }, { members: [{ input: 'rig' }] }],
+        sharedLoad: [
+          {
+            members: [{ input: 'length' }, { input: 'waterline' }],
+            smallestCorrelation: 0.97,
+            leastSquares: null,
+            ridge: [3, 4],
+            lasso: [7, 0],
+          },
+          { members: [{ input: 'rig' }] },
+        ],
+        selectionFrequency: [{ input: 'rig', frequency: 0.4 }],
+        learningCurve: [{ records: 400, rmse: 44 }],
+        residuals: [
+          { row: 0, recorded: 10, heldOutEstimate: 12, fitted: 11 },
+          { row: 1, recorded: 10, heldOutEstimate: null },
+        ],
         influential: [{ row: 4, cooksDistance: 0.3, leverage: 0.1, residual: 120 }, null],
       },
     });
@@ -47,7 +72,19 @@ describe('diagnostics beyond the contract', () => {
       coverage: [{ from: 1, to: 2, records: 600, coverage: 0.91 }],
       inflation: [{ name: 'hull: steel', factor: null }],
       conditionIndices: [31.2],
-      sharedLoad: [{ members: ['length', 'waterline'], smallestCorrelation: 0.97 }],
+      sharedLoad: [
+        {
+          members: ['length', 'waterline'],
+          smallestCorrelation: 0.97,
+          splits: [
+            { method: 'Ridge', weights: [3, 4] },
+            { method: 'Lasso', weights: [7, 0] },
+          ],
+        },
+      ],
+      frequencies: [{ name: 'rig', frequency: 0.4 }],
+      learning: [{ records: 400, rmse: 44 }],
+      heldOut: [{ row: 0, recorded: 10, estimate: 12 }],
       influential: [{ row: 4, cooksDistance: 0.3, leverage: 0.1, residual: 120 }],
     });
   });

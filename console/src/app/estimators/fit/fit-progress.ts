@@ -16,7 +16,10 @@ const STAGES: Readonly<Record<string, string>> = {
   selector: 'tb-fit-progress',
   template: `
     <p class="stage" role="status">
-      {{ stage() }}@if (counted()) {<span class="tb-figures">&ngsp;· {{ counted() }}</span>}
+      {{ stage() }}
+      @if (counted()) {
+        <span class="tb-figures">&ngsp;· {{ counted() }}</span>
+      }
     </p>
     <progress [attr.aria-label]="stage()" [attr.max]="total()" [attr.value]="done()"></progress>
     @if (mayCancel()) {

@@ -39,6 +39,8 @@ export class FitReport {
   readonly report = input.required<FitResult['report']>();
 
   protected readonly iterations = computed(() => formatCount(this.report().iterations));
-  protected readonly gap = computed(() => (this.report().gap === 0 ? '0: solved exactly' : formatFigure(this.report().gap, { significant: 2 })));
+  protected readonly gap = computed(() =>
+    this.report().gap === 0 ? '0: solved exactly' : formatFigure(this.report().gap, { significant: 2 }),
+  );
   protected readonly condition = computed(() => formatFigure(this.report().conditionNumber, { significant: 3 }));
 }

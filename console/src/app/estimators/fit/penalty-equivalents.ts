@@ -12,8 +12,16 @@ export interface PenaltyEquivalent {
 export function penaltyEquivalents(result: FitResult, scaleUnit: string): readonly PenaltyEquivalent[] {
   const { lambda, lambdaSum, effectiveDegreesOfFreedom, priorSd } = result.penalty;
   return [
-    { name: 'Penalty λ', figure: formatFigure(lambda, { significant: 3 }), explanation: 'per record, on standardised inputs' },
-    { name: 'Sum form λ·n', figure: formatFigure(lambdaSum, { significant: 3 }), explanation: 'added to the plain sum of squares' },
+    {
+      name: 'Penalty λ',
+      figure: formatFigure(lambda, { significant: 3 }),
+      explanation: 'per record, on standardised inputs',
+    },
+    {
+      name: 'Sum form λ·n',
+      figure: formatFigure(lambdaSum, { significant: 3 }),
+      explanation: 'added to the plain sum of squares',
+    },
     {
       name: 'Effective degrees of freedom',
       figure: formatFigure(effectiveDegreesOfFreedom, { significant: 3 }),
@@ -22,7 +30,10 @@ export function penaltyEquivalents(result: FitResult, scaleUnit: string): readon
     {
       name: 'Prior standard deviation γ',
       figure: priorSd === null ? 'none' : formatFigure(priorSd, { significant: 3, unit: scaleUnit }),
-      explanation: priorSd === null ? 'nothing holds the weights toward zero' : 'the prior on a standardised weight that this penalty stands for',
+      explanation:
+        priorSd === null
+          ? 'nothing holds the weights toward zero'
+          : 'the prior on a standardised weight that this penalty stands for',
     },
   ];
 }

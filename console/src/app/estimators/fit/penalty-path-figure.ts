@@ -21,18 +21,27 @@ export class PenaltyPathFigure {
   readonly scaleUnit = input.required<string>();
 
   protected readonly plot = computed(() => penaltyPathPlot(this.result()));
-  protected readonly weightLabel = computed(() => `standardised weight${this.scaleUnit() ? `, ${this.scaleUnit()}` : ''}`);
+  protected readonly weightLabel = computed(
+    () => `standardised weight${this.scaleUnit() ? `, ${this.scaleUnit()}` : ''}`,
+  );
   protected readonly caption = computed(() => {
     const leftOut = this.plot()?.leftOut ?? 0;
     const also = leftOut > 0 ? ` ${leftOut} smaller weights are not drawn; the table of weights has them.` : '';
     return `From left to right the penalty is let go. The largest weights at the chosen point are named.${also}`;
   });
   private readonly points = computed(() => {
-    const path = [...this.result().path].sort((left, right) => left.effectiveDegreesOfFreedom - right.effectiveDegreesOfFreedom);
+    const path = [...this.result().path].sort(
+      (left, right) => left.effectiveDegreesOfFreedom - right.effectiveDegreesOfFreedom,
+    );
     if (path.length <= TABLE_POINTS) return path;
-    return Array.from({ length: TABLE_POINTS }, (_, step) => path[Math.round((step * (path.length - 1)) / (TABLE_POINTS - 1))]);
+    return Array.from(
+      { length: TABLE_POINTS },
+      (_, step) => path[Math.round((step * (path.length - 1)) / (TABLE_POINTS - 1))],
+    );
   });
-  protected readonly columns = computed(() => this.points().map((point) => formatFigure(point.effectiveDegreesOfFreedom, { significant: 3 })));
+  protected readonly columns = computed(() =>
+    this.points().map((point) => formatFigure(point.effectiveDegreesOfFreedom, { significant: 3 })),
+  );
   protected readonly rows = computed(() =>
     this.result()
       .weights.map((weight, position) => ({

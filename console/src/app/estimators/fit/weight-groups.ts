@@ -31,7 +31,11 @@ export function weightGroups(weights: readonly Weight[]): readonly WeightGroup[]
     else parts.set(weight.input, [part]);
   }
   return [...parts]
-    .map(([input, ofInput]) => ({ input, parts: ofInput, size: Math.hypot(...ofInput.map((part) => part.standardised)) }))
+    .map(([input, ofInput]) => ({
+      input,
+      parts: ofInput,
+      size: Math.hypot(...ofInput.map((part) => part.standardised)),
+    }))
     .sort((left, right) => right.size - left.size);
 }
 

@@ -28,8 +28,12 @@ export class WeightsTable {
   protected readonly dropped = computed(() => droppedInputs(this.groups()));
   protected readonly kept = computed(() => this.groups().filter((group) => !this.dropped().includes(group.input)));
   protected readonly shown = computed(() => (this.all() ? this.kept() : this.kept().slice(0, SHOWN_AT_FIRST)));
-  protected readonly hasErrors = computed(() => this.weights().some((weight) => weight.standardError !== null && weight.standardError !== undefined));
-  private readonly largest = computed(() => this.weights().reduce((most, weight) => Math.max(most, Math.abs(weight.standardised)), 0));
+  protected readonly hasErrors = computed(() =>
+    this.weights().some((weight) => weight.standardError !== null && weight.standardError !== undefined),
+  );
+  private readonly largest = computed(() =>
+    this.weights().reduce((most, weight) => Math.max(most, Math.abs(weight.standardised)), 0),
+  );
   protected readonly interceptText = computed(() => formatFigure(this.intercept(), { significant: 4 }));
 
   protected transformOf(column: string): string {

@@ -15,7 +15,8 @@ export interface EstimatorDraft {
   readonly cautions: readonly string[];
 }
 
-export type EstimatorField = 'slug' | 'name' | 'targetName' | 'unit' | 'description' | 'intendedUse' | 'notFor' | `cautions/${number}`;
+export type EstimatorField =
+  'slug' | 'name' | 'targetName' | 'unit' | 'description' | 'intendedUse' | 'notFor' | `cautions/${number}`;
 
 export const EMPTY_DRAFT: EstimatorDraft = {
   slug: '',
@@ -35,11 +36,22 @@ const SLUG_WORDS = 'Use small letters, digits and single dashes between them, su
 
 export function draftOf(estimator: Estimator): EstimatorDraft {
   const { slug, name, targetName, unit, description, intendedUse, notFor, cautions } = estimator;
-  return { slug, name, targetName, unit, description, intendedUse, notFor, cautions: cautions.length > 0 ? cautions : [''] };
+  return {
+    slug,
+    name,
+    targetName,
+    unit,
+    description,
+    intendedUse,
+    notFor,
+    cautions: cautions.length > 0 ? cautions : [''],
+  };
 }
 
 export function complaintsAbout(draft: EstimatorDraft): Complaints<EstimatorField> {
-  const cautions = draft.cautions.map((text, position) => [`cautions/${position}`, tooLong(text, LONGEST_CAUTION)] as const);
+  const cautions = draft.cautions.map(
+    (text, position) => [`cautions/${position}`, tooLong(text, LONGEST_CAUTION)] as const,
+  );
   return {
     ...Object.fromEntries(cautions),
     slug: slugComplaint(draft.slug.trim()),

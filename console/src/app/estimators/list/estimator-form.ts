@@ -4,7 +4,14 @@ import { EstimatorsClient } from '../../api/estimators-client';
 import { EntryForm } from '../../ui/entry-form';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { TextField } from '../fields/text-field';
-import { EMPTY_DRAFT, complaintsAbout, draftOf, wordsOf, type EstimatorDraft, type EstimatorField } from './estimator-draft';
+import {
+  EMPTY_DRAFT,
+  complaintsAbout,
+  draftOf,
+  wordsOf,
+  type EstimatorDraft,
+  type EstimatorField,
+} from './estimator-draft';
 import { suggestSlug } from './suggest-slug';
 
 const MOST_CAUTIONS = 20;

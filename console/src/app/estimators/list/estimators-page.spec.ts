@@ -4,7 +4,16 @@ import { show, type Screen } from '../testing/screen';
 import { EstimatorsPage } from './estimators-page';
 
 const url = '/api/estimators';
-const paint = { ...estimator, slug: 'antifouling-paint', name: 'Antifouling paint', targetName: 'Paint', unit: 'litres', inForce: null, fitCount: 0, estimateCount: 0 };
+const paint = {
+  ...estimator,
+  slug: 'antifouling-paint',
+  name: 'Antifouling paint',
+  targetName: 'Paint',
+  unit: 'litres',
+  inForce: null,
+  fitCount: 0,
+  estimateCount: 0,
+};
 
 async function listed(items: readonly object[]): Promise<Screen<EstimatorsPage>> {
   const screen = await show(EstimatorsPage, {});
@@ -100,7 +109,12 @@ describe('naming an estimator', () => {
     await screen.press(find('button', 'Name the estimator'));
     await screen.refuse(
       url,
-      { title: 'The public name is taken', status: 409, code: 'slug-taken', errors: [{ pointer: '#/slug', detail: 'Choose another public name.' }] },
+      {
+        title: 'The public name is taken',
+        status: 409,
+        code: 'slug-taken',
+        errors: [{ pointer: '#/slug', detail: 'Choose another public name.' }],
+      },
       'POST',
     );
     expect(saidBeside('Public name')).toContain('Choose another public name.');

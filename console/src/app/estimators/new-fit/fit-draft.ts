@@ -79,7 +79,8 @@ export function timeColumns(revision: RecordRevision): readonly RecordColumn[] {
 
 /** Takes up another revision. Choices whose columns it also has are kept; the rest fall back to what suits it. */
 export function draftOn(revision: RecordRevision, before: FitDraft): FitDraft {
-  const has = (columns: readonly RecordColumn[], name: string): string => (columns.some((column) => column.name === name) ? name : '');
+  const has = (columns: readonly RecordColumn[], name: string): string =>
+    columns.some((column) => column.name === name) ? name : '';
   return {
     ...before,
     recordSetId: revision.recordSetId,
@@ -138,5 +139,8 @@ export interface InputsChange {
 
 export function withInputs(draft: FitDraft, { columns, change }: InputsChange): FitDraft {
   const touched = new Set(columns);
-  return { ...draft, inputs: draft.inputs.map((input) => (touched.has(input.column) ? { ...input, ...change } : input)) };
+  return {
+    ...draft,
+    inputs: draft.inputs.map((input) => (touched.has(input.column) ? { ...input, ...change } : input)),
+  };
 }

@@ -14,10 +14,25 @@ const SIGNS: readonly Option[] = [
   selector: 'tb-input-more',
   imports: [SelectField, TextField],
   template: `
-    <tb-text-field label="Label on the form" [optional]="true" [value]="input().label" (valueChange)="changed.emit({ label: $event })" />
-    <tb-text-field label="Help on the form" [optional]="true" [value]="input().help" (valueChange)="changed.emit({ help: $event })" />
+    <tb-text-field
+      label="Label on the form"
+      [optional]="true"
+      [value]="input().label"
+      (valueChange)="changed.emit({ label: $event })"
+    />
+    <tb-text-field
+      label="Help on the form"
+      [optional]="true"
+      [value]="input().help"
+      (valueChange)="changed.emit({ help: $event })"
+    />
     @if (!category()) {
-      <tb-select-field label="Sign of its weight" [options]="signs" [value]="input().sign" (valueChange)="changed.emit({ sign: signOf($event) })" />
+      <tb-select-field
+        label="Sign of its weight"
+        [options]="signs"
+        [value]="input().sign"
+        (valueChange)="changed.emit({ sign: signOf($event) })"
+      />
     }
     <tb-text-field
       label="Penalty factor"

@@ -31,7 +31,10 @@ export class InputsTable {
   readonly changed = output<InputsChange>();
 
   protected readonly filter = signal('');
-  protected readonly offset = linkedSignal<unknown, number>({ source: () => [this.filter(), this.revision().id], computation: () => 0 });
+  protected readonly offset = linkedSignal<unknown, number>({
+    source: () => [this.filter(), this.revision().id],
+    computation: () => 0,
+  });
   protected readonly open = signal<ReadonlySet<string>>(new Set());
   protected readonly isLong = computed(() => this.draft().inputs.length > ROWS_A_PAGE);
   protected readonly usedCount = computed(() => usedInputs(this.draft()).length);
@@ -47,7 +50,15 @@ export class InputsTable {
         const column = columns.get(draft.column);
         if (!column) return [];
         const category = (draft.kind === 'own' ? column.kind : draft.kind) === 'category';
-        return [{ draft, column, category, taken: isTaken(this.draft(), draft.column), problem: this.problems().get(`input:${draft.column}`) }];
+        return [
+          {
+            draft,
+            column,
+            category,
+            taken: isTaken(this.draft(), draft.column),
+            problem: this.problems().get(`input:${draft.column}`),
+          },
+        ];
       });
   });
 

@@ -4,7 +4,15 @@ import { Screen, show } from '../testing/screen';
 import { NewFitPage } from './new-fit-page';
 
 const summary = { ...revision, columns: undefined, reading: undefined };
-const recordSet = { id: 'recordset001', name: 'Refit jobs', description: '', createdAt: revision.createdAt, createdBy: revision.createdBy, revision: summary, revisionCount: 1 };
+const recordSet = {
+  id: 'recordset001',
+  name: 'Refit jobs',
+  description: '',
+  createdAt: revision.createdAt,
+  createdBy: revision.createdBy,
+  revision: summary,
+  revisionCount: 1,
+};
 
 async function opened(): Promise<Screen<NewFitPage>> {
   const screen = await show(NewFitPage, { slug: 'refit-labour' });
@@ -39,7 +47,11 @@ describe('the new fit page', () => {
   it('says what went wrong and tries again', async () => {
     const screen = await show(NewFitPage, { slug: 'refit-labour' });
     await screen.answer('/api/estimators/refit-labour', estimator);
-    await screen.refuse('/api/record-sets', { title: 'The desk is being looked after', status: 503, code: 'unavailable' });
+    await screen.refuse('/api/record-sets', {
+      title: 'The desk is being looked after',
+      status: 503,
+      code: 'unavailable',
+    });
     expect(find('alert', /being looked after/).textContent).toContain('being looked after');
     await screen.press(find('button', 'Try again'));
     await screen.answer('/api/record-sets', { items: [recordSet], total: 1 });
@@ -51,8 +63,15 @@ describe('the new fit page', () => {
     choose('Target', 'hours');
     await screen.settle();
     await screen.press(find('button', 'Start the fit'));
-    const request = await screen.answer('/api/estimators/refit-labour/fits', { id: 'fit000000008', state: 'queued' }, 'POST');
-    expect(request.request.body).toMatchObject({ revisionId: revision.id, specification: { target: { column: 'hours' }, method: 'ridge' } });
+    const request = await screen.answer(
+      '/api/estimators/refit-labour/fits',
+      { id: 'fit000000008', state: 'queued' },
+      'POST',
+    );
+    expect(request.request.body).toMatchObject({
+      revisionId: revision.id,
+      specification: { target: { column: 'hours' }, method: 'ridge' },
+    });
     expect(screen.url).toBe('/estimators/refit-labour/fits/fit000000008');
   });
 
@@ -130,7 +149,11 @@ describe('the new fit page', () => {
     type('Label on the form', 'Length overall');
     await screen.settle();
     await screen.press(find('button', 'Start the fit'));
-    const request = await screen.answer('/api/estimators/refit-labour/fits', { id: 'fit000000008', state: 'queued' }, 'POST');
+    const request = await screen.answer(
+      '/api/estimators/refit-labour/fits',
+      { id: 'fit000000008', state: 'queued' },
+      'POST',
+    );
     const inputs = (request.request.body as { specification: { inputs: { column: string }[] } }).specification.inputs;
     expect(inputs.map((input) => input.column)).toEqual(['length', 'displacement', 'hull']);
     expect(inputs[0]).toMatchObject({ transform: 'log', label: 'Length overall' });

@@ -1,4 +1,16 @@
-import { Component, ElementRef, Injector, afterNextRender, computed, effect, inject, input, signal, untracked, viewChild } from '@angular/core';
+import {
+  Component,
+  ElementRef,
+  Injector,
+  afterNextRender,
+  computed,
+  effect,
+  inject,
+  input,
+  signal,
+  untracked,
+  viewChild,
+} from '@angular/core';
 import { Router, RouterLink } from '@angular/router';
 import { EstimatorsClient } from '../../api/estimators-client';
 import { FitsClient } from '../../api/fits-client';
@@ -62,7 +74,9 @@ export class NewFitPage {
   private readonly recordSetId = computed(() => this.draft().recordSetId);
   private readonly revisionId = computed(() => this.draft().revisionId);
   protected readonly recordSet = load(() => (this.recordSetId() ? this.records.read(this.recordSetId()) : undefined));
-  protected readonly revision = load(() => (this.revisionId() ? this.records.readRevision(this.revisionId()) : undefined));
+  protected readonly revision = load(() =>
+    this.revisionId() ? this.records.readRevision(this.revisionId()) : undefined,
+  );
   protected readonly shownRecordSet = computed(() => only(this.recordSet.value(), this.recordSetId()));
   protected readonly shownRevision = computed(() => only(this.revision.value(), this.revisionId()));
   /** The service's own words without its list of fields, which stand beside the fields. */

@@ -40,7 +40,11 @@ describe('a draft of a fit', () => {
   });
 
   it('never sends the target or the weight as an input', () => {
-    expect(usedInputs({ ...ready, weightColumn: 'length' }).map((input) => input.column)).toEqual(['displacement', 'hull', 'yard']);
+    expect(usedInputs({ ...ready, weightColumn: 'length' }).map((input) => input.column)).toEqual([
+      'displacement',
+      'hull',
+      'yard',
+    ]);
   });
 
   it('says what is missing, under the path that the service would use', () => {
@@ -60,8 +64,12 @@ describe('a draft of a fit', () => {
   });
 
   it('asks for λ or γ where the rule needs one', () => {
-    expect(problemsOf({ ...ready, rule: 'fixed' })).toEqual({ 'specification/penalty/value': 'Enter a number of 0 or more.' });
-    expect(problemsOf({ ...ready, rule: 'prior', penaltyValue: '0' })).toEqual({ 'specification/penalty/value': 'Enter a number above 0.' });
+    expect(problemsOf({ ...ready, rule: 'fixed' })).toEqual({
+      'specification/penalty/value': 'Enter a number of 0 or more.',
+    });
+    expect(problemsOf({ ...ready, rule: 'prior', penaltyValue: '0' })).toEqual({
+      'specification/penalty/value': 'Enter a number above 0.',
+    });
   });
 
   it('puts the mixing in for elastic net alone', () => {
@@ -75,8 +83,12 @@ describe('a draft of a fit', () => {
   });
 
   it('holds out by group or forward in time with the column of that kind', () => {
-    expect(readDraft({ ...ready, scheme: 'grouped', groupColumn: 'yard' })).toMatchObject({ fit: { specification: { validation: { scheme: 'grouped', column: 'yard', seed: 1 } } } });
-    expect(readDraft({ ...ready, scheme: 'forward', gap: '30' })).toMatchObject({ fit: { specification: { validation: { scheme: 'forward', column: 'booked', gap: 30 } } } });
+    expect(readDraft({ ...ready, scheme: 'grouped', groupColumn: 'yard' })).toMatchObject({
+      fit: { specification: { validation: { scheme: 'grouped', column: 'yard', seed: 1 } } },
+    });
+    expect(readDraft({ ...ready, scheme: 'forward', gap: '30' })).toMatchObject({
+      fit: { specification: { validation: { scheme: 'forward', column: 'booked', gap: 30 } } },
+    });
   });
 
   it('keeps what was chosen when another revision has the same columns', () => {

@@ -17,12 +17,18 @@ interface Bounds {
 const positive: Bounds = { words: 'a number above 0', holds: (value) => value > 0 };
 const notNegative: Bounds = { words: 'a number of 0 or more', holds: (value) => value >= 0 };
 const between0and1: Bounds = { words: 'a number between 0 and 1', holds: (value) => value > 0 && value < 1 };
-const foldNumber: Bounds = { words: 'a whole number from 2 to 100', holds: (value) => Number.isInteger(value) && value >= 2 && value <= 100 };
+const foldNumber: Bounds = {
+  words: 'a whole number from 2 to 100',
+  holds: (value) => Number.isInteger(value) && value >= 2 && value <= 100,
+};
 const seedNumber: Bounds = {
   words: 'a whole number from 0 to 4294967295',
   holds: (value) => Number.isInteger(value) && value >= 0 && value <= 4294967295,
 };
-const levelNumber: Bounds = { words: 'a percentage above 50 and below 100', holds: (value) => value > 50 && value < 100 };
+const levelNumber: Bounds = {
+  words: 'a percentage above 50 and below 100',
+  holds: (value) => value > 50 && value < 100,
+};
 
 /** Turns what was typed into a request, or says beside which fields it cannot. */
 export function readDraft(draft: FitDraft): DraftReading {
@@ -39,7 +45,9 @@ export function readDraft(draft: FitDraft): DraftReading {
   if (used.length === 0) problems.set('specification/inputs', 'Use at least one input.');
   const specification: Specification = {
     target: { column: draft.target, transform: draft.targetTransform },
-    inputs: used.map((input, position) => inputOf(input, number(`specification/inputs/${position}/penaltyFactor`, input.penaltyFactor, notNegative))),
+    inputs: used.map((input, position) =>
+      inputOf(input, number(`specification/inputs/${position}/penaltyFactor`, input.penaltyFactor, notNegative)),
+    ),
     weightColumn: draft.weightColumn || null,
     method: draft.method,
     ...(draft.method === 'elastic-net' ? { mixing: number('specification/mixing', draft.mixing, between0and1) } : {}),
@@ -75,12 +83,18 @@ export function ruleInEffect(draft: FitDraft): FitDraft['rule'] {
 function penaltyOf(draft: FitDraft, number: NumberReader): Pick<Specification, 'penalty'> {
   if (draft.method === 'least-squares') return {};
   const rule = ruleInEffect(draft);
-  if (rule === 'fixed') return { penalty: { rule, value: number('specification/penalty/value', draft.penaltyValue, notNegative) } };
-  if (rule === 'prior') return { penalty: { rule, value: number('specification/penalty/value', draft.penaltyValue, positive) } };
+  if (rule === 'fixed')
+    return { penalty: { rule, value: number('specification/penalty/value', draft.penaltyValue, notNegative) } };
+  if (rule === 'prior')
+    return { penalty: { rule, value: number('specification/penalty/value', draft.penaltyValue, positive) } };
   return { penalty: { rule } };
 }
 
-function validationOf(draft: FitDraft, number: NumberReader, problems: Map<string, string>): NonNullable<Specification['validation']> {
+function validationOf(
+  draft: FitDraft,
+  number: NumberReader,
+  problems: Map<string, string>,
+): NonNullable<Specification['validation']> {
   const folds = number('specification/validation/folds', draft.folds, foldNumber);
   if (draft.scheme === 'forward') {
     if (draft.timeColumn === '') problems.set('specification/validation/column', 'Choose the column that says when.');
@@ -89,7 +103,8 @@ function validationOf(draft: FitDraft, number: NumberReader, problems: Map<strin
   }
   const seed = number('specification/validation/seed', draft.seed, seedNumber);
   if (draft.scheme === 'k-fold') return { scheme: 'k-fold', folds, seed };
-  if (draft.groupColumn === '') problems.set('specification/validation/column', 'Choose the column that names the groups.');
+  if (draft.groupColumn === '')
+    problems.set('specification/validation/column', 'Choose the column that names the groups.');
   return { scheme: 'grouped', folds, column: draft.groupColumn, seed };
 }
 

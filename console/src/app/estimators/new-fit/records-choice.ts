@@ -39,7 +39,9 @@ export class RecordsChoice {
   readonly setChosen = output<string>();
   readonly revisionChosen = output<string>();
 
-  protected readonly sets = computed<readonly Option[]>(() => this.recordSets().map(({ id, name }) => ({ value: id, name })));
+  protected readonly sets = computed<readonly Option[]>(() =>
+    this.recordSets().map(({ id, name }) => ({ value: id, name })),
+  );
   protected readonly revisions = computed<readonly Option[]>(() =>
     (this.recordSet()?.revisions ?? []).map((revision) => ({
       value: revision.id,

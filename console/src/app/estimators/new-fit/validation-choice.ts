@@ -21,8 +21,12 @@ export class ValidationChoice {
   readonly changed = output<Partial<FitDraft>>();
 
   protected readonly schemes = schemeChoices;
-  protected readonly groups = computed<readonly Option[]>(() => groupColumns(this.revision()).map(({ name }) => ({ value: name, name })));
-  protected readonly times = computed<readonly Option[]>(() => timeColumns(this.revision()).map(({ name }) => ({ value: name, name })));
+  protected readonly groups = computed<readonly Option[]>(() =>
+    groupColumns(this.revision()).map(({ name }) => ({ value: name, name })),
+  );
+  protected readonly times = computed<readonly Option[]>(() =>
+    timeColumns(this.revision()).map(({ name }) => ({ value: name, name })),
+  );
   protected readonly timeUnit = computed(() => {
     const column = this.revision().columns.find((candidate) => candidate.name === this.draft().timeColumn);
     return column?.kind === 'date' ? 'days' : (column?.unit ?? '');

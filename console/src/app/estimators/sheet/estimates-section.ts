@@ -33,12 +33,19 @@ export class EstimatesSection {
 
   protected readonly limit = ESTIMATES_A_PAGE;
   protected readonly offset = signal(0);
-  protected readonly estimates = load(() => this.client.list(this.slug(), { limit: ESTIMATES_A_PAGE, offset: this.offset() }));
-  protected readonly rows = computed(() => (this.estimates.value()?.items ?? []).map((estimate) => ({ ...estimate, ...figuresOf(estimate) })));
+  protected readonly estimates = load(() =>
+    this.client.list(this.slug(), { limit: ESTIMATES_A_PAGE, offset: this.offset() }),
+  );
+  protected readonly rows = computed(() =>
+    (this.estimates.value()?.items ?? []).map((estimate) => ({ ...estimate, ...figuresOf(estimate) })),
+  );
 }
 
 /** Value and interval with the digits that the interval earns. */
-export function figuresOf({ value, low, high }: EstimateSummary): { readonly figure: string; readonly between: string } {
+export function figuresOf({ value, low, high }: EstimateSummary): {
+  readonly figure: string;
+  readonly between: string;
+} {
   const precision = precisionFor({ value, low, high });
   const end = (figure: number): string => formatStepped(figure, precision.endStep, LOCALE);
   return {

@@ -23,7 +23,10 @@ async function opened(found: object = estimator, roles: readonly Role[] = ['anal
   return screen;
 }
 
-async function read(screen: Screen<EstimatorPage>, lists: { fits?: object[]; editions?: object[]; estimates?: object[] }): Promise<void> {
+async function read(
+  screen: Screen<EstimatorPage>,
+  lists: { fits?: object[]; editions?: object[]; estimates?: object[] },
+): Promise<void> {
   for (const [name, items] of Object.entries({ fits: [], editions: [], estimates: [], ...lists })) {
     await screen.answer(`${url}/${name}`, { items, total: items.length });
   }
@@ -52,7 +55,9 @@ describe('the estimator sheet', () => {
 
   it('leads from the margin to every section', async () => {
     await opened();
-    const anchors = [...document.querySelectorAll('nav[aria-label="On this sheet"] a')].map((link) => link.textContent?.trim());
+    const anchors = [...document.querySelectorAll('nav[aria-label="On this sheet"] a')].map((link) =>
+      link.textContent?.trim(),
+    );
     expect(anchors).toEqual(['In force', 'Try a case', 'Fits', 'Editions', 'Estimates', 'Words']);
   });
 
@@ -64,20 +69,43 @@ describe('the estimator sheet', () => {
 
   it('lists fits, editions and estimates', async () => {
     const screen = await opened();
-    await read(screen, { fits: [fitSummary], editions: [{ ...editionSummary, id: 'edition00003', number: 3, state: 'superseded' }, editionSummary], estimates: [estimate] });
-    expect(tableTexts(find('table', 'Fits'))[1].slice(1, 7)).toEqual(['Done', 'Ridge, one standard error', 'Refit jobs, 3', '3', '2.50', '38.7 h']);
-    expect(tableTexts(find('table', 'Editions')).slice(1).map((row) => row.slice(0, 2))).toEqual([
+    await read(screen, {
+      fits: [fitSummary],
+      editions: [{ ...editionSummary, id: 'edition00003', number: 3, state: 'superseded' }, editionSummary],
+      estimates: [estimate],
+    });
+    expect(tableTexts(find('table', 'Fits'))[1].slice(1, 7)).toEqual([
+      'Done',
+      'Ridge, one standard error',
+      'Refit jobs, 3',
+      '3',
+      '2.50',
+      '38.7 h',
+    ]);
+    expect(
+      tableTexts(find('table', 'Editions'))
+        .slice(1)
+        .map((row) => row.slice(0, 2)),
+    ).toEqual([
       ['Edition 4', 'In force'],
       ['Edition 3', 'Superseded'],
     ]);
-    expect(tableTexts(find('table', 'Newest estimates'))[1].slice(1)).toEqual(['512', '440 to 590', '4', '1', 'Northquay Moorings', 'Booking system']);
+    expect(tableTexts(find('table', 'Newest estimates'))[1].slice(1)).toEqual([
+      '512',
+      '440 to 590',
+      '4',
+      '1',
+      'Northquay Moorings',
+      'Booking system',
+    ]);
     expect(document.querySelector('a[href="/estimates/estimate0001"]')).not.toBeNull();
   });
 
   it('says what belongs into each list while it is empty', async () => {
     const screen = await opened({ ...estimator, inForce: null });
     await read(screen, {});
-    for (const words of ['Nothing is in force yet', 'No fit yet.', 'No edition yet.', 'No partner has asked yet.']) expect(pageText()).toContain(words);
+    for (const words of ['Nothing is in force yet', 'No fit yet.', 'No edition yet.', 'No partner has asked yet.'])
+      expect(pageText()).toContain(words);
     expect(maybe('heading', 'Try a case')).toBeUndefined();
   });
 

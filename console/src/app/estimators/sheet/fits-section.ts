@@ -33,7 +33,9 @@ export class FitsSection {
   protected readonly offset = signal(0);
   protected readonly limit = ROWS_A_PAGE;
   protected readonly fits = load(() => this.client.list(this.slug(), { limit: ROWS_A_PAGE, offset: this.offset() }));
-  protected readonly rows = computed(() => (this.fits.value()?.items ?? []).map((fit) => ({ ...fit, ...this.words(fit) })));
+  protected readonly rows = computed(() =>
+    (this.fits.value()?.items ?? []).map((fit) => ({ ...fit, ...this.words(fit) })),
+  );
   protected readonly stamps = FIT_STAMPS;
 
   private words(fit: FitSummary): { readonly how: string; readonly error: string; readonly degrees: string } {

@@ -16,7 +16,10 @@ export type PageRole = keyof typeof roles;
 export function nameOf(element: Element): string {
   const named = element.getAttribute('aria-labelledby');
   const caption = element.querySelector('caption')?.textContent;
-  const text = element.getAttribute('aria-label') ?? (named ? document.getElementById(named)?.textContent : (caption ?? element.textContent)) ?? '';
+  const text =
+    element.getAttribute('aria-label') ??
+    (named ? document.getElementById(named)?.textContent : (caption ?? element.textContent)) ??
+    '';
   return tidy(text);
 }
 
@@ -36,7 +39,9 @@ export function find(role: PageRole, name: string | RegExp): HTMLElement {
 
 /** The control of the label that begins with these words, or that has them as its own label. */
 export function field<Control extends HTMLElement = HTMLInputElement>(words: string): Control {
-  const label = [...document.querySelectorAll('label')].find((candidate) => tidy(candidate.textContent).startsWith(words));
+  const label = [...document.querySelectorAll('label')].find((candidate) =>
+    tidy(candidate.textContent).startsWith(words),
+  );
   const control = label?.control ?? document.querySelector(`[aria-label="${words}"]`);
   if (!control) throw new Error(`No field labelled ${words}`);
   return control as HTMLElement as Control;
@@ -58,7 +63,10 @@ export function choose(words: string, value: string): void {
 /** What is said beside a field: its hint and its error. */
 export function saidBeside(words: string): string {
   const ids = field(words).getAttribute('aria-describedby') ?? '';
-  return ids.split(' ').map((id) => tidy(document.getElementById(id)?.textContent)).join(' ');
+  return ids
+    .split(' ')
+    .map((id) => tidy(document.getElementById(id)?.textContent))
+    .join(' ');
 }
 
 export function pageText(): string {
@@ -67,7 +75,9 @@ export function pageText(): string {
 
 /** Rows of a table as texts, its heading row first. */
 export function tableTexts(table: HTMLElement): readonly (readonly string[])[] {
-  return [...table.querySelectorAll('tr')].map((row) => [...row.querySelectorAll('th, td')].map((cell) => tidy(cell.textContent)));
+  return [...table.querySelectorAll('tr')].map((row) =>
+    [...row.querySelectorAll('th, td')].map((cell) => tidy(cell.textContent)),
+  );
 }
 
 function tidy(text: string | null | undefined): string {

@@ -1,5 +1,15 @@
 /** Invented answers of the service for specs: the refit labour estimator of the Marl Bay Yard Federation. */
-import type { Edition, EditionSummary, Estimator, Evaluation, Fit, FitResult, FitSummary, RecordRevision, Specification } from '../../api/contract';
+import type {
+  Edition,
+  EditionSummary,
+  Estimator,
+  Evaluation,
+  Fit,
+  FitResult,
+  FitSummary,
+  RecordRevision,
+  Specification,
+} from '../../api/contract';
 
 export const ines = { id: 'person00ines', name: 'Ines Caldwell' };
 export const tomas = { id: 'person0tomas', name: 'Tomas Lindqvist' };
@@ -26,7 +36,14 @@ const lambdas = [100, 10, 1, 0.1, 0.01];
 const cvErrors = [2900, 1800, 1500, 1440, 1460];
 
 export const result: FitResult = {
-  penalty: { lambda: 1, lambdaSum: 2391, priorSd: 0.79, effectiveDegreesOfFreedom: 2.5, minimumLambda: 0.1, oneStandardErrorLambda: 1 },
+  penalty: {
+    lambda: 1,
+    lambdaSum: 2391,
+    priorSd: 0.79,
+    effectiveDegreesOfFreedom: 2.5,
+    minimumLambda: 0.1,
+    oneStandardErrorLambda: 1,
+  },
   intercept: -41.237,
   weights: [
     { input: 'length', level: null, value: 9.731, standardised: 24.1, standardError: 0.82 },
@@ -42,7 +59,14 @@ export const result: FitResult = {
     cvStandardError: 70,
     standardised: [24.1, 33.6, -5.8, 7.2].map((weight) => weight * (0.2 + 0.2 * step)),
   })),
-  report: { route: 'moments', iterations: 0, converged: true, gap: 0, conditionNumber: 18.4, warnings: ['hull was held together with rig in 12 records.'] },
+  report: {
+    route: 'moments',
+    iterations: 0,
+    converged: true,
+    gap: 0,
+    conditionNumber: 18.4,
+    warnings: ['hull was held together with rig in 12 records.'],
+  },
 };
 
 export const fit: Fit = {
@@ -104,8 +128,23 @@ export const inputSchema = {
   type: 'object',
   required: ['length', 'displacement', 'hull'],
   properties: {
-    length: { type: 'number', title: 'Length overall', 'x-unit': 'm', 'x-range': [6.1, 18.4], 'x-help': 'Without the bowsprit.', 'x-order': 1, 'x-typical': 11.2 },
-    displacement: { type: 'number', title: 'Displacement', 'x-unit': 't', 'x-range': [1.2, 24], 'x-order': 2, 'x-typical': 7.1 },
+    length: {
+      type: 'number',
+      title: 'Length overall',
+      'x-unit': 'm',
+      'x-range': [6.1, 18.4],
+      'x-help': 'Without the bowsprit.',
+      'x-order': 1,
+      'x-typical': 11.2,
+    },
+    displacement: {
+      type: 'number',
+      title: 'Displacement',
+      'x-unit': 't',
+      'x-range': [1.2, 24],
+      'x-order': 2,
+      'x-typical': 7.1,
+    },
     hull: { type: 'string', title: 'Hull material', enum: ['GRP', 'steel'], 'x-order': 3, 'x-typical': 'GRP' },
   },
 };
@@ -160,7 +199,17 @@ export const evaluation: Evaluation = {
   cautions: ['An estimate is not a quotation.'],
 };
 
-const emptyColumn = { missingCount: 0, distinctCount: 900, minimum: 1, maximum: 9, mean: 4, standardDeviation: 2, histogram: null, levels: [], unit: null };
+const emptyColumn = {
+  missingCount: 0,
+  distinctCount: 900,
+  minimum: 1,
+  maximum: 9,
+  mean: 4,
+  standardDeviation: 2,
+  histogram: null,
+  levels: [],
+  unit: null,
+};
 
 export const revision: RecordRevision = {
   id: 'revision0003',
@@ -179,9 +228,43 @@ export const revision: RecordRevision = {
     { ...emptyColumn, name: 'hours', position: 0, kind: 'numeric', unit: 'h' },
     { ...emptyColumn, name: 'length', position: 1, kind: 'numeric', unit: 'm' },
     { ...emptyColumn, name: 'displacement', position: 2, kind: 'numeric', unit: 't', missingCount: 31 },
-    { ...emptyColumn, name: 'hull', position: 3, kind: 'category', minimum: null, maximum: null, mean: null, standardDeviation: null, distinctCount: 2, levels: [{ value: 'GRP', count: 2000 }, { value: 'steel', count: 391 }] },
-    { ...emptyColumn, name: 'yard', position: 4, kind: 'category', minimum: null, maximum: null, mean: null, standardDeviation: null, distinctCount: 9, levels: [{ value: 'Northquay', count: 400 }] },
+    {
+      ...emptyColumn,
+      name: 'hull',
+      position: 3,
+      kind: 'category',
+      minimum: null,
+      maximum: null,
+      mean: null,
+      standardDeviation: null,
+      distinctCount: 2,
+      levels: [
+        { value: 'GRP', count: 2000 },
+        { value: 'steel', count: 391 },
+      ],
+    },
+    {
+      ...emptyColumn,
+      name: 'yard',
+      position: 4,
+      kind: 'category',
+      minimum: null,
+      maximum: null,
+      mean: null,
+      standardDeviation: null,
+      distinctCount: 9,
+      levels: [{ value: 'Northquay', count: 400 }],
+    },
     { ...emptyColumn, name: 'booked', position: 5, kind: 'date' },
-    { ...emptyColumn, name: 'remarks', position: 6, kind: 'text', minimum: null, maximum: null, mean: null, standardDeviation: null },
+    {
+      ...emptyColumn,
+      name: 'remarks',
+      position: 6,
+      kind: 'text',
+      minimum: null,
+      maximum: null,
+      mean: null,
+      standardDeviation: null,
+    },
   ],
 };

@@ -40,7 +40,14 @@ export class Screen<Page> {
   }
 
   async refuse(url: string, problem: Partial<ProblemDetails>, method = 'GET'): Promise<void> {
-    const whole = { type: '/problems/x', title: 'It did not work', status: 400, code: 'request-invalid', requestId: 'request1', ...problem };
+    const whole = {
+      type: '/problems/x',
+      title: 'It did not work',
+      status: 400,
+      code: 'request-invalid',
+      requestId: 'request1',
+      ...problem,
+    };
     const request = this.http.expectOne((candidate) => candidate.url === url && candidate.method === method);
     request.flush(whole, { status: whole.status, statusText: 'Refused' });
     await this.settle();
@@ -75,8 +82,15 @@ export async function show<Page>(
   providers: readonly Provider[] = [],
   person: PersonReference = { id: 'person00none', name: 'Nobody in particular' },
 ): Promise<Screen<Page>> {
-  Object.defineProperty(globalThis, 'IntersectionObserver', { value: NothingInView, configurable: true, writable: true });
-  const people = { holds: (...wanted: readonly Role[]) => roles.some((role) => wanted.includes(role)), person: () => person };
+  Object.defineProperty(globalThis, 'IntersectionObserver', {
+    value: NothingInView,
+    configurable: true,
+    writable: true,
+  });
+  const people = {
+    holds: (...wanted: readonly Role[]) => roles.some((role) => wanted.includes(role)),
+    person: () => person,
+  };
   TestBed.configureTestingModule({
     providers: [
       provideHttpClient(),

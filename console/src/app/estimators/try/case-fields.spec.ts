@@ -6,7 +6,15 @@ const schema = {
   required: ['hull', 'length'],
   properties: {
     hull: { type: 'string', title: 'Hull material', enum: ['GRP', 'steel'], 'x-order': 2, 'x-typical': 'GRP' },
-    length: { type: 'number', title: 'Length overall', 'x-unit': 'm', 'x-range': [6.1, 18.4], 'x-help': 'Without the bowsprit.', 'x-order': 1, 'x-typical': 11.2 },
+    length: {
+      type: 'number',
+      title: 'Length overall',
+      'x-unit': 'm',
+      'x-range': [6.1, 18.4],
+      'x-help': 'Without the bowsprit.',
+      'x-order': 1,
+      'x-typical': 11.2,
+    },
     ballast: { type: ['number', 'null'], 'x-order': 3 },
     booked: { type: 'string', format: 'date', 'x-order': 4 },
   },
@@ -51,13 +59,17 @@ describe('the fields of a case', () => {
 
   it('take levels that the records never held, where the edition does', () => {
     const known = { type: 'string', enum: ['sloop', 'ketch'] };
-    const [rig, hull] = caseFields({ properties: { rig: { anyOf: [known, { type: 'string', minLength: 1 }] }, hull: known } });
+    const [rig, hull] = caseFields({
+      properties: { rig: { anyOf: [known, { type: 'string', minLength: 1 }] }, hull: known },
+    });
     expect(rig).toMatchObject({ kind: 'choice', levels: ['sloop', 'ketch'], otherLevels: true });
     expect(hull.otherLevels).toBe(false);
   });
 
   it('know the recorded days of a date', () => {
-    const [booked] = caseFields({ properties: { booked: { type: 'string', format: 'date', 'x-range': ['2021-01-04', '2026-10-30'] } } });
+    const [booked] = caseFields({
+      properties: { booked: { type: 'string', format: 'date', 'x-range': ['2021-01-04', '2026-10-30'] } },
+    });
     expect(booked).toMatchObject({ kind: 'date', range: null, days: { first: '2021-01-04', last: '2026-10-30' } });
   });
 

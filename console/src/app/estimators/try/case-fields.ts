@@ -28,7 +28,11 @@ export function caseFields(schema: Plain): readonly CaseField[] {
     .sort((left, right) => left.order - right.order);
 }
 
-function fieldOf(name: string, property: Plain, place: { readonly required: boolean; readonly position: number }): CaseField {
+function fieldOf(
+  name: string,
+  property: Plain,
+  place: { readonly required: boolean; readonly position: number },
+): CaseField {
   return {
     name,
     label: textOf(property['title']) || name,

@@ -32,6 +32,10 @@ export class CaseResult {
   protected readonly value = computed(() => formatStepped(this.evaluation().value, this.precision().step, LOCALE));
   protected readonly unit = computed(() => unitInWords(this.evaluation().unit));
   protected readonly words = computed(() =>
-    intervalInWords(this.evaluation().interval, { unit: this.evaluation().unit, precision: this.precision(), locale: LOCALE }),
+    intervalInWords(this.evaluation().interval, {
+      unit: this.evaluation().unit,
+      precision: this.precision(),
+      locale: LOCALE,
+    }),
   );
 }

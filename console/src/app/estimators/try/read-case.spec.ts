@@ -16,12 +16,18 @@ describe('a case', () => {
   });
 
   it('is read as numbers and levels', () => {
-    expect(readCase(fields, { length: '12,6', displacement: '9.8 t', hull: 'steel' })).toEqual({ inputs: { length: 12.6, displacement: 9.8, hull: 'steel' } });
+    expect(readCase(fields, { length: '12,6', displacement: '9.8 t', hull: 'steel' })).toEqual({
+      inputs: { length: 12.6, displacement: 9.8, hull: 'steel' },
+    });
   });
 
   it('says of each field what is wrong with it', () => {
     expect(readCase(fields, { length: '', displacement: 'x', hull: '' })).toEqual({
-      problems: { length: 'Enter length overall.', displacement: '“x” is not a number. Write it like 12.5.', hull: 'Choose hull material.' },
+      problems: {
+        length: 'Enter length overall.',
+        displacement: '“x” is not a number. Write it like 12.5.',
+        hull: 'Choose hull material.',
+      },
     });
   });
 
@@ -31,7 +37,11 @@ describe('a case', () => {
   });
 
   it('is read back with its units', () => {
-    expect(caseTexts(fields, { length: 12.6, displacement: null, hull: 'steel' })).toEqual({ length: '12.6\u00a0m', displacement: 'not given', hull: 'steel' });
+    expect(caseTexts(fields, { length: 12.6, displacement: null, hull: 'steel' })).toEqual({
+      length: '12.6\u00a0m',
+      displacement: 'not given',
+      hull: 'steel',
+    });
   });
 
   it('names help and what the records cover under the field', () => {

@@ -18,7 +18,9 @@ export function typicalDraft(fields: readonly CaseField[]): CaseDraft {
 /** The typical reading, as finely as the recorded range deserves: 11.2 m, and a whole number where whole ones were recorded. */
 export function typicalText({ typical, range }: CaseField): string {
   if (typical === null || typeof typical === 'string') return typical ?? '';
-  return String(roundTo(typical, range ? stepWithin(range) : precisionFor({ value: typical, low: null, high: null }).step));
+  return String(
+    roundTo(typical, range ? stepWithin(range) : precisionFor({ value: typical, low: null, high: null }).step),
+  );
 }
 
 function stepWithin({ least, greatest }: NonNullable<CaseField['range']>): number {
@@ -40,7 +42,10 @@ export function readCase(fields: readonly CaseField[], draft: CaseDraft): CaseRe
   return Object.keys(problems).length > 0 ? { problems } : { inputs };
 }
 
-function readField(field: CaseField, text: string): { readonly value: string | number | null } | { readonly problem: string } {
+function readField(
+  field: CaseField,
+  text: string,
+): { readonly value: string | number | null } | { readonly problem: string } {
   if (text === '') return field.required ? { problem: missingWords(field) } : { value: null };
   if (field.kind !== 'number') return { value: text };
   const reading = typedNumber(text, field.unit);
@@ -67,6 +72,7 @@ export function fieldHint(field: CaseField): string | undefined {
 }
 
 function coveredWords({ range, days, unit }: CaseField): string {
-  if (range) return `Recorded ${formatReading(range.least, 'en-GB')} to ${withUnit(formatReading(range.greatest, 'en-GB'), unit)}.`;
+  if (range)
+    return `Recorded ${formatReading(range.least, 'en-GB')} to ${withUnit(formatReading(range.greatest, 'en-GB'), unit)}.`;
   return days ? `Recorded ${formatDay(days.first)} to ${formatDay(days.last)}.` : '';
 }

@@ -55,7 +55,12 @@ describe('trying a case', () => {
     await screen.press(find('button', 'Work out the estimate'));
     await screen.refuse(
       url,
-      { title: 'The inputs are not right', code: 'inputs-invalid', status: 422, errors: [{ pointer: '#/inputs/length', detail: 'Give a length below 40 m.' }] },
+      {
+        title: 'The inputs are not right',
+        code: 'inputs-invalid',
+        status: 422,
+        errors: [{ pointer: '#/inputs/length', detail: 'Give a length below 40 m.' }],
+      },
       'POST',
     );
     expect(saidBeside('Length overall')).toContain('Give a length below 40 m.');
@@ -64,8 +69,17 @@ describe('trying a case', () => {
   });
 
   it('takes another level where the edition does, and suggests the recorded ones', async () => {
-    const rig = { title: 'Rig', anyOf: [{ type: 'string', enum: ['sloop', 'ketch'] }, { type: 'string', minLength: 1 }] };
-    const screen = await show(TryCase, { editionId: 'edition00004', inputSchema: { properties: { rig }, required: ['rig'] } });
+    const rig = {
+      title: 'Rig',
+      anyOf: [
+        { type: 'string', enum: ['sloop', 'ketch'] },
+        { type: 'string', minLength: 1 },
+      ],
+    };
+    const screen = await show(TryCase, {
+      editionId: 'edition00004',
+      inputSchema: { properties: { rig }, required: ['rig'] },
+    });
     type('Rig', 'yawl');
     await screen.settle();
     const list = document.getElementById(field('Rig').getAttribute('list')!);

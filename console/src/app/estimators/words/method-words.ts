@@ -14,7 +14,11 @@ export const methodChoices: readonly Choice<Method>[] = [
     name: 'Ridge',
     explanation: 'Holds all weights toward zero and keeps every input. Good when inputs carry the same information.',
   },
-  { value: 'lasso', name: 'Lasso', explanation: 'Drops the inputs that earn nothing. Good when a short form is wanted.' },
+  {
+    value: 'lasso',
+    name: 'Lasso',
+    explanation: 'Drops the inputs that earn nothing. Good when a short form is wanted.',
+  },
   {
     value: 'elastic-net',
     name: 'Elastic net',
@@ -58,7 +62,11 @@ export const ruleChoices: readonly Choice<PenaltyRule>[] = [
 ];
 
 export const schemeChoices: readonly Choice<ValidationScheme>[] = [
-  { value: 'k-fold', name: 'K-fold', explanation: 'Records are dealt at random into folds; each fold is held out once.' },
+  {
+    value: 'k-fold',
+    name: 'K-fold',
+    explanation: 'Records are dealt at random into folds; each fold is held out once.',
+  },
   {
     value: 'grouped',
     name: 'Grouped',

@@ -34,13 +34,18 @@ describe('a specification in words', () => {
   });
 
   it('names the gap of a forward validation', () => {
-    const words = specificationWords({ ...specification, validation: { scheme: 'forward', folds: 5, column: 'booked', gap: 30 } }, 'h');
+    const words = specificationWords(
+      { ...specification, validation: { scheme: 'forward', folds: 5, column: 'booked', gap: 30 } },
+      'h',
+    );
     expect(words).toContain('Held out: 5 folds forward in booked, leaving out 30 between past and future.');
   });
 
   it('says what is asked of an input beyond its column', () => {
     expect(inputRemarks({ column: 'length' })).toEqual([]);
-    expect(inputRemarks({ column: 'length', transform: 'log', missing: 'typical', penaltyFactor: 0, sign: 'not-negative' })).toEqual([
+    expect(
+      inputRemarks({ column: 'length', transform: 'log', missing: 'typical', penaltyFactor: 0, sign: 'not-negative' }),
+    ).toEqual([
       'on the log scale',
       'a missing reading counts as typical',
       'left free of the penalty',

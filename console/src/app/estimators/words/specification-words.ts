@@ -50,7 +50,9 @@ function penaltyWords(specification: Specification, unit: string): readonly stri
     case 'evidence':
       return ['Penalty: where the evidence (marginal likelihood) is greatest.'];
     case 'prior':
-      return [`Penalty: from the prior that a standardised weight has a standard deviation of ${unit ? `${figure} ${unit}` : figure}.`];
+      return [
+        `Penalty: from the prior that a standardised weight has a standard deviation of ${unit ? `${figure} ${unit}` : figure}.`,
+      ];
     case 'fixed':
       return [`Penalty: λ fixed at ${figure}.`];
   }

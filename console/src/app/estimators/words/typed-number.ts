@@ -17,7 +17,9 @@ export function typedNumber(text: string, unit?: string): TypedNumber {
     case 'ambiguous':
       return { problem: `“${tidy}” could be two numbers. Write ${reading.asWhole} or ${reading.asDecimal}.` };
     case 'other-unit':
-      return { problem: `“${reading.typedUnit}” is not the unit here. Write ${unit ? `the number in ${unit}` : 'the number alone'}.` };
+      return {
+        problem: `“${reading.typedUnit}” is not the unit here. Write ${unit ? `the number in ${unit}` : 'the number alone'}.`,
+      };
     case 'not-a-number':
       return { problem: `“${tidy}” is not a number. Write it like 12.5.` };
   }
