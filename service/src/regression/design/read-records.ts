@@ -122,17 +122,19 @@ function readInput(records: RecordTable, input: ResolvedInput, rows: Int32Array)
 function readNumbers(column: RecordColumn, kind: InputKind, input: ResolvedInput, rows: Int32Array): InputReadings {
   const recorded = pick(numbersOf(column, 'input'), rows);
   let missingCount = 0;
-  recorded.forEach((value, index) => {
+  for (let at = 0; at < recorded.length; at += 1) {
+    const value = recorded[at];
     if (Number.isNaN(value)) {
       missingCount += 1;
-      refuseMissing(input, rows[index]);
-    } else if (!Number.isFinite(value)) throw notFinite(input.column, rows[index]);
-    else refuseTransform(input, value, rows[index]);
-  });
+      refuseMissing(input, rows[at]);
+    } else if (!Number.isFinite(value)) throw notFinite(input.column, rows[at]);
+    else refuseTransform(input, value, rows[at]);
+  }
   if (missingCount === recorded.length) {
     throw new RegressionError('no-usable-input', `${input.column} is missing in every record.`, input.column);
   }
-  const values = recorded.map(transformOf(input.transform));
+  const plain = input.transform === 'none' || input.transform === 'spline';
+  const values = plain ? recorded : recorded.map(transformOf(input.transform));
   return { input, kind, unit: unitOf(column), values, recorded, codes: new Int32Array(0), levels: [], missingCount };
 }
 
@@ -201,5 +203,7 @@ function numbersAsCategory(name: string, values: Float64Array): CategoryRecordCo
 }
 
 function pick(values: Float64Array, rows: Int32Array): Float64Array {
-  return Float64Array.from(rows, (row) => values[row]);
+  const picked = new Float64Array(rows.length);
+  for (let at = 0; at < rows.length; at += 1) picked[at] = values[rows[at]];
+  return picked;
 }

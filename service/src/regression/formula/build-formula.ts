@@ -2,8 +2,9 @@ import type { ColumnModel } from '../design/moments';
 import type { InputReadings } from '../design/read-records';
 import { quantile } from '../design/spline';
 import type { FitContext } from '../fit-context';
-import type { HeldOut } from '../inference/held-out';
+import { residualsOfFold, type HeldOut } from '../inference/held-out';
 import { thinResiduals } from './cv-plus-interval';
+import { rangeOf, sortedSample } from './recorded-readings';
 import type { FoldModel, Formula, FormulaInput, FormulaInterval, FormulaLeverage, FormulaLevel } from './formula';
 
 /** All residual steps of a formula together; keeps it well under half a megabyte. */
@@ -22,7 +23,6 @@ export function buildFormula(context: FitContext, parts: FormulaParts): Formula 
   const { specification, read, design } = context;
   const typicalAdditive = design.targetCentre + parts.model.constant;
   const logged = specification.target.transform === 'log';
-  const recorded = read.targetRecorded.slice().sort();
   return {
     format: 'tarebeam-formula/1',
     target: {
@@ -31,7 +31,7 @@ export function buildFormula(context: FitContext, parts: FormulaParts): Formula 
       transform: specification.target.transform,
       smearing: parts.smearing,
       shown: 'mean',
-      recordedRange: { min: recorded[0], max: recorded[recorded.length - 1] },
+      recordedRange: rangeOf(read.targetRecorded),
     },
     typicalAdditive,
     typical: logged ? Math.exp(typicalAdditive) * parts.smearing : typicalAdditive,
@@ -50,8 +50,8 @@ export function buildFormula(context: FitContext, parts: FormulaParts): Formula 
 function foldModels(heldOut: HeldOut): FoldModel[] {
   const limit = Math.max(20, Math.floor(MOST_RESIDUAL_STEPS / heldOut.outcomes.length));
   return heldOut.outcomes.map(({ model, targetCentre, codings }, fold) => {
-    const residuals = heldOut.residuals.filter((_, record) => heldOut.foldOf[record] === fold).map(Math.abs).sort();
-    return { typicalAdditive: targetCentre + model.constant, weights: Array.from(model.weights), codings, ...thinResiduals(residuals, limit) };
+    const residuals = thinResiduals(residualsOfFold(heldOut, fold), limit);
+    return { typicalAdditive: targetCentre + model.constant, weights: Array.from(model.weights), codings, ...residuals };
   });
 }
 
@@ -61,7 +61,7 @@ function describeInput(context: FitContext, readings: InputReadings, input: numb
   const weights = positions.map((at) => model.weights[at]);
   const coding = design.codings[input];
   const plain = coding.form === 'linear' && weights[0] < 0;
-  const present = readings.recorded.filter((value) => !Number.isNaN(value)).sort();
+  const present = sortedSample(readings.recorded);
   const category = readings.kind === 'category';
   return {
     name: readings.input.column,
@@ -70,7 +70,7 @@ function describeInput(context: FitContext, readings: InputReadings, input: numb
     transform: readings.input.transform,
     missing: readings.input.missing,
     unseenLevel: readings.input.unseenLevel,
-    range: category ? null : { min: present[0], max: present[present.length - 1] },
+    range: category ? null : rangeOf(readings.recorded),
     deciles: category ? null : Array.from({ length: 11 }, (_, tenth) => quantile(present, tenth / 10)),
     levels: category ? levelCounts(readings) : null,
     missingCount: readings.missingCount,

@@ -21,6 +21,13 @@ export function quantileIndex(total: number, level: number): number {
   return Math.min(total, Math.max(1, Math.ceil(level * (total + 1) - INDEX_SLACK)));
 }
 
+/** The ⌈level·(m+1)⌉-th smallest of all the folds' m residuals; infinite without any. */
+export function residualQuantile(folds: readonly FoldResiduals[], level: number): number {
+  const total = folds.reduce((sum, fold) => sum + fold.counts.reduce((count, value) => count + value, 0), 0);
+  if (total === 0) return Infinity;
+  return fromTop(folds, folds.map(() => 0), total - quantileIndex(total, level) + 1);
+}
+
 /** The `rank`-th largest of all base + residual: the folds' ascending lists are merged from their ends. */
 function fromTop(folds: readonly FoldResiduals[], bases: readonly number[], rank: number): number {
   const ends = folds.map((fold) => fold.residuals.length - 1);

@@ -52,7 +52,7 @@ export interface FormulaInput {
   readonly unseenLevel: UnseenLevelRule;
   /** Numbers and days, in the column's own unit before any transform; null for a category. */
   readonly range: RecordedRange | null;
-  /** The 0, 10, … 100 % points of the readings, for comparing what is asked with what was recorded; null for a category. */
+  /** The 0, 10, … 100 % points of the readings (of an even selection of 20,000 of them on larger tables), for comparing what is asked with what was recorded; null for a category. */
   readonly deciles: readonly number[] | null;
   /** Levels in the order of the records; null for numbers and days. */
   readonly levels: readonly FormulaLevel[] | null;

@@ -1,7 +1,7 @@
 import type { FitContext } from '../fit-context';
-import { quantileIndex } from '../formula/cv-plus-interval';
+import { residualQuantile } from '../formula/cv-plus-interval';
 import type { QuarterCoverage } from '../result';
-import type { HeldOut } from './held-out';
+import { residualsOfFold, type HeldOut } from './held-out';
 
 export interface HeldOutAccuracy {
   readonly rmse: number;
@@ -47,7 +47,8 @@ export interface Coverage {
  */
 export function heldOutCoverage(context: FitContext, heldOut: HeldOut, shown: Float64Array, gaussianHalf: number | null): Coverage {
   const { intervalLevel } = context.specification;
-  const widths = context.plan.folds.map((_, fold) => otherFoldsQuantile(heldOut, fold, intervalLevel));
+  const lists = foldResiduals(heldOut);
+  const widths = lists.map((own) => residualQuantile(lists.filter((list) => list !== own), intervalLevel));
   const records = Array.from(heldOut.foldOf.keys()).filter((record) => heldOut.foldOf[record] >= 0);
   const covered = (record: number): boolean => Math.abs(heldOut.residuals[record]) <= widths[heldOut.foldOf[record]];
   const gaussianCovered = (record: number): boolean => gaussianHalf !== null && Math.abs(heldOut.residuals[record]) <= gaussianHalf;
@@ -62,8 +63,9 @@ export function heldOutCoverage(context: FitContext, heldOut: HeldOut, shown: Fl
   return { all: share(records, covered), gaussian: gaussianHalf === null ? null : share(records, gaussianCovered), byQuarter };
 }
 
-function otherFoldsQuantile(heldOut: HeldOut, fold: number, level: number): number {
-  const others = heldOut.residuals.filter((_, record) => heldOut.foldOf[record] >= 0 && heldOut.foldOf[record] !== fold).map(Math.abs).sort();
-  if (others.length === 0) return Infinity;
-  return others[quantileIndex(others.length, level) - 1];
+function foldResiduals(heldOut: HeldOut): { residuals: readonly number[]; counts: readonly number[] }[] {
+  return heldOut.outcomes.map((_, fold) => {
+    const residuals = Array.from(residualsOfFold(heldOut, fold));
+    return { residuals, counts: residuals.map(() => 1) };
+  });
 }

@@ -117,7 +117,9 @@ export function penalisedInverse(features: HatFeatures, lambda: number): Float64
 export function standardisedRow(design: DesignMatrix, problem: StandardisedProblem, position: number): Float64Array {
   const { rowCount, columnCount, data } = design;
   const root = data[columnCount * rowCount + position];
-  return Float64Array.from(problem.kept, (column, at) => (data[column * rowCount + position] - problem.means[at] * root) / problem.scales[at]);
+  const row = new Float64Array(problem.size);
+  for (let at = 0; at < row.length; at += 1) row[at] = (data[problem.kept[at] * rowCount + position] - problem.means[at] * root) / problem.scales[at];
+  return row;
 }
 
 /** f = Tᵀ x. */

@@ -64,3 +64,10 @@ export function smearingOf(context: FitContext, design: Design, model: ColumnMod
   }
   return sum / weightSum;
 }
+
+/** Absolute held-out residuals of one fold, ascending. */
+export function residualsOfFold({ residuals, foldOf }: HeldOut, fold: number): Float64Array {
+  const found: number[] = [];
+  for (let record = 0; record < residuals.length; record += 1) if (foldOf[record] === fold) found.push(Math.abs(residuals[record]));
+  return Float64Array.from(found).sort();
+}

@@ -23,14 +23,16 @@ export function cholesky(matrix: Float64Array, size: number, dependentShare = DE
 /* eslint-disable-next-line max-params -- innermost loop */
 function innerRows(lower: Float64Array, size: number, first: number, second: number, count: number): number {
   const a = first * size, b = second * size;
-  let s0 = 0, s1 = 0;
+  let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
   let k = 0;
-  for (; k + 1 < count; k += 2) {
+  for (; k + 3 < count; k += 4) {
     s0 += lower[a + k] * lower[b + k];
     s1 += lower[a + k + 1] * lower[b + k + 1];
+    s2 += lower[a + k + 2] * lower[b + k + 2];
+    s3 += lower[a + k + 3] * lower[b + k + 3];
   }
-  if (k < count) s0 += lower[a + k] * lower[b + k];
-  return s0 + s1;
+  for (; k < count; k += 1) s0 += lower[a + k] * lower[b + k];
+  return s0 + s1 + (s2 + s3);
 }
 
 /** x with L x = right. */

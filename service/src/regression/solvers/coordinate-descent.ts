@@ -1,5 +1,5 @@
 import { DUALITY_GAP } from '../conventions';
-import { solveOnActiveSet } from './active-set';
+import { ActiveSetSolver } from './active-set';
 import { allowedPull, bestWeight, relativeGap, type HeldPenalty } from './held-penalty';
 import type { HeldProblem } from './project-free';
 
@@ -15,14 +15,21 @@ export interface DescentState {
   readonly weights: Float64Array;
   /** c − A b for every held column. */
   readonly gradient: Float64Array;
+  readonly exact: ActiveSetSolver;
 }
 
 const MOST_SWEEPS = 20000;
-const SWEEPS_BEFORE_POLISH = 30;
-const MOST_POLISHED = 600;
+/** Sweeps before the gap is looked at again, and before an exact solution on the active set is tried. */
+const SWEEPS_A_ROUND = 12;
+/** So many sweeps at one λ may mean that the kept factor has lost digits: it is built afresh. */
+const SWEEPS_BEFORE_RESET = 400;
+/** A sweep whose largest curvature · step² is below this share of yy has settled; the gap then decides. */
+const TINY_STEP = 1e-16;
+/** Active sets up to this size are solved exactly when descent has not settled in its first round. */
+const MOST_POLISHED = 1000;
 
 export function startingState(held: HeldProblem): DescentState {
-  return { weights: new Float64Array(held.size), gradient: held.cross.slice() };
+  return { weights: new Float64Array(held.size), gradient: held.cross.slice(), exact: new ActiveSetSolver() };
 }
 
 /**
@@ -35,20 +42,19 @@ export function descend(held: HeldProblem, penalty: HeldPenalty, previous: HeldP
   const working = workingSet(held, penalty, previous, state);
   const inside = new Uint8Array(held.size);
   working.forEach((j) => (inside[j] = 1));
-  let tolerance = 1e-7;
   let iterations = 0;
   let polished = false;
   for (;;) {
-    iterations += sweepUntilStill(held, penalty, state, working, tolerance);
-    if (polish || iterations > SWEEPS_BEFORE_POLISH) polished = solveOnActiveSet(held, penalty, state.weights, MOST_POLISHED);
+    iterations += sweepRound(held, penalty, state, working);
+    if (polish || iterations >= SWEEPS_A_ROUND) polished = state.exact.solve(held, penalty, state.weights, MOST_POLISHED);
+    if (iterations > SWEEPS_BEFORE_RESET) state.exact.reset();
     refreshGradient(held, state);
     if (addViolators(held, penalty, state, working, inside)) continue;
     const gap = relativeGap(held, penalty, state.weights, state.gradient);
-    const done = gap <= DUALITY_GAP && (!polish || polished || tolerance < 1e-12);
-    if (done || iterations >= MOST_SWEEPS || tolerance < 1e-30) {
+    const enough = gap <= DUALITY_GAP && (!polish || polished || gap <= DUALITY_GAP * 1e-4);
+    if (enough || iterations >= MOST_SWEEPS) {
       return { weights: state.weights.slice(), gap, iterations, converged: gap <= DUALITY_GAP };
     }
-    tolerance *= 1e-2;
   }
 }
 
@@ -62,20 +68,15 @@ function workingSet(held: HeldProblem, penalty: HeldPenalty, previous: HeldPenal
   return working;
 }
 
-/** Sweeps over the working set until no step lowers the objective by more than tolerance · yy. Returns the sweeps made. */
-function sweepUntilStill(held: HeldProblem, penalty: HeldPenalty, state: DescentState, working: number[], tolerance: number): number {
-  const limit = tolerance * tolerance * held.targetSquare;
-  for (let sweep = 1; sweep <= MOST_SWEEPS; sweep += 1) {
-    const full = sweepOnce(held, penalty, state, working, working);
-    if (full <= limit) return sweep;
+/** One sweep over the working set, then over its active part until steps are tiny, at most a round's worth. Returns the sweeps made. */
+function sweepRound(held: HeldProblem, penalty: HeldPenalty, state: DescentState, working: readonly number[]): number {
+  const limit = TINY_STEP * held.targetSquare;
+  for (let sweep = 1; sweep < SWEEPS_A_ROUND; sweep += 1) {
+    if (sweepOnce(held, penalty, state, working, working) <= limit) return sweep;
     const active = working.filter((j) => state.weights[j] !== 0);
-    for (; sweep <= MOST_SWEEPS; sweep += 1) {
-      if (sweepOnce(held, penalty, state, active, working) <= limit) break;
-      if (sweep % 50 === 0) break;
-    }
-    if (sweep > 2 * SWEEPS_BEFORE_POLISH && working.length <= MOST_POLISHED) return sweep;
+    for (; sweep < SWEEPS_A_ROUND; sweep += 1) if (sweepOnce(held, penalty, state, active, working) <= limit) break;
   }
-  return MOST_SWEEPS;
+  return SWEEPS_A_ROUND;
 }
 
 /** One sweep; returns the largest curvature · step². */

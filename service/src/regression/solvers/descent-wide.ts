@@ -1,5 +1,6 @@
 import type { StandardisedRows } from '../design/standardised-rows';
 import { activeDegrees } from './active-degrees';
+import { ActiveSetSolver } from './active-set';
 import type { ColumnPenalties } from './column-penalties';
 import { descend } from './coordinate-descent';
 import { allowedPull, relativeGap, type HeldPenalty } from './held-penalty';
@@ -49,6 +50,8 @@ class WideState {
   private readonly inside: Uint8Array;
   /** Products of working columns, one growing row each: products[i][j] for j ≤ i. */
   private readonly products: Float64Array[] = [];
+  /** Keyed by place in `working`, which only grows. */
+  private readonly exact = new ActiveSetSolver();
 
   constructor(private readonly problem: WideProblem) {
     this.weights = new Float64Array(problem.held.length);
@@ -86,7 +89,7 @@ class WideState {
     const compact = this.compact();
     const weights = Float64Array.from(this.working, (j) => this.weights[j]);
     const gradient = Float64Array.from(this.working, (j) => this.gradient[j]);
-    const answer = descend(compact, pickPenalty(penalty, this.working), null, { weights, gradient }, polish);
+    const answer = descend(compact, pickPenalty(penalty, this.working), null, { weights, gradient, exact: this.exact }, polish);
     this.working.forEach((j, at) => (this.weights[j] = answer.weights[at]));
     return answer;
   }

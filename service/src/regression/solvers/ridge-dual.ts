@@ -65,13 +65,25 @@ function primalWeights(problem: WideProblem, inverseRoots: Float64Array, solved:
   const sums = new Float64Array(count);
   for (let column = 0; column < held.length; column += 1) {
     sums.fill(0);
-    for (let row = 0; row < rows; row += 1) {
-      const value = x[column * rows + row];
-      const at = row * count;
-      for (let k = 0; k < count; k += 1) sums[k] += value * solved[at + k];
-    }
+    let row = 0;
+    for (; row + 3 < rows; row += 4) addFourRows(sums, x, column * rows + row, solved, row * count);
+    for (; row < rows; row += 1) addRow(sums, x[column * rows + row], solved, row * count);
     const scale = inverseRoots[column] * inverseRoots[column];
     for (let k = 0; k < count; k += 1) weights[k][column] = sums[k] * scale;
   }
   return weights.map((heldWeights) => problem.restore(heldWeights));
+}
+
+/** sums[k] += Σ over four rows of x · solved[row][k]. */
+function addFourRows(sums: Float64Array, x: Float64Array, at: number, solved: Float64Array, from: number): void {
+  const count = sums.length;
+  const x0 = x[at], x1 = x[at + 1], x2 = x[at + 2], x3 = x[at + 3];
+  const second = from + count, third = second + count, fourth = third + count;
+  for (let k = 0; k < count; k += 1) {
+    sums[k] += x0 * solved[from + k] + x1 * solved[second + k] + (x2 * solved[third + k] + x3 * solved[fourth + k]);
+  }
+}
+
+function addRow(sums: Float64Array, value: number, solved: Float64Array, from: number): void {
+  for (let k = 0; k < sums.length; k += 1) sums[k] += value * solved[from + k];
 }
