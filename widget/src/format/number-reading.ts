@@ -60,7 +60,7 @@ function readBody(sign: 1 | -1, body: string, locale: string | null | undefined)
   if (whole !== null && decimal !== null && whole.value !== decimal.value) {
     return decimal.separator === decimalSeparatorOf(locale)
       ? finite(sign * decimal.value)
-      : { ok: false, reason: 'ambiguous', ...bothForms(sign, body, decimal.separator) };
+      : { ok: false, reason: 'ambiguous', ...bothForms({ sign, body, separator: decimal.separator, locale }) };
   }
   const value = whole?.value ?? decimal?.value;
   return value === undefined ? { ok: false, reason: 'not-a-number' } : finite(sign * value);
@@ -83,10 +83,20 @@ function decimalReading(body: string): { readonly value: number; readonly separa
   return whole && { value: Number(`${whole.value}.${parts[3] || '0'}`), separator };
 }
 
-function bothForms(sign: 1 | -1, body: string, separator: DecimalSeparator): { asWhole: string; asDecimal: string } {
+interface Ambiguous {
+  readonly sign: 1 | -1;
+  readonly body: string;
+  readonly separator: DecimalSeparator;
+  readonly locale: string | null | undefined;
+}
+
+/** With the language's own separator three decimals are clear; without a language a fourth digit makes them so. */
+function bothForms({ sign, body, separator, locale }: Ambiguous): { asWhole: string; asDecimal: string } {
   const minus = sign === -1 ? '-' : '';
   const [before, after] = body.split(separator);
-  return { asWhole: `${minus}${before}${after}`, asDecimal: `${minus}${before}${separator}${after}0` };
+  const own = decimalSeparatorOf(locale);
+  const decimals = own ? `${own}${after}` : `${separator}${after}0`;
+  return { asWhole: `${minus}${before}${after}`, asDecimal: `${minus}${before}${decimals}` };
 }
 
 function finite(value: number): NumberReading {
