@@ -24,6 +24,7 @@ import { mountPartners } from './partners/partners-router';
 import { createPartnerApi } from './partner-api';
 import { mountPeople } from './people/people-router';
 import { mountSession } from './people/session-router';
+import { mountRecords } from './records/records-router';
 import { sessionPassport } from './people/session-passport';
 
 /** The whole service as one Express application; the caller listens. */
@@ -58,6 +59,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
     requireOwnSite: requireOwnSite(config.publicUrl),
   });
   mountEstimators(routes, services.estimators);
+  mountRecords(routes, services.records);
   mountFits(routes, services.fits);
   mountEditions(routes, { editions: services.editions, review: services.editionReview });
   mountEstimates(routes, services.estimateTraces);

@@ -4,6 +4,7 @@ import type { Logger } from 'pino';
 import { systemClock, type Clock } from './clock';
 import { composeEditions, type EditionsRoom } from './compose-editions';
 import { composeFits } from './compose-fits';
+import { composeRecords } from './compose-records';
 import type { Config } from './config';
 import { openDatabase } from './database/connection';
 import { Database } from './database/database';
@@ -34,6 +35,7 @@ import { PeopleService } from './people/people-service';
 import { PeopleStore } from './people/people-store';
 import { SignInService } from './people/sign-in-service';
 import { SignInThrottle } from './people/sign-in-throttle';
+import type { RecordsService } from './records/records-service';
 import { Settings } from './settings/settings';
 import { SettingsService } from './settings/settings-service';
 
@@ -45,6 +47,8 @@ export interface ComposeOptions {
   readonly validateAnswers?: boolean;
   /** Node's own arguments for the thread of a fit; none when compiled. */
   readonly fitThreadArguments?: readonly string[];
+  /** Largest file that is taken in, in bytes. */
+  readonly maximumFileBytes?: number;
   /** How often ended sessions are swept out; 0 never. */
   readonly sessionCleanupMs?: number;
 }
@@ -68,6 +72,7 @@ export interface Services extends EditionsRoom {
   readonly estimators: EstimatorsService;
   readonly keys: KeysService;
   readonly fits: FitsService;
+  readonly records: RecordsService;
   readonly fitRunner: FitRunner;
   readonly partners: PartnersService;
   readonly sites: SitesService;
@@ -79,6 +84,9 @@ export interface Services extends EditionsRoom {
   readonly schedule: Schedule;
   close(): Promise<void>;
 }
+
+/** What an upload may hold unless told otherwise: 2 GB. */
+const ordinaryFileBytes = 2_000_000_000;
 
 export const databasePathOf = (config: Config): string => join(config.dataFolder, 'tarebeam.sqlite');
 
@@ -122,6 +130,11 @@ export function compose(options: ComposeOptions): Services {
     keys,
     fits,
     fitRunner,
+    records: composeRecords({
+      ...{ database, journal, clock, config },
+      maximumFileBytes: options.maximumFileBytes ?? ordinaryFileBytes,
+      threadArguments: options.fitThreadArguments ?? [],
+    }),
     ...composeEditions({ database, editions, fits: fitsStore, estimators, journal, clock }),
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),

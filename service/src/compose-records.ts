@@ -1,0 +1,27 @@
+import { join } from 'node:path';
+import type { Clock } from './clock';
+import type { Config } from './config';
+import type { Database } from './database/database';
+import type { Journal } from './journal/journal';
+import { KeptFiles } from './records/kept-files';
+import { RecordsService } from './records/records-service';
+import { RecordsStore } from './records/records-store';
+import { RevisionImporter } from './records/revision-importer';
+
+export interface RecordsOptions {
+  readonly config: Config;
+  readonly database: Database;
+  readonly journal: Journal;
+  readonly clock: Clock;
+  readonly maximumFileBytes: number;
+  readonly threadArguments: readonly string[];
+}
+
+/** Builds what brings records in and reads them. */
+export function composeRecords(options: RecordsOptions): RecordsService {
+  const { database, journal, clock, maximumFileBytes, threadArguments } = options;
+  const records = new RecordsStore(database);
+  const files = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
+  const importer = new RevisionImporter({ database, records, files, clock, threadArguments });
+  return new RecordsService({ records, files, journal, clock, maximumFileBytes, importer });
+}

@@ -1,0 +1,100 @@
+/** What `record_columns` holds about a column beside its name and kind. */
+export interface ColumnStatistics {
+  readonly missingCount: number;
+  readonly distinctCount: number | null;
+  readonly minimum: number | null;
+  readonly maximum: number | null;
+  readonly mean: number | null;
+  readonly standardDeviation: number | null;
+  readonly histogram: Histogram | null;
+}
+
+export interface Histogram {
+  readonly edges: readonly number[];
+  readonly counts: readonly number[];
+}
+
+export const histogramBins = 20;
+
+const nothing: ColumnStatistics = {
+  missingCount: 0,
+  distinctCount: 0,
+  minimum: null,
+  maximum: null,
+  mean: null,
+  standardDeviation: null,
+  histogram: null,
+};
+
+export const statisticsOfLevels = (missingCount: number, distinctCount: number | null): ColumnStatistics => ({
+  ...nothing,
+  missingCount,
+  distinctCount,
+});
+
+/** Equal bins from minimum to maximum, the last one closed; one bin when all values are equal. */
+export function histogramOf(values: Float64Array, minimum: number, maximum: number): Histogram {
+  const bins = maximum > minimum && Number.isFinite(maximum - minimum) ? histogramBins : 1;
+  const width = (maximum - minimum) / bins;
+  const counts = new Array<number>(bins).fill(0);
+  for (const value of values) {
+    if (value === value) counts[bins === 1 ? 0 : Math.min(bins - 1, Math.floor((value - minimum) / width))]++;
+  }
+  const edges = Array.from({ length: bins + 1 }, (_, edge) => (edge === bins ? maximum : minimum + edge * width));
+  return { edges, counts };
+}
+
+/** Sums of the very largest numbers overflow; then there is no figure to give. */
+const finite = (value: number): number | null => (Number.isFinite(value) ? value : null);
+
+function countDistinct(values: Float64Array): number {
+  const sorted = values.slice().sort();
+  let distinct = 0;
+  let previous = NaN;
+  for (const value of sorted) {
+    // NaN sorts last.
+    if (value !== value) break;
+    if (value !== previous) distinct++;
+    previous = value;
+  }
+  return distinct;
+}
+
+/**
+ * Of n readings (NaN is missing): mean = Σx / n and standard deviation = √(Σ(x − mean)² / n), in two passes, the
+ * second corrected by the sum of the deviations (Chan, Golub, LeVeque 1983, "Algorithms for computing the sample
+ * variance", eq. 1.7). Cost: n log n for the distinct count, else a few passes.
+ */
+export function statisticsOf(values: Float64Array, distinctLimit: number): ColumnStatistics {
+  let count = 0;
+  let sum = 0;
+  let minimum = Infinity;
+  let maximum = -Infinity;
+  for (const value of values) {
+    if (value !== value) continue;
+    count++;
+    sum += value;
+    if (value < minimum) minimum = value;
+    if (value > maximum) maximum = value;
+  }
+  const missingCount = values.length - count;
+  if (count === 0) return { ...nothing, missingCount };
+  const mean = sum / count;
+  let squares = 0;
+  let deviations = 0;
+  for (const value of values) {
+    if (value !== value) continue;
+    squares += (value - mean) * (value - mean);
+    deviations += value - mean;
+  }
+  const distinct = countDistinct(values);
+  return {
+    missingCount,
+    distinctCount: distinct > distinctLimit ? null : distinct,
+    minimum,
+    maximum,
+    mean: finite(mean + deviations / count),
+    standardDeviation: finite(Math.sqrt(Math.max(0, squares - (deviations * deviations) / count) / count)),
+    histogram: histogramOf(values, minimum, maximum),
+  };
+}

@@ -1,0 +1,37 @@
+import { createReadStream } from 'node:fs';
+import { pipeline } from 'node:stream/promises';
+import type { Response } from 'express';
+import type { operations } from '../../../openapi/types/desk';
+import type { ContractRoutes } from '../http/contract-routes';
+import { pageOf } from '../http/page';
+import { personOf } from '../people/session-passport';
+import type { RecordsService } from './records-service';
+
+/** Aborted when the client goes away before it is answered. */
+function goneAway(response: Response): AbortSignal {
+  const controller = new AbortController();
+  response.once('close', () => {
+    if (!response.writableFinished) controller.abort();
+  });
+  return controller.signal;
+}
+
+export function mountRecords(routes: ContractRoutes<operations>, records: RecordsService): void {
+  routes.answer('listRecordSets', ({ query }) => records.list(pageOf(query)));
+  routes.answer('createRecordSet', ({ request, response }) =>
+    records.createFromForm(personOf(request).id, request, goneAway(response)),
+  );
+  routes.answer('readRecordSet', ({ path }) => records.readSet(path.id));
+  routes.answer('createRevision', ({ path, request, response }) =>
+    records.reviseFromForm(path.id, personOf(request).id, request, goneAway(response)),
+  );
+  routes.answer('readRevision', ({ path }) => records.readRevision(path.id));
+  routes.answer('listRevisionRows', ({ path, query }) => records.listRows(path.id, pageOf(query)));
+  routes.handle('readRevisionOriginal', async ({ path, response }) => {
+    const { path: file, fileName, byteCount } = await records.original(path.id);
+    // Always a download of plain bytes: a file that somebody sent must never be shown as a page of ours.
+    response.attachment(fileName).type('application/octet-stream').setHeader('Content-Length', byteCount);
+    response.setHeader('X-Content-Type-Options', 'nosniff');
+    await pipeline(createReadStream(file), response);
+  });
+}

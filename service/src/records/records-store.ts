@@ -1,0 +1,224 @@
+import type { Database } from '../database/database';
+import type { Page } from '../http/page';
+import type { ColumnKind } from './cell-blocks';
+import type { Histogram } from './reading/column-statistics';
+import type { FinishedColumn, Level } from './reading/finished-column';
+
+export interface Reading {
+  readonly encoding: string;
+  readonly delimiter: string;
+  readonly decimal: '.' | ',';
+  readonly header: boolean;
+}
+
+export interface PersonName {
+  readonly id: string;
+  readonly name: string;
+}
+
+export interface NewRecordSet {
+  readonly id: string;
+  readonly name: string;
+  readonly description: string;
+  readonly createdAt: string;
+  readonly createdBy: string;
+}
+
+export interface NewRevision {
+  readonly id: string;
+  readonly recordSetId: string;
+  readonly number: number;
+  readonly sha256: string;
+  readonly rowCount: number;
+  readonly columnCount: number;
+  readonly byteCount: number;
+  readonly fileName: string;
+  readonly originalPath: string;
+  readonly reading: Reading;
+  readonly createdAt: string;
+  readonly createdBy: string;
+}
+
+export interface RecordSetRecord extends Omit<NewRecordSet, 'createdBy'> {
+  readonly createdBy: PersonName;
+  readonly revisionCount: number;
+}
+
+export interface RevisionRecord extends Omit<NewRevision, 'createdBy'> {
+  readonly recordSetName: string;
+  readonly createdBy: PersonName;
+}
+
+export interface ColumnRecord {
+  readonly name: string;
+  readonly position: number;
+  readonly kind: ColumnKind;
+  readonly unit: string | null;
+  readonly missingCount: number;
+  readonly distinctCount: number | null;
+  readonly minimum: number | null;
+  readonly maximum: number | null;
+  readonly mean: number | null;
+  readonly standardDeviation: number | null;
+  readonly histogram: Histogram | null;
+  readonly levels: readonly Level[];
+}
+
+export interface NewBlock {
+  readonly revisionId: string;
+  readonly position: number;
+  readonly block: number;
+  readonly rowCount: number;
+  readonly cells: Buffer;
+}
+
+type SetRow = NewRecordSet & { createdByName: string; revisionCount: number };
+type RevisionRow = Omit<NewRevision, 'reading'> & { reading: string; createdByName: string; recordSetName: string };
+type ColumnRow = Omit<ColumnRecord, 'histogram' | 'levels'> & { histogram: string | null; levels: string };
+
+export const nameKeyOf = (name: string): string => name.trim().toLowerCase();
+
+export class RecordsStore {
+  constructor(private readonly database: Database) {}
+
+  async insertSet(set: NewRecordSet): Promise<void> {
+    await this.database.connection('recordSets').insert({ ...set, nameKey: nameKeyOf(set.name) });
+  }
+
+  async insertRevision(revision: NewRevision): Promise<void> {
+    await this.database
+      .connection('recordRevisions')
+      .insert({ ...revision, reading: JSON.stringify(revision.reading) });
+  }
+
+  async insertColumn(revisionId: string, column: FinishedColumn): Promise<void> {
+    const { name, position, kind, unit, statistics, levels } = column;
+    const histogram = statistics.histogram && JSON.stringify(statistics.histogram);
+    await this.database
+      .connection('recordColumns')
+      .insert({ revisionId, name, position, kind, unit, ...statistics, histogram, levels: JSON.stringify(levels) });
+  }
+
+  async insertBlock(block: NewBlock): Promise<void> {
+    await this.database.connection('recordBlocks').insert(block);
+  }
+
+  async nameIsTaken(name: string): Promise<boolean> {
+    return (
+      (await this.database
+        .connection('recordSets')
+        .where({ nameKey: nameKeyOf(name) })
+        .first('id')) !== undefined
+    );
+  }
+
+  async listSets({ limit, offset }: Page): Promise<RecordSetRecord[]> {
+    const rows = (await this.setsWithCounts()
+      .orderBy('recordSets.name')
+      .orderBy('recordSets.id')
+      .limit(limit)
+      .offset(offset)) as SetRow[];
+    return rows.map(toSet);
+  }
+
+  async countSets(): Promise<number> {
+    const row = await this.database.connection('recordSets').count({ total: '*' }).first();
+    return Number(row?.['total'] ?? 0);
+  }
+
+  async findSet(id: string): Promise<RecordSetRecord | null> {
+    const row = (await this.setsWithCounts().where('recordSets.id', id).first()) as SetRow | undefined;
+    return row ? toSet(row) : null;
+  }
+
+  /** Newest first. */
+  async revisionsOf(recordSetIds: readonly string[]): Promise<RevisionRecord[]> {
+    const rows = (await this.revisions()
+      .whereIn('recordSetId', [...recordSetIds])
+      .orderBy('number', 'desc')
+      .orderBy('recordRevisions.id')) as RevisionRow[];
+    return rows.map(toRevision);
+  }
+
+  async findRevision(id: string): Promise<RevisionRecord | null> {
+    const row = (await this.revisions().where('recordRevisions.id', id).first()) as RevisionRow | undefined;
+    return row ? toRevision(row) : null;
+  }
+
+  async columnsOf(revisionId: string): Promise<ColumnRecord[]> {
+    const rows = (await this.database
+      .connection('recordColumns')
+      .where({ revisionId })
+      .orderBy('position')) as ColumnRow[];
+    return rows.map((row) => ({
+      ...row,
+      histogram: row.histogram === null ? null : (JSON.parse(row.histogram) as Histogram),
+      levels: JSON.parse(row.levels) as Level[],
+    }));
+  }
+
+  /** Rows of each block; the same for every column. */
+  async blockRowCounts(revisionId: string): Promise<number[]> {
+    const rows = (await this.database
+      .connection('recordBlocks')
+      .where({ revisionId, position: 0 })
+      .orderBy('block')
+      .select('rowCount')) as { rowCount: number }[];
+    return rows.map((row) => row.rowCount);
+  }
+
+  /** A part of a block's bytes; all of them when `length` is null. */
+  async cellsOf(
+    revisionId: string,
+    position: number,
+    block: number,
+    part: { readonly start: number; readonly length: number } | null,
+  ): Promise<Buffer> {
+    const { connection } = this.database;
+    const cells = part ? connection.raw('substr(cells, ?, ?)', [part.start + 1, part.length]) : connection.ref('cells');
+    const row = (await connection('recordBlocks').where({ revisionId, position, block }).first({ cells })) as
+      { cells: Buffer } | undefined;
+    if (!row) throw new Error(`Block ${block} of column ${position} of revision ${revisionId} is missing.`);
+    return row.cells;
+  }
+
+  private setsWithCounts() {
+    const { connection } = this.database;
+    const revisionCount = connection('recordRevisions')
+      .count('*')
+      .where('recordRevisions.recordSetId', connection.ref('recordSets.id'))
+      .as('revisionCount');
+    return connection('recordSets')
+      .join('people', 'people.id', 'recordSets.createdBy')
+      .select('recordSets.*', 'people.name as createdByName', revisionCount);
+  }
+
+  private revisions() {
+    return this.database
+      .connection('recordRevisions')
+      .join('people', 'people.id', 'recordRevisions.createdBy')
+      .join('recordSets', 'recordSets.id', 'recordRevisions.recordSetId')
+      .select('recordRevisions.*', 'people.name as createdByName', 'recordSets.name as recordSetName');
+  }
+}
+
+function toSet(row: SetRow): RecordSetRecord {
+  const { id, name, description, createdAt } = row;
+  return {
+    id,
+    name,
+    description,
+    createdAt,
+    createdBy: { id: row.createdBy, name: row.createdByName },
+    revisionCount: Number(row.revisionCount),
+  };
+}
+
+function toRevision({ createdByName, ...row }: RevisionRow): RevisionRecord {
+  return {
+    ...row,
+    byteCount: Number(row.byteCount),
+    reading: JSON.parse(row.reading) as Reading,
+    createdBy: { id: row.createdBy, name: createdByName },
+  };
+}
