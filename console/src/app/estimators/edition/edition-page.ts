@@ -16,6 +16,7 @@ import { CountPipe } from '../../ui/figure-pipes';
 import { load } from '../../ui/load';
 import { LoadingState } from '../../ui/loading-state';
 import { DayPipe, MomentPipe } from '../../ui/moment-pipes';
+import { PageHead } from '../../ui/page-head';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
 import type { SheetMenuItem } from '../../ui/sheet/sheet-menu';
@@ -49,6 +50,7 @@ import { WithdrawDialog } from './withdraw-dialog';
     EditionInputs,
     LoadingState,
     MomentPipe,
+    PageHead,
     ProblemNotice,
     RevisionFacts,
     RouterLink,

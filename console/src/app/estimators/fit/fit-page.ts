@@ -12,6 +12,7 @@ import { Confirm } from '../../ui/confirm';
 import { load } from '../../ui/load';
 import { LoadingState } from '../../ui/loading-state';
 import { MomentPipe } from '../../ui/moment-pipes';
+import { PageHead } from '../../ui/page-head';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
 import { SheetSection } from '../../ui/sheet/sheet-section';
@@ -44,6 +45,7 @@ import { WeightsTable } from './weights-table';
     MomentPipe,
     PenaltyPathFigure,
     PenaltyTable,
+    PageHead,
     ProblemNotice,
     RevisionFacts,
     RouterLink,

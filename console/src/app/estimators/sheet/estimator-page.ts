@@ -9,6 +9,7 @@ import { countOf, formatFigure } from '../../ui/figure';
 import { load } from '../../ui/load';
 import { LoadingState } from '../../ui/loading-state';
 import { DayPipe } from '../../ui/moment-pipes';
+import { PageHead } from '../../ui/page-head';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
 import { SheetSection } from '../../ui/sheet/sheet-section';
@@ -29,6 +30,7 @@ import { WordsSection } from './words-section';
     EstimatesSection,
     FitsSection,
     LoadingState,
+    PageHead,
     ProblemNotice,
     RouterLink,
     Sheet,
