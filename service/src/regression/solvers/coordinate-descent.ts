@@ -26,7 +26,7 @@ const SWEEPS_BEFORE_RESET = 400;
 /** A sweep whose largest curvature · step² is below this share of yy has settled; the gap then decides. */
 const TINY_STEP = 1e-16;
 /** Active sets up to this size are solved exactly when descent has not settled in its first round. */
-const MOST_POLISHED = 1000;
+const MOST_POLISHED = 3000;
 
 export function startingState(held: HeldProblem): DescentState {
   return { weights: new Float64Array(held.size), gradient: held.cross.slice(), exact: new ActiveSetSolver() };
