@@ -1,8 +1,9 @@
 import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import supertest from 'supertest';
+import { compose } from '../../service/src/compose';
 import { addRevision, boatColumns } from '../support/record-fixture';
-import { startTestService, testPassword, type TestAgent, type TestService } from '../support/test-service';
+import { fitThreadArguments, startTestService, testPassword, type TestAgent, type TestService } from '../support/test-service';
 
 const inputs = [{ column: 'length overall' }, { column: 'beam' }, { column: 'hull' }];
 const ridge = { target: { column: 'hours' }, inputs, method: 'ridge' };
@@ -154,6 +155,19 @@ describe('fits', () => {
     service.clock.advance(31_000);
     fitRunner.wake();
     expect(await fits.waitFor(id)).toBe('done');
+  });
+
+  it('are run once each when several processes share the database', async () => {
+    const { config, log, knex, fits, fitRunner } = service.services;
+    const second = compose({ config, log, clock: service.clock, sessionCleanupMs: 0, fitThreadArguments });
+    const ids: string[] = [];
+    for (let count = 0; count < 4; count += 1) ids.push(((await start(ridge).expect(202)).body as { id: string }).id);
+    for (const runner of [fitRunner, second.fitRunner, fitRunner, second.fitRunner]) runner.wake();
+    expect(await Promise.all(ids.map((id) => second.fits.waitFor(id)))).toEqual(['done', 'done', 'done', 'done']);
+    await Promise.all(ids.map((id) => fits.waitFor(id)));
+    const done = await knex('journal').where({ action: 'fit-done' }).whereIn('subjectId', ids).select('subjectId');
+    expect(done.map(({ subjectId }) => subjectId as string).sort()).toEqual(ids.sort());
+    await second.close();
   });
 
   it('go back into the queue when the service closes', async () => {

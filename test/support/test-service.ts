@@ -17,6 +17,9 @@ jest.setTimeout(60_000);
 
 export const testPassword = 'grey heron on the slip';
 
+/** A fit's thread reads TypeScript too. */
+export const fitThreadArguments = ['-r', join(__dirname, 'typescript-hook.js')];
+
 /** A clock that stands still until a test moves it. */
 export class TestClock {
   constructor(private time = Date.parse('2026-11-03T09:00:00.000Z')) {}
@@ -63,7 +66,7 @@ export async function startTestService(): Promise<TestService> {
   const config = readConfig({ DATA_DIR: folder, DEMO: 'off', SESSION_SECRET: 'a secret that only the tests know of' });
   await copyTemplateDatabase(databasePathOf(config));
   const clock = new TestClock();
-  const services = compose({ config, log: pino({ level: 'silent' }), clock, validateAnswers: true, sessionCleanupMs: 0, fitThreadArguments: ['-r', join(__dirname, 'typescript-hook.js')] });
+  const services = compose({ config, log: pino({ level: 'silent' }), clock, validateAnswers: true, sessionCleanupMs: 0, fitThreadArguments });
   const app = createApp(services);
 
   async function addPerson(roles: readonly Role[], options: { name?: string; partnerId?: string } = {}): Promise<TestPerson> {

@@ -23,12 +23,10 @@ export function mayBeClaimed(fit: ClaimableFit, view: ClaimView): boolean {
   return view.nowMs - Date.parse(fit.claimedAt) > staleAfterMs || hasEnded(fit.claimedBy, view);
 }
 
-/** Known only of this machine's processes; a process that has our own number is one that we replaced. */
+/** Known only of this machine's processes; a number that is in use again waits until its claim is stale. */
 function hasEnded(claimName: string, view: ClaimView): boolean {
   const [host, processId] = claimName.split(':');
-  const [ownHost, ownProcessId] = view.claimName.split(':');
-  if (host !== ownHost) return false;
-  return processId === ownProcessId || !view.isAlive(Number(processId));
+  return host === view.claimName.split(':')[0] && !view.isAlive(Number(processId));
 }
 
 /** Signal 0 asks only whether the process is there. */
