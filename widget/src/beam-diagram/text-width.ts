@@ -2,11 +2,11 @@
  * Widths of characters in ems, on the wide side of common sans-serif faces: the page's own font is not known when the
  * layout is made, and a layout that leaves a little too much room never overlaps.
  */
-const NARROW = 0.36;
-const WIDE = 0.98;
-const CAPITAL = 0.74;
-const FIGURE = 0.64;
-const OTHER = 0.6;
+const NARROW = 0.34;
+const WIDE = 0.92;
+const CAPITAL = 0.71;
+const FIGURE = 0.62;
+const OTHER = 0.57;
 
 export function textWidth(text: string, fontSize: number): number {
   return [...text].reduce((sum, character) => sum + widthOf(character), 0) * fontSize;
@@ -37,5 +37,5 @@ function widthOf(character: string): number {
   if (/\p{Lu}/u.test(character)) {
     return CAPITAL;
   }
-  return /[\u1100-\uffdc]/u.test(character) ? WIDE * 1.1 : OTHER;
+  return /[\u1100-\uffdc]/u.test(character) ? WIDE * 1.15 : OTHER;
 }

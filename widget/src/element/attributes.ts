@@ -32,7 +32,7 @@ import { knownLocale } from '../format/number-format';
  * | `--tarebeam-ground`    | transparent               | ground of the whole form |
  * | `--tarebeam-accent`    | `#8A5F12`                 | button, focus, pivot |
  * | `--tarebeam-on-accent` | `#FFFFFF`                 | text on the button |
- * | `--tarebeam-error`     | `#9B3A34`                 | wrong entries |
+ * | `--tarebeam-error`     | `#9B3A34` with some ink   | wrong entries |
  * | `--tarebeam-notice`    | `#B07A1E`                 | edge of notices and flags |
  * | `--tarebeam-radius`    | `3px`                     | corners |
  * | `--tarebeam-raises`    | `#D8BC78`                 | weights that raise the estimate, the interval's bar |

@@ -358,3 +358,30 @@ describe('EstimateForm, on the page around', () => {
     document.documentElement.lang = '';
   });
 });
+
+describe('EstimateForm, taking the answer along', () => {
+  afterEach(() => Reflect.deleteProperty(navigator, 'clipboard'));
+
+  async function answer(): Promise<void> {
+    await open();
+    await fillIn();
+    await press('Estimate');
+  }
+
+  it('copies the answer as text', async () => {
+    const copied: string[] = [];
+    const writeText = (copy: string): Promise<void> => Promise.resolve(void copied.push(copy));
+    Object.defineProperty(navigator, 'clipboard', { value: { writeText }, configurable: true });
+    await answer();
+    await press('Copy as text');
+    expect(copied[0]).toContain('Refit labour: 512 hours');
+    expect(copied[0]).toContain('Edition 4, reference e5k2m8q1');
+    expect(text('.said')).toBe('Copied.');
+  });
+
+  it('shows the text to be copied by hand where the browser refuses', async () => {
+    await answer();
+    await press('Copy as text');
+    expect(root().querySelector('textarea')?.value).toContain('Refit labour: 512 hours');
+  });
+});

@@ -54,6 +54,32 @@ describe('fieldsFrom', () => {
     expect(only({ type: 'string', enum: ['a', 'b', 'c', 'd'] })).toMatchObject({ kind: 'choice', shownAs: 'list' });
   });
 
+  it('offers something else where other levels are taken as well', () => {
+    const open = {
+      anyOf: [
+        { type: ['string', 'null'], enum: ['sloop', 'ketch', null] },
+        { type: 'string', maxLength: 200 },
+      ],
+    };
+    expect(only(open)).toMatchObject({
+      kind: 'choice',
+      blank: 'null',
+      options: [
+        { text: 'sloop', value: 'sloop' },
+        { text: 'ketch', value: 'ketch' },
+        { text: 'Something else', value: 'something else' },
+      ],
+    });
+  });
+
+  it.each([
+    [1995.34, 1995],
+    [10.8734, 10.9],
+    [0.012345, 0.0123],
+  ])('gives a plain example near the typical %d', (typical, example) => {
+    expect(only({ type: 'number', 'x-typical': typical })).toMatchObject({ example });
+  });
+
   it('asks yes or no for a boolean', () => {
     expect(only({ type: 'boolean' })).toMatchObject({
       kind: 'choice',

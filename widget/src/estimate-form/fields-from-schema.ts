@@ -7,6 +7,8 @@ type Property = Readonly<Record<string, unknown>>;
 /** Up to this many levels are shown at once, as radio buttons. */
 const MOST_RADIOS = 3;
 const MS_PER_DAY = 86_400_000;
+/** Offered where the estimator also takes levels that its records never held; the desk then marks the estimate. */
+const SOMETHING_ELSE: ChoiceOption = { text: 'Something else', value: 'something else' };
 
 /** The form's fields in the estimator's own order. The schema comes over the network: what is not understood is left aside. */
 export function fieldsFrom(schema: InputSchema): readonly FormField[] {
@@ -23,8 +25,8 @@ export function fieldsFrom(schema: InputSchema): readonly FormField[] {
 }
 
 function fieldFrom(name: string, property: Property, required: boolean): FormField {
-  const types = typesOf(property);
-  const nullable = types.includes('null') || listIn(property, 'enum').includes(null);
+  const types = alternativesOf(property).flatMap(typesOf);
+  const nullable = types.includes('null') || levelsOf(property).includes(null);
   const base = {
     name,
     label: textIn(property, 'title') ?? name,
@@ -59,8 +61,13 @@ function numberParts(
     least,
     greatest: boundOf(property, 'maximum', 'exclusiveMaximum'),
     recorded,
-    example: Number((numberIn(property, 'x-typical') ?? middle).toPrecision(3)),
+    example: exampleFrom(numberIn(property, 'x-typical') ?? middle),
   };
+}
+
+/** A plain figure, near the typical one: three digits, or a whole number for years and the like. */
+function exampleFrom(typical: number): number {
+  return Math.abs(typical) >= 100 ? Math.round(typical) : Number(typical.toPrecision(3));
 }
 
 function typesOf(property: Property): readonly string[] {
@@ -75,9 +82,24 @@ function optionsOf(property: Property, types: readonly string[]): readonly Choic
       { text: 'No', value: false },
     ];
   }
-  return listIn(property, 'enum').flatMap((value) =>
+  const known = levelsOf(property).flatMap((value) =>
     isText(value) || typeof value === 'number' || typeof value === 'boolean' ? [{ text: String(value), value }] : [],
   );
+  return known.length > 0 && isOpen(property) ? [...known, SOMETHING_ELSE] : known;
+}
+
+/** A category that is open to other levels is written as a choice between its levels and any text. */
+function alternativesOf(property: Property): readonly Property[] {
+  return [property, ...[...listIn(property, 'anyOf'), ...listIn(property, 'oneOf')].filter(isObject)];
+}
+
+function levelsOf(property: Property): readonly unknown[] {
+  return alternativesOf(property).flatMap((alternative) => listIn(alternative, 'enum'));
+}
+
+function isOpen(property: Property): boolean {
+  const [, ...alternatives] = alternativesOf(property);
+  return alternatives.some((alternative) => !('enum' in alternative) && typesOf(alternative).includes('string'));
 }
 
 function boundOf(property: Property, inclusive: string, exclusive: string): Bound | null {
