@@ -49,7 +49,11 @@ function inputWords(schema: InputSchema | undefined): ReadonlyMap<string, InputW
 
 function wordsOf(input: Record<string, unknown>, place: number): InputWords {
   const order = input['x-order'];
-  return { label: textOf(input['title']), unit: textOf(input['x-unit']), order: typeof order === 'number' ? order : place };
+  return {
+    label: textOf(input['title']),
+    unit: textOf(input['x-unit']),
+    order: typeof order === 'number' ? order : place,
+  };
 }
 
 function textOf(value: unknown): string | undefined {

@@ -48,6 +48,8 @@ export class EstimatePage {
     const record = this.estimate.value();
     return record ? caseRows(record, this.edition.value()?.inputSchema) : [];
   });
-  protected readonly caseTexts = computed(() => Object.fromEntries(this.rows().map(({ input, text }) => [input, text])));
+  protected readonly caseTexts = computed(() =>
+    Object.fromEntries(this.rows().map(({ input, text }) => [input, text])),
+  );
   protected readonly notFound = computed(() => this.estimate.problem()?.status === 404);
 }

@@ -17,5 +17,7 @@ export function passwordComplaint(password: string): string | undefined {
   const length = lengthOf(password);
   if (length === 0) return 'Enter a password';
   if (length < LEAST_CHARACTERS) return `Make it longer: it has ${length} of at least ${LEAST_CHARACTERS} characters`;
-  return length > MOST_CHARACTERS ? `Make it shorter: it has ${length} of at most ${MOST_CHARACTERS} characters` : undefined;
+  return length > MOST_CHARACTERS
+    ? `Make it shorter: it has ${length} of at most ${MOST_CHARACTERS} characters`
+    : undefined;
 }

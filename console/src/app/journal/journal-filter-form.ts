@@ -38,7 +38,8 @@ export class JournalFilterForm {
   protected submit(): void {
     const { fromDay, toDay } = this.draft();
     const reversed = fromDay !== '' && toDay !== '' && toDay < fromDay;
-    if (this.form.accept({ toDay: reversed ? 'The last day lies before the first' : undefined })) this.wanted.emit(this.draft());
+    if (this.form.accept({ toDay: reversed ? 'The last day lies before the first' : undefined }))
+      this.wanted.emit(this.draft());
   }
 }
 

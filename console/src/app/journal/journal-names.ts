@@ -1,6 +1,7 @@
 /** Names of the service's journal that can be chosen on screen; one that is not here is still shown and found by address. */
 
 export const ACTIONS: readonly string[] = [
+  'person-entered',
   'person-invited',
   'invitation-accepted',
   'person-changed',
@@ -10,7 +11,7 @@ export const ACTIONS: readonly string[] = [
   'partner-entered',
   'partner-changed',
   'site-listed',
-  'site-taken-off',
+  'site-removed',
   'key-issued',
   'key-revoked',
   'record-set-created',
@@ -18,13 +19,25 @@ export const ACTIONS: readonly string[] = [
   'estimator-created',
   'estimator-changed',
   'fit-started',
+  'fit-done',
+  'fit-failed',
   'fit-cancelled',
-  'edition-drafted',
+  'edition-drawn-up',
   'edition-submitted',
   'edition-put-in-force',
   'edition-sent-back',
+  'edition-superseded',
   'edition-withdrawn',
-  'settings-changed',
+  'setting-changed',
 ];
 
-export const SUBJECT_KINDS: readonly string[] = ['person', 'partner', 'site', 'key', 'record-set', 'estimator', 'fit', 'edition', 'settings'];
+export const SUBJECT_KINDS: readonly string[] = [
+  'person',
+  'partner',
+  'key',
+  'record-set',
+  'estimator',
+  'fit',
+  'edition',
+  'setting',
+];

@@ -41,7 +41,9 @@ export class JournalPage {
   protected readonly filtered = computed(() => isFiltered(this.query()));
   protected readonly limit = ROWS_A_PAGE;
 
-  protected readonly journal = load(() => this.client.list(filterOf(this.query(), { limit: ROWS_A_PAGE, offset: this.firstRow() })));
+  protected readonly journal = load(() =>
+    this.client.list(filterOf(this.query(), { limit: ROWS_A_PAGE, offset: this.firstRow() })),
+  );
 
   protected filterBy(query: JournalQuery): void {
     void this.router.navigate([], { queryParams: addressOf(query) });

@@ -10,17 +10,36 @@ export interface JournalQuery {
   readonly toDay: string;
 }
 
-export const EMPTY_QUERY: JournalQuery = { action: '', actorId: '', subjectKind: '', subjectId: '', fromDay: '', toDay: '' };
+export const EMPTY_QUERY: JournalQuery = {
+  action: '',
+  actorId: '',
+  subjectKind: '',
+  subjectId: '',
+  fromDay: '',
+  toDay: '',
+};
 
-/** Both days belong to the span, and begin and end where the reader is. */
-export function filterOf(query: JournalQuery, page: { readonly limit: number; readonly offset: number }): JournalFilter {
+/** Both days belong to the span, and begin and end where the reader is. The service bounds as from ≤ at < to. */
+export function filterOf(
+  query: JournalQuery,
+  page: { readonly limit: number; readonly offset: number },
+): JournalFilter {
   const { action, actorId, subjectKind, subjectId } = query;
-  return { action, actorId, subjectKind, subjectId, from: timeOf(query.fromDay, '00:00:00'), to: timeOf(query.toDay, '23:59:59.999'), ...page };
+  return {
+    action,
+    actorId,
+    subjectKind,
+    subjectId,
+    from: startOf(query.fromDay, 0),
+    to: startOf(query.toDay, 1),
+    ...page,
+  };
 }
 
 /** Undefined for no day, and for an address that somebody mistyped. */
-function timeOf(day: string, time: string): string | undefined {
-  const moment = new Date(`${day}T${time}`);
+function startOf(day: string, daysLater: number): string | undefined {
+  const moment = new Date(`${day}T00:00:00`);
+  moment.setDate(moment.getDate() + daysLater);
   return Number.isNaN(moment.getTime()) ? undefined : moment.toISOString();
 }
 

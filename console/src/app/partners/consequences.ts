@@ -19,7 +19,11 @@ export function siteConsequences(site: Site, sites: readonly Site[], keys: reado
 }
 
 export function keyConsequences(key: Key, sites: readonly Site[]): readonly string[] {
-  return [key.kind === 'embed' ? pagesOf(sites) : 'Every call that a server makes with this key is refused at once.', useOf(key), 'This cannot be taken back. To change over without a break, issue a new key first.'];
+  return [
+    key.kind === 'embed' ? pagesOf(sites) : 'Every call that a server makes with this key is refused at once.',
+    useOf(key),
+    'This cannot be taken back. To change over without a break, issue a new key first.',
+  ];
 }
 
 function pagesOf(sites: readonly Site[]): string {

@@ -39,7 +39,9 @@ export class IssuedKey {
   protected readonly estimators = computed<readonly Callable[]>(() => {
     const scope = this.issued().details.estimators;
     const listed = this.list.value() ?? [];
-    return scope === 'all' ? listed : scope.map((slug) => listed.find((estimator) => estimator.slug === slug) ?? { slug, name: slug });
+    return scope === 'all'
+      ? listed
+      : scope.map((slug) => listed.find((estimator) => estimator.slug === slug) ?? { slug, name: slug });
   });
   protected readonly slug = linkedSignal(() => this.estimators()[0]?.slug);
   protected readonly isEmbed = computed(() => this.issued().details.kind === 'embed');

@@ -20,7 +20,13 @@ describe('drafting a key', () => {
   });
 
   it('sends the estimators chosen, the quota and the end of the last day', () => {
-    const key = keyOf({ ...draft, scope: 'chosen', chosen: ['refit-labour'], monthlyQuota: '20,000', lastDay: '2027-03-31' });
+    const key = keyOf({
+      ...draft,
+      scope: 'chosen',
+      chosen: ['refit-labour'],
+      monthlyQuota: '20,000',
+      lastDay: '2027-03-31',
+    });
     expect(key).toMatchObject({ estimators: ['refit-labour'], monthlyQuota: 20_000 });
     expect(new Date(key?.expiresAt ?? '')).toEqual(new Date(2027, 2, 31, 23, 59, 59));
   });

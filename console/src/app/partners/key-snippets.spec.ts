@@ -4,7 +4,9 @@ const place = { service: 'https://desk.example', key: 'tb_partner_abc' };
 
 describe('snippets for a new key', () => {
   it('lists what the key may call', () => {
-    expect(listCommand(place)).toBe("curl https://desk.example/v1/estimators \\\n  --header 'X-Api-Key: tb_partner_abc'");
+    expect(listCommand(place)).toBe(
+      "curl https://desk.example/v1/estimators \\\n  --header 'X-Api-Key: tb_partner_abc'",
+    );
   });
 
   it('asks for one estimate with the case as JSON', () => {

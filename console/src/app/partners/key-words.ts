@@ -13,8 +13,3 @@ export const KEY_STAMPS: Readonly<Record<Key['state'], Stamp>> = {
   expired: { word: 'Expired', tone: 'past' },
   revoked: { word: 'Revoked', tone: 'bad' },
 };
-
-/** What a key may call, as one line. */
-export function scopeWords(scope: Key['estimators']): string {
-  return scope === 'all' ? 'Every estimator' : scope.join(', ');
-}

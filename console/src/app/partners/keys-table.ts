@@ -4,7 +4,7 @@ import { CountPipe } from '../ui/figure-pipes';
 import { DayPipe, MomentPipe } from '../ui/moment-pipes';
 import { StatusStamp } from '../ui/status-stamp';
 import { TableBox } from '../ui/table-box';
-import { KEY_KIND_NAMES, KEY_STAMPS, scopeWords } from './key-words';
+import { KEY_KIND_NAMES, KEY_STAMPS } from './key-words';
 
 @Component({
   selector: 'tb-keys-table',
@@ -19,5 +19,4 @@ export class KeysTable {
 
   protected readonly kindNames = KEY_KIND_NAMES;
   protected readonly stamps = KEY_STAMPS;
-  protected readonly scopeWords = scopeWords;
 }

@@ -14,9 +14,12 @@ describe('reading an origin', () => {
     expect(readOrigin('http://localhost:4301')).toEqual({ origin: 'http://localhost:4301' });
   });
 
-  it.each(['https://www.partner.example/boats', 'https://www.partner.example/?page=2', 'https://www.partner.example/#form'])(
-    'refuses %s with the origin it would come to',
-    (text) => expect(complaintOf(text)).toContain('https://www.partner.example'),
+  it.each([
+    'https://www.partner.example/boats',
+    'https://www.partner.example/?page=2',
+    'https://www.partner.example/#form',
+  ])('refuses %s with the origin it would come to', (text) =>
+    expect(complaintOf(text)).toContain('https://www.partner.example'),
   );
 
   it('refuses a name without a scheme, saying what to begin with', () => {

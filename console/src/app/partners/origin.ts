@@ -10,11 +10,14 @@ const EXAMPLE = 'https://www.partner.example';
 export function readOrigin(text: string): OriginReading {
   const typed = text.trim();
   if (typed === '') return { complaint: `Enter the site’s origin, such as ${EXAMPLE}` };
-  if (typed.includes('*')) return { complaint: 'List each host by its full name: a pattern such as *.partner.example lets nothing in.' };
+  if (typed.includes('*'))
+    return { complaint: 'List each host by its full name: a pattern such as *.partner.example lets nothing in.' };
   if (!/^https?:\/\//i.test(typed)) return { complaint: `Begin with https://, such as ${EXAMPLE}` };
   const url = parsed(typed);
   if (url === undefined) return { complaint: `This is not an address a browser could open. Write it as ${EXAMPLE}` };
-  return hasMoreThanOrigin(url) ? { complaint: `Leave out everything after the host and port: ${url.origin}` } : { origin: url.origin };
+  return hasMoreThanOrigin(url)
+    ? { complaint: `Leave out everything after the host and port: ${url.origin}` }
+    : { origin: url.origin };
 }
 
 function parsed(text: string): URL | undefined {

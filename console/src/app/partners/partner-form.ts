@@ -31,7 +31,10 @@ export class PartnerForm implements OnInit {
   }
 
   protected submit(): void {
-    const complaints = { name: nameComplaint(this.name(), 'the partner’s name'), contactEmail: emailComplaint(this.contactEmail()) };
+    const complaints = {
+      name: nameComplaint(this.name(), 'the partner’s name'),
+      contactEmail: emailComplaint(this.contactEmail()),
+    };
     if (!this.form.accept(complaints)) return;
     const entry = { name: this.name().trim(), contactEmail: this.contactEmail().trim() };
     const partner = this.partner();

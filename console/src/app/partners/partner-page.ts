@@ -21,7 +21,17 @@ const PARTNERS: ParentLink = { label: 'Partners', link: '/partners' };
 /** A partner's sheet: for the desk, and for the partner's own developers. */
 @Component({
   selector: 'tb-partner-page',
-  imports: [CountPipe, DayPipe, LoadingState, PartnerForm, PartnerKeys, PartnerSites, ProblemNotice, Sheet, SheetSection],
+  imports: [
+    CountPipe,
+    DayPipe,
+    LoadingState,
+    PartnerForm,
+    PartnerKeys,
+    PartnerSites,
+    ProblemNotice,
+    Sheet,
+    SheetSection,
+  ],
   templateUrl: './partner-page.html',
   styleUrl: './partner-page.scss',
 })

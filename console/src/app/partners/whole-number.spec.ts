@@ -3,7 +3,11 @@ import { readWholeNumber } from './whole-number';
 const perMinute = { noun: 'Calls a minute', most: 100_000, optional: false };
 
 describe('reading a whole number', () => {
-  it.each([['60', 60], ['20,000', 20_000], [' 20 000 ', 20_000]])('reads %p as %p', (text, value) => {
+  it.each([
+    ['60', 60],
+    ['20,000', 20_000],
+    [' 20 000 ', 20_000],
+  ])('reads %p as %p', (text, value) => {
     expect(readWholeNumber(text, perMinute)).toEqual({ value });
   });
 

@@ -14,19 +14,21 @@ import { ROLES } from './role-words';
   imports: [FocusHere, FormsModule, ProblemNotice, RoleChoice],
   template: `
     <form class="tb-form" novalidate (ngSubmit)="submit()">
-      <h3 tabindex="-1" tbFocusHere>Roles of {{ person().name }}</h3>
+      <h2 tabindex="-1" tbFocusHere>Roles of {{ person().name }}</h2>
       <tb-role-choice [(roles)]="roles" [offered]="offered" [error]="form.errorOf('roles')" />
       @if (form.problem(); as problem) {
         <tb-problem-notice [problem]="problem" [canRetry]="false" />
       }
       <div class="tb-actions">
-        <button type="submit" class="tb-button" [attr.aria-disabled]="form.underWay() ? true : null">Keep the roles</button>
+        <button type="submit" class="tb-button" [attr.aria-disabled]="form.underWay() ? true : null">
+          Keep the roles
+        </button>
         <button type="button" class="tb-plain-button" (click)="cancelled.emit()">Cancel</button>
       </div>
     </form>
   `,
   styles: `
-    h3 {
+    h2 {
       font: var(--tb-type-body-strong);
 
       &:focus {
@@ -50,6 +52,8 @@ export class ChangeRoles {
 
   protected submit(): void {
     if (!this.form.accept({ roles: this.complaint() })) return;
-    this.form.send(this.people.change(this.person().id, { roles: [...this.roles()] }), (person) => this.changed.emit(person));
+    this.form.send(this.people.change(this.person().id, { roles: [...this.roles()] }), (person) =>
+      this.changed.emit(person),
+    );
   }
 }

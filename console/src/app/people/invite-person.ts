@@ -14,6 +14,7 @@ import { RoleChoice } from './role-choice';
   selector: 'tb-invite-person',
   imports: [Field, FieldInput, FocusHere, FormsModule, ProblemNotice, RoleChoice],
   templateUrl: './invite-person.html',
+  styleUrl: './invite-person.scss',
 })
 export class InvitePerson {
   private readonly people = inject(PeopleClient);

@@ -27,7 +27,10 @@ export class DeskForm {
 
   protected submit(): void {
     this.kept.set(false);
-    const complaints = { deskName: nameComplaint(this.deskName(), 'the desk’s name'), contactEmail: emailComplaint(this.contactEmail()) };
+    const complaints = {
+      deskName: nameComplaint(this.deskName(), 'the desk’s name'),
+      contactEmail: emailComplaint(this.contactEmail()),
+    };
     if (!this.form.accept(complaints)) return;
     const request = this.client.change({ deskName: this.deskName().trim(), contactEmail: this.contactEmail().trim() });
     this.form.send(request, (settings) => this.keep(settings));

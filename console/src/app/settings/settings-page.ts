@@ -22,7 +22,12 @@ export class SettingsPage {
 
   protected readonly settings = load(() => this.client.read());
   protected readonly person = this.session.person;
-  protected readonly roles = computed(() => this.session.roles().map((role) => ROLE_NAMES[role]).join(', '));
+  protected readonly roles = computed(() =>
+    this.session
+      .roles()
+      .map((role) => ROLE_NAMES[role])
+      .join(', '),
+  );
   protected readonly mayChange = computed(() => this.session.holds('administrator'));
 
   protected changed(settings: Settings): void {
