@@ -6,6 +6,10 @@ import { compose, type Services } from './compose';
 import { ConfigurationError, readConfig, type Config } from './config';
 import { migrationsFolder } from './database/migrations-folder';
 import { migrate } from './database/migrator';
+import { announcement } from './demonstration/announcement';
+import { ensureDemonstration } from './demonstration/demonstration';
+import type { DemonstrationNote } from './demonstration/note';
+import { listPartnerPage } from './demonstration/partner-page-site';
 import { createPartnerPage } from './partner-page/partner-page';
 import { enterFirstAdministrator } from './people/first-administrator';
 import { welcome } from './welcome';
@@ -14,7 +18,11 @@ async function listen(app: Express, port: number, variable: string): Promise<Ser
   const server = createServer(app);
   return new Promise((resolve, reject) => {
     server.once('error', (error: NodeJS.ErrnoException) =>
-      reject(error.code === 'EADDRINUSE' ? new ConfigurationError(variable, String(port), 'a port that no other program uses') : error),
+      reject(
+        error.code === 'EADDRINUSE'
+          ? new ConfigurationError(variable, String(port), 'a port that no other program uses')
+          : error,
+      ),
     );
     server.listen(port, () => resolve(server));
   });
@@ -35,9 +43,10 @@ function stopOnSignal(servers: readonly Server[], services: Services): void {
   }
 }
 
-async function open(config: Config, services: Services): Promise<void> {
+async function open(config: Config, services: Services, demonstration: DemonstrationNote | null): Promise<void> {
   await migrate(services.knex, migrationsFolder);
   if (!config.demonstration) await enterFirstAdministrator({ ...services, administrator: config.administrator });
+  if (demonstration) await listPartnerPage(services, demonstration);
   services.fitRunner.open();
   services.schedule.start();
 }
@@ -45,14 +54,17 @@ async function open(config: Config, services: Services): Promise<void> {
 async function start(): Promise<void> {
   const config = readConfig(process.env);
   const log = pino({ level: config.logLevel });
+  const tell = (line: string): void => console.log(`  ${line}`);
+  const demonstration = config.demonstration ? await ensureDemonstration({ config, log, now: new Date(), tell }) : null;
   const services = compose({ config, log });
-  await open(config, services);
+  await open(config, services, demonstration);
   const servers = [
     await listen(createApp(services), config.port, 'PORT'),
     await listen(createPartnerPage(config), config.partnerPagePort, 'PARTNER_PAGE_PORT'),
   ];
   stopOnSignal(servers, services);
   console.log(welcome(config));
+  if (demonstration) console.log(announcement(config, demonstration));
 }
 
 start().catch((error: unknown) => {

@@ -1,7 +1,7 @@
 import type { components } from '../../../openapi/types/desk';
 import { enterPerson } from './cast';
 import type { PartnerPart } from './asked-cases';
-import type { Stage, Step } from './stage';
+import { on, type Stage, type Step } from './stage';
 
 type KeyNew = components['schemas']['KeyNew'];
 
@@ -37,47 +37,50 @@ async function enterPartner(stage: Stage, scene: PartnerScene): Promise<void> {
   });
 }
 
+const northquay: PartnerScene = {
+  part: 'northquay',
+  name: 'Northquay Moorings',
+  contactEmail: 'office@northquay.example',
+  developer: { name: 'Petra Lunn', email: 'petra.lunn@northquay.example' },
+  sites: [],
+  key: { kind: 'partner', label: 'Booking server', estimators: 'all', perMinute: 120, monthlyQuota: 20_000 },
+};
+
+const pellTarn: PartnerScene = {
+  part: 'pellTarn',
+  name: 'Pell & Tarn Brokers',
+  contactEmail: 'desk@pelltarn.example',
+  developer: { name: 'Sam Orrell', email: 'sam.orrell@pelltarn.example' },
+  sites: ['https://www.pelltarn.example'],
+  key: {
+    kind: 'embed',
+    label: 'Form on the boats’ pages',
+    estimators: ['refit-labour'],
+    perMinute: 60,
+    monthlyQuota: 5000,
+  },
+};
+
+const outerShoal: PartnerScene = {
+  part: 'outerShoal',
+  name: 'Outer Shoal Insurance Mutual',
+  contactEmail: 'claims@outershoal.example',
+  developer: { name: 'Dara Finch', email: 'dara.finch@outershoal.example' },
+  sites: [],
+  key: {
+    kind: 'partner',
+    label: 'Monthly portfolio',
+    estimators: ['refit-labour'],
+    perMinute: 600,
+    monthlyQuota: 2000,
+  },
+};
+
 /** A server that calls, a page that embeds, a portfolio that comes in batches. */
 export function partnerSteps(stage: Stage, partnerPageUrl: string): Step[] {
-  const northquay: PartnerScene = {
-    part: 'northquay',
-    name: 'Northquay Moorings',
-    contactEmail: 'office@northquay.example',
-    developer: { name: 'Petra Lunn', email: 'petra.lunn@northquay.example' },
-    sites: [],
-    key: { kind: 'partner', label: 'Booking server', estimators: 'all', perMinute: 120, monthlyQuota: 20_000 },
-  };
-  const pellTarn: PartnerScene = {
-    part: 'pellTarn',
-    name: 'Pell & Tarn Brokers',
-    contactEmail: 'desk@pelltarn.example',
-    developer: { name: 'Sam Orrell', email: 'sam.orrell@pelltarn.example' },
-    sites: ['https://www.pelltarn.example', partnerPageUrl],
-    key: {
-      kind: 'embed',
-      label: 'Form on the boats’ pages',
-      estimators: ['refit-labour'],
-      perMinute: 60,
-      monthlyQuota: 5000,
-    },
-  };
-  const outerShoal: PartnerScene = {
-    part: 'outerShoal',
-    name: 'Outer Shoal Insurance Mutual',
-    contactEmail: 'claims@outershoal.example',
-    developer: { name: 'Dara Finch', email: 'dara.finch@outershoal.example' },
-    sites: [],
-    key: {
-      kind: 'partner',
-      label: 'Monthly portfolio',
-      estimators: ['refit-labour'],
-      perMinute: 600,
-      monthlyQuota: 2000,
-    },
-  };
   return [
-    { daysAgo: 405, at: '10:50', act: () => enterPartner(stage, northquay) },
-    { daysAgo: 350, at: '14:15', act: () => enterPartner(stage, pellTarn) },
-    { daysAgo: 333, at: '09:00', act: () => enterPartner(stage, outerShoal) },
+    on(405, '10:50', () => enterPartner(stage, northquay)),
+    on(350, '14:15', () => enterPartner(stage, { ...pellTarn, sites: [...pellTarn.sites, partnerPageUrl] })),
+    on(333, '09:00', () => enterPartner(stage, outerShoal)),
   ];
 }

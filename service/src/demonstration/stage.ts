@@ -16,6 +16,22 @@ export interface Step {
   act(): Promise<void>;
 }
 
+export interface FitScene {
+  readonly slug: string;
+  /** What later steps call the fit by. */
+  readonly name: string;
+  readonly revision: string;
+  readonly specification: Specification;
+}
+
+export interface EditionScene {
+  readonly slug: string;
+  readonly name: string;
+  readonly changeNote: string;
+}
+
+export const on = (daysAgo: number, at: string, act: () => Promise<void>): Step => ({ daysAgo, at, act });
+
 /**
  * Where the demonstration is played: the real services, the people, and what was made so far under the names that later
  * steps call it by.
@@ -43,26 +59,19 @@ export class Stage {
   }
 
   /** Starts a fit and waits for its end; a demonstration with a failed fit would be none. */
-  async fit(
-    by: SignedInPerson,
-    slug: string,
-    name: string,
-    revision: string,
-    specification: Specification,
-  ): Promise<void> {
-    const { id } = await this.services.fits.start(by, slug, {
-      revisionId: required(this.revisions, revision),
-      specification,
-    });
-    const state = await this.services.fits.waitFor(id);
-    if (state !== 'done')
-      throw new Error(
-        `The demonstration's fit ${name} ended as ${state}: ${JSON.stringify((await this.services.fits.read(id)).failure)}`,
-      );
+  async fit(by: SignedInPerson, { slug, name, revision, specification }: FitScene): Promise<void> {
+    const { fits } = this.services;
+    const { id } = await fits.start(by, slug, { revisionId: required(this.revisions, revision), specification });
+    const state = await fits.waitFor(id);
+    if (state !== 'done') {
+      const { failure } = await fits.read(id);
+      throw new Error(`The demonstration's fit ${name} ended as ${state}: ${failure?.message ?? 'no reason given'}`);
+    }
     this.fits.set(name, id);
   }
 
-  async drawUp(by: SignedInPerson, slug: string, name: string, changeNote: string): Promise<void> {
+  /** A draft from the fit of the same name. */
+  async drawUp(by: SignedInPerson, { slug, name, changeNote }: EditionScene): Promise<void> {
     const edition = await this.services.editions.drawUp(by, slug, { fitId: required(this.fits, name), changeNote });
     this.editions.set(name, edition.id);
   }
