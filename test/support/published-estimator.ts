@@ -33,14 +33,21 @@ export interface Desk {
 
 /** An estimator with one fit that is done, and the people who go on from there. */
 export async function openDesk(service: TestService): Promise<Desk> {
-  const [analyst, reviewer, administrator] = [await service.as('analyst'), await service.as('reviewer'), await service.as('administrator')];
+  const [analyst, reviewer, administrator] = [
+    await service.as('analyst'),
+    await service.as('reviewer'),
+    await service.as('administrator'),
+  ];
   await analyst.post('/api/estimators').send(refitLabour).expect(201);
   return { analyst, reviewer, administrator, fitId: await addFit(service, analyst, boatSpecification) };
 }
 
 export async function addFit(service: TestService, analyst: TestAgent, specification: object): Promise<string> {
   const revisionId = await addRevision(service, analyst.person, boatColumns());
-  const fit = await analyst.post(`/api/estimators/${refitLabour.slug}/fits`).send({ revisionId, specification }).expect(202);
+  const fit = await analyst
+    .post(`/api/estimators/${refitLabour.slug}/fits`)
+    .send({ revisionId, specification })
+    .expect(202);
   const state = await service.services.fits.waitFor(fit.body.id as string);
   if (state !== 'done') throw new Error(`The fit is ${state}.`);
   return fit.body.id as string;
@@ -48,7 +55,10 @@ export async function addFit(service: TestService, analyst: TestAgent, specifica
 
 /** Draws an edition up, submits it and puts it in force. Gives its id. */
 export async function putInForce({ analyst, reviewer }: Desk, fitId: string): Promise<string> {
-  const draft = await analyst.post(`/api/estimators/${refitLabour.slug}/editions`).send({ fitId, changeNote: 'Drawn up for a test.' }).expect(201);
+  const draft = await analyst
+    .post(`/api/estimators/${refitLabour.slug}/editions`)
+    .send({ fitId, changeNote: 'Drawn up for a test.' })
+    .expect(201);
   const { id } = draft.body as { id: string };
   await analyst.post(`/api/editions/${id}/submit`).expect(200);
   await reviewer.post(`/api/editions/${id}/put-in-force`).expect(200);
@@ -60,7 +70,14 @@ export async function addPartner(service: TestService, by: TestPerson, origin: s
   const { knex } = service.services;
   const id = `partner${Math.random().toString(36).slice(2, 10)}`.padEnd(16, '0');
   const at = service.clock.now().toISOString();
-  await knex('partners').insert({ id, name: `Partner ${id}`, nameKey: id, contactEmail: 'yard@partner.example', createdAt: at, createdBy: by.id });
+  await knex('partners').insert({
+    id,
+    name: `Partner ${id}`,
+    nameKey: id,
+    contactEmail: 'yard@partner.example',
+    createdAt: at,
+    createdBy: by.id,
+  });
   await knex('partnerSites').insert({ id: `site${id}`, partnerId: id, origin, createdAt: at });
   return id;
 }

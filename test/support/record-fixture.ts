@@ -30,30 +30,73 @@ interface StoredColumn {
 
 function stored(column: FixtureColumn): StoredColumn {
   if ('codes' in column) {
-    const levels = column.levels.map((value, code) => ({ value, count: column.codes.filter((other) => other === code).length }));
+    const levels = column.levels.map((value, code) => ({
+      value,
+      count: column.codes.filter((other) => other === code).length,
+    }));
     const missingCount = column.codes.filter((code) => code < 0).length;
-    return { kind: 'category', unit: null, missingCount, minimum: null, maximum: null, levels, cells: codesToCells(Int32Array.from(column.codes)) };
+    return {
+      kind: 'category',
+      unit: null,
+      missingCount,
+      minimum: null,
+      maximum: null,
+      levels,
+      cells: codesToCells(Int32Array.from(column.codes)),
+    };
   }
   const given = column.values.filter((value) => !Number.isNaN(value));
   const [minimum, maximum] = given.length > 0 ? [Math.min(...given), Math.max(...given)] : [null, null];
   const missingCount = column.values.length - given.length;
-  return { kind: 'numeric', unit: column.unit ?? null, missingCount, minimum, maximum, levels: [], cells: numbersToCells(Float64Array.from(column.values)) };
+  return {
+    kind: 'numeric',
+    unit: column.unit ?? null,
+    missingCount,
+    minimum,
+    maximum,
+    levels: [],
+    cells: numbersToCells(Float64Array.from(column.values)),
+  };
 }
 
 /** A revision of a new record set, as an upload leaves it. Gives its id. */
-export async function addRevision(service: TestService, person: TestPerson, columns: readonly FixtureColumn[]): Promise<string> {
+export async function addRevision(
+  service: TestService,
+  person: TestPerson,
+  columns: readonly FixtureColumn[],
+): Promise<string> {
   const { knex } = service.services;
   const at = service.clock.now().toISOString();
   const [recordSetId, id] = [newId(), newId()];
   const rowCount = 'codes' in columns[0] ? columns[0].codes.length : columns[0].values.length;
   const by = { createdAt: at, createdBy: person.id };
   await knex('recordSets').insert({ id: recordSetId, name: `Records ${id}`, nameKey: id, description: '', ...by });
-  const file = { sha256: createHash('sha256').update(id).digest('hex'), byteCount: 1, fileName: 'records.csv', originalPath: 'records.csv' };
+  const file = {
+    sha256: createHash('sha256').update(id).digest('hex'),
+    byteCount: 1,
+    fileName: 'records.csv',
+    originalPath: 'records.csv',
+  };
   const reading = JSON.stringify({ encoding: 'utf-8', delimiter: ',', decimal: '.', header: true });
-  await knex('recordRevisions').insert({ id, recordSetId, number: 1, rowCount, columnCount: columns.length, reading, ...file, ...by });
+  await knex('recordRevisions').insert({
+    id,
+    recordSetId,
+    number: 1,
+    rowCount,
+    columnCount: columns.length,
+    reading,
+    ...file,
+    ...by,
+  });
   for (const [position, column] of columns.entries()) {
     const { cells, levels, ...facts } = stored(column);
-    await knex('recordColumns').insert({ revisionId: id, position, name: column.name, levels: JSON.stringify(levels), ...facts });
+    await knex('recordColumns').insert({
+      revisionId: id,
+      position,
+      name: column.name,
+      levels: JSON.stringify(levels),
+      ...facts,
+    });
     await knex('recordBlocks').insert({ revisionId: id, position, block: 0, rowCount, cells });
   }
   return id;
@@ -83,6 +126,10 @@ export function boatColumns(rowCount = 120): FixtureColumn[] {
     { name: 'length overall', unit: 'm', values: lengths },
     { name: 'beam', unit: 'm', values: beams },
     { name: 'hull', levels: hulls, codes },
-    { name: 'ballast', unit: 't', values: lengths.map((length, row) => (row % 9 === 4 ? NaN : length / 4 + noise[row])) },
+    {
+      name: 'ballast',
+      unit: 't',
+      values: lengths.map((length, row) => (row % 9 === 4 ? NaN : length / 4 + noise[row])),
+    },
   ];
 }
