@@ -199,7 +199,7 @@ describe('records become a form on a partner’s page', () => {
     expect(await ada.getByText('Fernside Growers').count()).toBeGreaterThan(0);
   });
 
-  step('no key was written to the service’s output', () => {
+  step('no key was written to the service’s output', async () => {
     expect(service.output()).not.toContain(partnerKey);
     expect(service.output()).not.toContain(embedKey);
   });
