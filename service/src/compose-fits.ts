@@ -6,7 +6,8 @@ import { FitsStore } from './fits/fits-store';
 import { ProgressFeed } from './fits/progress-feed';
 import { RevisionFactsStore } from './fits/revision-facts-store';
 
-type Given = Omit<FitsParts, 'fits' | 'revisions' | 'runner' | 'feed'> & Omit<FitRunnerParts, 'queue' | 'feed' | 'settlement'>;
+type Given = Omit<FitsParts, 'fits' | 'revisions' | 'runner' | 'feed'> &
+  Omit<FitRunnerParts, 'queue' | 'feed' | 'settlement'>;
 
 export interface FitsRoom {
   readonly fits: FitsService;
@@ -23,5 +24,9 @@ export function composeFits(given: Given): FitsRoom {
   const settlement = new FitSettlement({ ...given, queue, feed });
   const fitRunner = new FitRunner({ ...given, queue, feed, settlement });
   const revisions = new RevisionFactsStore(given.database);
-  return { fits: new FitsService({ ...given, fits: fitsStore, revisions, runner: fitRunner, feed }), fitRunner, fitsStore };
+  return {
+    fits: new FitsService({ ...given, fits: fitsStore, revisions, runner: fitRunner, feed }),
+    fitRunner,
+    fitsStore,
+  };
 }

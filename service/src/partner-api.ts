@@ -13,14 +13,21 @@ import { recogniseKey } from './keys/key-passport';
 /** What partners call: `/v1`. The order is the point: who asks, from where, how often, and only then what. */
 export function createPartnerApi(services: Services): Router {
   const { keys, log, config } = services;
-  const routes = new ContractRoutes<operations>(services.partnerContract, { guard: keyGuard, validateAnswers: services.validateAnswers });
+  const routes = new ContractRoutes<operations>(services.partnerContract, {
+    guard: keyGuard,
+    validateAnswers: services.validateAnswers,
+  });
   mountPartnerEstimates(routes, { published: services.publishedEstimators, estimates: services.estimates });
   routes.requireComplete();
   routes.refuseOtherMethods();
 
   const router = express.Router();
   router.use(noStore, openToOtherOrigins, answerListedOrigins({ keys, log }));
-  router.use(limitRefusals(recogniseKey(keys)), requireListedOrigin({ keys, log, publicUrl: config.publicUrl }), limitPerKey());
+  router.use(
+    limitRefusals(recogniseKey(keys)),
+    requireListedOrigin({ keys, log, publicUrl: config.publicUrl }),
+    limitPerKey(),
+  );
   router.use(express.json({ limit: '1mb' }), routes.router, noSuchAddress);
   return router;
 }

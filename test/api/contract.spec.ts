@@ -17,7 +17,8 @@ interface Found {
 function routesOf(layers: readonly Layer[], above: string): Found[] {
   return layers.flatMap((layer) => {
     if (layer.route) {
-      const path = layer.route.path instanceof RegExp ? String(layer.route.path) : `${above}${String(layer.route.path)}`;
+      const path =
+        layer.route.path instanceof RegExp ? String(layer.route.path) : `${above}${String(layer.route.path)}`;
       return Object.keys(layer.route.methods).map((method) => ({ method, path }));
     }
     const own = layer.rawPath === '/' ? '' : String(layer.rawPath);
@@ -40,7 +41,8 @@ describe('the contract', () => {
   });
   afterAll(() => service.close());
 
-  const listed = (contract: Contract, base: string): string[] => contract.operations.map(({ method, path }) => named({ method, path: base + path })).sort();
+  const listed = (contract: Contract, base: string): string[] =>
+    contract.operations.map(({ method, path }) => named({ method, path: base + path })).sort();
   const answered = (base: string): string[] =>
     found
       // What answers 405 at the contract's own paths is no operation.
@@ -58,8 +60,16 @@ describe('the contract', () => {
 
   it('answers a method that a path does not take with 405 at every path, and at no other', () => {
     const paths = (contract: Contract, base: string): string[] => contract.operations.map(({ path }) => base + path);
-    const expected = new Set([...paths(service.services.deskContract, '/api'), ...paths(service.services.partnerContract, '/v1')]);
-    expect(found.filter(({ method }) => method === '_all').map(({ path }) => path).sort()).toEqual([...expected].sort());
+    const expected = new Set([
+      ...paths(service.services.deskContract, '/api'),
+      ...paths(service.services.partnerContract, '/v1'),
+    ]);
+    expect(
+      found
+        .filter(({ method }) => method === '_all')
+        .map(({ path }) => path)
+        .sort(),
+    ).toEqual([...expected].sort());
   });
 
   it('is all that can change anything: every other route only reads', () => {
@@ -70,6 +80,9 @@ describe('the contract', () => {
 
   it('names the servers’ paths under which the routes are mounted', () => {
     const serverOf = (contract: Contract): unknown => (contract.document['servers'] as { url: string }[])[0].url;
-    expect([serverOf(service.services.deskContract), serverOf(service.services.partnerContract)]).toEqual(['/api', '/v1']);
+    expect([serverOf(service.services.deskContract), serverOf(service.services.partnerContract)]).toEqual([
+      '/api',
+      '/v1',
+    ]);
   });
 });

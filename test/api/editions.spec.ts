@@ -12,7 +12,8 @@ describe('editions', () => {
   });
   afterAll(() => service.close());
 
-  const drawUp = (agent: TestAgent, fitId = desk.fitId) => agent.post('/api/estimators/refit-labour/editions').send({ fitId, changeNote: 'New records.' });
+  const drawUp = (agent: TestAgent, fitId = desk.fitId) =>
+    agent.post('/api/estimators/refit-labour/editions').send({ fitId, changeNote: 'New records.' });
 
   async function submitted(agent = desk.analyst): Promise<string> {
     const draft = await drawUp(agent).expect(201);
@@ -23,19 +24,39 @@ describe('editions', () => {
   it('begin as a draft that freezes the fit’s formula with its checksum', async () => {
     const draft = await drawUp(desk.analyst);
     expect(draft.status).toBe(201);
-    expect(draft.body).toMatchObject({ number: 1, state: 'draft', fitId: desk.fitId, method: 'ridge', recordCount: 120, inputCount: 4, scale: 'original', cautions: ['An estimate is not a quotation.'] });
-    const [{ formula, checksum }] = await service.services.knex('editions').where({ id: draft.body.id }).select('formula', 'checksum');
+    expect(draft.body).toMatchObject({
+      number: 1,
+      state: 'draft',
+      fitId: desk.fitId,
+      method: 'ridge',
+      recordCount: 120,
+      inputCount: 4,
+      scale: 'original',
+      cautions: ['An estimate is not a quotation.'],
+    });
+    const [{ formula, checksum }] = await service.services
+      .knex('editions')
+      .where({ id: draft.body.id })
+      .select('formula', 'checksum');
     const [fit] = await service.services.knex('fits').where({ id: desk.fitId }).select('formula');
     expect(formula).toBe(fit.formula);
     expect(checksum).toBe(createHash('sha256').update(formula, 'utf8').digest('hex'));
     expect(draft.body.checksum).toBe(checksum);
-    expect((await desk.analyst.get(`/api/fits/${desk.fitId}`)).body.editions).toEqual([{ id: draft.body.id, number: 1, state: 'draft' }]);
+    expect((await desk.analyst.get(`/api/fits/${desk.fitId}`)).body.editions).toEqual([
+      { id: draft.body.id, number: 1, state: 'draft' },
+    ]);
   });
 
   it('describe their inputs as JSON Schema with units, ranges and the typical case', async () => {
     const { inputSchema } = (await drawUp(desk.analyst)).body;
     expect(inputSchema.required).toEqual(['length overall', 'beam', 'hull']);
-    expect(inputSchema.properties['length overall']).toMatchObject({ type: 'number', title: 'Length overall', 'x-unit': 'm', 'x-help': 'Without the bowsprit.', 'x-order': 1 });
+    expect(inputSchema.properties['length overall']).toMatchObject({
+      type: 'number',
+      title: 'Length overall',
+      'x-unit': 'm',
+      'x-help': 'Without the bowsprit.',
+      'x-order': 1,
+    });
     const [least, greatest] = inputSchema.properties.beam['x-range'] as [number, number];
     expect(inputSchema.properties.beam['x-typical']).toBeGreaterThan(least);
     expect(inputSchema.properties.beam['x-typical']).toBeLessThan(greatest);
@@ -72,7 +93,11 @@ describe('editions', () => {
     expect((await desk.reviewer.get(`/api/editions/${own}`)).body.mayPutInForce).toBe(true);
     const accepted = await desk.reviewer.post(`/api/editions/${own}/put-in-force`);
     expect(accepted.status).toBe(200);
-    expect(accepted.body).toMatchObject({ state: 'in-force', inForceBy: { id: desk.reviewer.person.id }, mayPutInForce: false });
+    expect(accepted.body).toMatchObject({
+      state: 'in-force',
+      inForceBy: { id: desk.reviewer.person.id },
+      mayPutInForce: false,
+    });
   });
 
   it('supersede the edition in force', async () => {
@@ -80,7 +105,12 @@ describe('editions', () => {
     const second = await putInForce(desk, desk.fitId);
     const before = await desk.analyst.get(`/api/editions/${first}`);
     expect(before.body).toMatchObject({ state: 'superseded', endedAt: service.clock.now().toISOString() });
-    expect(before.body.events.map(({ state }: { state: string }) => state)).toEqual(['draft', 'under-review', 'in-force', 'superseded']);
+    expect(before.body.events.map(({ state }: { state: string }) => state)).toEqual([
+      'draft',
+      'under-review',
+      'in-force',
+      'superseded',
+    ]);
     const estimator = await desk.analyst.get('/api/estimators/refit-labour');
     expect(estimator.body.inForce.id).toBe(second);
   });
@@ -97,7 +127,9 @@ describe('editions', () => {
   it('are put in force once, when two reviewers press at once', async () => {
     const id = await submitted();
     const second = await service.as('reviewer');
-    const answers = await Promise.all([desk.reviewer, second].map((agent) => agent.post(`/api/editions/${id}/put-in-force`)));
+    const answers = await Promise.all(
+      [desk.reviewer, second].map((agent) => agent.post(`/api/editions/${id}/put-in-force`)),
+    );
     expect(answers.map(({ status }) => status).sort()).toEqual([200, 409]);
     expect(answers.find(({ status }) => status === 409)?.body.code).toBe('edition-state');
     const { body } = await desk.analyst.get(`/api/editions/${id}`);
@@ -107,14 +139,21 @@ describe('editions', () => {
   it('cannot be two in force, even past the service', async () => {
     const { knex } = service.services;
     const id = await submitted();
-    await expect(knex('editions').where({ id }).update({ state: 'in-force' })).rejects.toThrow(/UNIQUE constraint failed/);
+    await expect(knex('editions').where({ id }).update({ state: 'in-force' })).rejects.toThrow(
+      /UNIQUE constraint failed/,
+    );
   });
 
   it('are sent back as drafts with a note, and may then be submitted again', async () => {
     const id = await submitted();
-    const back = await desk.reviewer.post(`/api/editions/${id}/send-back`).send({ note: 'The old records are in metres, not feet.' });
+    const back = await desk.reviewer
+      .post(`/api/editions/${id}/send-back`)
+      .send({ note: 'The old records are in metres, not feet.' });
     expect(back.body).toMatchObject({ state: 'draft', submittedAt: null, submittedBy: null });
-    expect(back.body.events.at(-1)).toMatchObject({ by: { id: desk.reviewer.person.id }, note: 'The old records are in metres, not feet.' });
+    expect(back.body.events.at(-1)).toMatchObject({
+      by: { id: desk.reviewer.person.id },
+      note: 'The old records are in metres, not feet.',
+    });
     await desk.analyst.post(`/api/editions/${id}/submit`).expect(200);
   });
 
@@ -123,17 +162,25 @@ describe('editions', () => {
     const refused = await desk.reviewer.post(`/api/editions/${draft.body.id}/put-in-force`);
     expect(refused.status).toBe(409);
     expect(refused.body.code).toBe('edition-state');
-    expect(refused.body.detail).toBe(`Edition ${draft.body.number} is a draft: it cannot be put in force. It can be submitted for review, or be withdrawn.`);
+    expect(refused.body.detail).toBe(
+      `Edition ${draft.body.number} is a draft: it cannot be put in force. It can be submitted for review, or be withdrawn.`,
+    );
   });
 
   it('are withdrawn with a note, for good', async () => {
     const id = await putInForce(desk, desk.fitId);
     const sunsetAt = new Date(service.clock.now().getTime() + 86_400_000).toISOString();
-    const withdrawn = await desk.reviewer.post(`/api/editions/${id}/withdraw`).send({ note: 'A unit was wrong.', sunsetAt });
+    const withdrawn = await desk.reviewer
+      .post(`/api/editions/${id}/withdraw`)
+      .send({ note: 'A unit was wrong.', sunsetAt });
     expect(withdrawn.body).toMatchObject({ state: 'withdrawn', sunsetAt });
     expect((await desk.analyst.get('/api/estimators/refit-labour')).body.inForce).toBeNull();
-    expect((await desk.reviewer.post(`/api/editions/${id}/withdraw`).send({ note: 'Again.' })).body.code).toBe('edition-state');
-    const past = await desk.reviewer.post(`/api/editions/${await submitted()}/withdraw`).send({ note: 'Too late.', sunsetAt: '2020-01-01T00:00:00Z' });
+    expect((await desk.reviewer.post(`/api/editions/${id}/withdraw`).send({ note: 'Again.' })).body.code).toBe(
+      'edition-state',
+    );
+    const past = await desk.reviewer
+      .post(`/api/editions/${await submitted()}/withdraw`)
+      .send({ note: 'Too late.', sunsetAt: '2020-01-01T00:00:00Z' });
     expect(past.body.errors[0].pointer).toBe('#/sunsetAt');
   });
 

@@ -20,7 +20,10 @@ describe('estimates', () => {
   afterAll(() => service.close());
 
   async function issue(terms: object = {}): Promise<string> {
-    const answer = await desk.administrator.post(`/api/partners/${partnerId}/keys`).send({ kind: 'partner', label: 'Server', ...terms }).expect(201);
+    const answer = await desk.administrator
+      .post(`/api/partners/${partnerId}/keys`)
+      .send({ kind: 'partner', label: 'Server', ...terms })
+      .expect(201);
     return (answer.body as { key: string }).key;
   }
 
@@ -29,13 +32,29 @@ describe('estimates', () => {
   it('carry value, interval, edition and contributions that add up', async () => {
     const { status, body } = await ask({ inputs: boat });
     expect(status).toBe(200);
-    expect(body).toMatchObject({ estimator: 'refit-labour', edition: 1, unit: 'h', scale: 'original', flags: [], cautions: ['An estimate is not a quotation.'], issuedAt: service.clock.now().toISOString() });
+    expect(body).toMatchObject({
+      estimator: 'refit-labour',
+      edition: 1,
+      unit: 'h',
+      scale: 'original',
+      flags: [],
+      cautions: ['An estimate is not a quotation.'],
+      issuedAt: service.clock.now().toISOString(),
+    });
     expect(body.interval.level).toBe(0.9);
     expect(body.interval.low).toBeLessThan(body.value);
     expect(body.interval.high).toBeGreaterThan(body.value);
-    const sum = (body.contributions as { contribution: number }[]).reduce((total, part) => total + part.contribution, 0);
+    const sum = (body.contributions as { contribution: number }[]).reduce(
+      (total, part) => total + part.contribution,
+      0,
+    );
     expect(Math.abs(sum - (body.value - body.typical))).toBeLessThan(1e-9);
-    expect(body.contributions.map(({ label }: { label: string }) => label)).toEqual(['Length overall', 'beam', 'Hull material', 'ballast']);
+    expect(body.contributions.map(({ label }: { label: string }) => label)).toEqual([
+      'Length overall',
+      'beam',
+      'Hull material',
+      'ballast',
+    ]);
   });
 
   it('are in the database before they are answered', async () => {
@@ -48,7 +67,9 @@ describe('estimates', () => {
 
   it('are not answered when they cannot be kept', async () => {
     const { knex } = service.services;
-    await knex.raw("create trigger refuse_estimates before insert on estimates begin select raise(abort, 'the disk is full'); end");
+    await knex.raw(
+      "create trigger refuse_estimates before insert on estimates begin select raise(abort, 'the disk is full'); end",
+    );
     const refused = await ask({ inputs: boat });
     await knex.raw('drop trigger refuse_estimates');
     expect(refused.status).toBe(500);
@@ -83,21 +104,30 @@ describe('estimates', () => {
         { pointer: '#/inputs/beam', detail: 'beam is missing. Give a number in m.' },
         { pointer: '#/inputs/length%20overall', detail: 'Give a number in m.' },
         { pointer: '#/inputs/hull', detail: 'Give one of GRP, steel, wood.' },
-        { pointer: '#/inputs/mast', detail: 'There is no input of this name. The inputs are length overall, beam, hull, ballast.' },
+        {
+          pointer: '#/inputs/mast',
+          detail: 'There is no input of this name. The inputs are length overall, beam, hull, ballast.',
+        },
       ]),
     );
     expect(refused.body.errors).toHaveLength(4);
   });
 
   it('are refused for a number too great to be one', async () => {
-    const refused = await supertest(service.app).post(path).set('X-Api-Key', key).type('application/json').send(`{"inputs": {"length overall": 1e999, "beam": 4, "hull": "GRP"}}`);
+    const refused = await supertest(service.app)
+      .post(path)
+      .set('X-Api-Key', key)
+      .type('application/json')
+      .send(`{"inputs": {"length overall": 1e999, "beam": 4, "hull": "GRP"}}`);
     expect(refused.status).toBe(422);
     expect(refused.body.errors[0].pointer).toBe('#/inputs/length%20overall');
   });
 
   it('are read back as they were answered, by any key of the same partner', async () => {
     const { body } = await ask({ inputs: boat });
-    const read = await supertest(service.app).get(`/v1/estimates/${body.id}`).set('X-Api-Key', await issue());
+    const read = await supertest(service.app)
+      .get(`/v1/estimates/${body.id}`)
+      .set('X-Api-Key', await issue());
     expect(read.status).toBe(200);
     expect(read.body).toEqual(body);
   });
@@ -105,7 +135,10 @@ describe('estimates', () => {
   it('are not there for another partner', async () => {
     const { body } = await ask({ inputs: boat });
     const other = await addPartner(service, desk.administrator.person, 'https://other.example');
-    const issued = await desk.administrator.post(`/api/partners/${other}/keys`).send({ kind: 'partner', label: 'Other' }).expect(201);
+    const issued = await desk.administrator
+      .post(`/api/partners/${other}/keys`)
+      .send({ kind: 'partner', label: 'Other' })
+      .expect(201);
     const read = await supertest(service.app).get(`/v1/estimates/${body.id}`).set('X-Api-Key', issued.body.key);
     expect(read.status).toBe(404);
     expect(read.body.code).toBe('not-found');
@@ -114,7 +147,14 @@ describe('estimates', () => {
   it('lead the desk back to edition, records and approver', async () => {
     const { body } = await ask({ inputs: boat });
     const traced = await (await service.as('viewer')).get(`/api/estimates/${body.id}`);
-    expect(traced.body).toMatchObject({ ...body, inputs: boat, editionId, approvedBy: { id: desk.reviewer.person.id }, partner: { id: partnerId }, key: { label: 'Server', kind: 'partner' } });
+    expect(traced.body).toMatchObject({
+      ...body,
+      inputs: boat,
+      editionId,
+      approvedBy: { id: desk.reviewer.person.id },
+      partner: { id: partnerId },
+      key: { label: 'Server', kind: 'partner' },
+    });
     expect(traced.body.checksum).toMatch(/^[0-9a-f]{64}$/);
     expect(traced.body.revision.sha256).toMatch(/^[0-9a-f]{64}$/);
   });
@@ -123,7 +163,9 @@ describe('estimates', () => {
     service.clock.advance(1000);
     const { body } = await ask({ inputs: boat });
     const listed = await desk.analyst.get('/api/estimators/refit-labour/estimates?limit=1');
-    expect(listed.body.items).toEqual([expect.objectContaining({ id: body.id, edition: 1, value: body.value, keyLabel: 'Server' })]);
+    expect(listed.body.items).toEqual([
+      expect.objectContaining({ id: body.id, edition: 1, value: body.value, keyLabel: 'Server' }),
+    ]);
     expect((await desk.analyst.get('/api/estimators/refit-labour')).body.estimateCount).toBe(listed.body.total);
   });
 
@@ -137,18 +179,27 @@ describe('estimates', () => {
     });
 
     it('are refused for an edition that was never in force', async () => {
-      await desk.analyst.post('/api/estimators/refit-labour/editions').send({ fitId: desk.fitId, changeNote: 'Not yet.' }).expect(201);
+      await desk.analyst
+        .post('/api/estimators/refit-labour/editions')
+        .send({ fitId: desk.fitId, changeNote: 'Not yet.' })
+        .expect(201);
       for (const edition of [3, 99]) expect((await ask({ inputs: boat, edition })).body.code).toBe('edition-unknown');
     });
 
     it('end at once when it is withdrawn, or at its sunset', async () => {
-      await desk.reviewer.post(`/api/editions/${editionId}/withdraw`).send({ note: 'Superseded long ago.' }).expect(200);
+      await desk.reviewer
+        .post(`/api/editions/${editionId}/withdraw`)
+        .send({ note: 'Superseded long ago.' })
+        .expect(200);
       const gone = await ask({ inputs: boat, edition: 1 });
       expect(gone.status).toBe(410);
       expect(gone.body.code).toBe('edition-withdrawn');
 
       const sunsetAt = new Date(service.clock.now().getTime() + 60_000).toISOString();
-      await desk.reviewer.post(`/api/editions/${next}/withdraw`).send({ note: 'A unit was wrong.', sunsetAt }).expect(200);
+      await desk.reviewer
+        .post(`/api/editions/${next}/withdraw`)
+        .send({ note: 'A unit was wrong.', sunsetAt })
+        .expect(200);
       expect((await ask({ inputs: boat })).body.code).toBe('nothing-in-force');
       expect((await ask({ inputs: boat, edition: 2 })).status).toBe(200);
       service.clock.advance(60_000);

@@ -3,7 +3,13 @@ import type { AddressInfo } from 'node:net';
 import supertest from 'supertest';
 import { compose } from '../../service/src/compose';
 import { addRevision, boatColumns } from '../support/record-fixture';
-import { fitThreadArguments, startTestService, testPassword, type TestAgent, type TestService } from '../support/test-service';
+import {
+  fitThreadArguments,
+  startTestService,
+  testPassword,
+  type TestAgent,
+  type TestService,
+} from '../support/test-service';
 
 const inputs = [{ column: 'length overall' }, { column: 'beam' }, { column: 'hull' }];
 const ridge = { target: { column: 'hours' }, inputs, method: 'ridge' };
@@ -16,11 +22,15 @@ describe('fits', () => {
     service = await startTestService();
     analyst = await service.as('analyst');
     revisionId = await addRevision(service, analyst.person, boatColumns());
-    await analyst.post('/api/estimators').send({ slug: 'refit-labour', name: 'Refit labour', targetName: 'Labour', unit: 'h' }).expect(201);
+    await analyst
+      .post('/api/estimators')
+      .send({ slug: 'refit-labour', name: 'Refit labour', targetName: 'Labour', unit: 'h' })
+      .expect(201);
   });
   afterAll(() => service.close());
 
-  const start = (specification: object) => analyst.post('/api/estimators/refit-labour/fits').send({ revisionId, specification });
+  const start = (specification: object) =>
+    analyst.post('/api/estimators/refit-labour/fits').send({ revisionId, specification });
 
   async function finished(specification: object): Promise<string> {
     const accepted = await start(specification).expect(202);
@@ -35,7 +45,9 @@ describe('fits', () => {
     expect(await service.services.fits.waitFor(accepted.body.id)).toBe('done');
     const { body } = await analyst.get(`/api/fits/${accepted.body.id}`).expect(200);
     expect(body).toMatchObject({ state: 'done', estimator: 'refit-labour', unit: 'h', failure: null, editions: [] });
-    expect(body.result.weights.map(({ input, level }: { input: string; level: string | null }) => [input, level])).toEqual([
+    expect(
+      body.result.weights.map(({ input, level }: { input: string; level: string | null }) => [input, level]),
+    ).toEqual([
       ['length overall', null],
       ['beam', null],
       ['hull', 'GRP'],
@@ -56,7 +68,11 @@ describe('fits', () => {
   });
 
   it('use the records that the filter keeps', async () => {
-    const id = await finished({ ...ridge, inputs: inputs.slice(0, 2), rowFilter: { column: 'hull', equals: ['steel', 'wood'] } });
+    const id = await finished({
+      ...ridge,
+      inputs: inputs.slice(0, 2),
+      rowFilter: { column: 'hull', equals: ['steel', 'wood'] },
+    });
     const { body } = await analyst.get(`/api/fits/${id}`);
     const kept = boatColumns().flatMap((column) => ('codes' in column ? column.codes.filter((code) => code > 0) : []));
     expect(body.result.report.recordCount).toBe(kept.length);
@@ -67,7 +83,14 @@ describe('fits', () => {
     service.clock.advance(1000);
     const newest = await finished({ ...ridge, penalty: { rule: 'fixed', value: 0.5 } });
     const { body } = await analyst.get('/api/estimators/refit-labour/fits?limit=2');
-    expect(body.items[0]).toMatchObject({ id: newest, state: 'done', method: 'ridge', rule: 'fixed', inputCount: 3, lambda: 0.5 });
+    expect(body.items[0]).toMatchObject({
+      id: newest,
+      state: 'done',
+      method: 'ridge',
+      rule: 'fixed',
+      inputCount: 3,
+      lambda: 0.5,
+    });
     expect(body.items).toHaveLength(2);
     expect(body.total).toBeGreaterThan(2);
   });
@@ -75,7 +98,13 @@ describe('fits', () => {
   it('point at every column that does not fit, before anything is queued', async () => {
     const wrong = await start({
       target: { column: 'hull' },
-      inputs: [{ column: 'keel' }, { column: 'hull', transform: 'spline' }, { column: 'beam' }, { column: 'beam' }, { column: 'ballast' }],
+      inputs: [
+        { column: 'keel' },
+        { column: 'hull', transform: 'spline' },
+        { column: 'beam' },
+        { column: 'beam' },
+        { column: 'ballast' },
+      ],
       weightColumn: 'oars',
       method: 'ridge',
       validation: { scheme: 'grouped' },
@@ -93,11 +122,23 @@ describe('fits', () => {
   });
 
   it.each([
-    ['a transform of a category', { ...ridge, inputs: [{ column: 'hull', transform: 'spline' }] }, '#/specification/inputs/0/transform'],
+    [
+      'a transform of a category',
+      { ...ridge, inputs: [{ column: 'hull', transform: 'spline' }] },
+      '#/specification/inputs/0/transform',
+    ],
     ['gaps that are refused', { ...ridge, inputs: [{ column: 'ballast' }] }, '#/specification/inputs/0/missing'],
-    ['a penalty rule that the method lacks', { ...ridge, method: 'lasso', penalty: { rule: 'evidence' } }, '#/specification/penalty'],
+    [
+      'a penalty rule that the method lacks',
+      { ...ridge, method: 'lasso', penalty: { rule: 'evidence' } },
+      '#/specification/penalty',
+    ],
     ['a range over words', { ...ridge, rowFilter: { column: 'hull', from: 1 } }, '#/specification/rowFilter'],
-    ['a filter on no column', { ...ridge, rowFilter: { column: 'keel', equals: ['long'] } }, '#/specification/rowFilter/column'],
+    [
+      'a filter on no column',
+      { ...ridge, rowFilter: { column: 'keel', equals: ['long'] } },
+      '#/specification/rowFilter/column',
+    ],
     ['a fixed penalty without its value', { ...ridge, penalty: { rule: 'fixed' } }, '#/specification/penalty'],
   ])('are refused for %s', async (_what, specification, pointer) => {
     const wrong = await start(specification);
@@ -105,7 +146,9 @@ describe('fits', () => {
   });
 
   it('need a revision that exists', async () => {
-    const wrong = await analyst.post('/api/estimators/refit-labour/fits').send({ revisionId: 'nosuchrevision00', specification: ridge });
+    const wrong = await analyst
+      .post('/api/estimators/refit-labour/fits')
+      .send({ revisionId: 'nosuchrevision00', specification: ridge });
     expect(wrong.body).toMatchObject({ code: 'specification-invalid', errors: [{ pointer: '#/revisionId' }] });
   });
 
@@ -131,10 +174,17 @@ describe('fits', () => {
 
   it('are cancelled while they run, by ending their thread', async () => {
     const big = await addRevision(service, analyst.person, boatColumns(60_000));
-    const spline = { ...ridge, inputs: inputs.map((input) => (input.column === 'hull' ? input : { ...input, transform: 'spline' })) };
-    const accepted = await analyst.post('/api/estimators/refit-labour/fits').send({ revisionId: big, specification: spline }).expect(202);
+    const spline = {
+      ...ridge,
+      inputs: inputs.map((input) => (input.column === 'hull' ? input : { ...input, transform: 'spline' })),
+    };
+    const accepted = await analyst
+      .post('/api/estimators/refit-labour/fits')
+      .send({ revisionId: big, specification: spline })
+      .expect(202);
     const { id } = accepted.body as { id: string };
-    while ((await service.services.fits.progress(id)).state === 'queued') await new Promise((resolve) => setTimeout(resolve, 5));
+    while ((await service.services.fits.progress(id)).state === 'queued')
+      await new Promise((resolve) => setTimeout(resolve, 5));
     expect((await service.services.fits.progress(id)).state).toBe('running');
     await analyst.post(`/api/fits/${id}/cancel`).expect(202);
     expect(await service.services.fits.waitFor(id)).toBe('cancelled');
@@ -147,7 +197,13 @@ describe('fits', () => {
     const accepted = await start(ridge).expect(202);
     const { id } = accepted.body as { id: string };
     await fits.waitFor(id);
-    const orphan = { state: 'running', claimedBy: 'elsewhere:1:gone', claimedAt: service.clock.now().toISOString(), result: null, formula: null };
+    const orphan = {
+      state: 'running',
+      claimedBy: 'elsewhere:1:gone',
+      claimedAt: service.clock.now().toISOString(),
+      result: null,
+      formula: null,
+    };
     await knex('fits').where({ id }).update(orphan);
     fitRunner.wake();
     await new Promise((resolve) => setTimeout(resolve, 50));
@@ -173,10 +229,17 @@ describe('fits', () => {
   it('go back into the queue when the service closes', async () => {
     const other = await startTestService();
     const person = await other.as('analyst');
-    await person.post('/api/estimators').send({ slug: 'refit-labour', name: 'Refit labour', targetName: 'Labour', unit: 'h' }).expect(201);
+    await person
+      .post('/api/estimators')
+      .send({ slug: 'refit-labour', name: 'Refit labour', targetName: 'Labour', unit: 'h' })
+      .expect(201);
     const big = await addRevision(other, person.person, boatColumns(60_000));
-    const accepted = await person.post('/api/estimators/refit-labour/fits').send({ revisionId: big, specification: ridge }).expect(202);
-    while ((await other.services.fits.progress(accepted.body.id)).state === 'queued') await new Promise((resolve) => setTimeout(resolve, 5));
+    const accepted = await person
+      .post('/api/estimators/refit-labour/fits')
+      .send({ revisionId: big, specification: ridge })
+      .expect(202);
+    while ((await other.services.fits.progress(accepted.body.id)).state === 'queued')
+      await new Promise((resolve) => setTimeout(resolve, 5));
     await other.services.fitRunner.close();
     expect((await other.services.fits.progress(accepted.body.id)).state).toBe('queued');
     await other.close();
@@ -193,14 +256,21 @@ describe('fits', () => {
     afterAll(() => new Promise((resolve) => server.close(resolve)));
 
     async function cookieOf(): Promise<string> {
-      const signedIn = await supertest(address).post('/api/session').send({ email: analyst.person.email, password: testPassword }).expect(200);
+      const signedIn = await supertest(address)
+        .post('/api/session')
+        .send({ email: analyst.person.email, password: testPassword })
+        .expect(200);
       return (signedIn.headers['set-cookie'] as unknown as string[]).map((line) => line.split(';')[0]).join('; ');
     }
 
-    async function stream(id: string): Promise<{ readonly type: string | null; readonly steps: readonly { state: string; progress: unknown }[] }> {
+    async function stream(
+      id: string,
+    ): Promise<{ readonly type: string | null; readonly steps: readonly { state: string; progress: unknown }[] }> {
       const answer = await fetch(`${address}/api/fits/${id}/progress`, { headers: { cookie: await cookieOf() } });
       const text = await answer.text();
-      const steps = [...text.matchAll(/^event: progress\ndata: (.*)$/gm)].map((match) => JSON.parse(match[1]) as { state: string; progress: unknown });
+      const steps = [...text.matchAll(/^event: progress\ndata: (.*)$/gm)].map(
+        (match) => JSON.parse(match[1]) as { state: string; progress: unknown },
+      );
       return { type: answer.headers.get('content-type'), steps };
     }
 

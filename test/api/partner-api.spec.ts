@@ -18,19 +18,26 @@ describe('the partner API', () => {
   beforeAll(async () => {
     service = await startTestService();
     desk = await openDesk(service);
-    await desk.analyst.post('/api/estimators').send({ slug: 'crane-time', name: 'Crane time', targetName: 'Time', unit: 'min' }).expect(201);
+    await desk.analyst
+      .post('/api/estimators')
+      .send({ slug: 'crane-time', name: 'Crane time', targetName: 'Time', unit: 'min' })
+      .expect(201);
     partnerId = await addPartner(service, desk.administrator.person, site);
     await putInForce(desk, desk.fitId);
   });
   afterAll(() => service.close());
 
   async function issue(terms: object = {}, of = partnerId): Promise<Issued> {
-    const answer = await desk.administrator.post(`/api/partners/${of}/keys`).send({ kind: 'partner', label: 'Server', ...terms }).expect(201);
+    const answer = await desk.administrator
+      .post(`/api/partners/${of}/keys`)
+      .send({ kind: 'partner', label: 'Server', ...terms })
+      .expect(201);
     return answer.body as Issued;
   }
 
-  const list = (key: string) => supertest(service.app).get('/v1/estimators').set('X-Api-Key', key);
-  const ask = (key: string) => supertest(service.app).post('/v1/estimators/refit-labour/estimates').set('X-Api-Key', key).send({ inputs: boat });
+  const list = (key: string): supertest.Test => supertest(service.app).get('/v1/estimators').set('X-Api-Key', key);
+  const ask = (key: string): supertest.Test =>
+    supertest(service.app).post('/v1/estimators/refit-labour/estimates').set('X-Api-Key', key).send({ inputs: boat });
 
   describe('keys', () => {
     it('are shown once and kept as a hash only', async () => {
@@ -52,7 +59,10 @@ describe('the partner API', () => {
         'key-refused',
         async () => {
           const { id, key } = await issue();
-          await service.services.knex('keys').where({ id }).update({ secretHash: '0'.repeat(64) });
+          await service.services
+            .knex('keys')
+            .where({ id })
+            .update({ secretHash: '0'.repeat(64) });
           return key;
         },
       ],
@@ -95,23 +105,34 @@ describe('the partner API', () => {
       const refused = await ask(key);
       expect(refused.status).toBe(403);
       expect(refused.body.code).toBe('key-out-of-scope');
-      expect((await supertest(service.app).get('/v1/estimators/crane-time').set('X-Api-Key', key)).body.code).toBe('nothing-in-force');
+      expect((await supertest(service.app).get('/v1/estimators/crane-time').set('X-Api-Key', key)).body.code).toBe(
+        'nothing-in-force',
+      );
       expect((await supertest(service.app).get('/v1/estimators/no-such').set('X-Api-Key', key)).status).toBe(404);
     });
 
     it('are issued only over estimators that exist and into the future', async () => {
-      const post = (terms: object) => desk.administrator.post(`/api/partners/${partnerId}/keys`).send({ kind: 'partner', label: 'Server', ...terms });
+      const post = (terms: object) =>
+        desk.administrator.post(`/api/partners/${partnerId}/keys`).send({ kind: 'partner', label: 'Server', ...terms });
       const unknown = await post({ estimators: ['refit-labour', 'no-such'] });
       expect(unknown.body).toMatchObject({ code: 'estimator-unknown', errors: [{ pointer: '#/estimators/1' }] });
       const past = await post({ expiresAt: service.clock.now().toISOString() });
       expect(past.body).toMatchObject({ code: 'request-invalid', errors: [{ pointer: '#/expiresAt' }] });
-      expect((await desk.administrator.post('/api/partners/nosuchpartner000/keys').send({ kind: 'partner', label: 'Server' })).status).toBe(404);
+      expect(
+        (
+          await desk.administrator
+            .post('/api/partners/nosuchpartner000/keys')
+            .send({ kind: 'partner', label: 'Server' })
+        ).status,
+      ).toBe(404);
     });
 
     it('for pages need a site that is listed', async () => {
       const other = await addPartner(service, desk.administrator.person, 'https://gone.example');
       await service.services.knex('partnerSites').where({ partnerId: other }).delete();
-      const refused = await desk.administrator.post(`/api/partners/${other}/keys`).send({ kind: 'embed', label: 'Form' });
+      const refused = await desk.administrator
+        .post(`/api/partners/${other}/keys`)
+        .send({ kind: 'embed', label: 'Form' });
       expect(refused.body).toMatchObject({ code: 'request-invalid', errors: [{ pointer: '#/kind' }] });
     });
 
@@ -120,8 +141,16 @@ describe('the partner API', () => {
       const other = await addPartner(service, desk.administrator.person, 'https://foreign.example');
       const own = await developer.post(`/api/partners/${partnerId}/keys`).send({ kind: 'partner', label: 'Own' });
       expect(own.status).toBe(201);
-      expect(own.body.details).toMatchObject({ label: 'Own', state: 'live', estimators: 'all', usedThisMonth: 0, createdBy: { id: developer.person.id } });
-      expect((await developer.post(`/api/partners/${other}/keys`).send({ kind: 'partner', label: 'Foreign' })).status).toBe(404);
+      expect(own.body.details).toMatchObject({
+        label: 'Own',
+        state: 'live',
+        estimators: 'all',
+        usedThisMonth: 0,
+        createdBy: { id: developer.person.id },
+      });
+      expect(
+        (await developer.post(`/api/partners/${other}/keys`).send({ kind: 'partner', label: 'Foreign' })).status,
+      ).toBe(404);
       const foreign = await issue({}, other);
       expect((await developer.post(`/api/keys/${foreign.id}/revoke`)).status).toBe(404);
       await list(foreign.key).expect(200);
@@ -147,7 +176,12 @@ describe('the partner API', () => {
       const { key } = await issue();
       const listed = await list(key);
       expect(listed.body.items).toHaveLength(1);
-      expect(listed.body.items[0]).toMatchObject({ slug: 'refit-labour', edition: 1, unit: 'h', cautions: ['An estimate is not a quotation.'] });
+      expect(listed.body.items[0]).toMatchObject({
+        slug: 'refit-labour',
+        edition: 1,
+        unit: 'h',
+        cautions: ['An estimate is not a quotation.'],
+      });
       const one = await supertest(service.app).get('/v1/estimators/refit-labour').set('X-Api-Key', key);
       expect(one.body).toEqual(listed.body.items[0]);
       expect(Object.keys(one.body.inputs.properties)).toEqual(['length overall', 'beam', 'hull', 'ballast']);
@@ -197,14 +231,17 @@ describe('the partner API', () => {
   describe('for pages', () => {
     let embed: Issued;
     beforeAll(async () => void (embed = await issue({ kind: 'embed', label: 'Form', perMinute: 1000 })));
-    const askFrom = (origin: string | null, key = embed.key) => (origin === null ? ask(key) : ask(key).set('Origin', origin));
+    const askFrom = (origin: string | null, key = embed.key) =>
+      origin === null ? ask(key) : ask(key).set('Origin', origin);
 
     it('answers the partner’s own site, with what the page may read', async () => {
       const answer = await askFrom(site);
       expect(answer.status).toBe(200);
       expect(answer.headers['access-control-allow-origin']).toBe(site);
       expect(answer.headers['vary']).toContain('Origin');
-      expect(answer.headers['access-control-expose-headers']).toBe('RateLimit,RateLimit-Policy,Retry-After,X-Request-Id');
+      expect(answer.headers['access-control-expose-headers']).toBe(
+        'RateLimit,RateLimit-Policy,Retry-After,X-Request-Id',
+      );
       expect(answer.headers).not.toHaveProperty('access-control-allow-credentials');
     });
 
@@ -231,7 +268,11 @@ describe('the partner API', () => {
     });
 
     it('lets a listed site read what is wrong with its case', async () => {
-      const answer = await supertest(service.app).post('/v1/estimators/refit-labour/estimates').set('X-Api-Key', embed.key).set('Origin', site).send({ inputs: {} });
+      const answer = await supertest(service.app)
+        .post('/v1/estimators/refit-labour/estimates')
+        .set('X-Api-Key', embed.key)
+        .set('Origin', site)
+        .send({ inputs: {} });
       expect(answer.status).toBe(422);
       expect(answer.headers['access-control-allow-origin']).toBe(site);
     });
@@ -250,14 +291,20 @@ describe('the partner API', () => {
     });
 
     it('refuses the preflight of any other site', async () => {
-      const preflight = await supertest(service.app).options('/v1/estimators').set('Origin', 'https://elsewhere.example').set('Access-Control-Request-Method', 'GET');
+      const preflight = await supertest(service.app)
+        .options('/v1/estimators')
+        .set('Origin', 'https://elsewhere.example')
+        .set('Access-Control-Request-Method', 'GET');
       expect(preflight.status).toBe(403);
       expect(preflight.headers).not.toHaveProperty('access-control-allow-origin');
     });
 
     it('keeps an embed key to describing and estimating', async () => {
       const { body } = await askFrom(site);
-      const answer = await supertest(service.app).get(`/v1/estimates/${body.id}`).set('X-Api-Key', embed.key).set('Origin', site);
+      const answer = await supertest(service.app)
+        .get(`/v1/estimates/${body.id}`)
+        .set('X-Api-Key', embed.key)
+        .set('Origin', site);
       expect(answer.status).toBe(403);
       expect(answer.body.code).toBe('key-out-of-scope');
     });

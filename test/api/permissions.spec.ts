@@ -8,8 +8,14 @@ import { addPartner } from '../support/published-estimator';
 const roles: readonly Role[] = ['administrator', 'analyst', 'reviewer', 'viewer', 'partner-developer'];
 
 /** Well formed and naming nothing, so that a permitted call fails only for what it names. */
-const placeholders: Readonly<Record<string, string>> = { slug: 'no-such-estimator', token: 'x'.repeat(43), id: 'nosuchrow0000000', siteId: 'nosuchsite000000' };
-const addressOf = ({ path }: Operation): string => `/api${path.replace(/:(\w+)/g, (_, name: string) => placeholders[name] ?? 'nosuchrow0000000')}`;
+const placeholders: Readonly<Record<string, string>> = {
+  slug: 'no-such-estimator',
+  token: 'x'.repeat(43),
+  id: 'nosuchrow0000000',
+  siteId: 'nosuchsite000000',
+};
+const addressOf = ({ path }: Operation): string =>
+  `/api${path.replace(/:(\w+)/g, (_, name: string) => placeholders[name] ?? 'nosuchrow0000000')}`;
 
 interface Sender {
   get(path: string): supertest.Test;
@@ -34,7 +40,8 @@ describe('the table of rights', () => {
   let service: TestService;
   const agents = new Map<Role, TestAgent>();
   /** Reading the session gives a new token and signing out ends it: these two have a test of their own. */
-  const operations = (): Operation[] => service.services.deskContract.operations.filter(({ id }) => id !== 'readSession' && id !== 'signOut');
+  const operations = (): Operation[] =>
+    service.services.deskContract.operations.filter(({ id }) => id !== 'readSession' && id !== 'signOut');
 
   beforeAll(async () => {
     service = await startTestService();
@@ -42,13 +49,18 @@ describe('the table of rights', () => {
     agents.set('administrator', administrator);
     const partnerId = await addPartner(service, administrator.person, 'https://www.partner.example');
     for (const role of roles.slice(1)) {
-      agents.set(role, await service.signIn(await service.addPerson([role], role === 'partner-developer' ? { partnerId } : {})));
+      agents.set(
+        role,
+        await service.signIn(await service.addPerson([role], role === 'partner-developer' ? { partnerId } : {})),
+      );
     }
   });
   afterAll(() => service.close());
 
   it('has a line for every operation of the contract, and none more', () => {
-    expect(Object.keys(permissions).sort()).toEqual(service.services.deskContract.operations.map(({ id }) => id).sort());
+    expect(Object.keys(permissions).sort()).toEqual(
+      service.services.deskContract.operations.map(({ id }) => id).sort(),
+    );
   });
 
   it('lets nobody in who has not signed in, but to what is public', async () => {

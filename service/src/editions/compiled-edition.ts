@@ -3,7 +3,13 @@ import addFormats from 'ajv-formats';
 import type { components } from '../../../openapi/types/desk';
 import { DeskError } from '../errors';
 import { RegressionError } from '../regression/errors';
-import { evaluateFormula, type CaseInputs, type Contribution, type Evaluation as EngineEvaluation, type EvaluationFlag } from '../regression/formula/evaluate';
+import {
+  evaluateFormula,
+  type CaseInputs,
+  type Contribution,
+  type Evaluation as EngineEvaluation,
+  type EvaluationFlag,
+} from '../regression/formula/evaluate';
 import type { Formula } from '../regression/formula/formula';
 import type { EditionContent } from './editions-store';
 import { inputPointer, inputProblems } from './input-problems';
@@ -58,7 +64,11 @@ export class CompiledEdition {
 }
 
 function inputsInvalid(errors: readonly { readonly pointer: string; readonly detail: string }[]): DeskError {
-  return new DeskError('inputs-invalid', `Mend the case and send it again: ${errors[0]?.detail ?? 'see the inputs of the estimator'}`, { errors });
+  return new DeskError(
+    'inputs-invalid',
+    `Mend the case and send it again: ${errors[0]?.detail ?? 'see the inputs of the estimator'}`,
+    { errors },
+  );
 }
 
 function toFlag({ code, input, message }: EvaluationFlag): Evaluation['flags'][number] {
@@ -67,12 +77,20 @@ function toFlag({ code, input, message }: EvaluationFlag): Evaluation['flags'][n
 
 /** The schema is our own (inputSchemaOf); checking it against the meta-schema as well would cost far more than compiling it. */
 function compileSchema(schema: InputSchema): ValidateFunction {
-  const ajv = new Ajv2020({ strict: false, allErrors: true, allowUnionTypes: true, meta: false, validateSchema: false });
+  const ajv = new Ajv2020({
+    strict: false,
+    allErrors: true,
+    allowUnionTypes: true,
+    meta: false,
+    validateSchema: false,
+  });
   addFormats(ajv, ['date']);
   return ajv.compile(schema);
 }
 
 function labelsOf(schema: InputSchema): ReadonlyMap<string, string> {
-  const properties = Object.entries((schema['properties'] ?? {}) as Readonly<Record<string, { readonly title?: unknown }>>);
+  const properties = Object.entries(
+    (schema['properties'] ?? {}) as Readonly<Record<string, { readonly title?: unknown }>>,
+  );
   return new Map(properties.map(([name, { title }]) => [name, typeof title === 'string' ? title : name]));
 }

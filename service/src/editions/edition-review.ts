@@ -42,10 +42,21 @@ export class EditionReview {
     const { database, editions } = this.parts;
     await database.unitOfWork(async () => {
       const edition = await this.requireFor(id, EditionAct.putInForce);
-      if (isOwn(person, edition)) throw new DeskError('own-edition', 'You drew it up or submitted it. Ask another reviewer to read it and put it in force.');
+      if (isOwn(person, edition))
+        throw new DeskError(
+          'own-edition',
+          'You drew it up or submitted it. Ask another reviewer to read it and put it in force.',
+        );
       for (const previous of await editions.inForceOf([edition.estimatorId])) {
         const move = { state: 'superseded', endedAt: this.now() } as const;
-        await this.take({ person, edition: previous, move, note: `Superseded by edition ${edition.number}.`, action: 'edition-superseded', verb: 'superseded' });
+        await this.take({
+          person,
+          edition: previous,
+          move,
+          note: `Superseded by edition ${edition.number}.`,
+          action: 'edition-superseded',
+          verb: 'superseded',
+        });
       }
       const move = { state: 'in-force', inForceAt: this.now(), inForceBy: person.id } as const;
       await this.take({ person, edition, move, note: '', action: 'edition-put-in-force', verb: 'put in force' });
@@ -61,10 +72,18 @@ export class EditionReview {
   }
 
   /** Calls that name the edition are answered until `sunsetAt`; without it they end at once. */
-  async withdraw(person: SignedInPerson, id: string, withdrawal: { readonly note: string; readonly sunsetAt?: string | null }): Promise<void> {
+  async withdraw(
+    person: SignedInPerson,
+    id: string,
+    withdrawal: { readonly note: string; readonly sunsetAt?: string | null },
+  ): Promise<void> {
     await this.parts.database.unitOfWork(async () => {
       const edition = await this.requireFor(id, EditionAct.withdraw);
-      const move = { state: 'withdrawn', endedAt: edition.endedAt ?? this.now(), sunsetAt: this.futureTime(withdrawal.sunsetAt ?? null) } as const;
+      const move = {
+        state: 'withdrawn',
+        endedAt: edition.endedAt ?? this.now(),
+        sunsetAt: this.futureTime(withdrawal.sunsetAt ?? null),
+      } as const;
       await this.take({ person, edition, move, note: withdrawal.note, action: 'edition-withdrawn', verb: 'withdrew' });
     });
   }
@@ -82,10 +101,26 @@ export class EditionReview {
 
   private async take({ person, edition, move, note, action, verb }: Step): Promise<void> {
     const { editions, journal } = this.parts;
-    const moved = await translateUnique(() => editions.move(edition.id, edition.state, move), 'editions.estimator_id', overtaken);
+    const moved = await translateUnique(
+      () => editions.move(edition.id, edition.state, move),
+      'editions.estimator_id',
+      overtaken,
+    );
     if (!moved) throw overtaken();
-    await editions.insertEvent({ editionId: edition.id, at: this.now(), by: person.id, state: move.state satisfies EditionState, note });
-    await journal.write({ actorId: person.id, action, subjectKind: 'edition', subjectId: edition.id, summary: `${person.name} ${verb} edition ${edition.number} of ${edition.slug}` });
+    await editions.insertEvent({
+      editionId: edition.id,
+      at: this.now(),
+      by: person.id,
+      state: move.state satisfies EditionState,
+      note,
+    });
+    await journal.write({
+      actorId: person.id,
+      action,
+      subjectKind: 'edition',
+      subjectId: edition.id,
+      summary: `${person.name} ${verb} edition ${edition.number} of ${edition.slug}`,
+    });
   }
 
   private futureTime(given: string | null): string | null {
@@ -97,4 +132,5 @@ export class EditionReview {
   }
 }
 
-const overtaken = (): DeskError => new DeskError('edition-state', 'Somebody else changed this estimator’s editions a moment ago. Read them again.');
+const overtaken = (): DeskError =>
+  new DeskError('edition-state', 'Somebody else changed this estimator’s editions a moment ago. Read them again.');

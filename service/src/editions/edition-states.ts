@@ -2,7 +2,12 @@ import { DeskError } from '../errors';
 import type { EditionState } from './editions-store';
 
 /** What a person can do with an edition; the only table of its states. */
-export const EditionAct = { submit: 'submit', putInForce: 'put-in-force', sendBack: 'send-back', withdraw: 'withdraw' } as const;
+export const EditionAct = {
+  submit: 'submit',
+  putInForce: 'put-in-force',
+  sendBack: 'send-back',
+  withdraw: 'withdraw',
+} as const;
 export type EditionAct = (typeof EditionAct)[keyof typeof EditionAct];
 
 const actsOf: Readonly<Record<EditionState, readonly EditionAct[]>> = {
@@ -31,7 +36,10 @@ const actWords: Readonly<Record<EditionAct, string>> = {
 /** Refuses what the state does not allow, saying what it does. */
 export function requireAct(edition: { readonly number: number; readonly state: EditionState }, act: EditionAct): void {
   if (actsOf[edition.state].includes(act)) return;
-  throw new DeskError('edition-state', `Edition ${edition.number} is ${stateWords[edition.state]}: it cannot ${actWords[act]}. ${whatCanBeDone(edition.state)}`);
+  throw new DeskError(
+    'edition-state',
+    `Edition ${edition.number} is ${stateWords[edition.state]}: it cannot ${actWords[act]}. ${whatCanBeDone(edition.state)}`,
+  );
 }
 
 function whatCanBeDone(state: EditionState): string {

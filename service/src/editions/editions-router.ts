@@ -12,7 +12,11 @@ export interface EditionsRouterParts {
 }
 
 export function mountEditions(routes: ContractRoutes<operations>, { editions, review }: EditionsRouterParts): void {
-  const after = async (person: SignedInPerson, id: string, step: Promise<void>): Promise<components['schemas']['Edition']> => {
+  const after = async (
+    person: SignedInPerson,
+    id: string,
+    step: Promise<void>,
+  ): Promise<components['schemas']['Edition']> => {
     await step;
     return editions.read(person, id);
   };

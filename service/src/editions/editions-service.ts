@@ -50,9 +50,22 @@ export class EditionsService {
       const fit = await this.requireDoneFit(estimator, fitId);
       const number = (await editions.lastNumber(estimator.id)) + 1;
       const at = timeText(clock);
-      await editions.insert({ id, number, changeNote, ...(await this.frozen(estimator, fit)), createdAt: at, createdBy: person.id });
+      await editions.insert({
+        id,
+        number,
+        changeNote,
+        ...(await this.frozen(estimator, fit)),
+        createdAt: at,
+        createdBy: person.id,
+      });
       await editions.insertEvent({ editionId: id, at, by: person.id, state: 'draft', note: changeNote });
-      await journal.write({ actorId: person.id, action: 'edition-drawn-up', subjectKind: 'edition', subjectId: id, summary: `${person.name} drew up edition ${number} of ${slug}` });
+      await journal.write({
+        actorId: person.id,
+        action: 'edition-drawn-up',
+        subjectKind: 'edition',
+        subjectId: id,
+        summary: `${person.name} drew up edition ${number} of ${slug}`,
+      });
     });
     return this.read(person, id);
   }
@@ -60,7 +73,13 @@ export class EditionsService {
   async read(person: SignedInPerson, id: string): Promise<Edition> {
     const { editions, fits } = this.parts;
     const record = await this.require(id);
-    const [content, events, fit, texts, compiled] = await Promise.all([editions.content(id), editions.events(id), fits.find(record.fitId), fits.texts(record.fitId), this.parts.compiled.get(id)]);
+    const [content, events, fit, texts, compiled] = await Promise.all([
+      editions.content(id),
+      editions.events(id),
+      fits.find(record.fitId),
+      fits.texts(record.fitId),
+      this.parts.compiled.get(id),
+    ]);
     if (!content || !fit || !texts) throw notFound('edition');
     const { intercept, weights } = JSON.parse(texts.result) as PublishedResult;
     return {
@@ -98,7 +117,8 @@ export class EditionsService {
   private async requireDoneFit(estimator: EstimatorRecord, fitId: string): Promise<FitRecord> {
     const fit = await this.parts.fits.find(fitId);
     if (!fit || fit.estimatorId !== estimator.id) throw notFound('fit of this estimator');
-    if (fit.state !== 'done') throw new DeskError('fit-not-done', `The fit is ${fit.state}. An edition is drawn up from a fit that is done.`);
+    if (fit.state !== 'done')
+      throw new DeskError('fit-not-done', `The fit is ${fit.state}. An edition is drawn up from a fit that is done.`);
     return fit;
   }
 
@@ -122,4 +142,5 @@ export class EditionsService {
 }
 
 /** Drawn up or submitted by this person: somebody else must judge it. */
-export const isOwn = (person: SignedInPerson, edition: EditionRecord): boolean => edition.createdBy.id === person.id || edition.submittedBy?.id === person.id;
+export const isOwn = (person: SignedInPerson, edition: EditionRecord): boolean =>
+  edition.createdBy.id === person.id || edition.submittedBy?.id === person.id;

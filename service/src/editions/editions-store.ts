@@ -39,7 +39,19 @@ interface EditionRow {
 
 export type NewEdition = Pick<
   EditionRow,
-  'id' | 'estimatorId' | 'number' | 'fitId' | 'changeNote' | 'formula' | 'checksum' | 'method' | 'rmse' | 'recordCount' | 'inputCount' | 'createdAt' | 'createdBy'
+  | 'id'
+  | 'estimatorId'
+  | 'number'
+  | 'fitId'
+  | 'changeNote'
+  | 'formula'
+  | 'checksum'
+  | 'method'
+  | 'rmse'
+  | 'recordCount'
+  | 'inputCount'
+  | 'createdAt'
+  | 'createdBy'
 > & { readonly inputSchema: Readonly<Record<string, unknown>>; readonly cautions: readonly string[] };
 
 type Bare = Omit<EditionRow, 'formula' | 'inputSchema' | 'cautions' | 'createdBy' | 'submittedBy' | 'inForceBy'>;
@@ -81,11 +93,25 @@ type ListedRow = Bare & {
   inForceByName: string | null;
 };
 
-export type EditionMove = Partial<Pick<EditionRow, 'submittedAt' | 'submittedBy' | 'inForceAt' | 'inForceBy' | 'endedAt' | 'sunsetAt'>> & {
+export type EditionMove = Partial<
+  Pick<EditionRow, 'submittedAt' | 'submittedBy' | 'inForceAt' | 'inForceBy' | 'endedAt' | 'sunsetAt'>
+> & {
   readonly state: EditionState;
 };
 
-const listedColumns = ['id', 'estimatorId', 'number', 'fitId', 'state', 'changeNote', 'checksum', 'method', 'rmse', 'recordCount', 'inputCount']
+const listedColumns = [
+  'id',
+  'estimatorId',
+  'number',
+  'fitId',
+  'state',
+  'changeNote',
+  'checksum',
+  'method',
+  'rmse',
+  'recordCount',
+  'inputCount',
+]
   .concat(['createdAt', 'createdBy', 'submittedAt', 'submittedBy', 'inForceAt', 'inForceBy', 'endedAt', 'sunsetAt'])
   .map((column) => `editions.${column}`);
 
@@ -112,7 +138,11 @@ export class EditionsStore {
   }
 
   async list(estimatorId: string, { limit, offset }: Page): Promise<EditionRecord[]> {
-    const rows = (await this.listed().where({ estimatorId }).orderBy('editions.number', 'desc').limit(limit).offset(offset)) as ListedRow[];
+    const rows = (await this.listed()
+      .where({ estimatorId })
+      .orderBy('editions.number', 'desc')
+      .limit(limit)
+      .offset(offset)) as ListedRow[];
     return rows.map(toRecord);
   }
 
@@ -123,23 +153,35 @@ export class EditionsStore {
 
   /** Of each of these estimators the edition in force, where there is one. */
   async inForceOf(estimatorIds: readonly string[]): Promise<EditionRecord[]> {
-    const rows = (await this.listed().where('editions.state', 'in-force').whereIn('editions.estimatorId', [...estimatorIds])) as ListedRow[];
+    const rows = (await this.listed()
+      .where('editions.state', 'in-force')
+      .whereIn('editions.estimatorId', [...estimatorIds])) as ListedRow[];
     return rows.map(toRecord);
   }
 
   /** Of every estimator, by name. */
   async listInState(state: EditionState): Promise<EditionRecord[]> {
-    const rows = (await this.listed().where('editions.state', state).orderBy('estimators.name').orderBy('editions.id')) as ListedRow[];
+    const rows = (await this.listed()
+      .where('editions.state', state)
+      .orderBy('estimators.name')
+      .orderBy('editions.id')) as ListedRow[];
     return rows.map(toRecord);
   }
 
   async listOfFit(fitId: string): Promise<{ id: string; number: number; state: EditionState }[]> {
-    const rows = await this.database.table<EditionRow>('editions').where({ fitId }).orderBy('number').select('id', 'number', 'state');
+    const rows = await this.database
+      .table<EditionRow>('editions')
+      .where({ fitId })
+      .orderBy('number')
+      .select('id', 'number', 'state');
     return rows.map(({ id, number, state }) => ({ id, number, state }));
   }
 
   async content(id: string): Promise<EditionContent | null> {
-    const row = await this.database.table<EditionRow>('editions').where({ id }).first('id', 'formula', 'inputSchema', 'cautions');
+    const row = await this.database
+      .table<EditionRow>('editions')
+      .where({ id })
+      .first('id', 'formula', 'inputSchema', 'cautions');
     if (!row) return null;
     return {
       id: row.id,
@@ -154,7 +196,13 @@ export class EditionsStore {
     return (await this.database.table<EditionRow>('editions').where({ id, state: from }).update(move)) === 1;
   }
 
-  async insertEvent(event: { readonly editionId: string; readonly at: string; readonly by: string; readonly state: EditionState; readonly note: string }): Promise<void> {
+  async insertEvent(event: {
+    readonly editionId: string;
+    readonly at: string;
+    readonly by: string;
+    readonly state: EditionState;
+    readonly note: string;
+  }): Promise<void> {
     await this.database.table('editionEvents').insert(event);
   }
 
@@ -164,7 +212,13 @@ export class EditionsStore {
       .join('people', 'people.id', 'editionEvents.by')
       .where({ editionId })
       .orderBy('editionEvents.id')
-      .select('editionEvents.at', 'editionEvents.by', 'people.name as byName', 'editionEvents.state', 'editionEvents.note')) as {
+      .select(
+        'editionEvents.at',
+        'editionEvents.by',
+        'people.name as byName',
+        'editionEvents.state',
+        'editionEvents.note',
+      )) as {
       at: string;
       by: string;
       byName: string;
@@ -183,7 +237,11 @@ export class EditionsStore {
       .leftJoin('people as approvers', 'approvers.id', 'editions.inForceBy')
       .select(listedColumns)
       .select('estimators.slug', 'estimators.name as estimatorName', 'estimators.unit')
-      .select('creators.name as createdByName', 'submitters.name as submittedByName', 'approvers.name as inForceByName');
+      .select(
+        'creators.name as createdByName',
+        'submitters.name as submittedByName',
+        'approvers.name as inForceByName',
+      );
   }
 
   private async first(query: ReturnType<EditionsStore['listed']>): Promise<EditionRecord | null> {

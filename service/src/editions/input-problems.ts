@@ -30,7 +30,8 @@ function inputOf(error: ErrorObject): string | null {
 }
 
 function adviceFor(error: ErrorObject, name: string, properties: Readonly<Record<string, Property>>): string {
-  if (error.keyword === 'additionalProperties') return `There is no input of this name. The inputs are ${listed(Object.keys(properties))}.`;
+  if (error.keyword === 'additionalProperties')
+    return `There is no input of this name. The inputs are ${listed(Object.keys(properties))}.`;
   const property = properties[name] ?? {};
   const advice = `Give ${wanted(property)}.`;
   return error.keyword === 'required' ? `${String(property['title'] ?? name)} is missing. ${advice}` : advice;
@@ -38,8 +39,10 @@ function adviceFor(error: ErrorObject, name: string, properties: Readonly<Record
 
 function wanted(property: Property): string {
   const unit = typeof property['x-unit'] === 'string' && property['x-unit'] !== '' ? ` in ${property['x-unit']}` : '';
-  const orNull = Array.isArray(property['type']) && property['type'].includes('null') ? ', or null when it is not known' : '';
-  if (Array.isArray(property['enum'])) return `one of ${listed(property['enum'].filter((level) => level !== null).map(String))}${orNull}`;
+  const orNull =
+    Array.isArray(property['type']) && property['type'].includes('null') ? ', or null when it is not known' : '';
+  if (Array.isArray(property['enum']))
+    return `one of ${listed(property['enum'].filter((level) => level !== null).map(String))}${orNull}`;
   if (property['format'] === 'date') return `a day such as 2026-03-31${orNull}`;
   if (property['anyOf']) return `a text of 1 to 200 characters${orNull}`;
   const least = property['exclusiveMinimum'] === 0 ? ' above 0' : property['minimum'] === 0 ? ' of 0 or more' : '';

@@ -32,10 +32,21 @@ const hull: FormulaInput = {
     { level: 'steel', count: 2 },
   ],
 };
-const booked: FormulaInput = { ...number, name: 'booked', kind: 'date', unit: null, range: { min: 20454, max: 20543.75 }, typical: 20500.5 };
+const booked: FormulaInput = {
+  ...number,
+  name: 'booked',
+  kind: 'date',
+  unit: null,
+  range: { min: 20454, max: 20543.75 },
+  typical: 20500.5,
+};
 
-const schemaOf = (...inputs: FormulaInput[]) => inputSchemaOf({ inputs } as unknown as Formula, [{ column: 'length', label: 'Length overall', help: 'Without the bowsprit.' }]);
-const propertiesOf = (...inputs: FormulaInput[]) => schemaOf(...inputs)['properties'] as Record<string, Record<string, unknown>>;
+const schemaOf = (...inputs: FormulaInput[]) =>
+  inputSchemaOf({ inputs } as unknown as Formula, [
+    { column: 'length', label: 'Length overall', help: 'Without the bowsprit.' },
+  ]);
+const propertiesOf = (...inputs: FormulaInput[]) =>
+  schemaOf(...inputs)['properties'] as Record<string, Record<string, unknown>>;
 
 function fits(input: FormulaInput, value: unknown): boolean {
   const ajv = new Ajv2020({ strict: false, allowUnionTypes: true });
@@ -57,11 +68,22 @@ describe('the input schema of a formula', () => {
   });
 
   it('calls an input by its column when nobody named it, and leaves out a unit that is not known', () => {
-    expect(propertiesOf(hull)['hull']).toEqual({ type: 'string', enum: ['GRP', 'steel'], title: 'hull', 'x-typical': 'GRP', 'x-order': 1 });
+    expect(propertiesOf(hull)['hull']).toEqual({
+      type: 'string',
+      enum: ['GRP', 'steel'],
+      title: 'hull',
+      'x-typical': 'GRP',
+      'x-order': 1,
+    });
   });
 
   it('writes days as ISO 8601', () => {
-    expect(propertiesOf(booked)['booked']).toMatchObject({ type: 'string', format: 'date', 'x-range': ['2026-01-01', '2026-03-31'], 'x-typical': '2026-02-16' });
+    expect(propertiesOf(booked)['booked']).toMatchObject({
+      type: 'string',
+      format: 'date',
+      'x-range': ['2026-01-01', '2026-03-31'],
+      'x-typical': '2026-02-16',
+    });
     expect(fits(booked, '2026-02-30')).toBe(false);
     expect(fits(booked, '2026-02-28')).toBe(true);
   });
@@ -75,8 +97,14 @@ describe('the input schema of a formula', () => {
   });
 
   it('takes only readings that the transform can take', () => {
-    expect([fits({ ...number, transform: 'log' }, 0), fits({ ...number, transform: 'log' }, 0.1)]).toEqual([false, true]);
-    expect([fits({ ...number, transform: 'square-root' }, -0.1), fits({ ...number, transform: 'square-root' }, 0)]).toEqual([false, true]);
+    expect([fits({ ...number, transform: 'log' }, 0), fits({ ...number, transform: 'log' }, 0.1)]).toEqual([
+      false,
+      true,
+    ]);
+    expect([
+      fits({ ...number, transform: 'square-root' }, -0.1),
+      fits({ ...number, transform: 'square-root' }, 0),
+    ]).toEqual([false, true]);
   });
 
   it('takes a level that was never recorded only where the specification says so', () => {

@@ -21,7 +21,9 @@ export function inputSchemaOf(formula: Formula, words: readonly InputWords[]): I
   return {
     $schema: 'https://json-schema.org/draft/2020-12/schema',
     type: 'object',
-    properties: Object.fromEntries(formula.inputs.map((input, at) => [input.name, propertyOf(input, at + 1, wordsOf.get(input.name))])),
+    properties: Object.fromEntries(
+      formula.inputs.map((input, at) => [input.name, propertyOf(input, at + 1, wordsOf.get(input.name))]),
+    ),
     required: formula.inputs.filter((input) => input.missing === 'refuse').map((input) => input.name),
     additionalProperties: false,
   };

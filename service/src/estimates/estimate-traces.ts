@@ -20,7 +20,19 @@ export class EstimateTraces {
   async read(id: string): Promise<EstimateRecord> {
     const traced = await this.estimates.trace(id);
     if (!traced) throw notFound('estimate');
-    const { editionId, estimatorName, checksum, revisionId, revisionNumber, sha256, rowCount, recordSetId, recordSetName, approverId, approverName } = traced;
+    const {
+      editionId,
+      estimatorName,
+      checksum,
+      revisionId,
+      revisionNumber,
+      sha256,
+      rowCount,
+      recordSetId,
+      recordSetName,
+      approverId,
+      approverName,
+    } = traced;
     return {
       ...(JSON.parse(traced.answer) as Estimate),
       inputs: JSON.parse(traced.inputs) as EstimateRecord['inputs'],

@@ -37,9 +37,18 @@ export class EstimatesService {
   async estimate({ key, slug, inputs, edition: number }: EstimateCall): Promise<Estimate> {
     const { published, compiled, clock } = this.parts;
     const estimator = await published.requireCovered(key, slug);
-    const edition = number === undefined ? await this.editionInForce(estimator.id, slug) : await this.pinnedEdition(estimator.id, slug, number);
+    const edition =
+      number === undefined
+        ? await this.editionInForce(estimator.id, slug)
+        : await this.pinnedEdition(estimator.id, slug, number);
     const evaluation = (await compiled.get(edition.id)).evaluate(inputs, estimator.unit);
-    const estimate = { id: newId(), estimator: slug, edition: edition.number, ...evaluation, issuedAt: timeText(clock) };
+    const estimate = {
+      id: newId(),
+      estimator: slug,
+      edition: edition.number,
+      ...evaluation,
+      issuedAt: timeText(clock),
+    };
     await this.keep(key, edition, { estimate, inputs });
     return estimate;
   }
@@ -51,7 +60,11 @@ export class EstimatesService {
     return JSON.parse(answer) as Estimate;
   }
 
-  private async keep(key: AskingKey, edition: EditionRecord, { estimate, inputs }: { readonly estimate: Estimate; readonly inputs: EstimateRequest['inputs'] }): Promise<void> {
+  private async keep(
+    key: AskingKey,
+    edition: EditionRecord,
+    { estimate, inputs }: { readonly estimate: Estimate; readonly inputs: EstimateRequest['inputs'] },
+  ): Promise<void> {
     const { database, estimates, clock } = this.parts;
     const { id, value, interval, flags, issuedAt } = estimate;
     await database.unitOfWork(async () => {
@@ -67,7 +80,11 @@ export class EstimatesService {
 
   private quotaExceeded(key: AskingKey): DeskError {
     const retryAfter = secondsLeftInMonth(this.parts.clock);
-    return new DeskError('quota-exceeded', `This key answers ${key.monthlyQuota} estimates a month, counted in UTC. Ask the desk for more, or wait for the next month.`, { retryAfter });
+    return new DeskError(
+      'quota-exceeded',
+      `This key answers ${key.monthlyQuota} estimates a month, counted in UTC. Ask the desk for more, or wait for the next month.`,
+      { retryAfter },
+    );
   }
 
   private async editionInForce(estimatorId: string, slug: string): Promise<EditionRecord> {
@@ -79,9 +96,16 @@ export class EstimatesService {
   /** Editions that are or were in force; a withdrawn one until its sunset. */
   private async pinnedEdition(estimatorId: string, slug: string, number: number): Promise<EditionRecord> {
     const edition = await this.parts.editions.findByNumber(estimatorId, number);
-    if (!edition || edition.inForceAt === null) throw new DeskError('edition-unknown', `${slug} has no edition ${number} that was ever in force. Leave the number out to ask the one in force.`);
+    if (!edition || edition.inForceAt === null)
+      throw new DeskError(
+        'edition-unknown',
+        `${slug} has no edition ${number} that was ever in force. Leave the number out to ask the one in force.`,
+      );
     if (edition.state !== 'withdrawn') return edition;
     if (edition.sunsetAt !== null && edition.sunsetAt > timeText(this.parts.clock)) return edition;
-    throw new DeskError('edition-withdrawn', `Edition ${number} of ${slug} was withdrawn. Leave the number out to ask the one in force.`);
+    throw new DeskError(
+      'edition-withdrawn',
+      `Edition ${number} of ${slug} was withdrawn. Leave the number out to ask the one in force.`,
+    );
   }
 }

@@ -77,7 +77,8 @@ export class EstimatesStore {
   }
 
   async estimatorIdOf(slug: string): Promise<string | null> {
-    const row = (await this.database.connection('estimators').where({ slug }).first('id')) as { id: string } | undefined;
+    const row = (await this.database.connection('estimators').where({ slug }).first('id')) as
+      { id: string } | undefined;
     return row?.id ?? null;
   }
 
@@ -93,7 +94,14 @@ export class EstimatesStore {
       .orderBy('estimates.id', 'desc')
       .limit(limit)
       .offset(offset)
-      .select('estimates.id', 'editions.number as edition', 'estimates.value', 'estimates.low', 'estimates.high', 'estimates.flagCount')
+      .select(
+        'estimates.id',
+        'editions.number as edition',
+        'estimates.value',
+        'estimates.low',
+        'estimates.high',
+        'estimates.flagCount',
+      )
       .select('estimates.issuedAt', 'partners.name as partnerName', 'keys.label as keyLabel')) as EstimateSummary[];
   }
 
@@ -115,10 +123,32 @@ export class EstimatesStore {
       .leftJoin('people as approvers', 'approvers.id', 'editions.inForceBy')
       .where('estimates.id', id)
       .first(
-        ...['estimates.answer', 'estimates.inputs', 'estimates.editionId', 'estimators.name as estimatorName', 'editions.checksum'],
-        ...['recordRevisions.id as revisionId', 'recordRevisions.number as revisionNumber', 'recordRevisions.sha256', 'recordRevisions.rowCount'],
-        ...['recordSets.id as recordSetId', 'recordSets.name as recordSetName', 'approvers.id as approverId', 'approvers.name as approverName'],
-        ...['partners.id as partnerId', 'partners.name as partnerName', 'keys.id as keyId', 'keys.label as keyLabel', 'keys.kind as keyKind'],
+        ...[
+          'estimates.answer',
+          'estimates.inputs',
+          'estimates.editionId',
+          'estimators.name as estimatorName',
+          'editions.checksum',
+        ],
+        ...[
+          'recordRevisions.id as revisionId',
+          'recordRevisions.number as revisionNumber',
+          'recordRevisions.sha256',
+          'recordRevisions.rowCount',
+        ],
+        ...[
+          'recordSets.id as recordSetId',
+          'recordSets.name as recordSetName',
+          'approvers.id as approverId',
+          'approvers.name as approverName',
+        ],
+        ...[
+          'partners.id as partnerId',
+          'partners.name as partnerName',
+          'keys.id as keyId',
+          'keys.label as keyLabel',
+          'keys.kind as keyKind',
+        ],
       )) as TracedEstimate | undefined;
     return row ?? null;
   }

@@ -9,9 +9,14 @@ export interface PartnerRouterParts {
   readonly estimates: EstimatesService;
 }
 
-export function mountPartnerEstimates(routes: ContractRoutes<operations>, { published, estimates }: PartnerRouterParts): void {
+export function mountPartnerEstimates(
+  routes: ContractRoutes<operations>,
+  { published, estimates }: PartnerRouterParts,
+): void {
   routes.answer('listPublishedEstimators', ({ request }) => published.list(partnerKeyOf(request)));
   routes.answer('describeEstimator', ({ path, request }) => published.describe(partnerKeyOf(request), path.slug));
-  routes.answer('createEstimate', ({ path, body, request }) => estimates.estimate({ key: partnerKeyOf(request), slug: path.slug, ...body }));
+  routes.answer('createEstimate', ({ path, body, request }) =>
+    estimates.estimate({ key: partnerKeyOf(request), slug: path.slug, ...body }),
+  );
   routes.answer('readOwnEstimate', ({ path, request }) => estimates.readOwn(partnerKeyOf(request), path.id));
 }

@@ -26,24 +26,36 @@ export interface InForceRow extends PublishedRow {
   readonly cautions: string;
 }
 
-const estimatorColumns = ['id', 'slug', 'name', 'targetName', 'unit', 'description', 'intendedUse', 'notFor'].map((column) => `estimators.${column}`);
+const estimatorColumns = ['id', 'slug', 'name', 'targetName', 'unit', 'description', 'intendedUse', 'notFor'].map(
+  (column) => `estimators.${column}`,
+);
 
 export class PublishedStore {
   constructor(private readonly database: Database) {}
 
   async findBySlug(slug: string): Promise<PublishedRow | null> {
-    return ((await this.database.connection('estimators').where({ slug }).first(estimatorColumns)) as PublishedRow | undefined) ?? null;
+    return (
+      ((await this.database.connection('estimators').where({ slug }).first(estimatorColumns)) as
+        PublishedRow | undefined) ?? null
+    );
   }
 
   async covers(key: KeyReach, estimatorId: string): Promise<boolean> {
     if (key.allEstimators) return true;
-    return (await this.database.connection('keyEstimators').where({ keyId: key.id, estimatorId }).first('keyId')) !== undefined;
+    return (
+      (await this.database.connection('keyEstimators').where({ keyId: key.id, estimatorId }).first('keyId')) !==
+      undefined
+    );
   }
 
   /** Estimators with an edition in force, by name. */
   async listInForce(key: KeyReach): Promise<InForceRow[]> {
     const query = this.inForce().orderBy('estimators.name').orderBy('estimators.id');
-    if (!key.allEstimators) query.whereIn('estimators.id', this.database.connection('keyEstimators').where({ keyId: key.id }).select('estimatorId'));
+    if (!key.allEstimators)
+      query.whereIn(
+        'estimators.id',
+        this.database.connection('keyEstimators').where({ keyId: key.id }).select('estimatorId'),
+      );
     return (await query) as InForceRow[];
   }
 

@@ -47,14 +47,32 @@ export class EstimatorsService {
     const { estimators, journal, clock, database } = this.parts;
     const { slug, name, targetName, unit, description = '', intendedUse = '', notFor = '', cautions = [] } = given;
     const id = newId();
-    const estimator = { id, slug, name, targetName, unit, description, intendedUse, notFor, cautions, createdAt: timeText(clock), createdBy: person.id };
+    const estimator = {
+      id,
+      slug,
+      name,
+      targetName,
+      unit,
+      description,
+      intendedUse,
+      notFor,
+      cautions,
+      createdAt: timeText(clock),
+      createdBy: person.id,
+    };
     await database.unitOfWork(async () => {
       await translateUnique(
         () => estimators.insert(estimator),
         'estimators.slug',
         () => new DeskError('slug-taken', `${slug} names another estimator. Choose another public name.`),
       );
-      await journal.write({ actorId: person.id, action: 'estimator-created', subjectKind: 'estimator', subjectId: slug, summary: `${person.name} named the estimator ${name} (${slug})` });
+      await journal.write({
+        actorId: person.id,
+        action: 'estimator-created',
+        subjectKind: 'estimator',
+        subjectId: slug,
+        summary: `${person.name} named the estimator ${name} (${slug})`,
+      });
     });
     return this.read(slug);
   }
@@ -66,7 +84,13 @@ export class EstimatorsService {
       requireSameUnit(record, change);
       await estimators.update(record.id, change);
       const what = Object.keys(change).join(', ');
-      await journal.write({ actorId: person.id, action: 'estimator-changed', subjectKind: 'estimator', subjectId: slug, summary: `${person.name} changed ${what} of ${slug}` });
+      await journal.write({
+        actorId: person.id,
+        action: 'estimator-changed',
+        subjectKind: 'estimator',
+        subjectId: slug,
+        summary: `${person.name} changed ${what} of ${slug}`,
+      });
     });
     return this.read(slug);
   }
@@ -81,7 +105,10 @@ export class EstimatorsService {
 /** An edition answers in the unit it was drawn up with; another unit would change every number under its readers. */
 function requireSameUnit(record: EstimatorRecord, change: EstimatorChange): void {
   if (change.unit === undefined || change.unit === record.unit || record.editionCount === 0) return;
-  throw new DeskError('edition-state', `Editions of ${record.slug} answer in ${record.unit || 'no unit'}. Name a new estimator for another unit.`);
+  throw new DeskError(
+    'edition-state',
+    `Editions of ${record.slug} answer in ${record.unit || 'no unit'}. Name a new estimator for another unit.`,
+  );
 }
 
 function toAnswer(record: EstimatorRecord, inForce: EditionSummary | null): Estimator {

@@ -46,8 +46,17 @@ interface ListedRow extends EstimatorRow {
 export class EstimatorsStore {
   constructor(private readonly database: Database) {}
 
-  async insert(estimator: EstimatorWords & { readonly id: string; readonly slug: string; readonly createdAt: string; readonly createdBy: string }): Promise<void> {
-    await this.database.table<EstimatorRow>('estimators').insert({ ...estimator, cautions: JSON.stringify(estimator.cautions) });
+  async insert(
+    estimator: EstimatorWords & {
+      readonly id: string;
+      readonly slug: string;
+      readonly createdAt: string;
+      readonly createdBy: string;
+    },
+  ): Promise<void> {
+    await this.database
+      .table<EstimatorRow>('estimators')
+      .insert({ ...estimator, cautions: JSON.stringify(estimator.cautions) });
   }
 
   async update(id: string, change: Partial<EstimatorWords>): Promise<void> {
@@ -59,7 +68,11 @@ export class EstimatorsStore {
   }
 
   async list({ limit, offset }: Page): Promise<EstimatorRecord[]> {
-    const rows = (await this.withCounts().orderBy('estimators.name').orderBy('estimators.id').limit(limit).offset(offset)) as ListedRow[];
+    const rows = (await this.withCounts()
+      .orderBy('estimators.name')
+      .orderBy('estimators.id')
+      .limit(limit)
+      .offset(offset)) as ListedRow[];
     return rows.map(toRecord);
   }
 
@@ -69,7 +82,10 @@ export class EstimatorsStore {
   }
 
   async idsOfSlugs(slugs: readonly string[]): Promise<ReadonlyMap<string, string>> {
-    const rows = await this.database.table<EstimatorRow>('estimators').whereIn('slug', [...slugs]).select('id', 'slug');
+    const rows = await this.database
+      .table<EstimatorRow>('estimators')
+      .whereIn('slug', [...slugs])
+      .select('id', 'slug');
     return new Map(rows.map((row) => [row.slug, row.id]));
   }
 
@@ -81,7 +97,8 @@ export class EstimatorsStore {
   /** The counts come as subqueries, each answered from one index. */
   private withCounts() {
     const { connection } = this.database;
-    const counted = (table: string, name: string) => connection(table).count('*').where(`${table}.estimatorId`, connection.ref('estimators.id')).as(name);
+    const counted = (table: string, name: string) =>
+      connection(table).count('*').where(`${table}.estimatorId`, connection.ref('estimators.id')).as(name);
     return connection('estimators')
       .join('people', 'people.id', 'estimators.createdBy')
       .select('estimators.*', 'people.name as createdByName')

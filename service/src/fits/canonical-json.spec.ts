@@ -24,6 +24,7 @@ describe('canonical JSON', () => {
   });
 
   it('refuses what JSON cannot hold', () => {
-    for (const value of [NaN, Infinity, undefined, new Float64Array(2), 1n]) expect(() => canonicalJson({ value: [value] })).toThrow(TypeError);
+    for (const value of [NaN, Infinity, undefined, new Float64Array(2), 1n])
+      expect(() => canonicalJson({ value: [value] })).toThrow(TypeError);
   });
 });

@@ -7,7 +7,8 @@ export function canonicalJson(value: unknown): string {
   if (value === null || typeof value === 'boolean' || typeof value === 'string') return JSON.stringify(value);
   if (typeof value === 'number') return numberText(value);
   if (Array.isArray(value)) return `[${value.map(canonicalJson).join(',')}]`;
-  if (typeof value === 'object' && !ArrayBuffer.isView(value)) return objectText(value as Readonly<Record<string, unknown>>);
+  if (typeof value === 'object' && !ArrayBuffer.isView(value))
+    return objectText(value as Readonly<Record<string, unknown>>);
   throw new TypeError(`There is no JSON for ${typeof value === 'object' ? 'a typed array' : typeof value}.`);
 }
 

@@ -1,12 +1,18 @@
 import type { components } from '../../../openapi/types/desk';
-import type { FitSpecification, InputSpecification, PenaltySpecification, ValidationSpecification } from '../regression/specification';
+import type {
+  FitSpecification,
+  InputSpecification,
+  PenaltySpecification,
+  ValidationSpecification,
+} from '../regression/specification';
 
 export type Specification = components['schemas']['Specification'];
 export type SpecificationInput = components['schemas']['SpecificationInput'];
 
 /** The contract's specification as the engine takes it: null and absent are one, and the words for the form stay behind. */
 export function toEngineSpecification(specification: Specification): FitSpecification {
-  const { target, inputs, weightColumn, rowFilter, method, mixing, penalty, validation, intervalLevel, intercept } = specification;
+  const { target, inputs, weightColumn, rowFilter, method, mixing, penalty, validation, intervalLevel, intercept } =
+    specification;
   return {
     target: { column: target.column, transform: target.transform ?? 'none' },
     inputs: inputs.map(toEngineInput),
@@ -38,6 +44,12 @@ function toEngineValidation(validation: NonNullable<Specification['validation']>
 /** Every column that a fit reads. */
 export function columnsOf(specification: Specification): readonly string[] {
   const { target, inputs, weightColumn, rowFilter, validation } = specification;
-  const named = [target.column, ...inputs.map((input) => input.column), weightColumn, rowFilter?.column, validation?.column];
+  const named = [
+    target.column,
+    ...inputs.map((input) => input.column),
+    weightColumn,
+    rowFilter?.column,
+    validation?.column,
+  ];
   return [...new Set(named.filter((name): name is string => Boolean(name)))];
 }

@@ -7,12 +7,32 @@ const view = { nowMs, claimName: 'desk:20:own', isAlive: (processId: number) => 
 describe('a fit may be claimed', () => {
   it.each([
     ['when it waits', { state: 'queued', claimedBy: null, claimedAt: null }, true],
-    ['not while this process runs it', { state: 'running', claimedBy: 'desk:20:own', claimedAt: at(staleAfterMs * 2) }, false],
-    ['not while another living process runs it', { state: 'running', claimedBy: 'desk:21:other', claimedAt: at(1000) }, false],
-    ['when a living process has said nothing for too long', { state: 'running', claimedBy: 'desk:21:other', claimedAt: at(staleAfterMs + 1) }, true],
+    [
+      'not while this process runs it',
+      { state: 'running', claimedBy: 'desk:20:own', claimedAt: at(staleAfterMs * 2) },
+      false,
+    ],
+    [
+      'not while another living process runs it',
+      { state: 'running', claimedBy: 'desk:21:other', claimedAt: at(1000) },
+      false,
+    ],
+    [
+      'when a living process has said nothing for too long',
+      { state: 'running', claimedBy: 'desk:21:other', claimedAt: at(staleAfterMs + 1) },
+      true,
+    ],
     ['when its process has ended', { state: 'running', claimedBy: 'desk:22:gone', claimedAt: at(1000) }, true],
-    ['not while another runner of this very process has it', { state: 'running', claimedBy: 'desk:20:beside', claimedAt: at(1000) }, false],
-    ['not from another machine before its claim is stale', { state: 'running', claimedBy: 'yard:22:away', claimedAt: at(1000) }, false],
+    [
+      'not while another runner of this very process has it',
+      { state: 'running', claimedBy: 'desk:20:beside', claimedAt: at(1000) },
+      false,
+    ],
+    [
+      'not from another machine before its claim is stale',
+      { state: 'running', claimedBy: 'yard:22:away', claimedAt: at(1000) },
+      false,
+    ],
   ] as const)('%s', (_title, fit, expected) => {
     expect(mayBeClaimed({ id: 'fit00001', ...fit }, view)).toBe(expected);
   });

@@ -44,14 +44,26 @@ export class FitQueueStore {
 
   /** Oldest first. */
   async claimable(): Promise<ClaimableFit[]> {
-    const rows = await this.table().whereIn('state', ['queued', 'running']).orderBy('createdAt').orderBy('id').select('id', 'state', 'claimedBy', 'claimedAt');
+    const rows = await this.table()
+      .whereIn('state', ['queued', 'running'])
+      .orderBy('createdAt')
+      .orderBy('id')
+      .select('id', 'state', 'claimedBy', 'claimedAt');
     return rows as ClaimableFit[];
   }
 
   /** True for the one process whose claim was first; the fit then runs from its beginning. */
   async claim(fit: ClaimableFit, claimedBy: string, at: string): Promise<boolean> {
     const { id, state } = fit;
-    const running = { state: 'running', claimedBy, claimedAt: at, startedAt: at, stage: 'reading', stageDone: 0, stageTotal: 1 };
+    const running = {
+      state: 'running',
+      claimedBy,
+      claimedAt: at,
+      startedAt: at,
+      stage: 'reading',
+      stageDone: 0,
+      stageTotal: 1,
+    };
     const untouched = { id, state, claimedBy: fit.claimedBy, claimedAt: fit.claimedAt };
     return (await this.table().where(untouched).update(running)) === 1;
   }
@@ -70,16 +82,38 @@ export class FitQueueStore {
   }
 
   async saveProgress(id: string, claimedBy: string, progress: Progress): Promise<void> {
-    await this.running(id, claimedBy).update({ stage: progress.stage, stageDone: progress.done, stageTotal: progress.total });
+    await this.running(id, claimedBy).update({
+      stage: progress.stage,
+      stageDone: progress.done,
+      stageTotal: progress.total,
+    });
   }
 
-  async finish(id: string, claimedBy: string, finished: FinishedColumns & { readonly finishedAt: string }): Promise<boolean> {
-    const change = { ...finished, state: 'done', stage: 'done', stageDone: 1, stageTotal: 1, claimedBy: null, claimedAt: null };
+  async finish(
+    id: string,
+    claimedBy: string,
+    finished: FinishedColumns & { readonly finishedAt: string },
+  ): Promise<boolean> {
+    const change = {
+      ...finished,
+      state: 'done',
+      stage: 'done',
+      stageDone: 1,
+      stageTotal: 1,
+      claimedBy: null,
+      claimedAt: null,
+    };
     return (await this.running(id, claimedBy).update(change)) === 1;
   }
 
   async fail(id: string, claimedBy: string, failure: FitFailure, at: string): Promise<boolean> {
-    const change = { state: 'failed', failure: JSON.stringify(failure), finishedAt: at, claimedBy: null, claimedAt: null };
+    const change = {
+      state: 'failed',
+      failure: JSON.stringify(failure),
+      finishedAt: at,
+      claimedBy: null,
+      claimedAt: null,
+    };
     return (await this.running(id, claimedBy).update(change)) === 1;
   }
 
@@ -90,7 +124,15 @@ export class FitQueueStore {
 
   /** Back into the queue: the process ends before the fit does. */
   async release(id: string, claimedBy: string): Promise<void> {
-    await this.running(id, claimedBy).update({ state: 'queued', stage: 'queued', stageDone: 0, stageTotal: 1, claimedBy: null, claimedAt: null, startedAt: null });
+    await this.running(id, claimedBy).update({
+      state: 'queued',
+      stage: 'queued',
+      stageDone: 0,
+      stageTotal: 1,
+      claimedBy: null,
+      claimedAt: null,
+      startedAt: null,
+    });
   }
 
   private table() {

@@ -52,7 +52,9 @@ export class FitRunner {
 
   /** Looks into the queue. Never call it inside a unit of work: the fit would outlive the transaction. */
   wake(): void {
-    this.looking = (this.looking ?? Promise.resolve()).then(() => this.claimAll()).catch((error: unknown) => this.parts.log.error({ err: error }, 'the queue of fits could not be read'));
+    this.looking = (this.looking ?? Promise.resolve())
+      .then(() => this.claimAll())
+      .catch((error: unknown) => this.parts.log.error({ err: error }, 'the queue of fits could not be read'));
   }
 
   /** Stops the fit if this process runs it. */
@@ -92,10 +94,15 @@ export class FitRunner {
     if (!fit) return;
     const progress = new ProgressThrottle<Parameters<FitQueueStore['saveProgress']>[2]>(progressEveryMs, (newest) => {
       feed.publish(id, { state: 'running', progress: newest });
-      queue.saveProgress(id, this.claimName, newest).catch((error: unknown) => this.parts.log.warn({ err: error, fitId: id }, 'progress could not be kept'));
+      queue
+        .saveProgress(id, this.claimName, newest)
+        .catch((error: unknown) => this.parts.log.warn({ err: error, fitId: id }, 'progress could not be kept'));
     });
     const { revisionId, specification } = fit;
-    const thread = startFitThread({ databasePath, revisionId, specification }, { onProgress: (step) => progress.offer(step), nodeArguments: threadArguments });
+    const thread = startFitThread(
+      { databasePath, revisionId, specification },
+      { onProgress: (step) => progress.offer(step), nodeArguments: threadArguments },
+    );
     this.running.set(id, { thread, stopping: null });
     const heart = setInterval(() => void this.beat(id), beatEveryMs).unref();
     const settled = this.outcomeOf(id, thread)
@@ -103,7 +110,14 @@ export class FitRunner {
         clearInterval(heart);
         progress.stop();
       })
-      .then((outcome) => this.parts.settlement.settle({ id, claimName: this.claimName, outcome, stopping: this.running.get(id)?.stopping ?? null }))
+      .then((outcome) =>
+        this.parts.settlement.settle({
+          id,
+          claimName: this.claimName,
+          outcome,
+          stopping: this.running.get(id)?.stopping ?? null,
+        }),
+      )
       .catch((error: unknown) => this.parts.log.error({ err: error, fitId: id }, 'the end of a fit could not be kept'))
       .finally(() => {
         this.running.delete(id);

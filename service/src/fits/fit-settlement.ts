@@ -57,18 +57,34 @@ export class FitSettlement {
   }
 
   private async noted(fit: EndedFit, state: FitState | null, summary: string): Promise<FitState | null> {
-    if (state) await this.parts.journal.write({ actorId: null, action: `fit-${state}`, subjectKind: 'fit', subjectId: fit.id, summary });
+    if (state)
+      await this.parts.journal.write({
+        actorId: null,
+        action: `fit-${state}`,
+        subjectKind: 'fit',
+        subjectId: fit.id,
+        summary,
+      });
     return state;
   }
 }
 
-const threadEnded: FitFailure = { code: 'internal', message: 'The fit’s thread ended before the fit did. Start it again.', column: null };
+const threadEnded: FitFailure = {
+  code: 'internal',
+  message: 'The fit’s thread ended before the fit did. Start it again.',
+  column: null,
+};
 
 /** What a broken thread means to the person who waits. */
 export function failureOf(error: unknown): FitFailure {
   if ((error as { code?: unknown }).code === 'ERR_WORKER_OUT_OF_MEMORY') {
-    return { code: 'out-of-memory', message: 'The records and inputs need more memory than the service has. Use fewer inputs or records.', column: null };
+    return {
+      code: 'out-of-memory',
+      message: 'The records and inputs need more memory than the service has. Use fewer inputs or records.',
+      column: null,
+    };
   }
-  const message = 'The fit stopped for a reason that is in the service’s log. Start it again; if it stops again, tell an administrator.';
+  const message =
+    'The fit stopped for a reason that is in the service’s log. Start it again; if it stops again, tell an administrator.';
   return { code: 'internal', message, column: null };
 }

@@ -12,7 +12,8 @@ const say = (message: FitMessage): void => parentPort?.postMessage(message);
 async function compute(task: FitTask): Promise<FitOutcome> {
   const records = await readRecordTable(task.databasePath, task.revisionId, columnsOf(task.specification));
   const { result, formula } = await fitRecords(records, toEngineSpecification(task.specification), {
-    onProgress: ({ stage, done, total }) => say({ kind: 'progress', progress: { stage, done: Math.round(done), total: Math.round(total) } }),
+    onProgress: ({ stage, done, total }) =>
+      say({ kind: 'progress', progress: { stage, done: Math.round(done), total: Math.round(total) } }),
   });
   const { penalty, accuracy } = result;
   return {

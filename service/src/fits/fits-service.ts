@@ -42,8 +42,21 @@ export class FitsService {
     await database.unitOfWork(async () => {
       const estimator = await this.requireEstimator(slug);
       await this.requireSound({ revisionId, specification });
-      await fits.insert({ id, estimatorId: estimator.id, revisionId, specification, createdAt: timeText(clock), createdBy: person.id });
-      await journal.write({ actorId: person.id, action: 'fit-started', subjectKind: 'fit', subjectId: id, summary: `${person.name} started a ${specification.method} fit for ${slug}` });
+      await fits.insert({
+        id,
+        estimatorId: estimator.id,
+        revisionId,
+        specification,
+        createdAt: timeText(clock),
+        createdBy: person.id,
+      });
+      await journal.write({
+        actorId: person.id,
+        action: 'fit-started',
+        subjectKind: 'fit',
+        subjectId: id,
+        summary: `${person.name} started a ${specification.method} fit for ${slug}`,
+      });
     });
     runner.wake();
     return { id, state: 'queued' };
@@ -59,7 +72,16 @@ export class FitsService {
     const record = await this.require(id);
     const texts = await this.parts.fits.texts(id);
     const editions = await this.parts.editions.listOfFit(id);
-    const { estimatorId: _id, lambda: _lambda, effectiveDegreesOfFreedom: _df, rmse: _rmse, r2: _r2, createdBy, failure, ...rest } = record;
+    const {
+      estimatorId: _id,
+      lambda: _lambda,
+      effectiveDegreesOfFreedom: _df,
+      rmse: _rmse,
+      r2: _r2,
+      createdBy,
+      failure,
+      ...rest
+    } = record;
     return {
       ...rest,
       createdBy: { ...createdBy },
@@ -76,7 +98,13 @@ export class FitsService {
       const { state } = await this.require(id);
       const stopped = (await fits.cancelQueued(id, timeText(clock))) || (await fits.askCancel(id));
       if (!stopped) throw new DeskError('fit-ended', `The fit is ${state} already. Start another if you need one.`);
-      await journal.write({ actorId: person.id, action: 'fit-cancelled', subjectKind: 'fit', subjectId: id, summary: `${person.name} cancelled the fit ${id}` });
+      await journal.write({
+        actorId: person.id,
+        action: 'fit-cancelled',
+        subjectKind: 'fit',
+        subjectId: id,
+        summary: `${person.name} cancelled the fit ${id}`,
+      });
     });
     runner.cancel(id);
     const step = await this.progress(id);
@@ -118,8 +146,11 @@ export class FitsService {
 
   private async requireSound({ revisionId, specification }: FitNew): Promise<void> {
     const facts = await this.parts.revisions.find(revisionId);
-    const errors = facts ? checkSpecification(specification, facts) : [{ pointer: '#/revisionId', detail: 'There is no such revision of a record set.' }];
-    if (errors.length > 0) throw new DeskError('specification-invalid', `Mend the specification: ${errors[0].detail}`, { errors });
+    const errors = facts
+      ? checkSpecification(specification, facts)
+      : [{ pointer: '#/revisionId', detail: 'There is no such revision of a record set.' }];
+    if (errors.length > 0)
+      throw new DeskError('specification-invalid', `Mend the specification: ${errors[0].detail}`, { errors });
   }
 }
 
@@ -127,5 +158,18 @@ function toSummary(fit: FitRecord): FitSummary {
   const { id, state, revision, createdAt, createdBy, lambda, effectiveDegreesOfFreedom, rmse, r2, specification } = fit;
   const { method, penalty, inputs } = specification;
   const rule = method === 'least-squares' ? 'fixed' : (penalty?.rule ?? 'minimum');
-  return { id, state, method, rule, inputCount: inputs.length, revision, createdAt, createdBy: { ...createdBy }, lambda, effectiveDegreesOfFreedom, rmse, r2 };
+  return {
+    id,
+    state,
+    method,
+    rule,
+    inputCount: inputs.length,
+    revision,
+    createdAt,
+    createdBy: { ...createdBy },
+    lambda,
+    effectiveDegreesOfFreedom,
+    rmse,
+    r2,
+  };
 }

@@ -84,7 +84,18 @@ type ListedRow = Omit<FitRow, 'result' | 'formula'> & {
   recordSetName: string;
 };
 
-const listedColumns = ['id', 'estimatorId', 'revisionId', 'specification', 'state', 'stage', 'stageDone', 'stageTotal', 'failure', 'lambda']
+const listedColumns = [
+  'id',
+  'estimatorId',
+  'revisionId',
+  'specification',
+  'state',
+  'stage',
+  'stageDone',
+  'stageTotal',
+  'failure',
+  'lambda',
+]
   .concat(['effectiveDegreesOfFreedom', 'rmse', 'r2', 'createdAt', 'createdBy', 'startedAt', 'finishedAt'])
   .map((column) => `fits.${column}`);
 
@@ -93,7 +104,9 @@ export class FitsStore {
 
   async insert(fit: NewFit): Promise<void> {
     const waiting = { state: 'queued' as const, stage: 'queued', stageDone: 0, stageTotal: 1, cancelAsked: false };
-    await this.database.table<FitRow>('fits').insert({ ...fit, specification: JSON.stringify(fit.specification), ...waiting });
+    await this.database
+      .table<FitRow>('fits')
+      .insert({ ...fit, specification: JSON.stringify(fit.specification), ...waiting });
   }
 
   async find(id: string): Promise<FitRecord | null> {
@@ -102,7 +115,12 @@ export class FitsStore {
   }
 
   async list(estimatorId: string, { limit, offset }: Page): Promise<FitRecord[]> {
-    const rows = (await this.listed().where({ estimatorId }).orderBy('fits.createdAt', 'desc').orderBy('fits.id').limit(limit).offset(offset)) as ListedRow[];
+    const rows = (await this.listed()
+      .where({ estimatorId })
+      .orderBy('fits.createdAt', 'desc')
+      .orderBy('fits.id')
+      .limit(limit)
+      .offset(offset)) as ListedRow[];
     return rows.map(toRecord);
   }
 
@@ -118,7 +136,10 @@ export class FitsStore {
   }
 
   async stateOf(id: string): Promise<{ state: FitState; progress: Progress } | null> {
-    const row = await this.database.table<FitRow>('fits').where({ id }).first('state', 'stage', 'stageDone', 'stageTotal');
+    const row = await this.database
+      .table<FitRow>('fits')
+      .where({ id })
+      .first('state', 'stage', 'stageDone', 'stageTotal');
     return row ? { state: row.state, progress: progressOf(row) } : null;
   }
 
@@ -130,7 +151,9 @@ export class FitsStore {
 
   /** Whoever runs it sees this at its next heartbeat. */
   async askCancel(id: string): Promise<boolean> {
-    return (await this.database.table<FitRow>('fits').where({ id, state: 'running' }).update({ cancelAsked: true })) === 1;
+    return (
+      (await this.database.table<FitRow>('fits').where({ id, state: 'running' }).update({ cancelAsked: true })) === 1
+    );
   }
 
   private listed() {
@@ -147,10 +170,27 @@ export class FitsStore {
   }
 }
 
-const progressOf = (row: Pick<FitRow, 'stage' | 'stageDone' | 'stageTotal'>): Progress => ({ stage: row.stage, done: row.stageDone, total: row.stageTotal });
+const progressOf = (row: Pick<FitRow, 'stage' | 'stageDone' | 'stageTotal'>): Progress => ({
+  stage: row.stage,
+  done: row.stageDone,
+  total: row.stageTotal,
+});
 
 function toRecord(row: ListedRow): FitRecord {
-  const { id, estimatorId, estimatorName, unit, state, createdAt, startedAt, finishedAt, lambda, effectiveDegreesOfFreedom, rmse, r2 } = row;
+  const {
+    id,
+    estimatorId,
+    estimatorName,
+    unit,
+    state,
+    createdAt,
+    startedAt,
+    finishedAt,
+    lambda,
+    effectiveDegreesOfFreedom,
+    rmse,
+    r2,
+  } = row;
   return {
     ...{ id, estimatorId, estimator: row.slug, estimatorName, unit, state, createdAt, startedAt, finishedAt },
     ...{ lambda, effectiveDegreesOfFreedom, rmse, r2 },

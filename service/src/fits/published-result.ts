@@ -7,8 +7,13 @@ type Weight = components['schemas']['Weight'];
 
 /** The engine's result with the contract's names; everything else that the engine found stays beside them. */
 export function publishedResult(result: EngineResult, formula: Formula): PublishedResult {
-  const chosenBy = (rule: string): number | null => result.penalty.choices.find((choice) => choice.rule === rule)?.lambda ?? null;
-  const penalty = { ...result.penalty, minimumLambda: chosenBy('minimum'), oneStandardErrorLambda: chosenBy('one-standard-error') };
+  const chosenBy = (rule: string): number | null =>
+    result.penalty.choices.find((choice) => choice.rule === rule)?.lambda ?? null;
+  const penalty = {
+    ...result.penalty,
+    minimumLambda: chosenBy('minimum'),
+    oneStandardErrorLambda: chosenBy('one-standard-error'),
+  };
   const path = result.path.map((point) => ({ ...point, standardised: [...point.standardised] }));
   const report = { ...result.report, warnings: [...result.report.warnings] };
   return { ...result, penalty, weights: weightsOf(result.weights, formula), path, report };
@@ -25,7 +30,11 @@ function weightsOf(weights: readonly FitWeight[], formula: Formula): Weight[] {
 }
 
 /** A category's rows carry their level; the columns of a spline and the missing-reading indicator are terms. */
-function rowName(weight: FitWeight, input: FormulaInput | undefined, place: number): { level: string | null; term: string | null } {
+function rowName(
+  weight: FitWeight,
+  input: FormulaInput | undefined,
+  place: number,
+): { level: string | null; term: string | null } {
   const name = weight.level ?? null;
   const isLevel = input?.kind === 'category' && place < (input.levels?.length ?? 0);
   return isLevel ? { level: name, term: null } : { level: null, term: name };

@@ -6,7 +6,8 @@ export class RevisionFactsStore {
   constructor(private readonly database: Database) {}
 
   async find(revisionId: string): Promise<RecordFacts | null> {
-    const revision = (await this.database.connection('recordRevisions').where({ id: revisionId }).first('rowCount')) as { rowCount: number } | undefined;
+    const revision = (await this.database.connection('recordRevisions').where({ id: revisionId }).first('rowCount')) as
+      { rowCount: number } | undefined;
     if (!revision) return null;
     const columns = (await this.database
       .connection('recordColumns')

@@ -39,7 +39,12 @@ export function answerListedOrigins({ keys, log }: Pick<OriginRules, 'keys' | 'l
       if (request.method !== 'OPTIONS') return next();
       // The page is told nothing by its browser, so the desk's log must.
       log.warn({ origin, requestId: request.requestId }, 'a site that nobody lists asked to call');
-      return next(new DeskError('site-not-listed', `${origin} is not listed by any partner. List it in the partner’s sites, exactly so.`));
+      return next(
+        new DeskError(
+          'site-not-listed',
+          `${origin} is not listed by any partner. List it in the partner’s sites, exactly so.`,
+        ),
+      );
     }, next);
   };
 }
@@ -51,20 +56,42 @@ export function answerListedOrigins({ keys, log }: Pick<OriginRules, 'keys' | 'l
 export function requireListedOrigin({ keys, log, publicUrl }: OriginRules): RequestHandler {
   const refuse = (request: Request, detail: string): DeskError => {
     const { id, kind } = partnerKeyOf(request);
-    log.warn({ keyId: id, keyKind: kind, origin: request.get('origin') ?? null, requestId: request.requestId }, 'a key was used from a site that is not listed');
+    log.warn(
+      { keyId: id, keyKind: kind, origin: request.get('origin') ?? null, requestId: request.requestId },
+      'a key was used from a site that is not listed',
+    );
     return new DeskError('site-not-listed', detail);
   };
   return (request, _response, next) => {
     const key = partnerKeyOf(request);
     const origin = request.get('origin');
     if (key.kind === 'partner') {
-      const isForeign = origin !== undefined && origin !== publicUrl && origin !== `${request.protocol}://${request.get('host')}`;
-      return next(isForeign ? refuse(request, 'A partner key belongs on your server, never in a page. Replace it, and use an embed key in pages.') : undefined);
+      const isForeign =
+        origin !== undefined && origin !== publicUrl && origin !== `${request.protocol}://${request.get('host')}`;
+      return next(
+        isForeign
+          ? refuse(
+              request,
+              'A partner key belongs on your server, never in a page. Replace it, and use an embed key in pages.',
+            )
+          : undefined,
+      );
     }
-    if (origin === undefined || origin === 'null') return next(refuse(request, 'An embed key works from the pages of listed sites only; this call named no site.'));
-    keys.isSiteOf(key, origin).then(
-      (isListed) => next(isListed ? undefined : refuse(request, `${origin} is not listed for this key’s partner. List it in the partner’s sites, exactly so.`)),
-      next,
-    );
+    if (origin === undefined || origin === 'null')
+      return next(refuse(request, 'An embed key works from the pages of listed sites only; this call named no site.'));
+    keys
+      .isSiteOf(key, origin)
+      .then(
+        (isListed) =>
+          next(
+            isListed
+              ? undefined
+              : refuse(
+                  request,
+                  `${origin} is not listed for this key’s partner. List it in the partner’s sites, exactly so.`,
+                ),
+          ),
+        next,
+      );
   };
 }

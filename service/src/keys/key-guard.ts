@@ -20,6 +20,11 @@ export function keyGuard(operationId: string): RequestHandler {
   return (request, _response, next) => {
     const { kind } = partnerKeyOf(request);
     if (kinds.includes(kind)) return next();
-    return next(new DeskError('key-out-of-scope', 'An embed key may describe estimators and ask for estimates. Use a partner key from your server for this.'));
+    return next(
+      new DeskError(
+        'key-out-of-scope',
+        'An embed key may describe estimators and ask for estimates. Use a partner key from your server for this.',
+      ),
+    );
   };
 }

@@ -43,7 +43,8 @@ export function limitRefusals(recognise: RequestHandler): RequestHandler {
     handler: exceeded('Too many calls came from your address without a good key. Check the key before you call again.'),
   });
   return (request, response, next) => {
-    const count = (refusal: unknown): void => void limiter(request, response, (broken?: unknown) => next(broken ?? refusal));
+    const count = (refusal: unknown): void =>
+      void limiter(request, response, (broken?: unknown) => next(broken ?? refusal));
     Promise.resolve(limiter.getKey(ipKeyGenerator(request.ip ?? ''))).then((known) => {
       if (known && known.totalHits >= mostRefusalsPerMinute) return count(undefined);
       return recognise(request, response, (error?: unknown) => {

@@ -24,7 +24,8 @@ describe('the text of a key', () => {
 
   it('is refused when cut, lengthened or surrounded', () => {
     const { text } = newKeyText('partner');
-    for (const wrong of ['', text.slice(1), text.slice(0, -1), `${text}a`, ` ${text}`, `${text}\n`]) expect(parseKeyText(wrong)).toBeNull();
+    for (const wrong of ['', text.slice(1), text.slice(0, -1), `${text}a`, ` ${text}`, `${text}\n`])
+      expect(parseKeyText(wrong)).toBeNull();
   });
 
   it('carries the CRC-32 of what stands before it', () => {

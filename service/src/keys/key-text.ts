@@ -14,7 +14,9 @@ const prefixes: Readonly<Record<KeyKind, string>> = { partner: 'tbk', embed: 'tb
 
 const newPublicId = customAlphabet(base62, publicIdLength);
 const newSecret = customAlphabet(base62, secretLength);
-const form = new RegExp(`^(tbk|tbe)_([0-9A-Za-z]{${publicIdLength}})_([0-9A-Za-z]{${secretLength}})([0-9A-Za-z]{${checksumLength}})$`);
+const form = new RegExp(
+  `^(tbk|tbe)_([0-9A-Za-z]{${publicIdLength}})_([0-9A-Za-z]{${secretLength}})([0-9A-Za-z]{${checksumLength}})$`,
+);
 
 export interface ParsedKey {
   readonly kind: KeyKind;

@@ -37,9 +37,31 @@ export class KeysService {
       await this.requireOwnPartner(person, partnerId);
       await this.requireSiteFor(kind, partnerId);
       const estimatorIds = await this.idsOfScope(given.estimators ?? 'all');
-      const columns = { id, partnerId, publicId, secretHash: hashKeyText(text), lastFour: text.slice(-4), kind, label, perMinute, monthlyQuota };
-      await keys.insert({ ...columns, expiresAt: this.futureTime(expiresAt), createdAt: timeText(clock), createdBy: person.id, estimatorIds });
-      await journal.write({ actorId: person.id, action: 'key-issued', subjectKind: 'key', subjectId: id, summary: `${person.name} issued the ${kind} key ${publicId} (${label})` });
+      const columns = {
+        id,
+        partnerId,
+        publicId,
+        secretHash: hashKeyText(text),
+        lastFour: text.slice(-4),
+        kind,
+        label,
+        perMinute,
+        monthlyQuota,
+      };
+      await keys.insert({
+        ...columns,
+        expiresAt: this.futureTime(expiresAt),
+        createdAt: timeText(clock),
+        createdBy: person.id,
+        estimatorIds,
+      });
+      await journal.write({
+        actorId: person.id,
+        action: 'key-issued',
+        subjectKind: 'key',
+        subjectId: id,
+        summary: `${person.name} issued the ${kind} key ${publicId} (${label})`,
+      });
     });
     return { id, key: text, details: this.toAnswer(await this.require(id)) };
   }
@@ -52,7 +74,13 @@ export class KeysService {
       if (!mayManage(person, key.partnerId)) throw notFound('key');
       if (key.revokedAt !== null) return;
       await keys.revoke(id, timeText(clock));
-      await journal.write({ actorId: person.id, action: 'key-revoked', subjectKind: 'key', subjectId: id, summary: `${person.name} revoked the ${key.kind} key ${key.publicId} (${key.label})` });
+      await journal.write({
+        actorId: person.id,
+        action: 'key-revoked',
+        subjectKind: 'key',
+        subjectId: id,
+        summary: `${person.name} revoked the ${key.kind} key ${key.publicId} (${key.label})`,
+      });
     });
     return this.toAnswer(await this.require(id));
   }
@@ -66,12 +94,21 @@ export class KeysService {
   /** The key behind a text, or the refusal that says why not. */
   async recognise(text: string): Promise<PartnerKey> {
     const parsed = parseKeyText(text);
-    if (!parsed) throw new DeskError('key-malformed', 'Copy the key whole, from the first letter to the last, and send it in X-Api-Key.');
+    if (!parsed)
+      throw new DeskError(
+        'key-malformed',
+        'Copy the key whole, from the first letter to the last, and send it in X-Api-Key.',
+      );
     const row = await this.parts.keys.findForCall(parsed.publicId);
     if (!row || !isKeyOfHash(text, row.secretHash)) throw new DeskError('key-refused', 'Ask the desk for a new key.');
     const now = timeText(this.parts.clock);
-    if (row.revokedAt !== null) throw new DeskError('key-revoked', `It was revoked at ${row.revokedAt}. Use another key, or ask the desk for one.`);
-    if (row.expiresAt !== null && row.expiresAt <= now) throw new DeskError('key-expired', `It ran out at ${row.expiresAt}. Use another key, or ask the desk for one.`);
+    if (row.revokedAt !== null)
+      throw new DeskError(
+        'key-revoked',
+        `It was revoked at ${row.revokedAt}. Use another key, or ask the desk for one.`,
+      );
+    if (row.expiresAt !== null && row.expiresAt <= now)
+      throw new DeskError('key-expired', `It ran out at ${row.expiresAt}. Use another key, or ask the desk for one.`);
     await this.noteUse(row.id, row.lastUsedAt);
     const { id, kind, partnerId, perMinute, monthlyQuota } = row;
     return { id, kind, partnerId, allEstimators: Boolean(row.allEstimators), perMinute, monthlyQuota };
@@ -113,8 +150,15 @@ export class KeysService {
   private async idsOfScope(scope: NonNullable<KeyNew['estimators']>): Promise<readonly string[] | null> {
     if (scope === 'all') return null;
     const ids = await this.parts.estimators.idsOfSlugs(scope);
-    const errors = scope.flatMap((slug, at) => (ids.has(slug) ? [] : [{ pointer: `#/estimators/${at}`, detail: `There is no estimator ${slug}.` }]));
-    if (errors.length > 0) throw new DeskError('estimator-unknown', 'Name estimators by their public names, as the list of estimators shows them.', { errors });
+    const errors = scope.flatMap((slug, at) =>
+      ids.has(slug) ? [] : [{ pointer: `#/estimators/${at}`, detail: `There is no estimator ${slug}.` }],
+    );
+    if (errors.length > 0)
+      throw new DeskError(
+        'estimator-unknown',
+        'Name estimators by their public names, as the list of estimators shows them.',
+        { errors },
+      );
     return [...ids.values()];
   }
 

@@ -42,9 +42,13 @@ export class KeysStore {
 
   async insert(key: NewKey): Promise<void> {
     const { estimatorIds, ...columns } = key;
-    await this.database.table<KeyRow>('keys').insert({ ...columns, allEstimators: estimatorIds === null, lastUsedAt: null, revokedAt: null });
+    await this.database
+      .table<KeyRow>('keys')
+      .insert({ ...columns, allEstimators: estimatorIds === null, lastUsedAt: null, revokedAt: null });
     if (!estimatorIds) return;
-    await this.database.table('keyEstimators').insert(estimatorIds.map((estimatorId) => ({ keyId: key.id, estimatorId })));
+    await this.database
+      .table('keyEstimators')
+      .insert(estimatorIds.map((estimatorId) => ({ keyId: key.id, estimatorId })));
   }
 
   async find(id: string, month: string): Promise<KeyRecord | null> {
@@ -53,7 +57,10 @@ export class KeysStore {
   }
 
   async listOfPartner(partnerId: string, month: string): Promise<KeyRecord[]> {
-    const rows = (await this.listed(month).where('keys.partnerId', partnerId).orderBy('keys.createdAt', 'desc').orderBy('keys.id')) as ListedRow[];
+    const rows = (await this.listed(month)
+      .where('keys.partnerId', partnerId)
+      .orderBy('keys.createdAt', 'desc')
+      .orderBy('keys.id')) as ListedRow[];
     return this.withSlugs(rows);
   }
 
@@ -94,7 +101,10 @@ export class KeysStore {
     const scopes = (await this.database
       .connection('keyEstimators')
       .join('estimators', 'estimators.id', 'keyEstimators.estimatorId')
-      .whereIn('keyEstimators.keyId', rows.map((row) => row.id))
+      .whereIn(
+        'keyEstimators.keyId',
+        rows.map((row) => row.id),
+      )
       .orderBy('estimators.slug')
       .select('keyEstimators.keyId as keyId', 'estimators.slug as slug')) as { keyId: string; slug: string }[];
     return rows.map((row) => {
