@@ -115,7 +115,7 @@ function marksOf(
 }
 
 /** Effective degrees of freedom at a λ: those of the nearest point of the path on the log scale, or of the fit itself. */
-function degreesAt(result: FitResult, lambda: number): number {
+export function degreesAt(result: FitResult, lambda: number): number {
   if (lambda === result.penalty.lambda) return result.penalty.effectiveDegreesOfFreedom;
   const distance = (point: PathPoint): number =>
     point.lambda > 0 && lambda > 0 ? Math.abs(Math.log(point.lambda / lambda)) : Math.abs(point.lambda - lambda);

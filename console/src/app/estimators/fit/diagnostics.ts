@@ -3,6 +3,8 @@
  * and has the shape that is expected; anything else is passed over.
  */
 export interface Diagnostics {
+  /** What each rule would have chosen. */
+  readonly choices: readonly { readonly rule: string; readonly lambda: number }[];
   readonly coverage: readonly CoverageQuarter[];
   readonly inflation: readonly { readonly name: string; readonly factor: number | null }[];
   readonly conditionIndices: readonly (number | null)[];
@@ -43,8 +45,8 @@ export interface HeldOutRecord {
 
 type Plain = Readonly<Record<string, unknown>>;
 
-/** Whether there is anything to set out in tables; held-out records have a figure of their own. */
-export function hasTables({ heldOut: _, ...tables }: Diagnostics): boolean {
+/** Whether there is anything to set out in tables; held-out records and rules have places of their own. */
+export function hasTables({ heldOut: _, choices: __, ...tables }: Diagnostics): boolean {
   return Object.values(tables).some((table: readonly unknown[]) => table.length > 0);
 }
 
@@ -52,6 +54,7 @@ export function diagnosticsOf(result: object): Diagnostics {
   const whole = asPlain(result);
   const more = asPlain(whole['diagnostics']);
   return {
+    choices: rows(asPlain(whole['penalty'])['choices']).flatMap(choiceOf),
     coverage: numberRows(asPlain(whole['accuracy'])['coverageByQuarter'], ['from', 'to', 'records', 'coverage']),
     inflation: rows(more['varianceInflation']).map((row) => ({
       name: memberName(row),
@@ -81,6 +84,10 @@ function sharedLoadOf(row: Plain): readonly SharedLoad[] {
     { method: 'Lasso', weights: numbers(row['lasso']) },
   ].filter(({ weights }) => weights.length === members.length);
   return [{ members, smallestCorrelation: numberOrNull(row['smallestCorrelation']), splits }];
+}
+
+function choiceOf({ rule, lambda }: Plain): readonly { readonly rule: string; readonly lambda: number }[] {
+  return typeof rule === 'string' && typeof lambda === 'number' ? [{ rule, lambda }] : [];
 }
 
 function frequencyOf(row: Plain): readonly { readonly name: string; readonly frequency: number }[] {

@@ -101,6 +101,19 @@ describe('the fit page', () => {
     expect(pageText()).toContain('90% where 90% were to be');
   });
 
+  it('says what each rule would have chosen', async () => {
+    const screen = await opened();
+    const choices = [
+      { rule: 'minimum', lambda: 0.1 },
+      { rule: 'one-standard-error', lambda: 1 },
+    ];
+    await screen.answer(url, { ...fit, result: { ...result, penalty: { ...result.penalty, choices } } });
+    expect(tableTexts(find('table', 'What each rule would choose')).slice(1)).toEqual([
+      ['Minimum', '0.100', '3.35', ''],
+      ['One standard error', '1', '2.50', 'chosen'],
+    ]);
+  });
+
   it('draws curve and path, and shows each as a table instead', async () => {
     const screen = await opened();
     await screen.answer(url, fit);

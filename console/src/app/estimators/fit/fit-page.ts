@@ -29,6 +29,7 @@ import { FitReport } from './fit-report';
 import { HeldOutFigure } from './held-out-figure';
 import { PenaltyPathFigure } from './penalty-path-figure';
 import { PenaltyTable } from './penalty-table';
+import { RuleChoices } from './rule-choices';
 import { WeightsTable } from './weights-table';
 
 /** One fit: its progress while it is under way, and what it found. */
@@ -49,6 +50,7 @@ import { WeightsTable } from './weights-table';
     ProblemNotice,
     RevisionFacts,
     RouterLink,
+    RuleChoices,
     Sheet,
     SheetSection,
     SpecificationWords,
@@ -90,6 +92,7 @@ export class FitPage {
     const result = this.result();
     return result && diagnosticsOf(result);
   });
+  protected readonly choices = computed(() => this.found()?.choices ?? []);
   protected readonly heldOut = computed(() => this.found()?.heldOut ?? []);
   protected readonly diagnostics = computed(() => {
     const found = this.found();

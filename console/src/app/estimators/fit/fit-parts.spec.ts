@@ -31,6 +31,7 @@ describe('the penalty and its equivalents', () => {
 describe('diagnostics beyond the contract', () => {
   it('are none when the engine gives none', () => {
     expect(diagnosticsOf(result)).toEqual({
+      choices: [],
       coverage: [],
       inflation: [],
       conditionIndices: [],
@@ -45,6 +46,7 @@ describe('diagnostics beyond the contract', () => {
 
   it('are read where they have the expected shape and passed over where not', () => {
     const read = diagnosticsOf({
+      penalty: { choices: [{ rule: 'evidence', lambda: 0.02 }, { rule: 'minimum' }] },
       accuracy: { coverageByQuarter: [{ from: 1, to: 2, records: 600, coverage: 0.91 }, { from: 'low' }] },
       diagnostics: {
         varianceInflation: [{ input: 'hull', level: 'steel', factor: null }],
@@ -69,6 +71,7 @@ describe('diagnostics beyond the contract', () => {
       },
     });
     expect(read).toEqual({
+      choices: [{ rule: 'evidence', lambda: 0.02 }],
       coverage: [{ from: 1, to: 2, records: 600, coverage: 0.91 }],
       inflation: [{ name: 'hull: steel', factor: null }],
       conditionIndices: [31.2],
