@@ -119,6 +119,12 @@ describe('the demonstration', () => {
     expect(times.at(-1)! <= new Date().toISOString()).toBe(true);
   });
 
+  it('has nobody at the desk work at weekends', async () => {
+    const times: string[] = await services.knex('journal').whereNot({ action: 'signed-in' }).pluck('at');
+    const days = new Set(times.map((time) => new Date(time).getUTCDay()));
+    expect([...days].filter((day) => day === 0 || day === 6)).toEqual([]);
+  });
+
   it('left out no job: every fit is done', async () => {
     expect(new Set(await services.knex('fits').pluck('state'))).toEqual(new Set(['done']));
   });

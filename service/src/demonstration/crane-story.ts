@@ -22,10 +22,10 @@ function firstEdition(stage: Stage, rows: readonly TableRow[]): Step[] {
     ),
     on(382, '09:15', () => stage.nameEstimator(ines, craneTimeWords)),
     on(381, '10:44', () => stage.fit(ines, { slug, name: 'crane 1', revision: 'lifts 1', specification: craneRidge })),
-    on(380, '11:20', () =>
+    on(378, '11:20', () =>
       stage.drawUp(ines, { slug, name: 'crane 1', changeNote: 'First edition, from the foreman’s book.' }),
     ),
-    on(380, '11:24', () => stage.submit(ines, 'crane 1')),
+    on(378, '11:24', () => stage.submit(ines, 'crane 1')),
     on(377, '13:12', () => stage.putInForce(reviewer, slug, 'crane 1')),
   ];
 }
@@ -42,9 +42,9 @@ function newCrane(stage: Stage, rows: readonly TableRow[]): Step[] {
         rows,
       }),
     ),
-    on(29, '14:20', () =>
+    on(28, '14:20', () =>
       stage.fit(tomas, { slug, name: 'crane 2', revision: 'lifts 2', specification: craneForward }),
     ),
-    on(1, '15:48', () => stage.drawUp(tomas, { slug, name: 'crane 2', changeNote })),
+    on(3, '15:48', () => stage.drawUp(tomas, { slug, name: 'crane 2', changeNote })),
   ];
 }

@@ -20,13 +20,17 @@ export interface DemonstrationNote {
   readonly exampleInputs: Readonly<Record<string, string | number>>;
 }
 
+const roleOrder = ['administrator', 'analyst', 'reviewer', 'viewer', 'partner-developer'];
+const byRole = (first: { readonly roles: readonly string[] }, second: { readonly roles: readonly string[] }): number =>
+  roleOrder.indexOf(first.roles[0]) - roleOrder.indexOf(second.roles[0]);
+
 const notePath = (dataFolder: string): string => join(dataFolder, 'demonstration.json');
 
 export async function demonstrationNote(stage: Stage): Promise<DemonstrationNote> {
   const people = await stage.services.people.list(50, 0);
   return {
     password: demonstrationPassword,
-    people: people.map(({ name, email, roles }) => ({ name, email, roles })),
+    people: people.map(({ name, email, roles }) => ({ name, email, roles })).sort(byRole),
     estimator: 'refit-labour',
     partnerKey: required(stage.keyTexts, 'northquay'),
     embedKey: required(stage.keyTexts, 'pellTarn'),

@@ -23,10 +23,10 @@ function firstEdition(stage: Stage, rows: readonly TableRow[]): Step[] {
   const { secondAnalyst: tomas, reviewer } = stage.cast;
   const set = { name: 'Antifouling', description: 'Paint drawn from the yards’ stores, one row a boat and season.' };
   return [
-    on(400, '10:25', () =>
+    on(402, '10:25', () =>
       bringInSet(stage, tomas, { ...set, revision: 'paint 1', fileName: 'antifouling-2023-2025.csv', rows }),
     ),
-    on(400, '11:00', () => stage.nameEstimator(tomas, antifoulingWords)),
+    on(402, '11:00', () => stage.nameEstimator(tomas, antifoulingWords)),
     on(399, '09:10', () => stage.fit(tomas, { slug, name: 'paint 1', revision: 'paint 1', specification: paintRidge })),
     on(398, '13:30', () =>
       stage.drawUp(tomas, { slug, name: 'paint 1', changeNote: 'First edition, from three seasons.' }),
@@ -40,7 +40,7 @@ function secondEdition(stage: Stage, rows: readonly TableRow[]): Step[] {
   const { firstAnalyst: ines, reviewer } = stage.cast;
   const changeNote = 'Lasso keeps the inputs that earn their place; the others now weigh nothing.';
   return [
-    on(121, '09:50', () =>
+    on(122, '09:50', () =>
       bringInRevision(stage, ines, {
         set: 'Antifouling',
         revision: 'paint 2',
@@ -48,9 +48,9 @@ function secondEdition(stage: Stage, rows: readonly TableRow[]): Step[] {
         rows,
       }),
     ),
-    on(120, '10:12', () => stage.fit(ines, { slug, name: 'paint 2', revision: 'paint 2', specification: paintLasso })),
-    on(119, '09:05', () => stage.drawUp(ines, { slug, name: 'paint 2', changeNote })),
-    on(119, '09:08', () => stage.submit(ines, 'paint 2')),
+    on(119, '10:12', () => stage.fit(ines, { slug, name: 'paint 2', revision: 'paint 2', specification: paintLasso })),
+    on(118, '09:05', () => stage.drawUp(ines, { slug, name: 'paint 2', changeNote })),
+    on(118, '09:08', () => stage.submit(ines, 'paint 2')),
     on(117, '15:55', () => stage.putInForce(reviewer, slug, 'paint 2')),
   ];
 }

@@ -18,9 +18,16 @@ const dayMs = 24 * 60 * 60 * 1000;
 const firstDay = 420;
 const tellEveryMs = 2500;
 
-function timeOf(step: Step, now: number): number {
+/** Midnight of this week's Monday: counted from there, the days of the stories are working days. */
+function mondayOf(now: number): number {
+  const day = Math.floor(now / dayMs);
+  // 1 January 1970 was a Thursday.
+  return (day - ((day + 3) % 7)) * dayMs;
+}
+
+function timeOf(step: Pick<Step, 'daysAgo' | 'at'>, now: number): number {
   const [hours, minutes] = step.at.split(':').map(Number);
-  return now - (now % dayMs) - step.daysAgo * dayMs + (hours * 60 + minutes) * 60_000;
+  return mondayOf(now) - step.daysAgo * dayMs + (hours * 60 + minutes) * 60_000;
 }
 
 async function playSteps(stage: Stage, steps: readonly Step[], options: DemonstrationOptions): Promise<void> {
@@ -53,7 +60,7 @@ function stepsOf(stage: Stage, options: DemonstrationOptions): Step[] {
 }
 
 async function openStage(options: DemonstrationOptions, draftFolder: string): Promise<Stage> {
-  const clock = new MovableClock(options.now.getTime() - firstDay * dayMs);
+  const clock = new MovableClock(timeOf({ daysAgo: firstDay, at: '08:30' }, options.now.getTime()));
   const { log, threadArguments } = options;
   const services = compose({
     config: { ...options.config, dataFolder: draftFolder },

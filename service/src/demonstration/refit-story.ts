@@ -65,7 +65,7 @@ function secondEdition(stage: Stage): Step[] {
   const changeNote =
     'Sizes on the log scale and held by ridge: the lengths share one load, and their weights no longer fight.';
   return [
-    on(302, '11:08', () =>
+    on(304, '11:08', () =>
       stage.fit(tomas, { slug, name: 'refit 2', revision: 'refits 2', specification: specifications.refitRidge }),
     ),
     on(301, '09:15', () => stage.drawUp(tomas, { slug, name: 'refit 2', changeNote })),
@@ -87,17 +87,17 @@ function thirdEdition(stage: Stage, rows: readonly TableRow[]): Step[] {
     'The interval is wider than in edition 2. Ask two yards whether that is true of their jobs, then submit it again.';
   return [
     on(171, '08:55', () => bringInRevision(stage, ines, records)),
-    on(170, '10:11', () =>
+    on(168, '10:11', () =>
       stage.fit(ines, { slug, name: 'refit lasso', revision: 'refits 3', specification: specifications.refitLasso }),
     ),
-    on(170, '10:34', () =>
+    on(168, '10:34', () =>
       stage.fit(ines, { slug, name: 'refit 3', revision: 'refits 3', specification: specifications.refitRidgeByYard }),
     ),
-    on(169, '09:40', () => stage.drawUp(ines, { slug, name: 'refit 3', changeNote })),
-    on(169, '09:44', () => stage.submit(ines, 'refit 3')),
-    on(168, '16:03', () => stage.sendBack(reviewer, 'refit 3', objection)),
-    on(167, '09:18', () => stage.submit(ines, 'refit 3')),
-    on(166, '11:26', () => stage.putInForce(reviewer, slug, 'refit 3')),
+    on(167, '09:40', () => stage.drawUp(ines, { slug, name: 'refit 3', changeNote })),
+    on(167, '09:44', () => stage.submit(ines, 'refit 3')),
+    on(166, '16:03', () => stage.sendBack(reviewer, 'refit 3', objection)),
+    on(165, '09:18', () => stage.submit(ines, 'refit 3')),
+    on(164, '11:26', () => stage.putInForce(reviewer, slug, 'refit 3')),
   ];
 }
 
@@ -125,7 +125,7 @@ function sinceThen(stage: Stage, rows: readonly TableRow[]): Step[] {
         specification: specifications.refitRidgeWithCurve,
       }),
     ),
-    on(2, '10:36', () => stage.drawUp(tomas, { slug, name: 'refit 4', changeNote })),
-    on(2, '10:41', () => stage.submit(tomas, 'refit 4')),
+    on(3, '10:36', () => stage.drawUp(tomas, { slug, name: 'refit 4', changeNote })),
+    on(3, '10:41', () => stage.submit(tomas, 'refit 4')),
   ];
 }

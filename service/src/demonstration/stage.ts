@@ -9,7 +9,7 @@ import type { MovableClock } from './movable-clock';
 type Specification = components['schemas']['Specification'];
 type EstimatorNew = components['schemas']['EstimatorNew'];
 
-/** One thing that somebody did, some days before now at an hour of the day (UTC). */
+/** One thing that somebody did, some days before this week's Monday at an hour of the day (UTC). */
 export interface Step {
   readonly daysAgo: number;
   readonly at: string;
