@@ -1,5 +1,7 @@
 import { fitRecords } from '../../service/src/regression/fit';
-import { runFoldTask, type FoldTask } from '../../service/src/regression/selection/fold-task';
+import { resolveSpecification } from '../../service/src/regression/design/resolve-specification';
+import { prepareContext, spanOf } from '../../service/src/regression/fit-context';
+import { momentsOf, runFoldTask, trainingPart, type FoldTask } from '../../service/src/regression/selection/fold-task';
 import { problemOfRows, type StandardisedRows } from '../../service/src/regression/design/standardised-rows';
 import { seededRandom } from '../../service/src/regression/random';
 import type { ColumnPenalties } from '../../service/src/regression/solvers/column-penalties';
@@ -92,7 +94,7 @@ describe.each([
 });
 
 describe('a fit', () => {
-  const records = inventedRefits(4000, 21);
+  const records = inventedRefits(1500, 21);
   const specification = {
     target: { column: 'labour', transform: 'log' as const },
     inputs: ['length', 'waterline', 'hull', 'yard', 'booked'].map((column) => ({ column })),
@@ -105,17 +107,41 @@ describe('a fit', () => {
     expect(await fitRecords(records, specification, { runFolds: backwards })).toEqual(await fitRecords(records, specification));
   });
 
-  it('agrees between moments and the orthogonal route', async () => {
+  it('standardises a fold by moments as it does by rows, categories and filled gaps included', () => {
+    const resolved = resolveSpecification({ ...specification, inputs: [...specification.inputs, { column: 'draught', missing: 'typical' }] });
+    const { design, plan } = prepareContext(records, resolved, {});
+    const spans = plan.folds[3].training.map((segment) => spanOf(plan, segment));
+    const byMoments = trainingPart(design, 'moments', spans, spans.map((span) => momentsOf(design, span))).problem;
+    const byRows = trainingPart(design, 'orthogonal', spans, []).problem;
+    expect(byMoments.kept).toEqual(byRows.kept);
+    expect(byMoments.fills.map((fill) => fill.shift)).toEqual(byRows.fills.map((fill) => expect.closeTo(fill.shift, 12)));
+    for (const name of ['gram', 'cross', 'means', 'scales'] as const) {
+      expect(relativeDifference(Array.from(byMoments[name]), Array.from(byRows[name]))).toBeLessThan(1e-12);
+    }
+  });
+
+  it('takes the route by moments on a tall table, and says so', async () => {
+    const normal = normalNumbers(seededRandom(8));
+    const columns = Array.from({ length: 80 }, (_, at) => numeric(`x${at}`, Array.from({ length: 3300 }, normal)));
+    const target = numeric('y', Array.from({ length: 3300 }, normal));
+    const wanted = { target: { column: 'y', transform: 'none' as const }, inputs: columns.map((column) => ({ column: column.name })), validation: { scheme: 'k-fold' as const, folds: 2 } };
+    const { result } = await fitRecords(table([...columns, target]), { ...wanted, method: 'ridge', penalty: { rule: 'fixed', value: 0.01 } });
+    expect(result.report.route).toBe('tridiagonal form of the moments');
+  });
+
+  it('leaves moments for the records themselves where moments would lose digits', async () => {
     const normal = normalNumbers(seededRandom(2));
-    const columns = Array.from({ length: 40 }, (_, at) => numeric(`x${at}`, Array.from({ length: 16000 }, () => normal() + 100)));
-    const target = numeric('y', Array.from({ length: 16000 }, (_, row) => columns.slice(0, 5).reduce((sum, column) => sum + (column.kind === 'numeric' ? column.values[row] : 0), normal())));
-    const wanted = { target: { column: 'y', transform: 'none' as const }, inputs: columns.map((column) => ({ column: column.name })), method: 'ridge' as const, penalty: { rule: 'fixed' as const, value: 0.01 } };
-    const moments = await fitRecords(table([...columns, target]), wanted);
-    expect(moments.result.report.route).toBe('tridiagonal form of the moments');
-    const few = await fitRecords(table([...columns, target]), { ...wanted, rowFilter: { column: 'x0', from: -Infinity } });
-    expect(few.result.weights).toEqual(moments.result.weights);
-    const leastSquares = await fitRecords(table([...columns, target]), { ...wanted, method: 'least-squares' as const, validation: { scheme: 'k-fold' as const, folds: 2 } });
-    // λ = 0.01 on nearly uncorrelated columns shrinks by 1/1.01.
-    moments.result.weights.forEach((weight, at) => expect(weight.value).toBeCloseTo(leastSquares.result.weights[at].value / 1.01, 2));
+    const size = 10000;
+    const base = Array.from({ length: 44 }, (_, at) => numeric(`x${at}`, Array.from({ length: size }, normal)));
+    const near = numeric('near', Array.from({ length: size }, (_, row) => (base[0].kind === 'numeric' ? base[0].values[row] : 0) + 1e-6 * normal()));
+    const target = numeric('y', Array.from({ length: size }, normal));
+    const { result } = await fitRecords(table([...base, near, target]), {
+      target: { column: 'y', transform: 'none' },
+      inputs: [...base, near].map((column) => ({ column: column.name })),
+      method: 'least-squares',
+      validation: { scheme: 'k-fold', folds: 2 },
+    });
+    expect(result.report.route).toBe('QR of the records with refinement');
+    expect(result.report.conditionNumber).toBeGreaterThan(1e5);
   });
 });

@@ -9,14 +9,15 @@ const MOST_CHANGES = 4000;
  * Exact minimum on the active set with its signs kept: (A + Q)_AA b_A = c_A − absolute · sign(b_A). Where the solution would
  * change a sign, b moves toward it until the first weight reaches 0, which leaves the active set (the objective only falls);
  * where the active columns depend on each other, b moves along the null direction that does not raise the penalty until one
- * weight reaches 0. So it ends after at most |A| steps (Osborne, Presnell and Turlach 2000). The factor is kept from one λ to
- * the next: columns join and leave it at |A|² each.
+ * weight reaches 0. So it ends after at most |A| steps (Osborne, Presnell and Turlach 2000). The factor is kept as long
+ * as the square penalty stays (for lasso from one λ to the next): columns join and leave it at |A|² each.
  */
 export class ActiveSetSolver {
   private factor = new UpdatedCholesky();
   /** Columns in the order of the factor. */
   private active: number[] = [];
-  private square: Float64Array | null = null;
+  /** Square penalty that the factor was built with. */
+  private square: Float64Array = new Float64Array(0);
   private changes = 0;
 
   /** Updates `weights` in place; false when more than `most` weights are in use. */
@@ -34,10 +35,9 @@ export class ActiveSetSolver {
   }
 
   private discardIfStale(penalty: HeldPenalty): void {
-    const plain = penalty.square.every((value) => value === 0);
-    const stale = this.changes > MOST_CHANGES || !plain || this.square !== null;
-    this.square = plain ? null : penalty.square;
-    if (stale) this.reset();
+    const same = this.square.every((value, column) => value === penalty.square[column]);
+    this.square = penalty.square;
+    if (!same || this.changes > MOST_CHANGES) this.reset();
   }
 
   reset(): void {

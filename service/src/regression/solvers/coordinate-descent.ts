@@ -20,13 +20,13 @@ export interface DescentState {
 
 const MOST_SWEEPS = 20000;
 /** Sweeps before the gap is looked at again, and before an exact solution on the active set is tried. */
-const SWEEPS_A_ROUND = 12;
+const SWEEPS_A_ROUND = 4;
 /** So many sweeps at one λ may mean that the kept factor has lost digits: it is built afresh. */
 const SWEEPS_BEFORE_RESET = 400;
 /** A sweep whose largest curvature · step² is below this share of yy has settled; the gap then decides. */
 const TINY_STEP = 1e-16;
-/** Active sets up to this size are solved exactly when descent has not settled in its first round. */
-const MOST_POLISHED = 3000;
+/** Active sets up to this size are solved exactly when descent has not settled in its first round; a square penalty changes the factor at every λ. */
+const MOST_POLISHED = { lasso: 3000, elasticNet: 400 } as const;
 
 export function startingState(held: HeldProblem): DescentState {
   return { weights: new Float64Array(held.size), gradient: held.cross.slice(), exact: new ActiveSetSolver() };
@@ -42,11 +42,12 @@ export function descend(held: HeldProblem, penalty: HeldPenalty, previous: HeldP
   const working = workingSet(held, penalty, previous, state);
   const inside = new Uint8Array(held.size);
   working.forEach((j) => (inside[j] = 1));
+  const most = penalty.square.some((value) => value > 0) ? MOST_POLISHED.elasticNet : MOST_POLISHED.lasso;
   let iterations = 0;
   let polished = false;
   for (;;) {
     iterations += sweepRound(held, penalty, state, working);
-    if (polish || iterations >= SWEEPS_A_ROUND) polished = state.exact.solve(held, penalty, state.weights, MOST_POLISHED);
+    if (polish || iterations >= SWEEPS_A_ROUND) polished = state.exact.solve(held, penalty, state.weights, most);
     if (iterations > SWEEPS_BEFORE_RESET) state.exact.reset();
     refreshGradient(held, state);
     if (addViolators(held, penalty, state, working, inside)) continue;
