@@ -8,7 +8,7 @@ import { migrationsFolder } from './database/migrations-folder';
 import { migrate } from './database/migrator';
 import { announcement } from './demonstration/announcement';
 import { ensureDemonstration } from './demonstration/demonstration';
-import type { DemonstrationNote } from './demonstration/note';
+import { readNote, type DemonstrationNote } from './demonstration/note';
 import { listPartnerPage } from './demonstration/partner-page-site';
 import { createPartnerPage } from './partner-page/partner-page';
 import { enterFirstAdministrator } from './people/first-administrator';
@@ -47,6 +47,11 @@ async function open(config: Config, services: Services, demonstration: Demonstra
   await migrate(services.knex, migrationsFolder);
   if (!config.demonstration) await enterFirstAdministrator({ ...services, administrator: config.administrator });
   if (demonstration) await listPartnerPage(services, demonstration);
+  if (!config.demonstration && readNote(config.dataFolder)) {
+    services.log.warn(
+      'This data folder holds the demonstration, whose password is published. Set DATA_DIR to another folder for real work.',
+    );
+  }
   services.fitRunner.open();
   services.schedule.start();
 }
