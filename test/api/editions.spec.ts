@@ -192,6 +192,19 @@ describe('editions', () => {
     expect(await service.services.knex('estimates').count({ total: '*' })).toEqual([{ total: 0 }]);
   });
 
+  it('flag a level that the records never held, where the specification lets it in', async () => {
+    const inputs = boatSpecification.inputs.map((input) =>
+      input.column === 'hull' ? { ...input, unseen: 'other' } : input,
+    );
+    const fitId = await addFit(service, desk.analyst, { ...boatSpecification, inputs });
+    const draft = await drawUp(desk.analyst, fitId).expect(201);
+    const tried = await desk.analyst
+      .post(`/api/editions/${draft.body.id}/try`)
+      .send({ inputs: { ...boat, hull: 'concrete' } });
+    expect(tried.status).toBe(200);
+    expect(tried.body.flags).toContainEqual({ code: 'unseen-level', input: 'hull', message: expect.any(String) });
+  });
+
   it('are listed by number, newest first', async () => {
     const { body } = await desk.analyst.get('/api/estimators/refit-labour/editions?limit=2');
     expect(body.items.map(({ number }: { number: number }) => number)).toEqual([body.total, body.total - 1]);

@@ -226,6 +226,26 @@ describe('fits', () => {
     await second.close();
   });
 
+  it('are cancelled by a process that does not run them', async () => {
+    const { config, log, fits } = service.services;
+    const second = compose({ config, log, clock: service.clock, sessionCleanupMs: 0, fitThreadArguments });
+    const big = await addRevision(service, analyst.person, boatColumns(400_000));
+    const specification = {
+      ...ridge,
+      inputs: inputs.map((input) => ({ ...input, transform: input.column === 'hull' ? 'none' : 'spline' })),
+    };
+    const accepted = await analyst
+      .post('/api/estimators/refit-labour/fits')
+      .send({ revisionId: big, specification })
+      .expect(202);
+    const { id } = accepted.body as { id: string };
+    while ((await fits.progress(id)).state === 'queued') await new Promise((resolve) => setTimeout(resolve, 5));
+    const cancelled = await second.fits.cancel({ ...analyst.person, roles: ['analyst'], partnerId: null }, id);
+    expect(cancelled.state).toBe('running');
+    expect(await second.fits.waitFor(id)).toBe('cancelled');
+    await second.close();
+  });
+
   it('go back into the queue when the service closes', async () => {
     const other = await startTestService();
     const person = await other.as('analyst');

@@ -46,7 +46,10 @@ function stored(column: FixtureColumn): StoredColumn {
     };
   }
   const given = column.values.filter((value) => !Number.isNaN(value));
-  const [minimum, maximum] = given.length > 0 ? [Math.min(...given), Math.max(...given)] : [null, null];
+  const [minimum, maximum] =
+    given.length > 0
+      ? [given.reduce((least, value) => Math.min(least, value)), given.reduce((most, value) => Math.max(most, value))]
+      : [null, null];
   const missingCount = column.values.length - given.length;
   return {
     kind: 'numeric',

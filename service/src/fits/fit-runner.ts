@@ -8,7 +8,8 @@ import { startFitThread, type FitThread, type ThreadOutcome } from './fit-thread
 import type { ProgressFeed } from './progress-feed';
 import { ProgressThrottle } from './progress-throttle';
 
-const beatEveryMs = 5000;
+/** Also how long a cancel asked of another process may take. */
+const beatEveryMs = 2000;
 const lookEveryMs = 5000;
 const progressEveryMs = 200;
 
