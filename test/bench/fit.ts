@@ -82,7 +82,12 @@ interface ReferenceAnswer {
   readonly weights: readonly number[];
 }
 
-function runReference(data: GeneratedData, size: BenchSize, method: BenchMethod, result: FitResult): { answer: ReferenceAnswer; run: readonly number[] } {
+function runReference(
+  data: GeneratedData,
+  size: BenchSize,
+  method: BenchMethod,
+  result: FitResult,
+): { answer: ReferenceAnswer; run: readonly number[] } {
   const folder = mkdtempSync(join(tmpdir(), 'bench-fit-'));
   try {
     const lambdas = result.path.map((point) => point.lambda);
@@ -96,7 +101,16 @@ function runReference(data: GeneratedData, size: BenchSize, method: BenchMethod,
     writeFileSync(files[1], JSON.stringify(lambdas));
     writeFileSync(files[2], JSON.stringify({ run, chosen }));
     const script = join(__dirname, '..', '..', '..', 'test', 'bench', 'reference_fit.py');
-    const given = [script, files[0], String(size.records), String(size.inputs), method, files[1], files[2], String(THREADS)];
+    const given = [
+      script,
+      files[0],
+      String(size.records),
+      String(size.inputs),
+      method,
+      files[1],
+      files[2],
+      String(THREADS),
+    ];
     const environment = { ...process.env, OMP_NUM_THREADS: '1', OPENBLAS_NUM_THREADS: '1' };
     const output = execFileSync(PYTHON, given, { encoding: 'utf8', maxBuffer: 1 << 28, env: environment });
     return { answer: JSON.parse(output) as ReferenceAnswer, run };
@@ -112,7 +126,8 @@ function compare(result: FitResult, answer: ReferenceAnswer, run: readonly numbe
   const best = run[answer.cvError.indexOf(Math.min(...answer.cvError))];
   const same = result.path[best].lambda === result.penalty.lambda;
   const largest = Math.max(...answer.weights.map(Math.abs));
-  const weightGap = Math.max(...result.weights.map((weight, at) => Math.abs(weight.standardised - answer.weights[at]))) / largest;
+  const weightGap =
+    Math.max(...result.weights.map((weight, at) => Math.abs(weight.standardised - answer.weights[at]))) / largest;
   return `${same ? 'same penalty' : `OTHER PENALTY (${best})`}, errors to ${errorGap.toExponential(0)}, weights to ${weightGap.toExponential(0)}`;
 }
 
@@ -134,7 +149,8 @@ async function benchOne(size: BenchSize, method: BenchMethod): Promise<BenchRow>
     floorSeconds,
     peakMegabytes,
     referenceSeconds: reference?.answer.seconds ?? null,
-    agreement: reference === null ? 'scikit-learn is not installed' : compare(timed.result, reference.answer, reference.run),
+    agreement:
+      reference === null ? 'scikit-learn is not installed' : compare(timed.result, reference.answer, reference.run),
   };
 }
 
@@ -162,13 +178,18 @@ async function main(): Promise<void> {
     return;
   }
   const picked = process.argv.indexOf('--size');
-  const sizes = picked >= 0 ? SIZES.filter(({ records, inputs }) => `${records}x${inputs}` === process.argv[picked + 1]) : SIZES;
+  const sizes =
+    picked >= 0 ? SIZES.filter(({ records, inputs }) => `${records}x${inputs}` === process.argv[picked + 1]) : SIZES;
   process.stdout.write(`${cpus()[0].model}, ${THREADS} threads, Node ${process.version}\n\n`);
-  process.stdout.write('| records × inputs | method | choice and fit, s | with diagnostics, s | bare cross-product, s | scikit-learn, s | ratio | peak MB | agreement |\n');
+  process.stdout.write(
+    '| records × inputs | method | choice and fit, s | with diagnostics, s | bare cross-product, s | scikit-learn, s | ratio | peak MB | agreement |\n',
+  );
   process.stdout.write('|---|---|---|---|---|---|---|---|---|\n');
   for (const { records, inputs } of sizes) {
     for (const method of METHODS) {
-      spawnSync(process.execPath, [__filename, '--one', `${records}x${inputs}`, method, ...process.argv.slice(2)], { stdio: 'inherit' });
+      spawnSync(process.execPath, [__filename, '--one', `${records}x${inputs}`, method, ...process.argv.slice(2)], {
+        stdio: 'inherit',
+      });
     }
   }
 }

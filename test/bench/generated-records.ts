@@ -43,6 +43,10 @@ export function asRecords(data: GeneratedData, { records, inputs }: BenchSize): 
   const fold = Float64Array.from({ length: records }, (_, record) => Math.floor((record * FOLDS) / records));
   return {
     rowCount: records,
-    columns: [...columns, { name: 'y', kind: 'numeric', values: data.subarray(records * inputs) }, { name: 'fold', kind: 'numeric', values: fold }],
+    columns: [
+      ...columns,
+      { name: 'y', kind: 'numeric', values: data.subarray(records * inputs) },
+      { name: 'fold', kind: 'numeric', values: fold },
+    ],
   };
 }

@@ -40,7 +40,8 @@ function* madeUpLines(rowCount: number): Generator<string> {
   yield `${Array.from({ length: columnCount }, (_, column) => (column < 24 ? `measure ${column} (m)` : `${column < 28 ? 'hull' : 'day'} ${column}`)).join(',')}\n`;
   for (let row = 0; row < rowCount; row += 500) {
     let text = '';
-    for (let line = row; line < Math.min(rowCount, row + 500); line++) text += `${Array.from({ length: columnCount }, (_, column) => cell(column)).join(',')}\n`;
+    for (let line = row; line < Math.min(rowCount, row + 500); line++)
+      text += `${Array.from({ length: columnCount }, (_, column) => cell(column)).join(',')}\n`;
     yield text;
   }
 }
@@ -57,11 +58,31 @@ async function bringIn(path: string): Promise<() => Promise<number>> {
   const folder = mkdtempSync(join(tmpdir(), 'tarebeam-bench-'));
   const config = readConfig({ DATA_DIR: folder, DEMO: 'off' });
   await copyTemplateDatabase(databasePathOf(config));
-  const services = compose({ config, log: pino({ level: 'silent' }), sessionCleanupMs: 0, fitThreadArguments: ['-r', hook] });
-  const person = { id: newId(), name: 'Bench', email: 'bench@desk.example', roles: [], state: 'active', partnerId: null, passwordHash: null, createdAt: new Date().toISOString() } as const;
+  const services = compose({
+    config,
+    log: pino({ level: 'silent' }),
+    sessionCleanupMs: 0,
+    fitThreadArguments: ['-r', hook],
+  });
+  const person = {
+    id: newId(),
+    name: 'Bench',
+    email: 'bench@desk.example',
+    roles: ['analyst'],
+    state: 'active',
+    partnerId: null,
+    passwordHash: null,
+    createdAt: new Date().toISOString(),
+  } as const;
   await services.people.insert(person);
   return async () => {
-    const set = await services.records.importFile({ path, fileName: 'bench.csv', name: 'Bench', description: '', personId: person.id });
+    const set = await services.records.importFile({
+      path,
+      fileName: 'bench.csv',
+      name: 'Bench',
+      description: '',
+      personId: person.id,
+    });
     const kinds = set.revision.columns.map((column) => column.kind).join(' ');
     if (!/^(numeric ){24}(category ){4}date date$/.test(kinds)) throw new Error(`The columns were read as ${kinds}.`);
     await services.close();
@@ -79,7 +100,10 @@ async function measure(side: string, path: string): Promise<Measured> {
 }
 
 function inOwnProcess(side: 'parse' | 'import', path: string): Measured {
-  const child = spawnSync(process.execPath, ['-r', hook, __filename, side, path], { encoding: 'utf8', stdio: ['ignore', 'pipe', 'inherit'] });
+  const child = spawnSync(process.execPath, ['-r', hook, __filename, side, path], {
+    encoding: 'utf8',
+    stdio: ['ignore', 'pipe', 'inherit'],
+  });
   if (child.status !== 0) throw new Error(`The ${side} run failed.`);
   return JSON.parse(child.stdout) as Measured;
 }
@@ -100,14 +124,18 @@ async function compare(rowCount: number): Promise<void> {
   rmSync(folder, { recursive: true });
   const [parse, bring] = [best(parsed), best(imported)];
   const memory = Math.max(...imported.map((run) => run.memoryMegabytes));
-  if (bring.rows !== rowCount || parse.rows !== rowCount) throw new Error(`${bring.rows} and ${parse.rows} rows came out.`);
+  if (bring.rows !== rowCount || parse.rows !== rowCount)
+    throw new Error(`${bring.rows} and ${parse.rows} rows came out.`);
   const ratio = parse.seconds / bring.seconds;
   console.log(`merely parsing   ${parse.seconds.toFixed(2)} s, ${parse.memoryMegabytes.toFixed(0)} MB at most`);
-  console.log(`bringing in      ${bring.seconds.toFixed(2)} s, ${memory.toFixed(0)} MB at most (goal: under ${goals.memoryMegabytes})`);
+  console.log(
+    `bringing in      ${bring.seconds.toFixed(2)} s, ${memory.toFixed(0)} MB at most (goal: under ${goals.memoryMegabytes})`,
+  );
   console.log(`ratio of rates   ${ratio.toFixed(2)} (goal: at least ${goals.ratio})`);
   if (rowCount >= 1_000_000 && (ratio < goals.ratio || memory >= goals.memoryMegabytes)) process.exitCode = 1;
 }
 
 const [side, path] = process.argv.slice(2);
-if (side === 'parse' || side === 'import') void measure(side, path).then((measured) => console.log(JSON.stringify(measured)));
+if (side === 'parse' || side === 'import')
+  void measure(side, path).then((measured) => console.log(JSON.stringify(measured)));
 else void compare(Number(side ?? 1_000_000));

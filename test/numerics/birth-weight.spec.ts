@@ -46,7 +46,12 @@ describe(`birth weights with a category and weights (${reference.source.slice(0,
       if (at % 4 !== 1) continue;
       const { weights } = await fitAt('lasso', lambda);
       const expected = reference.lasso.standardised[at];
-      expect(relativeDifference(weights.map((weight) => weight.standardised), expected)).toBeLessThan(1e-6);
+      expect(
+        relativeDifference(
+          weights.map((weight) => weight.standardised),
+          expected,
+        ),
+      ).toBeLessThan(1e-6);
       expect(weights.map((weight) => weight.standardised !== 0)).toEqual(expected.map((value) => value !== 0));
     }
   });
@@ -63,7 +68,12 @@ describe(`birth weights with a category and weights (${reference.source.slice(0,
   it('gives the ridge of glmnet, its λ divided by the deviation of the target, to 1e-8', async () => {
     for (const [at, lambda] of reference.ridge.lambdas.entries()) {
       const { weights } = await fitAt('ridge', lambda);
-      expect(relativeDifference(weights.map((weight) => weight.standardised), reference.ridge.standardised[at])).toBeLessThan(1e-8);
+      expect(
+        relativeDifference(
+          weights.map((weight) => weight.standardised),
+          reference.ridge.standardised[at],
+        ),
+      ).toBeLessThan(1e-8);
     }
   });
 

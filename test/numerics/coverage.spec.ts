@@ -28,13 +28,28 @@ function drawCases(count: number, noise: Noise, random: Random): Case[] {
   return Array.from({ length: count }, () => {
     const readings = Array.from({ length: INPUTS }, normal);
     const signal = readings[0] - 0.5 * readings[1] + 0.25 * readings[2];
-    return { inputs: Object.fromEntries(readings.map((value, at) => [`x${at}`, value])), signal, target: signal + noise(normal, random, signal) };
+    return {
+      inputs: Object.fromEntries(readings.map((value, at) => [`x${at}`, value])),
+      signal,
+      target: signal + noise(normal, random, signal),
+    };
   });
 }
 
 async function fitCases(cases: readonly Case[]): Promise<Formula> {
   const names = Array.from({ length: INPUTS }, (_, at) => `x${at}`);
-  const columns = [...names.map((name) => numeric(name, cases.map((one) => one.inputs[name]))), numeric('y', cases.map((one) => one.target))];
+  const columns = [
+    ...names.map((name) =>
+      numeric(
+        name,
+        cases.map((one) => one.inputs[name]),
+      ),
+    ),
+    numeric(
+      'y',
+      cases.map((one) => one.target),
+    ),
+  ];
   const { formula } = await fitRecords(table(columns), {
     target: { column: 'y', transform: 'none' },
     inputs: names.map((column) => ({ column })),
@@ -59,34 +74,51 @@ async function simulate(noise: Noise, seed: number): Promise<Simulated[]> {
     for (const one of drawCases(200, noise, random)) {
       const { interval, gaussianInterval } = evaluateFormula(formula, one.inputs);
       const within = (low: number, high: number): boolean => one.target >= low && one.target <= high;
-      found.push({ covered: within(interval.low, interval.high), coveredGaussian: gaussianInterval !== null && within(gaussianInterval.low, gaussianInterval.high), signal: one.signal });
+      found.push({
+        covered: within(interval.low, interval.high),
+        coveredGaussian: gaussianInterval !== null && within(gaussianInterval.low, gaussianInterval.high),
+        signal: one.signal,
+      });
     }
   }
   return found;
 }
 
-const share = (cases: readonly Simulated[], test: (one: Simulated) => boolean): number => cases.filter(test).length / cases.length;
+const share = (cases: readonly Simulated[], test: (one: Simulated) => boolean): number =>
+  cases.filter(test).length / cases.length;
 
-describe.each(Object.keys(NOISES))('with %s errors (seeded simulation, 25 fits of 150 records, 5,000 new cases)', (name) => {
-  let simulated: Simulated[];
-  beforeAll(async () => {
-    simulated = await simulate(NOISES[name], 4711);
-    if (process.env['SHOW_DIGITS'] !== undefined) {
-      const sorted = simulated.slice().sort((first, second) => first.signal - second.signal);
-      const quarters = [0, 1, 2, 3].map((quarter) => share(sorted.slice((quarter * sorted.length) / 4, ((quarter + 1) * sorted.length) / 4), (one) => one.covered).toFixed(3));
-      process.stdout.write(`${name}: CV+ ${share(simulated, (one) => one.covered).toFixed(3)} Gaussian ${share(simulated, (one) => one.coveredGaussian).toFixed(3)} by quarter ${quarters.join(' ')}\n`);
-    }
-  }, 120_000);
+describe.each(Object.keys(NOISES))(
+  'with %s errors (seeded simulation, 25 fits of 150 records, 5,000 new cases)',
+  (name) => {
+    let simulated: Simulated[];
+    beforeAll(async () => {
+      simulated = await simulate(NOISES[name], 4711);
+      if (process.env['SHOW_DIGITS'] !== undefined) {
+        const sorted = simulated.slice().sort((first, second) => first.signal - second.signal);
+        const quarters = [0, 1, 2, 3].map((quarter) =>
+          share(
+            sorted.slice((quarter * sorted.length) / 4, ((quarter + 1) * sorted.length) / 4),
+            (one) => one.covered,
+          ).toFixed(3),
+        );
+        process.stdout.write(
+          `${name}: CV+ ${share(simulated, (one) => one.covered).toFixed(3)} Gaussian ${share(simulated, (one) => one.coveredGaussian).toFixed(3)} by quarter ${quarters.join(' ')}\n`,
+        );
+      }
+    }, 120_000);
 
-  it('covers within two points of the stated level', () => {
-    expect(Math.abs(share(simulated, (one) => one.covered) - LEVEL)).toBeLessThan(0.02);
-  });
-});
+    it('covers within two points of the stated level', () => {
+      expect(Math.abs(share(simulated, (one) => one.covered) - LEVEL)).toBeLessThan(0.02);
+    });
+  },
+);
 
 describe('where the default interval fails', () => {
   // It promises coverage over all cases together, not for every kind of case.
   it('covers too often where errors are small and too seldom where they are large', async () => {
-    const simulated = (await simulate(NOISES['heteroscedastic'], 4711)).sort((first, second) => first.signal - second.signal);
+    const simulated = (await simulate(NOISES['heteroscedastic'], 4711)).sort(
+      (first, second) => first.signal - second.signal,
+    );
     const quarter = simulated.length / 4;
     expect(share(simulated.slice(0, quarter), (one) => one.covered)).toBeGreaterThan(LEVEL + 0.05);
     expect(share(simulated.slice(-quarter), (one) => one.covered)).toBeLessThan(LEVEL - 0.05);

@@ -7,7 +7,8 @@ import { numeric, table } from './reference';
 
 const normal = normalNumbers(seededRandom(17));
 const draw = (): number[] => Array.from({ length: 120 }, normal);
-const add = (...columns: readonly (readonly number[])[]): number[] => columns[0].map((_, row) => columns.reduce((sum, column) => sum + column[row], 0));
+const add = (...columns: readonly (readonly number[])[]): number[] =>
+  columns[0].map((_, row) => columns.reduce((sum, column) => sum + column[row], 0));
 const times = (column: readonly number[], factor: number): number[] => column.map((value) => value * factor);
 
 const length = draw();
@@ -53,7 +54,8 @@ describe('shared load', () => {
 
   it('shows that ridge splits a load more evenly than least squares', () => {
     const group = result.diagnostics.sharedLoad.find((candidate) => candidate.found === 'correlation');
-    const unevenness = (weights: readonly number[] | null | undefined): number => Math.abs((weights?.[0] ?? NaN) - (weights?.[1] ?? NaN));
+    const unevenness = (weights: readonly number[] | null | undefined): number =>
+      Math.abs((weights?.[0] ?? NaN) - (weights?.[1] ?? NaN));
     expect(unevenness(group?.ridge)).toBeLessThan(unevenness(group?.leastSquares));
   });
 
@@ -69,14 +71,28 @@ describe('influence', () => {
     const [most] = whole.diagnostics.influential;
     const without = await fit({ method: 'least-squares' }, (row) => row !== most.row);
     const fittedBy = (result: FitResult, row: number): number =>
-      result.weights.reduce((sum, weight, at) => sum + weight.value * ([length, waterline, alone, first, second, total][at][row] ?? NaN), result.intercept);
+      result.weights.reduce(
+        (sum, weight, at) => sum + weight.value * ([length, waterline, alone, first, second, total][at][row] ?? NaN),
+        result.intercept,
+      );
     const moved = target.reduce((sum, _, row) => sum + (fittedBy(whole, row) - fittedBy(without, row)) ** 2, 0);
     expect(most.cooksDistance).toBeCloseTo(moved / (7 * whole.diagnostics.residualSd ** 2), 8);
   });
 
   it('names the record that was spoilt', async () => {
-    const spoilt = table([...columns, numeric('y', target.map((value, row) => (row === 33 ? value + 40 : value)))]);
-    const { result } = await fitRecords(spoilt, { target: { column: 'y', transform: 'none' }, inputs: names.map((column) => ({ column })), method: 'ridge', penalty: { rule: 'minimum' } });
+    const spoilt = table([
+      ...columns,
+      numeric(
+        'y',
+        target.map((value, row) => (row === 33 ? value + 40 : value)),
+      ),
+    ]);
+    const { result } = await fitRecords(spoilt, {
+      target: { column: 'y', transform: 'none' },
+      inputs: names.map((column) => ({ column })),
+      method: 'ridge',
+      penalty: { rule: 'minimum' },
+    });
     expect(result.diagnostics.influential[0].row).toBe(33);
   });
 
@@ -89,7 +105,11 @@ describe('influence', () => {
 
 describe('what is worked out on request', () => {
   it('counts how often lasso chooses each input in half samples: always a strong one, seldom an idle one', async () => {
-    const { diagnostics } = await fit({ method: 'lasso', penalty: { rule: 'one-standard-error' }, extras: { selectionSamples: 40 } });
+    const { diagnostics } = await fit({
+      method: 'lasso',
+      penalty: { rule: 'one-standard-error' },
+      extras: { selectionSamples: 40 },
+    });
     const frequency = new Map(diagnostics.selectionFrequency?.map((row) => [row.input, row.frequency]));
     expect(frequency.get('alone')).toBe(1);
     expect(frequency.get('second') ?? NaN).toBeLessThan(0.7);
@@ -128,14 +148,25 @@ describe('accuracy of a logged target', () => {
     const points = result.diagnostics.residuals;
     const mean = (values: readonly number[]): number => values.reduce((sum, value) => sum + value, 0) / values.length;
     expect(formula.target.smearing).toBeCloseTo(mean(points.map((point) => Math.exp(point.residual))), 10);
-    expect(mean(points.map((point) => point.heldOutEstimate ?? NaN)) / mean(points.map((point) => point.recorded))).toBeCloseTo(1, 2);
+    expect(
+      mean(points.map((point) => point.heldOutEstimate ?? NaN)) / mean(points.map((point) => point.recorded)),
+    ).toBeCloseTo(1, 2);
   });
 
   it('covers as it states, overall and as a share of each quarter', async () => {
-    const { accuracy } = (await fitRecords(inventedRefits(500, 3), { target: { column: 'labour', transform: 'log' }, inputs: [{ column: 'length' }, { column: 'hull' }], method: 'ridge', penalty: { rule: 'minimum' } })).result;
+    const { accuracy } = (
+      await fitRecords(inventedRefits(500, 3), {
+        target: { column: 'labour', transform: 'log' },
+        inputs: [{ column: 'length' }, { column: 'hull' }],
+        method: 'ridge',
+        penalty: { rule: 'minimum' },
+      })
+    ).result;
     expect(accuracy.coverage).toBeGreaterThan(0.86);
     expect(accuracy.coverage).toBeLessThan(0.94);
     expect(accuracy.coverageByQuarter).toHaveLength(4);
-    expect(accuracy.coverageByQuarter.reduce((sum, quarter) => sum + quarter.records * quarter.coverage, 0) / 500).toBeCloseTo(accuracy.coverage, 10);
+    expect(
+      accuracy.coverageByQuarter.reduce((sum, quarter) => sum + quarter.records * quarter.coverage, 0) / 500,
+    ).toBeCloseTo(accuracy.coverage, 10);
   });
 });

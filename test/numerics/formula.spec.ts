@@ -30,7 +30,9 @@ beforeAll(async () => {
 describe('a formula', () => {
   it('is plain JSON without NaN or infinity', () => {
     const numbersAreFinite = (value: unknown): boolean =>
-      typeof value === 'number' ? Number.isFinite(value) : value === null || typeof value !== 'object' || Object.values(value).every(numbersAreFinite);
+      typeof value === 'number'
+        ? Number.isFinite(value)
+        : value === null || typeof value !== 'object' || Object.values(value).every(numbersAreFinite);
     expect(numbersAreFinite(formula)).toBe(true);
     expect(JSON.parse(JSON.stringify(formula))).toEqual(formula);
   });
@@ -48,9 +50,14 @@ describe('a formula', () => {
   });
 
   it('agrees with the sum of the reported weights in original units', async () => {
-    const plain = { ...specification, target: { column: 'labour', transform: 'none' as const }, inputs: [{ column: 'length' }, { column: 'hull' }] };
+    const plain = {
+      ...specification,
+      target: { column: 'labour', transform: 'none' as const },
+      inputs: [{ column: 'length' }, { column: 'hull' }],
+    };
     const fitted = await fitRecords(records, plain);
-    const weight = (input: string, level?: string): number => fitted.result.weights.find((row) => row.input === input && row.level === level)?.value ?? NaN;
+    const weight = (input: string, level?: string): number =>
+      fitted.result.weights.find((row) => row.input === input && row.level === level)?.value ?? NaN;
     const expected = fitted.result.intercept + 11 * weight('length') + weight('hull', 'steel');
     expect(evaluateFormula(fitted.formula, { length: 11, hull: 'steel' }).value).toBeCloseTo(expected, 9);
   });
@@ -64,13 +71,20 @@ describe('a formula', () => {
   });
 
   it('hangs a plain numeric input at its distance from typical in standard deviations, whatever the sign of its weight', async () => {
-    const flipped = { ...specification, target: { column: 'labour', transform: 'none' as const }, inputs: [{ column: 'waterline' }, { column: 'booked' }] };
+    const flipped = {
+      ...specification,
+      target: { column: 'labour', transform: 'none' as const },
+      inputs: [{ column: 'waterline' }, { column: 'booked' }],
+    };
     const made = await fitRecords(records, flipped);
     const evaluation = evaluateFormula(made.formula, { waterline: 12, booked: 19000 });
     made.formula.inputs.forEach((input, at) => {
       const [centre] = input.coding.centres;
       const [scale] = input.coding.scales;
-      expect(evaluation.contributions[at].arm).toBeCloseTo(((input.name === 'waterline' ? 12 : 19000) - centre) / scale, 9);
+      expect(evaluation.contributions[at].arm).toBeCloseTo(
+        ((input.name === 'waterline' ? 12 : 19000) - centre) / scale,
+        9,
+      );
     });
   });
 
@@ -99,10 +113,16 @@ describe('a formula', () => {
   });
 
   it('flags readings that are each in range but unlike any record together', async () => {
-    const both = { ...specification, inputs: [{ column: 'length' }, { column: 'waterline' }], target: { column: 'labour', transform: 'none' as const } };
+    const both = {
+      ...specification,
+      inputs: [{ column: 'length' }, { column: 'waterline' }],
+      target: { column: 'labour', transform: 'none' as const },
+    };
     const { formula: made } = await fitRecords(records, both);
     expect(evaluateFormula(made, { length: 11, waterline: 9.3 }).flags).toEqual([]);
-    expect(evaluateFormula(made, { length: 7, waterline: 14 }).flags.map((flag) => flag.code)).toEqual(['jointly-unusual']);
+    expect(evaluateFormula(made, { length: 7, waterline: 14 }).flags.map((flag) => flag.code)).toEqual([
+      'jointly-unusual',
+    ]);
   });
 
   it('never flags one of its own records', () => {
@@ -126,16 +146,22 @@ describe('a formula', () => {
   });
 
   it('refuses a missing reading where the rule is refuse', () => {
-    expect(() => evaluateFormula(formula, { ...caseInputs, length: null })).toThrow(expect.objectContaining({ code: 'input-missing', column: 'length' }));
+    expect(() => evaluateFormula(formula, { ...caseInputs, length: null })).toThrow(
+      expect.objectContaining({ code: 'input-missing', column: 'length' }),
+    );
   });
 
   it('gives an unseen level no contribution of its own kind, with a flag', () => {
-    expect(evaluateFormula(formula, { ...caseInputs, hull: 'ferrocement' }).flags.map((flag) => flag.code)).toContain('unknown-level');
+    expect(evaluateFormula(formula, { ...caseInputs, hull: 'ferrocement' }).flags.map((flag) => flag.code)).toContain(
+      'unknown-level',
+    );
   });
 
   it('refuses an unseen level where the rule is refuse', async () => {
     const { formula: made } = await fitRecords(records, { ...specification, inputs: [{ column: 'hull' }] });
-    expect(() => evaluateFormula(made, { hull: 'ferrocement' })).toThrow(expect.objectContaining({ code: 'unknown-level', column: 'hull' }));
+    expect(() => evaluateFormula(made, { hull: 'ferrocement' })).toThrow(
+      expect.objectContaining({ code: 'unknown-level', column: 'hull' }),
+    );
   });
 
   it.each([
@@ -144,11 +170,14 @@ describe('a formula', () => {
     ['waterline', 0],
     ['booked', '2021-02-30'],
   ])('refuses %s = %s by name', (input, value) => {
-    expect(() => evaluateFormula(formula, { ...caseInputs, [input]: value })).toThrow(expect.objectContaining({ code: 'input-not-suitable', column: input }));
+    expect(() => evaluateFormula(formula, { ...caseInputs, [input]: value })).toThrow(
+      expect.objectContaining({ code: 'input-not-suitable', column: input }),
+    );
   });
 
   it('is linear beyond the outer knots of a spline', () => {
-    const at = (length: number): number => evaluateFormula(formula, { ...caseInputs, length }).contributions[0].contribution;
+    const at = (length: number): number =>
+      evaluateFormula(formula, { ...caseInputs, length }).contributions[0].contribution;
     expect(at(30) - at(29)).toBeCloseTo(at(26) - at(25), 9);
     expect(at(2) - at(1)).toBeCloseTo(at(4) - at(3), 9);
   });

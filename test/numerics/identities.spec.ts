@@ -17,13 +17,16 @@ const HADAMARD = [
 const TARGET = [3, -1, 2, 5, 0, 4, -2, 7];
 
 async function fitHadamard(change: Partial<FitSpecification>): Promise<FitResult> {
-  const { result } = await fitRecords(table([...HADAMARD.map((column, at) => numeric(`x${at}`, column)), numeric('y', TARGET)]), {
-    target: { column: 'y', transform: 'none' },
-    inputs: HADAMARD.map((_, at) => ({ column: `x${at}` })),
-    method: 'least-squares',
-    validation: { scheme: 'k-fold', folds: 2 },
-    ...change,
-  });
+  const { result } = await fitRecords(
+    table([...HADAMARD.map((column, at) => numeric(`x${at}`, column)), numeric('y', TARGET)]),
+    {
+      target: { column: 'y', transform: 'none' },
+      inputs: HADAMARD.map((_, at) => ({ column: `x${at}` })),
+      method: 'least-squares',
+      validation: { scheme: 'k-fold', folds: 2 },
+      ...change,
+    },
+  );
   return result;
 }
 
@@ -38,16 +41,31 @@ describe('an orthonormal design (Hastie, Tibshirani and Friedman 2009, table 3.4
   });
   it('has ridge weights c/(1 + λ)', async () => {
     const result = await fitHadamard({ method: 'ridge', penalty: { rule: 'fixed', value: 0.7 } });
-    expect(relativeDifference(standardised(result), leastSquares.map((value) => value / 1.7))).toBeLessThan(1e-14);
+    expect(
+      relativeDifference(
+        standardised(result),
+        leastSquares.map((value) => value / 1.7),
+      ),
+    ).toBeLessThan(1e-14);
     expect(result.penalty.effectiveDegreesOfFreedom).toBeCloseTo(3 / 1.7, 12);
   });
   it('has lasso weights by soft thresholding', async () => {
     const result = await fitHadamard({ method: 'lasso', penalty: { rule: 'fixed', value: 0.6 } });
-    expect(relativeDifference(standardised(result), leastSquares.map((value) => soft(value, 0.6)))).toBeLessThan(1e-14);
+    expect(
+      relativeDifference(
+        standardised(result),
+        leastSquares.map((value) => soft(value, 0.6)),
+      ),
+    ).toBeLessThan(1e-14);
   });
   it('has elastic net weights soft(c, λα)/(1 + λ(1 − α))', async () => {
     const result = await fitHadamard({ method: 'elastic-net', mixing: 0.25, penalty: { rule: 'fixed', value: 0.8 } });
-    expect(relativeDifference(standardised(result), leastSquares.map((value) => soft(value, 0.2) / 1.6))).toBeLessThan(1e-14);
+    expect(
+      relativeDifference(
+        standardised(result),
+        leastSquares.map((value) => soft(value, 0.2) / 1.6),
+      ),
+    ).toBeLessThan(1e-14);
   });
   it('multiplies λ by the penalty factor, leaves a factor of 0 free, and keeps sign limits', async () => {
     const inputs = [
@@ -62,21 +80,39 @@ describe('an orthonormal design (Hastie, Tibshirani and Friedman 2009, table 3.4
 
 interface LeaveOneOutReference {
   readonly rows: readonly (readonly number[])[];
-  readonly leaveOneOut: readonly { readonly lambdaSum: number; readonly meanSquare: number; readonly generalised: number }[];
+  readonly leaveOneOut: readonly {
+    readonly lambdaSum: number;
+    readonly meanSquare: number;
+    readonly generalised: number;
+  }[];
 }
 
 describe('leave-one-out', () => {
   const { rows, leaveOneOut } = readFixture<LeaveOneOutReference>('hald-ridge.json');
 
   it('is minimised by the rule leave-one-out at the penalty that explicit refits prefer', async () => {
-    const columns = [0, 1, 2, 3].map((at) => numeric(`x${at}`, rows.map((row) => row[at])));
-    const { result } = await fitRecords(table([...columns, numeric('y', rows.map((row) => row[4]))]), {
-      target: { column: 'y', transform: 'none' },
-      inputs: columns.map((column) => ({ column: column.name })),
-      method: 'ridge',
-      penalty: { rule: 'leave-one-out' },
-      validation: { scheme: 'k-fold', folds: 3 },
-    });
+    const columns = [0, 1, 2, 3].map((at) =>
+      numeric(
+        `x${at}`,
+        rows.map((row) => row[at]),
+      ),
+    );
+    const { result } = await fitRecords(
+      table([
+        ...columns,
+        numeric(
+          'y',
+          rows.map((row) => row[4]),
+        ),
+      ]),
+      {
+        target: { column: 'y', transform: 'none' },
+        inputs: columns.map((column) => ({ column: column.name })),
+        method: 'ridge',
+        penalty: { rule: 'leave-one-out' },
+        validation: { scheme: 'k-fold', folds: 3 },
+      },
+    );
     const errors = result.path.map((point) => bruteForceError(rows, point.lambda * rows.length));
     const best = errors.indexOf(Math.min(...errors));
     expect(result.penalty.lambda).toBe(result.path[best].lambda);
@@ -96,8 +132,14 @@ function bruteForceError(rows: readonly (readonly number[])[], lambdaSum: number
     const means = inputs.map(mean);
     const target = rows.map((entry) => entry[4]);
     const targetMean = mean(target);
-    const matrix = inputs.map((first, i) => inputs.map((second, j) => kept.reduce((sum, at) => sum + (first[at] - means[i]) * (second[at] - means[j]), i === j ? lambdaSum : 0)));
-    const right = inputs.map((first, i) => kept.reduce((sum, at) => sum + (first[at] - means[i]) * (target[at] - targetMean), 0));
+    const matrix = inputs.map((first, i) =>
+      inputs.map((second, j) =>
+        kept.reduce((sum, at) => sum + (first[at] - means[i]) * (second[at] - means[j]), i === j ? lambdaSum : 0),
+      ),
+    );
+    const right = inputs.map((first, i) =>
+      kept.reduce((sum, at) => sum + (first[at] - means[i]) * (target[at] - targetMean), 0),
+    );
     const weights = solveByElimination(matrix, right);
     return row[4] - targetMean - weights.reduce((sum, weight, i) => sum + weight * (inputs[i][out] - means[i]), 0);
   });
@@ -131,7 +173,8 @@ describe('the evidence', () => {
       [0, 1, 2],
     ];
     const target = [1, 2, 2];
-    const dot = (first: readonly number[], second: readonly number[]): number => first.reduce((sum, value, at) => sum + value * second[at], 0) / 3;
+    const dot = (first: readonly number[], second: readonly number[]): number =>
+      first.reduce((sum, value, at) => sum + value * second[at], 0) / 3;
     const problem = {
       weightSum: 3,
       size: 2,
@@ -169,18 +212,29 @@ describe('the evidence', () => {
     const form = ridgeFromMoments(problem, { factors: Float64Array.of(1), signs: ['any'] });
     const density = (weight: number): number => {
       const misfit = sum(x.map((value, at) => (y[at] - weight * value) ** 2));
-      return Math.exp(-misfit / (2 * variance) - weight ** 2 / (2 * prior)) / ((2 * Math.PI * variance) ** 2.5 * Math.sqrt(2 * Math.PI * prior));
+      return (
+        Math.exp(-misfit / (2 * variance) - weight ** 2 / (2 * prior)) /
+        ((2 * Math.PI * variance) ** 2.5 * Math.sqrt(2 * Math.PI * prior))
+      );
     };
     const step = 1e-3;
     const integral = sum(Array.from({ length: 24001 }, (_, at) => density(-12 + at * step))) * step;
-    expect(logEvidence(form, { records: 5, flat: 0 }, variance, variance / (5 * prior))).toBeCloseTo(Math.log(integral), 10);
+    expect(logEvidence(form, { records: 5, flat: 0 }, variance, variance / (5 * prior))).toBeCloseTo(
+      Math.log(integral),
+      10,
+    );
   });
 
   it('is highest at the penalty that the rule evidence reports, and gives its variances', async () => {
     const random = seededRandom(11);
     const normal = normalNumbers(random);
     const columns = [0, 1, 2, 3, 4].map((at) => numeric(`x${at}`, Array.from({ length: 60 }, normal)));
-    const target = Array.from({ length: 60 }, (_, row) => columns.reduce((sum, column, at) => sum + (column.kind === 'numeric' ? column.values[row] : 0) * (at - 2) * 0.4, normal()));
+    const target = Array.from({ length: 60 }, (_, row) =>
+      columns.reduce(
+        (sum, column, at) => sum + (column.kind === 'numeric' ? column.values[row] : 0) * (at - 2) * 0.4,
+        normal(),
+      ),
+    );
     const { result } = await fitRecords(table([...columns, numeric('y', target)]), {
       target: { column: 'y', transform: 'none' },
       inputs: columns.map((column) => ({ column: column.name })),
@@ -189,7 +243,10 @@ describe('the evidence', () => {
     });
     const { evidence } = result.diagnostics;
     expect(evidence).not.toBeNull();
-    expect(result.penalty.lambda).toBeCloseTo((evidence?.residualVariance ?? NaN) / (60 * (evidence?.priorVariance ?? NaN)), 10);
+    expect(result.penalty.lambda).toBeCloseTo(
+      (evidence?.residualVariance ?? NaN) / (60 * (evidence?.priorVariance ?? NaN)),
+      10,
+    );
     expect(result.penalty.priorSd).toBeCloseTo(Math.sqrt(evidence?.priorVariance ?? NaN), 10);
   });
 });

@@ -7,17 +7,34 @@ import { numeric, readFixture, table } from './reference';
 const cars = readFixture<{
   readonly source: string;
   readonly rows: readonly (readonly number[])[];
-  readonly cvPlus: { readonly level: number; readonly at: readonly number[]; readonly lower: readonly number[]; readonly upper: readonly number[] };
+  readonly cvPlus: {
+    readonly level: number;
+    readonly at: readonly number[];
+    readonly lower: readonly number[];
+    readonly upper: readonly number[];
+  };
   readonly jackknifePlus: { readonly lower: readonly number[]; readonly upper: readonly number[] };
   readonly prediction90: { readonly at: readonly number[]; readonly intervals: readonly (readonly number[])[] };
   readonly prediction95: { readonly at: readonly number[]; readonly intervals: readonly (readonly number[])[] };
 }>('cars-intervals.json');
 
 const records = table([
-  numeric('speed', cars.rows.map((row) => row[0])),
-  numeric('distance', cars.rows.map((row) => row[1])),
-  numeric('fold', cars.rows.map((_, row) => row % 5)),
-  numeric('row', cars.rows.map((_, row) => row)),
+  numeric(
+    'speed',
+    cars.rows.map((row) => row[0]),
+  ),
+  numeric(
+    'distance',
+    cars.rows.map((row) => row[1]),
+  ),
+  numeric(
+    'fold',
+    cars.rows.map((_, row) => row % 5),
+  ),
+  numeric(
+    'row',
+    cars.rows.map((_, row) => row),
+  ),
 ]);
 
 const specification: FitSpecification = {
@@ -38,7 +55,10 @@ describe(`intervals on the cars data (${cars.source.slice(0, 31)})`, () => {
   });
 
   it('gives the jackknife+ when every record is a fold', async () => {
-    const { formula } = await fitRecords(records, { ...specification, validation: { scheme: 'grouped', folds: 50, column: 'row' } });
+    const { formula } = await fitRecords(records, {
+      ...specification,
+      validation: { scheme: 'grouped', folds: 50, column: 'row' },
+    });
     cars.cvPlus.at.forEach((speed, at) => {
       const { interval } = evaluateFormula(formula, { speed });
       expect(interval.low).toBeCloseTo(cars.jackknifePlus.lower[at], 8);
@@ -69,7 +89,11 @@ describe('the order statistics of CV+', () => {
 
   it('never narrows an interval by thinning the residuals', () => {
     const residuals = Float64Array.from({ length: 20000 }, (_, at) => Math.sqrt(at + 1));
-    const whole = cvPlusInterval([{ residuals: Array.from(residuals), counts: Array.from(residuals, () => 1) }], [0], 0.9);
+    const whole = cvPlusInterval(
+      [{ residuals: Array.from(residuals), counts: Array.from(residuals, () => 1) }],
+      [0],
+      0.9,
+    );
     const thin = thinResiduals(residuals, 300);
     const thinned = cvPlusInterval([thin], [0], 0.9);
     expect(thin.residuals.length).toBeLessThanOrEqual(300);

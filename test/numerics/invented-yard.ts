@@ -12,9 +12,13 @@ const HULLS = ['glass fibre', 'steel', 'wood', 'aluminium'];
 export function inventedRefits(count: number, seed: number): RecordTable {
   const random = seededRandom(seed);
   const normal = normalNumbers(random);
-  const length = new Float64Array(count), waterline = new Float64Array(count), draught = new Float64Array(count);
-  const day = new Float64Array(count), labour = new Float64Array(count);
-  const hull = new Int32Array(count), yard = new Int32Array(count);
+  const length = new Float64Array(count),
+    waterline = new Float64Array(count),
+    draught = new Float64Array(count);
+  const day = new Float64Array(count),
+    labour = new Float64Array(count);
+  const hull = new Int32Array(count),
+    yard = new Int32Array(count);
   for (let row = 0; row < count; row += 1) {
     length[row] = 6 + 12 * random();
     waterline[row] = 0.85 * length[row] + 0.1 * normal();

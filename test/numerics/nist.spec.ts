@@ -25,15 +25,34 @@ async function fitSet(set: NistSet): Promise<FitResult> {
   const powers = set.degree === null ? null : Array.from({ length: set.degree }, (_, at) => at + 1);
   const columns =
     powers === null
-      ? rows[0].slice(1).map((_, at) => numeric(`x${at + 1}`, rows.map((row) => row[at + 1])))
-      : powers.map((power) => numeric(`x${power}`, rows.map((row) => row[1] ** power)));
-  const { result } = await fitRecords(table([...columns, numeric('y', rows.map((row) => row[0]))]), {
-    target: { column: 'y', transform: 'none' },
-    inputs: columns.map((column) => ({ column: column.name })),
-    method: 'least-squares',
-    intercept: set.intercept,
-    validation: { scheme: 'k-fold', folds: 3 },
-  });
+      ? rows[0].slice(1).map((_, at) =>
+          numeric(
+            `x${at + 1}`,
+            rows.map((row) => row[at + 1]),
+          ),
+        )
+      : powers.map((power) =>
+          numeric(
+            `x${power}`,
+            rows.map((row) => row[1] ** power),
+          ),
+        );
+  const { result } = await fitRecords(
+    table([
+      ...columns,
+      numeric(
+        'y',
+        rows.map((row) => row[0]),
+      ),
+    ]),
+    {
+      target: { column: 'y', transform: 'none' },
+      inputs: columns.map((column) => ({ column: column.name })),
+      method: 'least-squares',
+      intercept: set.intercept,
+      validation: { scheme: 'k-fold', folds: 3 },
+    },
+  );
   return result;
 }
 
@@ -51,20 +70,27 @@ describe.each(sets.map((set) => [set.name, set] as const))(`NIST StRD %s (${sour
   it(`gives the coefficients to ${wanted} digits`, () => {
     const values = result.weights.map((weight) => weight.value);
     const found = set.intercept ? [result.intercept, ...values] : values;
-    if (process.env['SHOW_DIGITS'] !== undefined) process.stdout.write(`${name} coefficients ${fewestDigits(found, set.certified.coefficients).toFixed(1)}\n`);
+    if (process.env['SHOW_DIGITS'] !== undefined)
+      process.stdout.write(`${name} coefficients ${fewestDigits(found, set.certified.coefficients).toFixed(1)}\n`);
     expect(fewestDigits(found, set.certified.coefficients)).toBeGreaterThanOrEqual(wanted);
   });
 
   it(`gives the standard errors to ${wanted} digits`, () => {
     const errors = result.weights.map((weight) => weight.standardError ?? NaN);
     const found = set.intercept ? [result.interceptStandardError ?? NaN, ...errors] : errors;
-    if (process.env['SHOW_DIGITS'] !== undefined) process.stdout.write(`${name} errors ${fewestDigits(found, set.certified.standardErrors).toFixed(1)} ${found[0]}\n`);
+    if (process.env['SHOW_DIGITS'] !== undefined)
+      process.stdout.write(
+        `${name} errors ${fewestDigits(found, set.certified.standardErrors).toFixed(1)} ${found[0]}\n`,
+      );
     expect(fewestDigits(found, set.certified.standardErrors)).toBeGreaterThanOrEqual(wanted);
   });
 
   it(`gives the residual deviation and R² to ${wanted} digits`, () => {
     const { residualSd, trainingR2 } = result.diagnostics;
-    if (process.env['SHOW_DIGITS'] !== undefined) process.stdout.write(`${name} sd ${agreeingDigits(residualSd, set.certified.residualSd).toFixed(1)} r2 ${agreeingDigits(trainingR2, set.certified.rSquared).toFixed(1)}\n`);
+    if (process.env['SHOW_DIGITS'] !== undefined)
+      process.stdout.write(
+        `${name} sd ${agreeingDigits(residualSd, set.certified.residualSd).toFixed(1)} r2 ${agreeingDigits(trainingR2, set.certified.rSquared).toFixed(1)}\n`,
+      );
     expect(agreeingDigits(residualSd, set.certified.residualSd)).toBeGreaterThanOrEqual(wanted);
     expect(agreeingDigits(trainingR2, set.certified.rSquared)).toBeGreaterThanOrEqual(wanted);
   });

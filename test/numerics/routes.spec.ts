@@ -68,7 +68,11 @@ describe.each([
 
   it.each(Object.keys(forms))('%s with QR and SVD: weights, residual and length', (name) => {
     const expected = orthogonal.weights(LAMBDAS);
-    forms[name].weights(LAMBDAS).forEach((weights, at) => expect(relativeDifference(Array.from(weights), Array.from(expected[at]))).toBeLessThan(1e-11));
+    forms[name]
+      .weights(LAMBDAS)
+      .forEach((weights, at) =>
+        expect(relativeDifference(Array.from(weights), Array.from(expected[at]))).toBeLessThan(1e-11),
+      );
     for (const lambda of LAMBDAS) {
       expect(forms[name].parts(lambda).residualSquare).toBeCloseTo(orthogonal.parts(lambda).residualSquare, 11);
       expect(forms[name].parts(lambda).penaltySquare).toBeCloseTo(orthogonal.parts(lambda).penaltySquare, 10);
@@ -83,11 +87,17 @@ describe.each([
   it.each([1, 0.5])('at mixing %d: weights and gap', (mixing) => {
     const rows = randomRows(rowCount, size, 9);
     const settings = { kind: 'descent', mixing, polish: true } as const;
-    const columns = Array.from(penalties(size).factors, (penaltyFactor, input) => ({ input, penaltyFactor, sign: 'any' as const }));
+    const columns = Array.from(penalties(size).factors, (penaltyFactor, input) => ({
+      input,
+      penaltyFactor,
+      sign: 'any' as const,
+    }));
     const lambdas = [1, 0.5, 0.2, 0.1, 0.05];
     const whole = solvePath({ problem: problemOfRows(rows), rows: null }, columns, settings, lambdas);
     const wide = descendWide(rows, penalties(size), settings, lambdas);
-    whole.weights.forEach((weights, at) => expect(relativeDifference(Array.from(wide.weights[at]), Array.from(weights))).toBeLessThan(1e-9));
+    whole.weights.forEach((weights, at) =>
+      expect(relativeDifference(Array.from(wide.weights[at]), Array.from(weights))).toBeLessThan(1e-9),
+    );
     expect(Math.max(...wide.gaps)).toBeLessThan(1e-10);
     expect(wide.degreesOfFreedom).toEqual(whole.degreesOfFreedom.map((value) => expect.closeTo(value, 8)));
   });
@@ -103,18 +113,36 @@ describe('a fit', () => {
   };
 
   it('has the same bits however its tasks are run', async () => {
-    const backwards = async (tasks: readonly FoldTask[]) => tasks.map((task, at) => ({ task: structuredClone(task), at })).reverse().map(({ task, at }) => ({ answer: runFoldTask(task), at })).sort((first, second) => first.at - second.at).map(({ answer }) => answer);
-    expect(await fitRecords(records, specification, { runFolds: backwards })).toEqual(await fitRecords(records, specification));
+    const backwards = async (tasks: readonly FoldTask[]) =>
+      tasks
+        .map((task, at) => ({ task: structuredClone(task), at }))
+        .reverse()
+        .map(({ task, at }) => ({ answer: runFoldTask(task), at }))
+        .sort((first, second) => first.at - second.at)
+        .map(({ answer }) => answer);
+    expect(await fitRecords(records, specification, { runFolds: backwards })).toEqual(
+      await fitRecords(records, specification),
+    );
   });
 
   it('standardises a fold by moments as it does by rows, categories and filled gaps included', () => {
-    const resolved = resolveSpecification({ ...specification, inputs: [...specification.inputs, { column: 'draught', missing: 'typical' }] });
+    const resolved = resolveSpecification({
+      ...specification,
+      inputs: [...specification.inputs, { column: 'draught', missing: 'typical' }],
+    });
     const { design, plan } = prepareContext(records, resolved, {});
     const spans = plan.folds[3].training.map((segment) => spanOf(plan, segment));
-    const byMoments = trainingPart(design, 'moments', spans, spans.map((span) => momentsOf(design, span))).problem;
+    const byMoments = trainingPart(
+      design,
+      'moments',
+      spans,
+      spans.map((span) => momentsOf(design, span)),
+    ).problem;
     const byRows = trainingPart(design, 'orthogonal', spans, []).problem;
     expect(byMoments.kept).toEqual(byRows.kept);
-    expect(byMoments.fills.map((fill) => fill.shift)).toEqual(byRows.fills.map((fill) => expect.closeTo(fill.shift, 12)));
+    expect(byMoments.fills.map((fill) => fill.shift)).toEqual(
+      byRows.fills.map((fill) => expect.closeTo(fill.shift, 12)),
+    );
     for (const name of ['gram', 'cross', 'means', 'scales'] as const) {
       expect(relativeDifference(Array.from(byMoments[name]), Array.from(byRows[name]))).toBeLessThan(1e-12);
     }
@@ -124,8 +152,16 @@ describe('a fit', () => {
     const normal = normalNumbers(seededRandom(8));
     const columns = Array.from({ length: 80 }, (_, at) => numeric(`x${at}`, Array.from({ length: 3300 }, normal)));
     const target = numeric('y', Array.from({ length: 3300 }, normal));
-    const wanted = { target: { column: 'y', transform: 'none' as const }, inputs: columns.map((column) => ({ column: column.name })), validation: { scheme: 'k-fold' as const, folds: 2 } };
-    const { result } = await fitRecords(table([...columns, target]), { ...wanted, method: 'ridge', penalty: { rule: 'fixed', value: 0.01 } });
+    const wanted = {
+      target: { column: 'y', transform: 'none' as const },
+      inputs: columns.map((column) => ({ column: column.name })),
+      validation: { scheme: 'k-fold' as const, folds: 2 },
+    };
+    const { result } = await fitRecords(table([...columns, target]), {
+      ...wanted,
+      method: 'ridge',
+      penalty: { rule: 'fixed', value: 0.01 },
+    });
     expect(result.report.route).toBe('tridiagonal form of the moments');
   });
 
@@ -133,7 +169,13 @@ describe('a fit', () => {
     const normal = normalNumbers(seededRandom(2));
     const size = 10000;
     const base = Array.from({ length: 44 }, (_, at) => numeric(`x${at}`, Array.from({ length: size }, normal)));
-    const near = numeric('near', Array.from({ length: size }, (_, row) => (base[0].kind === 'numeric' ? base[0].values[row] : 0) + 1e-6 * normal()));
+    const near = numeric(
+      'near',
+      Array.from(
+        { length: size },
+        (_, row) => (base[0].kind === 'numeric' ? base[0].values[row] : 0) + 1e-6 * normal(),
+      ),
+    );
     const target = numeric('y', Array.from({ length: size }, normal));
     const { result } = await fitRecords(table([...base, near, target]), {
       target: { column: 'y', transform: 'none' },

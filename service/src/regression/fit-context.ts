@@ -1,7 +1,8 @@
 import { buildDesign } from './design/build-design';
 import type { DesignMatrix } from './design/design-matrix';
 import type { Moments } from './design/moments';
-import { findColumn, readRecords, type ReadRecords } from './design/read-records';
+import { findColumn } from './design/read-input';
+import { readRecords, type ReadRecords } from './design/read-records';
 import type { ResolvedSpecification } from './design/resolve-specification';
 import type { RowSpan } from './design/standardised-rows';
 import { RegressionError } from './errors';
@@ -34,13 +35,25 @@ export interface ContextHooks {
   readonly runFolds?: TaskRunner;
 }
 
-export function prepareContext(records: RecordTable, specification: ResolvedSpecification, hooks: ContextHooks): FitContext {
+export function prepareContext(
+  records: RecordTable,
+  specification: ResolvedSpecification,
+  hooks: ContextHooks,
+): FitContext {
   const read = readRecords(records, specification);
   const { validation } = specification;
-  const plan = planFolds(read.count, read.rows, validation, validation.column === null ? null : findColumn(records, validation.column));
+  const plan = planFolds(
+    read.count,
+    read.rows,
+    validation,
+    validation.column === null ? null : findColumn(records, validation.column),
+  );
   const design = buildDesign(read, specification, plan, null);
   if (design.columns.every((column) => column.leftOut !== undefined)) {
-    throw new RegressionError('no-usable-input', 'Every input has the same reading in all records, so nothing can be learnt from them.');
+    throw new RegressionError(
+      'no-usable-input',
+      'Every input has the same reading in all records, so nothing can be learnt from them.',
+    );
   }
   const kind = solverKind(specification.method, design.columns);
   return {
@@ -76,7 +89,9 @@ export function allRows(context: FitContext): RowSpan[] {
 export function designForFold(context: FitContext, fold: Fold): DesignMatrix {
   if (!context.designPerFold) return context.design;
   const { read, specification, plan } = context;
-  const training = fold.training.flatMap((segment) => Array.from(plan.order.subarray(plan.segmentStarts[segment], plan.segmentStarts[segment + 1])));
+  const training = fold.training.flatMap((segment) =>
+    Array.from(plan.order.subarray(plan.segmentStarts[segment], plan.segmentStarts[segment + 1])),
+  );
   return buildDesign(read, specification, plan, Int32Array.from(training));
 }
 
@@ -91,4 +106,3 @@ export async function segmentMoments(context: FitContext): Promise<readonly Mome
     return answer.moments;
   });
 }
-

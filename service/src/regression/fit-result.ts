@@ -2,8 +2,8 @@ import type { ColumnModel } from './design/moments';
 import type { FitContext } from './fit-context';
 import type { FormulaInterval, FormulaLeverage } from './formula/formula';
 import { leverageAt, packLower } from './formula/leverage';
+import { reportOf } from './fit-report';
 import { heldOutAccuracy, heldOutCoverage, shownEstimates } from './inference/accuracy';
-import { conditionNumber } from './inference/condition';
 import { diagnose } from './inference/diagnose';
 import type { HeldOut } from './inference/held-out';
 import { sampledPositions, type LeverageMatrix } from './inference/influence';
@@ -11,7 +11,7 @@ import { standardisedRow } from './inference/hat-features';
 import { standardErrors } from './inference/standard-errors';
 import { studentQuantile } from './inference/student-t';
 import { trainingFit, type TrainingFit } from './inference/training-fit';
-import type { FitAccuracy, FitPenalty, FitReport, FitResult, FitWeight, PathPoint } from './result';
+import type { FitAccuracy, FitPenalty, FitResult, FitWeight, PathPoint } from './result';
 import type { Choice } from './selection/choice';
 import type { PenaltyPlan } from './selection/choose-penalty';
 import type { CrossValidation } from './selection/cross-validation';
@@ -78,12 +78,16 @@ function interceptOf({ context, model, original }: FinishedFit): number {
   sum.add(design.targetCentre);
   sum.add(model.constant);
   for (let column = 0; column < design.columnCount; column += 1) {
-    if (design.scales[column] !== 0) sum.addProduct(-(model.weights[column] / design.scales[column]), design.centres[column]);
+    if (design.scales[column] !== 0)
+      sum.addProduct(-(model.weights[column] / design.scales[column]), design.centres[column]);
   }
   return sum.value();
 }
 
-function weightsOf({ context, model, original, solution, part }: FinishedFit, errors: Float64Array | null): FitWeight[] {
+function weightsOf(
+  { context, model, original, solution, part }: FinishedFit,
+  errors: Float64Array | null,
+): FitWeight[] {
   const { design, specification } = context;
   const dependent = new Set(solution.dependent.map((at) => part.problem.kept[at]));
   return design.columns.map((column, at) => {
@@ -109,7 +113,8 @@ function accuracyOf(fit: FinishedFit, training: TrainingFit): FitAccuracy {
   const { context, heldOut, crossValidation, choice } = fit;
   const shown = shownEstimates(context, heldOut);
   const gaussian = gaussianOf(fit);
-  const meanLeverage = (fit.solution.degreesOfFreedom[choice.at] + (context.design.intercept ? 1 : 0)) / context.read.count;
+  const meanLeverage =
+    (fit.solution.degreesOfFreedom[choice.at] + (context.design.intercept ? 1 : 0)) / context.read.count;
   const half = gaussian === null ? null : gaussian.quantile * gaussian.residualSd * Math.sqrt(1 + meanLeverage);
   const coverage = heldOutCoverage(context, heldOut, shown, half);
   const error = crossValidation.errors[choice.at];
@@ -140,59 +145,15 @@ function pathOf({ context, plan, solution, crossValidation, part }: FinishedFit)
   });
 }
 
-const ROUTE_NAMES = {
-  'least-squares': { moments: 'Cholesky of the moments', orthogonal: 'QR of the records with refinement', wide: 'QR of the records with refinement' },
-  ridge: { moments: 'tridiagonal form of the moments', orthogonal: 'QR and SVD of the records', wide: 'tridiagonal form of the dual' },
-  descent: {
-    moments: 'coordinate descent on the moments',
-    orthogonal: 'coordinate descent on moments of centred records',
-    wide: 'coordinate descent on a working set of the records',
-  },
-} as const;
-
-function reportOf(fit: FinishedFit): FitReport {
-  const { context, solution, choice, part } = fit;
-  const positions = Array.from({ length: part.problem.size }, (_, at) => at);
-  return {
-    route: ROUTE_NAMES[context.settings.kind][context.route],
-    iterations: solution.iterations,
-    converged: solution.converged && fit.foldsConverged,
-    gap: solution.gaps[choice.at],
-    conditionNumber: conditionNumber(part, positions),
-    warnings: warningsOf(fit),
-    recordCount: context.read.count,
-    columnCount: context.design.columnCount,
-    foldCount: context.plan.folds.length,
-  };
-}
-
-function warningsOf({ context, solution, foldsConverged, lever, choice, plan, weights }: FinishedFit): string[] {
-  const { read, design, specification } = context;
-  const warnings = [...read.warnings];
-  const constant = design.columns.filter((column) => column.leftOut === 'constant');
-  for (const column of constant) {
-    const name = specification.inputs[column.input].column;
-    warnings.push(`${column.label === undefined ? name : `${name} (${column.label})`} is the same in every record and was left out.`);
-  }
-  if (!solution.converged) warnings.push('The path did not reach the duality gap at every penalty.');
-  if (!foldsConverged) warnings.push('Some folds did not reach the duality gap.');
-  if (weights.every((weight) => weight === 0)) warnings.push('Every weight is 0 at the chosen penalty: the estimate is the same for every case.');
-  else if (lever === null) warnings.push('Too many inputs for a check of unusual combinations; ranges are still checked.');
-  const heldOutCount = read.count;
-  if (Math.ceil(specification.intervalLevel * (heldOutCount + 1) - 1e-9) > heldOutCount) {
-    warnings.push('Too few records for an interval of this level; the widest held-out residual is used.');
-  }
-  const edge = specification.penalty.rule === 'minimum' && plan.lambdas.length > 1;
-  if (edge && choice.at === plan.lambdas.length - 1) warnings.push('The smallest error stands at the weakest penalty of the path.');
-  return warnings;
-}
-
 /** Student's t where the residual variance is estimated with few degrees; none for lasso and elastic net. */
 export function gaussianOf(fit: FinishedFit): FormulaInterval['gaussian'] {
   if (fit.context.settings.kind === 'descent' || fit.lever === null) return null;
   const training = trainingFit(fit);
   if (training.degreesLeft <= 0) return null;
-  return { residualSd: Math.sqrt(training.variance), quantile: studentQuantile(fit.context.specification.intervalLevel, training.degreesLeft) };
+  return {
+    residualSd: Math.sqrt(training.variance),
+    quantile: studentQuantile(fit.context.specification.intervalLevel, training.degreesLeft),
+  };
 }
 
 /** The leverage matrix as the formula keeps it; `largest` is taken with the packed figures, over the records (evenly sampled above 20,000). */
@@ -205,7 +166,13 @@ export function leverageOf({ context, part }: FinishedFit, lever: LeverageMatrix
   for (const position of sampledPositions(design.rowCount)) {
     const root = design.data[design.columnCount * design.rowCount + position];
     const row = standardisedRow(design, part.problem, position);
-    largest = Math.max(largest, leverageAt(bare, lever.positions.map((at) => row[at] / root)));
+    largest = Math.max(
+      largest,
+      leverageAt(
+        bare,
+        lever.positions.map((at) => row[at] / root),
+      ),
+    );
   }
   return { columns, constant: lever.base, packed, largest };
 }

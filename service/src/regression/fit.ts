@@ -44,7 +44,11 @@ export interface FittedRecords {
  * Fits one specification to one table of records. The conventions are those of conventions.ts. Pure: no clock, no files; the
  * same records and specification give the same bits. Throws RegressionError.
  */
-export async function fitRecords(records: RecordTable, specification: FitSpecification, hooks: FitHooks = {}): Promise<FittedRecords> {
+export async function fitRecords(
+  records: RecordTable,
+  specification: FitSpecification,
+  hooks: FitHooks = {},
+): Promise<FittedRecords> {
   hooks.onProgress?.({ stage: 'reading', done: 0, total: records.rowCount });
   const context = prepareContext(records, resolveSpecification(specification), hooks);
   const fit = await finishFit(await readyForPath(context));
@@ -76,7 +80,8 @@ async function readyForPath(context: FitContext): Promise<ReadyFit> {
   const part = trainingPart(design, context.route, allRows(context), moments);
   context.progress({ stage: 'path', done: 0, total: 1 });
   const plan = planPenalty(part, design.columns, specification, context.settings.kind);
-  if (context.route !== 'moments' || !losesDigits(part, plan, context.settings.kind)) return { context, moments, part, plan };
+  if (context.route !== 'moments' || !losesDigits(part, plan, context.settings.kind))
+    return { context, moments, part, plan };
   return readyForPath({ ...context, route: 'orthogonal' });
 }
 
@@ -92,7 +97,10 @@ async function finishFit({ context, moments, part, plan }: ReadyFit): Promise<Fi
   const exact = settings.kind === 'least-squares' && context.route === 'orthogonal';
   const original = exact ? leastSquaresInOriginalUnits(context.read, design, context.plan) : null;
   const model = original?.model ?? toColumnModel(part.problem, weights, shapeOf(design));
-  const heldOut = holdOut(context, answers.map((answer) => answer.models[choice.at]));
+  const heldOut = holdOut(
+    context,
+    answers.map((answer) => answer.models[choice.at]),
+  );
   const all = context.plan.segmentStarts.slice(0, -1).map((_, segment) => segment);
   return {
     context,
@@ -109,20 +117,29 @@ async function finishFit({ context, moments, part, plan }: ReadyFit): Promise<Fi
     smearing: specification.target.transform === 'log' ? smearingOf(context, design, model, all) : 1,
     lever: leverageMatrix({ context, part, penalties: plan.penalties, lambda, weights, dependent: solution.dependent }),
     foldsConverged: answers.every((answer) => answer.converged),
-    nestedRmse: specification.extras.nestedFolds === true ? await nestedError(context, moments, plan.lambdas, answers) : null,
+    nestedRmse:
+      specification.extras.nestedFolds === true ? await nestedError(context, moments, plan.lambdas, answers) : null,
   };
 }
 
 /** Multiplications of leave-one-out errors that are cheap enough to give them unasked. */
 const CHEAP_LEAVE_ONE_OUT = 1e8;
 
-function groundOf(context: FitContext, part: TrainingPart, plan: PenaltyPlan, crossValidation: CrossValidation): Parameters<typeof choosePenalty>[0] {
+function groundOf(
+  context: FitContext,
+  part: TrainingPart,
+  plan: PenaltyPlan,
+  crossValidation: CrossValidation,
+): Parameters<typeof choosePenalty>[0] {
   const { specification, design, read, settings } = context;
   const { lambdas, form, penalties } = plan;
   const plainRidge = form !== null && settings.kind === 'ridge';
   refuseWideLeaveOneOut(context);
   const cost = read.count * part.problem.size * (part.problem.size + lambdas.length);
-  const wanted = plainRidge && context.route !== 'wide' && (specification.penalty.rule === 'leave-one-out' || cost <= CHEAP_LEAVE_ONE_OUT);
+  const wanted =
+    plainRidge &&
+    context.route !== 'wide' &&
+    (specification.penalty.rule === 'leave-one-out' || cost <= CHEAP_LEAVE_ONE_OUT);
   return {
     lambdas,
     crossValidation,
@@ -136,7 +153,10 @@ function groundOf(context: FitContext, part: TrainingPart, plan: PenaltyPlan, cr
 /** The hat matrix by columns that leave-one-out needs does not exist on the wide route. */
 function refuseWideLeaveOneOut({ route, specification }: FitContext): void {
   if (route !== 'wide' || specification.penalty.rule !== 'leave-one-out') return;
-  throw new RegressionError('bad-specification', 'Leave-one-out is not offered for so many inputs beside so few records. Choose generalised cross-validation or folds.');
+  throw new RegressionError(
+    'bad-specification',
+    'Leave-one-out is not offered for so many inputs beside so few records. Choose generalised cross-validation or folds.',
+  );
 }
 
 /** The final fit never drops a column silently: least squares with dependent inputs has no single answer. */

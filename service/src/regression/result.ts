@@ -103,8 +103,16 @@ export interface FitDiagnostics {
   readonly residualSd: number;
   readonly trainingR2: number;
   /** Log marginal likelihood at the evidence's optimum, with the variances it estimates; ridge only. */
-  readonly evidence: { readonly logEvidence: number; readonly residualVariance: number; readonly priorVariance: number } | null;
-  readonly varianceInflation: readonly { readonly input: string; readonly level?: string; readonly factor: number | null }[];
+  readonly evidence: {
+    readonly logEvidence: number;
+    readonly residualVariance: number;
+    readonly priorVariance: number;
+  } | null;
+  readonly varianceInflation: readonly {
+    readonly input: string;
+    readonly level?: string;
+    readonly factor: number | null;
+  }[];
   /** Belsley, Kuh and Welsch (1980), chapter 3: columns scaled to length 1, not centred, with the intercept. */
   readonly conditionIndices: readonly ConditionIndex[];
   /** What the proportions of a condition index belong to, in order. */
@@ -112,7 +120,8 @@ export interface FitDiagnostics {
   readonly sharedLoad: readonly SharedLoadGroup[];
   readonly influential: readonly InfluentialRecord[];
   readonly residuals: readonly ResidualPoint[];
-  readonly selectionFrequency: readonly { readonly input: string; readonly level?: string; readonly frequency: number }[] | null;
+  readonly selectionFrequency:
+    readonly { readonly input: string; readonly level?: string; readonly frequency: number }[] | null;
   readonly learningCurve: readonly { readonly records: number; readonly rmse: number }[] | null;
 }
 

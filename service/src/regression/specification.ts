@@ -7,13 +7,7 @@ export type MissingRule = 'refuse' | 'typical';
 export type SignLimit = 'any' | 'not-negative' | 'not-positive';
 export type InputKind = 'numeric' | 'category' | 'date';
 export type PenaltyRule =
-  | 'minimum'
-  | 'one-standard-error'
-  | 'evidence'
-  | 'prior'
-  | 'leave-one-out'
-  | 'generalised'
-  | 'fixed';
+  'minimum' | 'one-standard-error' | 'evidence' | 'prior' | 'leave-one-out' | 'generalised' | 'fixed';
 export type ValidationScheme = 'k-fold' | 'grouped' | 'forward';
 /** What to do with a category's level that the records never held. */
 export type UnseenLevelRule = 'refuse' | 'other';

@@ -1,8 +1,10 @@
 import type { InputCoding } from '../formula/formula';
 import type { FoldPlan } from '../selection/folds';
 import type { DesignColumn, DesignMatrix, FilledColumn } from './design-matrix';
-import type { InputReadings, ReadRecords } from './read-records';
+import type { InputReadings } from './read-input';
+import type { ReadRecords } from './read-records';
 import type { ResolvedSpecification } from './resolve-specification';
+import { centreTarget, standardiseColumn } from './standardise-column';
 import { placeKnots, splineColumns } from './spline';
 
 interface InputLayout {
@@ -15,7 +17,12 @@ interface InputLayout {
  * Codes, centres and scales the records, in the order of the fold plan. Spline knots come from `knotRecords` (the training
  * part of a fold); null means all records. Cost O(n d), memory 8 n (d + 2) bytes, shared between threads where they exist.
  */
-export function buildDesign(read: ReadRecords, specification: ResolvedSpecification, plan: FoldPlan, knotRecords: Int32Array | null): DesignMatrix {
+export function buildDesign(
+  read: ReadRecords,
+  specification: ResolvedSpecification,
+  plan: FoldPlan,
+  knotRecords: Int32Array | null,
+): DesignMatrix {
   const layouts = layOut(read, specification, knotRecords);
   const columns = layouts.flatMap((layout) => layout.columns);
   const columnCount = columns.length;
@@ -23,18 +30,32 @@ export function buildDesign(read: ReadRecords, specification: ResolvedSpecificat
   layouts.forEach((layout, index) => writeInput(read.inputs[index], layout, plan.order, data));
   const rootWeights = Float64Array.from(plan.order, (record) => Math.sqrt(read.weights[record]));
   data.set(rootWeights, columnCount * read.count);
-  data.set(Float64Array.from(plan.order, (record) => read.target[record]), (columnCount + 1) * read.count);
+  data.set(
+    Float64Array.from(plan.order, (record) => read.target[record]),
+    (columnCount + 1) * read.count,
+  );
   const centres = new Float64Array(columnCount);
   const scales = new Float64Array(columnCount);
   for (let column = 0; column < columnCount; column += 1) {
     const values = data.subarray(column * read.count, (column + 1) * read.count);
-    [centres[column], scales[column]] = standardiseColumn(values, rootWeights, specification.intercept, columns[column].leftOut === 'reference-level');
+    [centres[column], scales[column]] = standardiseColumn(
+      values,
+      rootWeights,
+      specification.intercept,
+      columns[column].leftOut === 'reference-level',
+    );
   }
-  const targetCentre = centreTarget(data.subarray((columnCount + 1) * read.count), rootWeights, specification.intercept);
+  const targetCentre = centreTarget(
+    data.subarray((columnCount + 1) * read.count),
+    rootWeights,
+    specification.intercept,
+  );
   return {
     rowCount: read.count,
     columnCount,
-    columns: columns.map((column, index) => (scales[index] === 0 && column.leftOut === undefined ? { ...column, leftOut: 'constant' } : column)),
+    columns: columns.map((column, index) =>
+      scales[index] === 0 && column.leftOut === undefined ? { ...column, leftOut: 'constant' } : column,
+    ),
     data,
     centres,
     scales,
@@ -50,7 +71,11 @@ export function sharedArray(length: number): Float64Array {
   return new Float64Array(new SharedArrayBuffer(length * Float64Array.BYTES_PER_ELEMENT));
 }
 
-function layOut(read: ReadRecords, specification: ResolvedSpecification, knotRecords: Int32Array | null): InputLayout[] {
+function layOut(
+  read: ReadRecords,
+  specification: ResolvedSpecification,
+  knotRecords: Int32Array | null,
+): InputLayout[] {
   let first = 0;
   return read.inputs.map((readings, index) => {
     const knots = knotsOf(readings, knotRecords);
@@ -63,7 +88,8 @@ function layOut(read: ReadRecords, specification: ResolvedSpecification, knotRec
 
 function knotsOf(readings: InputReadings, knotRecords: Int32Array | null): readonly number[] {
   if (readings.input.transform !== 'spline') return [];
-  const used = knotRecords === null ? readings.recorded : Float64Array.from(knotRecords, (record) => readings.recorded[record]);
+  const used =
+    knotRecords === null ? readings.recorded : Float64Array.from(knotRecords, (record) => readings.recorded[record]);
   return placeKnots(used, readings.input.knots);
 }
 
@@ -80,7 +106,9 @@ function labelledColumns(
   if (readings.kind === 'category') {
     const free = specification.method === 'least-squares' || penaltyFactor === 0;
     const reference = free && specification.intercept ? commonestLevel(readings, read.weights) : -1;
-    readings.levels.forEach((label, level) => columns.push({ ...common, label, ...(level === reference ? { leftOut: 'reference-level' as const } : {}) }));
+    readings.levels.forEach((label, level) =>
+      columns.push({ ...common, label, ...(level === reference ? { leftOut: 'reference-level' as const } : {}) }),
+    );
   } else if (readings.input.transform === 'spline') {
     const count = readings.input.knots - 1;
     for (let basis = 0; basis < count; basis += 1) {
@@ -122,61 +150,18 @@ function isMissing(readings: InputReadings, record: number): boolean {
   return readings.kind === 'category' ? readings.codes[record] < 0 : Number.isNaN(readings.recorded[record]);
 }
 
-/** x ← √w (x − mean)/sd in place; two passes; NaN becomes 0 (the mean). Returns centre and scale (0 for a constant column). */
-function standardiseColumn(values: Float64Array, rootWeights: Float64Array, centred: boolean, reference: boolean): [number, number] {
-  const centre = weightedMean(values, rootWeights);
-  let squares = 0;
-  let weightSum = 0;
-  let constant = true;
-  let first = NaN;
-  for (let row = 0; row < values.length; row += 1) {
-    const weight = rootWeights[row] * rootWeights[row];
-    weightSum += weight;
-    const value = values[row];
-    if (Number.isNaN(value)) continue;
-    if (Number.isNaN(first)) first = value;
-    if (value !== first) constant = false;
-    const deviation = value - (centred ? centre : 0);
-    squares += weight * deviation * deviation;
-  }
-  const shift = centred ? centre : 0;
-  const scale = reference || (constant && (centred || first === 0)) ? 0 : Math.sqrt(squares / weightSum);
-  for (let row = 0; row < values.length; row += 1) {
-    const value = Number.isNaN(values[row]) ? centre : values[row];
-    values[row] = scale === 0 ? 0 : ((value - shift) / scale) * rootWeights[row];
-  }
-  return [scale === 0 && !centred ? 0 : shift, scale];
-}
-
-/** Mean relative to the first reading, so that huge offsets lose no digits. */
-function weightedMean(values: Float64Array, rootWeights: Float64Array): number {
-  let sum = 0;
-  let weightSum = 0;
-  let origin = NaN;
-  for (let row = 0; row < values.length; row += 1) {
-    const value = values[row];
-    if (Number.isNaN(value)) continue;
-    if (Number.isNaN(origin)) origin = value;
-    const weight = rootWeights[row] * rootWeights[row];
-    sum += weight * (value - origin);
-    weightSum += weight;
-  }
-  return origin + sum / weightSum;
-}
-
-function centreTarget(target: Float64Array, rootWeights: Float64Array, centred: boolean): number {
-  const centre = centred ? weightedMean(target, rootWeights) : 0;
-  for (let row = 0; row < target.length; row += 1) target[row] = (target[row] - centre) * rootWeights[row];
-  return centre;
-}
-
 function filledColumns(readings: InputReadings, layout: InputLayout): FilledColumn[] {
   if (readings.missingCount === 0 || readings.kind === 'category') return [];
   const indicator = layout.first + layout.columns.length - 1;
   return layout.columns.slice(0, -1).map((_, offset) => ({ column: layout.first + offset, indicator }));
 }
 
-function codingOf(readings: InputReadings, layout: InputLayout, centres: Float64Array, scales: Float64Array): InputCoding {
+function codingOf(
+  readings: InputReadings,
+  layout: InputLayout,
+  centres: Float64Array,
+  scales: Float64Array,
+): InputCoding {
   const end = layout.first + layout.columns.length;
   const { transform } = readings.input;
   return {

@@ -103,7 +103,10 @@ export function foldFills(moments: Moments, shape: DesignShape): FoldFill[] {
   const width = d + 2;
   const weightSum = moments[d * width + d];
   return shape.filled.flatMap(({ column, indicator }) => {
-    const share = scales[indicator] === 0 ? 0 : centres[indicator] + (scales[indicator] * moments[d * width + indicator]) / weightSum;
+    const share =
+      scales[indicator] === 0
+        ? 0
+        : centres[indicator] + (scales[indicator] * moments[d * width + indicator]) / weightSum;
     const present = weightSum * (1 - share);
     const shift = present > 1e-9 * weightSum ? moments[d * width + column] / present : 0;
     return shift === 0 ? [] : [{ column, indicator, shift }];
@@ -119,10 +122,12 @@ function applyFills(moments: Moments, shape: DesignShape, fills: readonly FoldFi
     const constant = shift * centres[indicator];
     const slope = shift * scales[indicator];
     for (let other = 0; other < width; other += 1) {
-      adjusted[column * width + other] += constant * adjusted[d * width + other] + slope * adjusted[indicator * width + other];
+      adjusted[column * width + other] +=
+        constant * adjusted[d * width + other] + slope * adjusted[indicator * width + other];
     }
     for (let other = 0; other < width; other += 1) {
-      adjusted[other * width + column] += constant * adjusted[other * width + d] + slope * adjusted[other * width + indicator];
+      adjusted[other * width + column] +=
+        constant * adjusted[other * width + d] + slope * adjusted[other * width + indicator];
     }
   }
   return adjusted;
@@ -135,7 +140,11 @@ export interface ColumnModel {
 }
 
 /** From standardised weights of the kept columns back to the design's columns. */
-export function toColumnModel(problem: StandardisedProblem, standardised: ArrayLike<number>, shape: DesignShape): ColumnModel {
+export function toColumnModel(
+  problem: StandardisedProblem,
+  standardised: ArrayLike<number>,
+  shape: DesignShape,
+): ColumnModel {
   const weights = new Float64Array(shape.columnCount);
   let constant = problem.targetMean;
   for (let index = 0; index < problem.size; index += 1) {

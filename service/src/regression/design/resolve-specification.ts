@@ -70,8 +70,15 @@ export function resolveSpecification(specification: FitSpecification): ResolvedS
     extras: specification.extras ?? {},
   };
   const filled = resolved.intercept ? undefined : resolved.inputs.find((input) => input.missing === 'typical');
-  refuseUnless(filled === undefined, 'Without an intercept there is no typical value to put in for a missing reading.', filled?.column);
-  refuseUnless(resolved.intervalLevel > 0 && resolved.intervalLevel < 1, 'The interval level must lie between 0 and 1.');
+  refuseUnless(
+    filled === undefined,
+    'Without an intercept there is no typical value to put in for a missing reading.',
+    filled?.column,
+  );
+  refuseUnless(
+    resolved.intervalLevel > 0 && resolved.intervalLevel < 1,
+    'The interval level must lie between 0 and 1.',
+  );
   return resolved;
 }
 
@@ -83,7 +90,11 @@ function resolveInputs(specification: FitSpecification): readonly ResolvedInput[
   refuseUnless(specification.inputs.length > 0, 'A fit needs at least one input.');
   const seen = new Set<string>([specification.target.column]);
   return specification.inputs.map((input) => {
-    refuseUnless(!seen.has(input.column), `${input.column} is used twice. Name each column once, as target or as input.`, input.column);
+    refuseUnless(
+      !seen.has(input.column),
+      `${input.column} is used twice. Name each column once, as target or as input.`,
+      input.column,
+    );
     seen.add(input.column);
     return resolveInput(input);
   });
@@ -101,9 +112,21 @@ function resolveInput(input: InputSpecification): ResolvedInput {
     unseenLevel: input.unseenLevel ?? 'refuse',
   };
   const { column, penaltyFactor, sign, transform, knots } = resolved;
-  refuseUnless(Number.isFinite(penaltyFactor) && penaltyFactor >= 0, `The penalty factor of ${column} must be 0 or more.`, column);
-  refuseUnless(sign === 'any' || transform !== 'spline', `A limit on the sign has no meaning for ${column}, which is a spline.`, column);
-  refuseUnless(Number.isInteger(knots) && knots >= 3 && knots <= 7, `The spline of ${column} needs 3 to 7 knots.`, column);
+  refuseUnless(
+    Number.isFinite(penaltyFactor) && penaltyFactor >= 0,
+    `The penalty factor of ${column} must be 0 or more.`,
+    column,
+  );
+  refuseUnless(
+    sign === 'any' || transform !== 'spline',
+    `A limit on the sign has no meaning for ${column}, which is a spline.`,
+    column,
+  );
+  refuseUnless(
+    Number.isInteger(knots) && knots >= 3 && knots <= 7,
+    `The spline of ${column} needs 3 to 7 knots.`,
+    column,
+  );
   return resolved;
 }
 
@@ -111,7 +134,10 @@ function resolveMixing(specification: FitSpecification): number {
   if (specification.method === 'lasso') return 1;
   if (specification.method !== 'elastic-net') return 0;
   const mixing = specification.mixing ?? 0.5;
-  refuseUnless(mixing > 0 && mixing < 1, 'The mixing of an elastic net must lie strictly between 0 (ridge) and 1 (lasso).');
+  refuseUnless(
+    mixing > 0 && mixing < 1,
+    'The mixing of an elastic net must lie strictly between 0 (ridge) and 1 (lasso).',
+  );
   return mixing;
 }
 
@@ -123,8 +149,16 @@ function resolvePenalty(specification: FitSpecification): PenaltySpecification {
     specification.method === 'ridge' || !RIDGE_RULES.includes(rule),
     `The rule ${rule} exists for ridge only. Choose minimum, one-standard-error or fixed.`,
   );
-  if (rule === 'fixed') refuseUnless(value !== undefined && Number.isFinite(value) && value >= 0, 'A fixed penalty needs a value of 0 or more.');
-  if (rule === 'prior') refuseUnless(value !== undefined && Number.isFinite(value) && value > 0, 'A prior needs its standard deviation, above 0.');
+  if (rule === 'fixed')
+    refuseUnless(
+      value !== undefined && Number.isFinite(value) && value >= 0,
+      'A fixed penalty needs a value of 0 or more.',
+    );
+  if (rule === 'prior')
+    refuseUnless(
+      value !== undefined && Number.isFinite(value) && value > 0,
+      'A prior needs its standard deviation, above 0.',
+    );
   return penalty;
 }
 
@@ -132,7 +166,10 @@ function resolveValidation(specification: FitSpecification): ResolvedValidation 
   const given = specification.validation ?? { scheme: 'k-fold' };
   const folds = given.folds ?? DEFAULT_FOLDS;
   refuseUnless(Number.isInteger(folds) && folds >= 2, 'Validation needs at least 2 folds.');
-  refuseUnless(given.scheme === 'k-fold' || given.column !== undefined, `Validation by ${given.scheme} folds needs its column.`);
+  refuseUnless(
+    given.scheme === 'k-fold' || given.column !== undefined,
+    `Validation by ${given.scheme} folds needs its column.`,
+  );
   const gap = given.gap ?? 0;
   refuseUnless(Number.isFinite(gap) && gap >= 0, 'The gap between training and held-out records must be 0 or more.');
   return { scheme: given.scheme, folds, column: given.column ?? null, seed: given.seed ?? 1, gap };

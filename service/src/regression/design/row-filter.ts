@@ -7,7 +7,8 @@ export function keptRows(records: RecordTable, filter: RowFilter | null): Int32A
   const rows = Int32Array.from({ length: records.rowCount }, (_, row) => row);
   if (filter === null) return rows;
   const column = records.columns.find((candidate) => candidate.name === filter.column);
-  if (column === undefined) throw new RegressionError('column-not-found', `The records have no column ${filter.column}.`, filter.column);
+  if (column === undefined)
+    throw new RegressionError('column-not-found', `The records have no column ${filter.column}.`, filter.column);
   const passes = rowTest(column, filter);
   return rows.filter(passes);
 }
@@ -21,9 +22,16 @@ function rowTest(column: RecordColumn, filter: RowFilter): (row: number) => bool
     return (row) => values[row] >= from && values[row] <= to && (allowed === null || allowed.has(values[row]));
   }
   if (filter.from !== undefined || filter.to !== undefined) {
-    throw new RegressionError('bad-specification', `${column.name} holds words: filter it by values, not by a range.`, column.name);
+    throw new RegressionError(
+      'bad-specification',
+      `${column.name} holds words: filter it by values, not by a range.`,
+      column.name,
+    );
   }
-  const wordAt = column.kind === 'category' ? (row: number) => column.levels[column.codes[row]] ?? null : (row: number) => column.values[row];
+  const wordAt =
+    column.kind === 'category'
+      ? (row: number) => column.levels[column.codes[row]] ?? null
+      : (row: number) => column.values[row];
   return (row) => {
     const word = wordAt(row);
     return word !== null && (allowed === null || allowed.has(word));

@@ -20,7 +20,11 @@ export interface StandardisedRows {
 /** A column whose spread is below this share of its mean square is constant. */
 const CONSTANT_SHARE = 1e-24;
 
-export function standardisedRows(design: DesignMatrix, spans: readonly RowSpan[], usable: readonly boolean[]): StandardisedRows {
+export function standardisedRows(
+  design: DesignMatrix,
+  spans: readonly RowSpan[],
+  usable: readonly boolean[],
+): StandardisedRows {
   const { columnCount, intercept } = design;
   const rootWeights = gather(design, columnCount, spans);
   const weightSum = sumOfSquares(rootWeights);
@@ -37,7 +41,10 @@ export function standardisedRows(design: DesignMatrix, spans: readonly RowSpan[]
     const square = sumOfSquares(values) / weightSum;
     if (!(square > CONSTANT_SHARE * (mean * mean + 1))) continue;
     const scale = Math.sqrt(square);
-    x.set(values.map((value) => value / scale), kept.length * rootWeights.length);
+    x.set(
+      values.map((value) => value / scale),
+      kept.length * rootWeights.length,
+    );
     kept.push(column);
     means.push(mean);
     scales.push(scale);
@@ -85,9 +92,15 @@ function centre(values: Float64Array, rootWeights: Float64Array, weightSum: numb
   return total;
 }
 
-function rowFills(design: DesignMatrix, spans: readonly RowSpan[], rootWeights: Float64Array, weightSum: number): FoldFill[] {
+function rowFills(
+  design: DesignMatrix,
+  spans: readonly RowSpan[],
+  rootWeights: Float64Array,
+  weightSum: number,
+): FoldFill[] {
   const { centres, scales } = design;
-  const sumOf = (column: number): number => gather(design, column, spans).reduce((sum, value, row) => sum + value * rootWeights[row], 0);
+  const sumOf = (column: number): number =>
+    gather(design, column, spans).reduce((sum, value, row) => sum + value * rootWeights[row], 0);
   return design.filled.flatMap(({ column, indicator }) => {
     const share = scales[indicator] === 0 ? 0 : centres[indicator] + (scales[indicator] * sumOf(indicator)) / weightSum;
     const shift = share < 1 - 1e-9 ? sumOf(column) / (weightSum * (1 - share)) : 0;
@@ -95,7 +108,6 @@ function rowFills(design: DesignMatrix, spans: readonly RowSpan[], rootWeights: 
   });
 }
 
-/* eslint-disable-next-line max-params -- one call, all of it local */
 function applyFill(
   values: Float64Array,
   column: number,

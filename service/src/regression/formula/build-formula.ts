@@ -1,5 +1,5 @@
 import type { ColumnModel } from '../design/moments';
-import type { InputReadings } from '../design/read-records';
+import type { InputReadings } from '../design/read-input';
 import { quantile } from '../design/spline';
 import type { FitContext } from '../fit-context';
 import { residualsOfFold, type HeldOut } from '../inference/held-out';
@@ -51,7 +51,12 @@ function foldModels(heldOut: HeldOut): FoldModel[] {
   const limit = Math.max(20, Math.floor(MOST_RESIDUAL_STEPS / heldOut.outcomes.length));
   return heldOut.outcomes.map(({ model, targetCentre, codings }, fold) => {
     const residuals = thinResiduals(residualsOfFold(heldOut, fold), limit);
-    return { typicalAdditive: targetCentre + model.constant, weights: Array.from(model.weights), codings, ...residuals };
+    return {
+      typicalAdditive: targetCentre + model.constant,
+      weights: Array.from(model.weights),
+      codings,
+      ...residuals,
+    };
   });
 }
 

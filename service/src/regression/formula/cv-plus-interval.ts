@@ -10,10 +10,21 @@ const INDEX_SLACK = 1e-9;
  * predictions μ_{−k(i)}(x), from the (n+1−m)-th smallest of μ − R to the m-th smallest of μ + R, m = ⌈level·(n+1)⌉. With too few
  * records for the level (m > n, in theory an infinite interval) the widest is given.
  */
-export function cvPlusInterval(folds: readonly FoldResiduals[], predictions: readonly number[], level: number): { low: number; high: number } {
+export function cvPlusInterval(
+  folds: readonly FoldResiduals[],
+  predictions: readonly number[],
+  level: number,
+): { low: number; high: number } {
   const total = folds.reduce((sum, fold) => sum + fold.counts.reduce((count, value) => count + value, 0), 0);
   const above = total - quantileIndex(total, level) + 1;
-  return { low: -fromTop(folds, predictions.map((value) => -value), above), high: fromTop(folds, predictions, above) };
+  return {
+    low: -fromTop(
+      folds,
+      predictions.map((value) => -value),
+      above,
+    ),
+    high: fromTop(folds, predictions, above),
+  };
 }
 
 /** ⌈level·(n+1)⌉, at most n. */
@@ -25,7 +36,11 @@ export function quantileIndex(total: number, level: number): number {
 export function residualQuantile(folds: readonly FoldResiduals[], level: number): number {
   const total = folds.reduce((sum, fold) => sum + fold.counts.reduce((count, value) => count + value, 0), 0);
   if (total === 0) return Infinity;
-  return fromTop(folds, folds.map(() => 0), total - quantileIndex(total, level) + 1);
+  return fromTop(
+    folds,
+    folds.map(() => 0),
+    total - quantileIndex(total, level) + 1,
+  );
 }
 
 /** The `rank`-th largest of all base + residual: the folds' ascending lists are merged from their ends. */
@@ -57,7 +72,8 @@ const DIGITS = 12;
  * takes its largest member, rounded upward.
  */
 export function thinResiduals(ascending: Float64Array, limit: number): FoldResiduals {
-  const cuts = ascending.length <= limit ? Array.from(ascending.keys(), (at) => at + 1) : stepEnds(ascending.length, limit);
+  const cuts =
+    ascending.length <= limit ? Array.from(ascending.keys(), (at) => at + 1) : stepEnds(ascending.length, limit);
   const residuals: number[] = [];
   const counts: number[] = [];
   let start = 0;
@@ -75,11 +91,14 @@ function stepEnds(length: number, limit: number): number[] {
   const border = Math.floor((length * 2) / 3);
   const ends = new Set<number>();
   for (let step = 1; step <= coarse; step += 1) ends.add(Math.max(1, Math.round((border * step) / coarse)));
-  for (let step = 1; step <= fine; step += 1) ends.add(border + Math.max(1, Math.round(((length - border) * step) / fine)));
+  for (let step = 1; step <= fine; step += 1)
+    ends.add(border + Math.max(1, Math.round(((length - border) * step) / fine)));
   return [...ends].sort((first, second) => first - second);
 }
 
 function roundUp(value: number): number {
   const rounded = Number(value.toPrecision(DIGITS));
-  return rounded >= value ? rounded : rounded + Number((10 ** (Math.floor(Math.log10(value)) - DIGITS + 1)).toPrecision(3));
+  return rounded >= value
+    ? rounded
+    : rounded + Number((10 ** (Math.floor(Math.log10(value)) - DIGITS + 1)).toPrecision(3));
 }

@@ -63,7 +63,11 @@ export function evaluateFormula(formula: Formula, inputs: CaseInputs): Evaluatio
   const flat = columns.flatMap((part) => Array.from(part));
   const leverage = formula.leverage === null ? null : leverageAt(formula.leverage, flat);
   if (formula.leverage !== null && leverage !== null && leverage > formula.leverage.largest * LEVERAGE_MARGIN) {
-    flags.push({ code: 'jointly-unusual', message: 'No record combines such readings: each may be in range, but together they are unlike anything recorded.' });
+    flags.push({
+      code: 'jointly-unusual',
+      message:
+        'No record combines such readings: each may be in range, but together they are unlike anything recorded.',
+    });
   }
   const { logged, smearing } = { logged: formula.target.transform === 'log', smearing: formula.target.smearing };
   const median = logged ? Math.exp(additive) : additive;
@@ -91,7 +95,12 @@ function contributionOf(input: FormulaInput, columns: Float64Array): Contributio
 
 function foldInterval(formula: Formula, readings: readonly Reading[], flat: readonly number[]): EvaluationInterval {
   const bases = formula.interval.folds.map((fold) => {
-    const columns = fold.codings === null ? flat : formula.inputs.flatMap((input, at) => Array.from(codeReading(fold.codings?.[at] ?? input.coding, readings[at])));
+    const columns =
+      fold.codings === null
+        ? flat
+        : formula.inputs.flatMap((input, at) =>
+            Array.from(codeReading(fold.codings?.[at] ?? input.coding, readings[at])),
+          );
     return columns.reduce((sum, value, at) => sum + value * fold.weights[at], fold.typicalAdditive);
   });
   const { low, high } = cvPlusInterval(formula.interval.folds, bases, formula.interval.level);

@@ -20,6 +20,8 @@ const DIGITS = 9;
 /** Packs a symmetric matrix, rounded to nine digits: leverage decides a flag and a width, not a value. */
 export function packLower(matrix: Float64Array, size: number): number[] {
   const packed: number[] = [];
-  for (let row = 0; row < size; row += 1) for (let column = 0; column <= row; column += 1) packed.push(Number(matrix[row * size + column].toPrecision(DIGITS)));
+  for (let row = 0; row < size; row += 1)
+    for (let column = 0; column <= row; column += 1)
+      packed.push(Number(matrix[row * size + column].toPrecision(DIGITS)));
   return packed;
 }

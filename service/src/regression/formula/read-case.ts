@@ -1,5 +1,5 @@
 import { splineColumns } from '../design/spline';
-import { transformOf } from '../design/read-records';
+import { transformOf } from '../design/read-input';
 import { RegressionError } from '../errors';
 import type { CaseInputs, EvaluationFlag } from './evaluate';
 import type { Formula, FormulaInput, InputCoding } from './formula';
@@ -23,8 +23,13 @@ export function readCase(formula: Formula, inputs: CaseInputs, flags: Evaluation
 }
 
 function readMissing(input: FormulaInput, flags: EvaluationFlag[]): Reading {
-  if (input.missing === 'refuse') throw new RegressionError('input-missing', `${input.name} is needed and was not given.`, input.name);
-  flags.push({ code: 'missing-filled', input: input.name, message: `${input.name} was not given; the estimate stands for a case with ${input.name} unknown.` });
+  if (input.missing === 'refuse')
+    throw new RegressionError('input-missing', `${input.name} is needed and was not given.`, input.name);
+  flags.push({
+    code: 'missing-filled',
+    input: input.name,
+    message: `${input.name} was not given; the estimate stands for a case with ${input.name} unknown.`,
+  });
   return { form: 'missing' };
 }
 
@@ -39,7 +44,8 @@ function readLevel(input: FormulaInput, given: number | string, flags: Evaluatio
 
 function readNumber(input: FormulaInput, given: number | string, flags: EvaluationFlag[]): Reading {
   const value = input.kind === 'date' ? daysOf(input, given) : given;
-  if (typeof value !== 'number' || !Number.isFinite(value)) throw unsuitable(input, `${input.name} must be a finite number.`);
+  if (typeof value !== 'number' || !Number.isFinite(value))
+    throw unsuitable(input, `${input.name} must be a finite number.`);
   if (input.transform === 'log' && value <= 0) throw unsuitable(input, `${input.name} must be above 0.`);
   if (input.transform === 'square-root' && value < 0) throw unsuitable(input, `${input.name} must not be below 0.`);
   if (input.range !== null && (value < input.range.min || value > input.range.max)) {
@@ -49,7 +55,8 @@ function readNumber(input: FormulaInput, given: number | string, flags: Evaluati
 }
 
 function rangeMessage(input: FormulaInput, range: { readonly min: number; readonly max: number }): string {
-  const show = (value: number): string => (input.kind === 'date' ? isoDay(value) : `${value}${input.unit === null ? '' : ` ${input.unit}`}`);
+  const show = (value: number): string =>
+    input.kind === 'date' ? isoDay(value) : `${value}${input.unit === null ? '' : ` ${input.unit}`}`;
   return `${input.name} is outside what the records cover (${show(range.min)} to ${show(range.max)}).`;
 }
 
@@ -60,7 +67,8 @@ function isoDay(days: number): string {
 function daysOf(input: FormulaInput, given: number | string): number {
   if (typeof given === 'number') return given;
   const time = /^\d{4}-\d{2}-\d{2}$/.test(given) ? Date.parse(`${given}T00:00:00Z`) : NaN;
-  if (Number.isNaN(time) || isoDay(time / DAY_MS) !== given) throw unsuitable(input, `${input.name} must be a day such as 2026-03-31.`);
+  if (Number.isNaN(time) || isoDay(time / DAY_MS) !== given)
+    throw unsuitable(input, `${input.name} must be a day such as 2026-03-31.`);
   return time / DAY_MS;
 }
 
@@ -73,7 +81,8 @@ export function codeReading(coding: InputCoding, reading: Reading): Float64Array
   const { centres, scales, missingIndicator } = coding;
   const columns = Float64Array.from(centres, () => NaN);
   const width = centres.length - (missingIndicator ? 1 : 0);
-  if (reading.form === 'level') for (let level = 0; level < width; level += 1) columns[level] = level === reading.position ? 1 : 0;
+  if (reading.form === 'level')
+    for (let level = 0; level < width; level += 1) columns[level] = level === reading.position ? 1 : 0;
   else if (reading.form === 'missing') columns.fill(coding.form === 'levels' && missingIndicator ? 0 : NaN);
   else if (coding.form === 'spline') columns.set(splineColumns(reading.value, coding.knots));
   else columns[0] = transformOf(coding.transform)(reading.value);

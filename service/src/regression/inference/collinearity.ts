@@ -25,8 +25,12 @@ export function comparablePositions(part: TrainingPart, design: DesignMatrix, re
   const aside = new Set<number>();
   read.inputs.forEach((readings, input) => {
     if (readings.kind !== 'category') return;
-    const levels = Array.from(part.problem.kept.keys()).filter((at) => design.columns[part.problem.kept[at]].input === input);
-    const hasReference = design.columns.some((column) => column.input === input && column.leftOut === 'reference-level');
+    const levels = Array.from(part.problem.kept.keys()).filter(
+      (at) => design.columns[part.problem.kept[at]].input === input,
+    );
+    const hasReference = design.columns.some(
+      (column) => column.input === input && column.leftOut === 'reference-level',
+    );
     if (hasReference || levels.length === 0) return;
     const share = (at: number): number => design.centres[part.problem.kept[at]];
     aside.add(levels.reduce((best, at) => (share(at) > share(best) ? at : best)));
@@ -40,7 +44,8 @@ export function collinearity(
   positions: readonly number[],
   labels: readonly LabelledColumn[],
 ): Pick<FitDiagnostics, 'varianceInflation' | 'conditionIndices' | 'conditionColumns'> {
-  if (positions.length === 0 || positions.length > MOST_COLUMNS || isWide(part)) return { varianceInflation: [], conditionIndices: [], conditionColumns: [] };
+  if (positions.length === 0 || positions.length > MOST_COLUMNS || isWide(part))
+    return { varianceInflation: [], conditionIndices: [], conditionColumns: [] };
   const factors = varianceInflation(part, positions);
   return {
     varianceInflation: labels.map((label, at) => ({ ...label, factor: factors[at] })),
@@ -70,7 +75,8 @@ function varianceInflation(part: TrainingPart, positions: readonly number[]): (n
  * π_jk = (v_jk²/d_k²)/Σ_k (v_jk²/d_k²) of each coefficient's variance (Belsley, Kuh and Welsch 1980, sections 3.1 and 3.2).
  */
 function conditionIndices(part: TrainingPart, design: DesignMatrix, positions: readonly number[]): ConditionIndex[] {
-  const { singular, right } = part.rows === null ? fromMoments(part, design, positions) : fromRows(part, design, positions);
+  const { singular, right } =
+    part.rows === null ? fromMoments(part, design, positions) : fromRows(part, design, positions);
   const largest = Math.max(...singular);
   const missing = (value: number): boolean => value <= Math.sqrt(Number.EPSILON) * 1e-6 * largest;
   const weight = (j: number, k: number): number => (missing(singular[k]) ? 0 : (right.get(j, k) / singular[k]) ** 2);
@@ -100,11 +106,15 @@ function fromRows(part: TrainingPart, design: DesignMatrix, positions: readonly 
   const data = new Float64Array(rowCount * columns.length);
   columns.forEach((values, at) => {
     const length = Math.sqrt(values.reduce((sum, value) => sum + value * value, 0));
-    data.set(values.map((value) => value / length), at * rowCount);
+    data.set(
+      values.map((value) => value / length),
+      at * rowCount,
+    );
   });
   const qr = factorise(data, rowCount, columns.length);
   const triangle = new Matrix(columns.length, columns.length);
-  for (let i = 0; i < qr.diagonal.length; i += 1) for (let j = i; j < columns.length; j += 1) triangle.set(i, j, upper(qr, i, j));
+  for (let i = 0; i < qr.diagonal.length; i += 1)
+    for (let j = i; j < columns.length; j += 1) triangle.set(i, j, upper(qr, i, j));
   const decomposition = new SingularValueDecomposition(triangle);
   return { singular: decomposition.diagonal, right: decomposition.rightSingularVectors };
 }
@@ -112,7 +122,10 @@ function fromRows(part: TrainingPart, design: DesignMatrix, positions: readonly 
 /** Centre and scale of a standardised column in original units. */
 function originalUnits(part: TrainingPart, design: DesignMatrix, at: number): { centre: number; scale: number } {
   const column = part.problem.kept[at];
-  return { centre: design.centres[column] + part.problem.means[at] * design.scales[column], scale: design.scales[column] * part.problem.scales[at] };
+  return {
+    centre: design.centres[column] + part.problem.means[at] * design.scales[column],
+    scale: design.scales[column] * part.problem.scales[at],
+  };
 }
 
 /** g_ij = (c_i c_j + s_i s_j S_ij)/(‖x_i‖ ‖x_j‖); half the digits of the route by rows. */

@@ -22,7 +22,11 @@ export function diagnose(fit: FinishedFit, training: TrainingFit): FitDiagnostic
     evidence:
       evidence === null
         ? null
-        : { logEvidence: evidence.logEvidence, residualVariance: evidence.residualVariance, priorVariance: evidence.priorVariance },
+        : {
+            logEvidence: evidence.logEvidence,
+            residualVariance: evidence.residualVariance,
+            priorVariance: evidence.priorVariance,
+          },
     ...collinearity(part, context.design, positions, labels),
     sharedLoad: sharedLoad(fit),
     ...residualDiagnostics(fit, training),

@@ -20,7 +20,12 @@ export interface EvidenceAnswer {
  *   −½ [ m log(2πσ²) + Σ log(1 + d_j/λ) + (RSS + nλ‖x‖²)/σ² ],  λ = σ²/(nγ²)
  * (Bishop 2006, section 3.5.1, eq. 3.86, with d the eigenvalues of A = X̃ᵀX̃/n.)
  */
-export function logEvidence(form: RidgeForm, setting: EvidenceSetting, residualVariance: number, lambda: number): number {
+export function logEvidence(
+  form: RidgeForm,
+  setting: EvidenceSetting,
+  residualVariance: number,
+  lambda: number,
+): number {
   const degrees = setting.records - setting.flat;
   const { residualSquare, penaltySquare } = form.parts(lambda);
   const misfit = setting.records * (residualSquare + lambda * penaltySquare);
@@ -35,14 +40,23 @@ function bestVariance(form: RidgeForm, setting: EvidenceSetting, lambda: number)
 }
 
 /** Both variances by maximum marginal likelihood: a grid over log λ, then golden section. */
-export function maximiseEvidence(form: RidgeForm, setting: EvidenceSetting, range: { readonly strongest: number; readonly weakest: number }): EvidenceAnswer {
+export function maximiseEvidence(
+  form: RidgeForm,
+  setting: EvidenceSetting,
+  range: { readonly strongest: number; readonly weakest: number },
+): EvidenceAnswer {
   const at = (logLambda: number): number => {
     const lambda = Math.exp(logLambda);
     return logEvidence(form, setting, bestVariance(form, setting, lambda), lambda);
   };
   const lambda = Math.exp(maximise(at, Math.log(range.weakest), Math.log(range.strongest)));
   const residualVariance = bestVariance(form, setting, lambda);
-  return { lambda, logEvidence: at(Math.log(lambda)), residualVariance, priorVariance: residualVariance / (setting.records * lambda) };
+  return {
+    lambda,
+    logEvidence: at(Math.log(lambda)),
+    residualVariance,
+    priorVariance: residualVariance / (setting.records * lambda),
+  };
 }
 
 /** σ² by maximum marginal likelihood when the prior's standard deviation is given; λ = σ²/(nγ²). */
@@ -52,7 +66,12 @@ export function evidenceForPrior(form: RidgeForm, setting: EvidenceSetting, prio
   const at = (logVariance: number): number => logEvidence(form, setting, Math.exp(logVariance), lambdaOf(logVariance));
   const middle = Math.log(form.targetSquare);
   const logVariance = maximise(at, middle - 45, middle + 5);
-  return { lambda: lambdaOf(logVariance), logEvidence: at(logVariance), residualVariance: Math.exp(logVariance), priorVariance };
+  return {
+    lambda: lambdaOf(logVariance),
+    logEvidence: at(logVariance),
+    residualVariance: Math.exp(logVariance),
+    priorVariance,
+  };
 }
 
 const GRID = 200;

@@ -36,7 +36,12 @@ export function hatFeatures(problem: StandardisedProblem, penalties: ColumnPenal
     const column = inverseTransposedColumn(factor.lower, free.length, k);
     free.forEach((position, row) => (transform[position * size + k] = column[row]));
   });
-  const solved = held.map((column) => solveCholesky(factor, free.map((row) => entry(row, column))));
+  const solved = held.map((column) =>
+    solveCholesky(
+      factor,
+      free.map((row) => entry(row, column)),
+    ),
+  );
   const scale = held.map((column) => 1 / Math.sqrt(penalties.factors[column] || 1));
   const projected = new Matrix(held.length, held.length);
   held.forEach((row, i) =>
@@ -45,8 +50,17 @@ export function hatFeatures(problem: StandardisedProblem, penalties: ColumnPenal
       projected.set(i, j, (entry(row, column) - shared) * scale[i] * scale[j]);
     }),
   );
-  const eigenvalues = held.length === 0 ? new Float64Array(0) : addHeldFeatures({ projected, held, free, solved, scale, size }, transform);
-  return { size, freeCount: free.length, transform, eigenvalues, cross: transposedProduct(transform, problem.cross, size) };
+  const eigenvalues =
+    held.length === 0
+      ? new Float64Array(0)
+      : addHeldFeatures({ projected, held, free, solved, scale, size }, transform);
+  return {
+    size,
+    freeCount: free.length,
+    transform,
+    eigenvalues,
+    cross: transposedProduct(transform, problem.cross, size),
+  };
 }
 
 interface HeldFeatures {
@@ -58,7 +72,10 @@ interface HeldFeatures {
   readonly size: number;
 }
 
-function addHeldFeatures({ projected, held, free, solved, scale, size }: HeldFeatures, transform: Float64Array): Float64Array {
+function addHeldFeatures(
+  { projected, held, free, solved, scale, size }: HeldFeatures,
+  transform: Float64Array,
+): Float64Array {
   const decomposition = new EigenvalueDecomposition(projected, { assumeSymmetric: true });
   const vectors = decomposition.eigenvectorMatrix;
   held.forEach((_, k) => {
@@ -86,14 +103,17 @@ function inverseTransposedColumn(lower: Float64Array, size: number, k: number): 
 
 function transposedProduct(matrix: Float64Array, vector: Float64Array, size: number): Float64Array {
   const product = new Float64Array(size);
-  for (let row = 0; row < size; row += 1) for (let column = 0; column < size; column += 1) product[column] += matrix[row * size + column] * vector[row];
+  for (let row = 0; row < size; row += 1)
+    for (let column = 0; column < size; column += 1) product[column] += matrix[row * size + column] * vector[row];
   return product;
 }
 
 /** s_k(λ); a null direction without a penalty gets 0. */
 export function featureShrink(features: HatFeatures, lambda: number): Float64Array {
   const shrink = new Float64Array(features.size).fill(1);
-  features.eigenvalues.forEach((value, k) => (shrink[features.freeCount + k] = value + lambda > 0 ? 1 / (value + lambda) : 0));
+  features.eigenvalues.forEach(
+    (value, k) => (shrink[features.freeCount + k] = value + lambda > 0 ? 1 / (value + lambda) : 0),
+  );
   return shrink;
 }
 
@@ -118,7 +138,8 @@ export function standardisedRow(design: DesignMatrix, problem: StandardisedProbl
   const { rowCount, columnCount, data } = design;
   const root = data[columnCount * rowCount + position];
   const row = new Float64Array(problem.size);
-  for (let at = 0; at < row.length; at += 1) row[at] = (data[problem.kept[at] * rowCount + position] - problem.means[at] * root) / problem.scales[at];
+  for (let at = 0; at < row.length; at += 1)
+    row[at] = (data[problem.kept[at] * rowCount + position] - problem.means[at] * root) / problem.scales[at];
   return row;
 }
 

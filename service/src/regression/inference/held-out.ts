@@ -41,8 +41,14 @@ export function holdOut(context: FitContext, models: readonly ColumnModel[]): He
         foldOf[record] = at;
       });
     }
-    const smearing = context.specification.target.transform === 'log' ? smearingOf(context, design, model, fold.training) : 1;
-    return { model, targetCentre: design.targetCentre, codings: context.designPerFold ? design.codings : null, smearing };
+    const smearing =
+      context.specification.target.transform === 'log' ? smearingOf(context, design, model, fold.training) : 1;
+    return {
+      model,
+      targetCentre: design.targetCentre,
+      codings: context.designPerFold ? design.codings : null,
+      smearing,
+    };
   });
   return { outcomes, foldOf, residuals, estimates };
 }
@@ -50,7 +56,12 @@ export function holdOut(context: FitContext, models: readonly ColumnModel[]): He
 type Design = ReturnType<typeof designForFold>;
 
 /** Σ w exp(residual) / Σ w (Duan 1983). */
-export function smearingOf(context: FitContext, design: Design, model: ColumnModel, segments: readonly number[]): number {
+export function smearingOf(
+  context: FitContext,
+  design: Design,
+  model: ColumnModel,
+  segments: readonly number[],
+): number {
   const { read, plan } = context;
   let sum = 0;
   let weightSum = 0;
@@ -68,6 +79,7 @@ export function smearingOf(context: FitContext, design: Design, model: ColumnMod
 /** Absolute held-out residuals of one fold, ascending. */
 export function residualsOfFold({ residuals, foldOf }: HeldOut, fold: number): Float64Array {
   const found: number[] = [];
-  for (let record = 0; record < residuals.length; record += 1) if (foldOf[record] === fold) found.push(Math.abs(residuals[record]));
+  for (let record = 0; record < residuals.length; record += 1)
+    if (foldOf[record] === fold) found.push(Math.abs(residuals[record]));
   return Float64Array.from(found).sort();
 }

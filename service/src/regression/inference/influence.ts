@@ -19,7 +19,12 @@ export interface LeverageMatrix {
 }
 
 /** Leverages at the given positions. Cost positions · p². */
-export function leverages(design: DesignMatrix, problem: StandardisedProblem, lever: LeverageMatrix, positions: Int32Array): Float64Array {
+export function leverages(
+  design: DesignMatrix,
+  problem: StandardisedProblem,
+  lever: LeverageMatrix,
+  positions: Int32Array,
+): Float64Array {
   const { rowCount, columnCount, data } = design;
   const size = lever.positions.length;
   return Float64Array.from(positions, (position) => {

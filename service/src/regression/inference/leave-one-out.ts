@@ -7,7 +7,12 @@ import { featureShrink, featuresOf, standardisedRow, type HatFeatures } from './
  * (Golub, Heath and Wahba 1979). Exact for records left out of a fit with the same standardised columns and the same nλ.
  * Cost n p² + n p a λ.
  */
-export function leaveOneOutErrors(design: DesignMatrix, problem: StandardisedProblem, features: HatFeatures, lambdas: readonly number[]): number[] {
+export function leaveOneOutErrors(
+  design: DesignMatrix,
+  problem: StandardisedProblem,
+  features: HatFeatures,
+  lambdas: readonly number[],
+): number[] {
   const shrinks = lambdas.map((lambda) => featureShrink(features, lambda));
   const totals = new Float64Array(lambdas.length);
   for (let position = 0; position < design.rowCount; position += 1) {
@@ -29,7 +34,12 @@ export interface RowParts {
   readonly base: number;
 }
 
-export function rowParts(design: DesignMatrix, problem: StandardisedProblem, features: HatFeatures, position: number): RowParts {
+export function rowParts(
+  design: DesignMatrix,
+  problem: StandardisedProblem,
+  features: HatFeatures,
+  position: number,
+): RowParts {
   const { rowCount, columnCount, data } = design;
   const root = data[columnCount * rowCount + position];
   return {
@@ -40,7 +50,12 @@ export function rowParts(design: DesignMatrix, problem: StandardisedProblem, fea
 }
 
 /** √w-residual and leverage of one record. */
-export function atShrink(parts: RowParts, features: HatFeatures, shrink: Float64Array, weightSum: number): { residual: number; leverage: number } {
+export function atShrink(
+  parts: RowParts,
+  features: HatFeatures,
+  shrink: Float64Array,
+  weightSum: number,
+): { residual: number; leverage: number } {
   let fitted = 0;
   let quadratic = 0;
   for (let k = 0; k < features.size; k += 1) {

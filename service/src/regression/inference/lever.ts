@@ -36,7 +36,11 @@ export function leverageMatrix(request: LeverRequest): LeverageMatrix | null {
   );
   if (positions.length === 0 || positions.length > MOST_LEVER_COLUMNS) return null;
   const inverse = inverseFor(request, positions);
-  return { positions, matrix: inverse.map((value) => value / weightSum), base: context.design.intercept ? 1 / weightSum : 0 };
+  return {
+    positions,
+    matrix: inverse.map((value) => value / weightSum),
+    base: context.design.intercept ? 1 / weightSum : 0,
+  };
 }
 
 function inverseFor(request: LeverRequest, positions: readonly number[]): Float64Array {
@@ -47,7 +51,9 @@ function inverseFor(request: LeverRequest, positions: readonly number[]): Float6
   const entry = productsOf(part);
   const matrix = (extra: number): Float64Array =>
     Float64Array.from(
-      positions.flatMap((row) => positions.map((column) => entry(row, column) + (row === column ? square * penalties.factors[row] + extra : 0))),
+      positions.flatMap((row) =>
+        positions.map((column) => entry(row, column) + (row === column ? square * penalties.factors[row] + extra : 0)),
+      ),
     );
   const factor = cholesky(matrix(0), positions.length);
   return invertCholesky(factor.dependent < 0 ? factor : cholesky(matrix(SMALL_RIDGE), positions.length));
@@ -65,7 +71,9 @@ export function triangularOf(part: TrainingPart, positions: readonly number[]): 
   if (part.rows === null) return null;
   const { x, rowCount } = part.rows;
   const data = new Float64Array(rowCount * positions.length);
-  positions.forEach((position, at) => data.set(x.subarray(position * rowCount, (position + 1) * rowCount), at * rowCount));
+  positions.forEach((position, at) =>
+    data.set(x.subarray(position * rowCount, (position + 1) * rowCount), at * rowCount),
+  );
   return factorise(data, rowCount, positions.length);
 }
 
@@ -75,9 +83,16 @@ function inverseFromRows(part: TrainingPart, positions: readonly number[]): Floa
   const qr = triangularOf(part, positions);
   const inverse = new Float64Array(size * size);
   if (qr === null) return inverse;
-  const columns = positions.map((_, k) => solveUpper(qr, Float64Array.from({ length: size }, (__, row) => (row === k ? 1 : 0)), size));
+  const columns = positions.map((_, k) =>
+    solveUpper(
+      qr,
+      Float64Array.from({ length: size }, (__, row) => (row === k ? 1 : 0)),
+      size,
+    ),
+  );
   for (let i = 0; i < size; i += 1) {
-    for (let j = 0; j < size; j += 1) inverse[i * size + j] = columns.reduce((sum, column) => sum + column[i] * column[j], 0) * part.problem.weightSum;
+    for (let j = 0; j < size; j += 1)
+      inverse[i * size + j] = columns.reduce((sum, column) => sum + column[i] * column[j], 0) * part.problem.weightSum;
   }
   return inverse;
 }

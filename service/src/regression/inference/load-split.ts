@@ -23,18 +23,22 @@ export function sharedLoad(fit: FinishedFit): SharedLoadGroup[] {
   const { context, part } = fit;
   const { problem } = part;
   const inputs = context.specification.inputs.flatMap((input, at) => {
-    const positions = Array.from(problem.kept.keys()).filter((position) => context.design.columns[problem.kept[position]].input === at);
+    const positions = Array.from(problem.kept.keys()).filter(
+      (position) => context.design.columns[problem.kept[position]].input === at,
+    );
     return positions.length === 0 ? [] : [{ name: input.column, positions }];
   });
   if (inputs.length > MOST_INPUTS || problem.size > MOST_COLUMNS || isWide(part)) return [];
   const groups = findSharedLoad({ gram: problem.gram, size: problem.size, inputs });
   if (groups.length === 0) return [];
   const splits = solveThreeWays(fit);
-  const share = (weights: Float64Array, member: number): number => memberShare(problem, weights, inputs[member].positions);
+  const share = (weights: Float64Array, member: number): number =>
+    memberShare(problem, weights, inputs[member].positions);
   return groups.map(({ members, ...group }) => ({
     ...group,
     members: members.map((member) => ({ input: inputs[member].name })),
-    leastSquares: splits.leastSquares === null ? null : members.map((member) => share(splits.leastSquares ?? splits.ridge, member)),
+    leastSquares:
+      splits.leastSquares === null ? null : members.map((member) => share(splits.leastSquares ?? splits.ridge, member)),
     ridge: members.map((member) => share(splits.ridge, member)),
     lasso: members.map((member) => share(splits.lasso, member)),
   }));
@@ -43,7 +47,8 @@ export function sharedLoad(fit: FinishedFit): SharedLoadGroup[] {
 function memberShare({ gram, size }: StandardisedProblem, weights: Float64Array, positions: readonly number[]): number {
   if (positions.length === 1) return weights[positions[0]];
   let square = 0;
-  for (const row of positions) for (const column of positions) square += weights[row] * weights[column] * gram[row * size + column];
+  for (const row of positions)
+    for (const column of positions) square += weights[row] * weights[column] * gram[row * size + column];
   return Math.sqrt(Math.max(0, square));
 }
 
@@ -55,7 +60,10 @@ interface ThreeWays {
 
 function solveThreeWays({ context, part }: FinishedFit): ThreeWays {
   const { problem } = part;
-  const plain: ColumnPenalties = { factors: new Float64Array(problem.size).fill(1), signs: penaltiesOf(context.design.columns, problem.kept).signs.map(() => 'any') };
+  const plain: ColumnPenalties = {
+    factors: new Float64Array(problem.size).fill(1),
+    signs: penaltiesOf(context.design.columns, problem.kept).signs.map(() => 'any'),
+  };
   const answer = leastSquaresFromMoments(problem);
   const form = ridgeFromMoments(problem, plain);
   const lambdas = ridgePath(form);
@@ -70,7 +78,12 @@ function solveThreeWays({ context, part }: FinishedFit): ThreeWays {
 /** n ln(RSS/n) + df ln n along the path (Schwarz 1978; Zou, Hastie and Tibshirani 2007). */
 function lassoByInformation(problem: StandardisedProblem, plain: ColumnPenalties): Float64Array {
   const held = projectFree(problem, plain);
-  const { weights, degreesOfFreedom } = descendPath(held, plain, { kind: 'descent', mixing: 1, polish: true }, lassoPath(held, plain, 1, false));
+  const { weights, degreesOfFreedom } = descendPath(
+    held,
+    plain,
+    { kind: 'descent', mixing: 1, polish: true },
+    lassoPath(held, plain, 1, false),
+  );
   const criterion = weights.map((solution, at) => {
     let residual = problem.targetSquare;
     for (let i = 0; i < problem.size; i += 1) {
@@ -79,7 +92,10 @@ function lassoByInformation(problem: StandardisedProblem, plain: ColumnPenalties
       for (let j = 0; j < problem.size; j += 1) fitted += problem.gram[i * problem.size + j] * solution[j];
       residual += solution[i] * (fitted - 2 * problem.cross[i]);
     }
-    return problem.weightSum * Math.log(Math.max(residual, Number.MIN_VALUE)) + degreesOfFreedom[at] * Math.log(problem.weightSum);
+    return (
+      problem.weightSum * Math.log(Math.max(residual, Number.MIN_VALUE)) +
+      degreesOfFreedom[at] * Math.log(problem.weightSum)
+    );
   });
   return weights[smallestError(criterion)];
 }

@@ -11,7 +11,12 @@ import type { PathAnswer } from '../selection/fold-task';
  * other folds among themselves, and the model without that fold at that penalty is measured on it (Stone 1974; Varma and Simon
  * 2006). Only for rules that look at folds, and for schemes in which every fold is trained on all others.
  */
-export async function nestedError(context: FitContext, moments: readonly Moments[], lambdas: readonly number[], outer: readonly PathAnswer[]): Promise<number> {
+export async function nestedError(
+  context: FitContext,
+  moments: readonly Moments[],
+  lambdas: readonly number[],
+  outer: readonly PathAnswer[],
+): Promise<number> {
   const { folds } = context.plan;
   const { rule } = context.specification.penalty;
   if (context.specification.validation.scheme === 'forward' || folds.length < 3) {
@@ -20,7 +25,9 @@ export async function nestedError(context: FitContext, moments: readonly Moments
   let squares = 0;
   let weight = 0;
   for (const [at, fold] of folds.entries()) {
-    const inner = folds.filter((other) => other !== fold).map((other) => ({ ...other, training: other.training.filter((segment) => !fold.heldOut.includes(segment)) }));
+    const inner = folds
+      .filter((other) => other !== fold)
+      .map((other) => ({ ...other, training: other.training.filter((segment) => !fold.heldOut.includes(segment)) }));
     const answers = await runFoldPaths({ ...context, plan: { ...context.plan, folds: inner } }, moments, lambdas);
     const combined = combineFolds(answers, lambdas.length);
     const chosen = rule === 'one-standard-error' ? withinOneStandardError(combined) : smallestError(combined.errors);

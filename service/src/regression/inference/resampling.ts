@@ -16,12 +16,18 @@ const CHEAP = 1e9;
 const STEPS_TO_PENALTY = 10;
 
 /** The model of a fit to some positions of a design at one λ, reached by warm starts from ten times as strong. */
-function fitPositions(context: FitContext, positions: Int32Array, lambda: number, design = context.design): ColumnModel {
+function fitPositions(
+  context: FitContext,
+  positions: Int32Array,
+  lambda: number,
+  design = context.design,
+): ColumnModel {
   const selected = selectPositions(design, positions);
   const whole = { start: 0, end: positions.length };
   const moments = context.route === 'moments' ? [momentsOf(selected, whole)] : [];
   const part = trainingPart(selected, context.route, [whole], moments);
-  const lambdas = context.settings.kind === 'descent' && lambda > 0 ? logSpaced(lambda * 10, lambda, STEPS_TO_PENALTY) : [lambda];
+  const lambdas =
+    context.settings.kind === 'descent' && lambda > 0 ? logSpaced(lambda * 10, lambda, STEPS_TO_PENALTY) : [lambda];
   const solution = solvePath(part, design.columns, { ...context.settings, polish: false }, lambdas);
   return toColumnModel(part.problem, solution.weights[lambdas.length - 1], shapeOf(selected));
 }
@@ -40,7 +46,9 @@ export function selectionFrequency(fit: FinishedFit): FitDiagnostics['selectionF
   const random = seededRandom(specification.validation.seed);
   const counts = new Float64Array(design.columnCount);
   for (let sample = 0; sample < samples; sample += 1) {
-    const half = shuffledOrder(read.count, random).slice(0, Math.ceil(read.count / 2)).sort();
+    const half = shuffledOrder(read.count, random)
+      .slice(0, Math.ceil(read.count / 2))
+      .sort();
     fitPositions(context, half, lambda).weights.forEach((weight, column) => (counts[column] += weight === 0 ? 0 : 1));
   }
   return design.columns.map((column, at) => ({
@@ -61,7 +69,9 @@ const SMALLEST_TRAINING = 10;
 export function learningCurve(fit: FinishedFit): FitDiagnostics['learningCurve'] {
   const { context } = fit;
   if (context.specification.extras.learningCurve !== true) return null;
-  const folds = context.plan.folds.slice(0, CURVE_FOLDS).map((fold) => ({ fold, training: positionsOf(context, fold) }));
+  const folds = context.plan.folds
+    .slice(0, CURVE_FOLDS)
+    .map((fold) => ({ fold, training: positionsOf(context, fold) }));
   const most = Math.min(...folds.map(({ training }) => training.length));
   const sizes = [...new Set(logSpaced(Math.min(SMALLEST_TRAINING, most), most, CURVE_STEPS).map(Math.round))];
   return sizes.map((records) => ({ records, rmse: curvePoint(fit, folds, records) }));
@@ -76,7 +86,11 @@ function positionsOf(context: FitContext, fold: Fold): Int32Array {
   );
 }
 
-function curvePoint(fit: FinishedFit, folds: readonly { readonly fold: Fold; readonly training: Int32Array }[], records: number): number {
+function curvePoint(
+  fit: FinishedFit,
+  folds: readonly { readonly fold: Fold; readonly training: Int32Array }[],
+  records: number,
+): number {
   const { context, lambda } = fit;
   const random = seededRandom(context.specification.validation.seed + records);
   const ratio = context.read.count / records;
@@ -85,7 +99,10 @@ function curvePoint(fit: FinishedFit, folds: readonly { readonly fold: Fold; rea
   let weight = 0;
   for (const { fold, training } of folds) {
     const design = designForFold(context, fold);
-    const part = shuffledOrder(training.length, random).slice(0, records).map((at) => training[at]).sort();
+    const part = shuffledOrder(training.length, random)
+      .slice(0, records)
+      .map((at) => training[at])
+      .sort();
     const model = fitPositions(context, part, adjusted, design);
     for (const segment of fold.heldOut) {
       const { start, end } = spanOf(context.plan, segment);

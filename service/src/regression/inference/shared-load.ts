@@ -17,7 +17,9 @@ export interface SharedLoadSource {
   readonly inputs: readonly { readonly name: string; readonly positions: readonly number[] }[];
 }
 
-export type FoundGroup = Pick<SharedLoadGroup, 'found' | 'smallestCorrelation'> & { readonly members: readonly number[] };
+export type FoundGroup = Pick<SharedLoadGroup, 'found' | 'smallestCorrelation'> & {
+  readonly members: readonly number[];
+};
 
 /**
  * Groups of inputs that carry the same information: by average-linkage clustering on the largest canonical correlation between
@@ -28,15 +30,33 @@ export function findSharedLoad(source: SharedLoadSource): FoundGroup[] {
   const correlations = inputCorrelations(source);
   const clusters: FoundGroup[] = averageLinkage(correlations)
     .filter((members) => members.length > 1)
-    .map((members) => ({ members, found: 'correlation' as const, smallestCorrelation: smallest(correlations, members) }));
+    .map((members) => ({
+      members,
+      found: 'correlation' as const,
+      smallestCorrelation: smallest(correlations, members),
+    }));
   const known = clusters.map((group) => group.members);
-  const directions = nearNullGroups(source).filter((members) => !known.some((group) => members.every((member) => group.includes(member))));
-  const distinct = directions.filter((members, at) => directions.findIndex((other) => other.join() === members.join()) === at);
-  return [...clusters, ...distinct.map((members) => ({ members, found: 'near-null direction' as const, smallestCorrelation: smallest(correlations, members) }))];
+  const directions = nearNullGroups(source).filter(
+    (members) => !known.some((group) => members.every((member) => group.includes(member))),
+  );
+  const distinct = directions.filter(
+    (members, at) => directions.findIndex((other) => other.join() === members.join()) === at,
+  );
+  return [
+    ...clusters,
+    ...distinct.map((members) => ({
+      members,
+      found: 'near-null direction' as const,
+      smallestCorrelation: smallest(correlations, members),
+    })),
+  ];
 }
 
 function smallest(correlations: readonly (readonly number[])[], members: readonly number[]): number {
-  return members.reduce((least, a) => members.reduce((inner, b) => (a === b ? inner : Math.min(inner, correlations[a][b])), least), 1);
+  return members.reduce(
+    (least, a) => members.reduce((inner, b) => (a === b ? inner : Math.min(inner, correlations[a][b])), least),
+    1,
+  );
 }
 
 function inputCorrelations({ inputs, gram, size }: SharedLoadSource): number[][] {
@@ -51,14 +71,26 @@ function inputCorrelations({ inputs, gram, size }: SharedLoadSource): number[][]
 }
 
 /** Largest canonical correlation (Hotelling 1936) between two sets of standardised columns; 1 at most. */
-function canonicalCorrelation(gram: Float64Array, size: number, first: readonly number[], second: readonly number[]): number {
+function canonicalCorrelation(
+  gram: Float64Array,
+  size: number,
+  first: readonly number[],
+  second: readonly number[],
+): number {
   if (first.length === 1 && second.length === 1) return Math.min(1, Math.abs(gram[first[0] * size + second[0]]));
   const a = whitener(gram, size, first);
   const b = whitener(gram, size, second);
   const whitened = a.map((left) =>
-    b.map((right) => left.reduce((sum, x, i) => sum + x * right.reduce((inner, y, j) => inner + y * gram[first[i] * size + second[j]], 0), 0)),
+    b.map((right) =>
+      left.reduce(
+        (sum, x, i) => sum + x * right.reduce((inner, y, j) => inner + y * gram[first[i] * size + second[j]], 0),
+        0,
+      ),
+    ),
   );
-  const { values } = symmetricEigen(whitened.length, (i, j) => whitened[i].reduce((sum, value, k) => sum + value * whitened[j][k], 0));
+  const { values } = symmetricEigen(whitened.length, (i, j) =>
+    whitened[i].reduce((sum, value, k) => sum + value * whitened[j][k], 0),
+  );
   return Math.sqrt(Math.min(1, Math.max(0, ...values)));
 }
 
@@ -66,7 +98,9 @@ function canonicalCorrelation(gram: Float64Array, size: number, first: readonly 
 function whitener(gram: Float64Array, size: number, positions: readonly number[]): number[][] {
   const { values, vectors } = symmetricEigen(positions.length, (i, j) => gram[positions[i] * size + positions[j]]);
   const floor = SMALL_RIDGE * Math.max(...values);
-  return values.flatMap((value, k) => (value > floor ? [positions.map((_, i) => vectors.get(i, k) / Math.sqrt(value))] : []));
+  return values.flatMap((value, k) =>
+    value > floor ? [positions.map((_, i) => vectors.get(i, k) / Math.sqrt(value))] : [],
+  );
 }
 
 function averageLinkage(correlations: readonly (readonly number[])[]): number[][] {
@@ -88,9 +122,14 @@ function averageLinkage(correlations: readonly (readonly number[])[]): number[][
 }
 
 function nearNullGroups({ gram, size, inputs }: SharedLoadSource): number[][] {
-  const columns = inputs.flatMap((input, at) => (input.positions.length === 1 ? [{ at, position: input.positions[0] }] : []));
+  const columns = inputs.flatMap((input, at) =>
+    input.positions.length === 1 ? [{ at, position: input.positions[0] }] : [],
+  );
   if (columns.length < 2) return [];
-  const { values, vectors } = symmetricEigen(columns.length, (i, j) => gram[columns[i].position * size + columns[j].position]);
+  const { values, vectors } = symmetricEigen(
+    columns.length,
+    (i, j) => gram[columns[i].position * size + columns[j].position],
+  );
   const largest = Math.max(...values);
   return values.flatMap((value, k) => {
     if (value > 0 && Math.sqrt(largest / value) < NEAR_NULL_INDEX) return [];

@@ -25,6 +25,7 @@ export function standardErrors({ context, lever, part }: FinishedFit, training: 
   });
   if (!design.intercept) return { intercept: null, columns };
   let quadratic = lever.base;
-  for (let i = 0; i < size; i += 1) for (let j = 0; j < size; j += 1) quadratic += shift[i] * lever.matrix[i * size + j] * shift[j];
+  for (let i = 0; i < size; i += 1)
+    for (let j = 0; j < size; j += 1) quadratic += shift[i] * lever.matrix[i * size + j] * shift[j];
   return { intercept: Math.sqrt(training.variance * Math.max(0, quadratic)), columns };
 }

@@ -12,7 +12,8 @@ const DEPENDENT_SHARE = 1e-12;
 export function cholesky(matrix: Float64Array, size: number, dependentShare = DEPENDENT_SHARE): CholeskyFactor {
   const lower = new Float64Array(size * size);
   for (let i = 0; i < size; i += 1) {
-    for (let j = 0; j < i; j += 1) lower[i * size + j] = (matrix[i * size + j] - innerRows(lower, size, i, j, j)) / lower[j * size + j];
+    for (let j = 0; j < i; j += 1)
+      lower[i * size + j] = (matrix[i * size + j] - innerRows(lower, size, i, j, j)) / lower[j * size + j];
     const pivot = matrix[i * size + i] - innerRows(lower, size, i, i, i);
     if (!(pivot > dependentShare * Math.abs(matrix[i * size + i]))) return { size, lower, dependent: i };
     lower[i * size + i] = Math.sqrt(pivot);
@@ -20,10 +21,13 @@ export function cholesky(matrix: Float64Array, size: number, dependentShare = DE
   return { size, lower, dependent: -1 };
 }
 
-/* eslint-disable-next-line max-params -- innermost loop */
 function innerRows(lower: Float64Array, size: number, first: number, second: number, count: number): number {
-  const a = first * size, b = second * size;
-  let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
+  const a = first * size,
+    b = second * size;
+  let s0 = 0,
+    s1 = 0,
+    s2 = 0,
+    s3 = 0;
   let k = 0;
   for (; k + 3 < count; k += 4) {
     s0 += lower[a + k] * lower[b + k];

@@ -17,7 +17,12 @@ const ROWS_PER_BLOCK = 512;
 export const crossProduct: CrossProductKernel = (data, columns, range) => {
   const sums = new Float64Array(columns * columns);
   for (let start = range.start; start < range.end; start += ROWS_PER_BLOCK) {
-    addBlock(data, columns, { rowCount: range.rowCount, start, end: Math.min(start + ROWS_PER_BLOCK, range.end) }, sums);
+    addBlock(
+      data,
+      columns,
+      { rowCount: range.rowCount, start, end: Math.min(start + ROWS_PER_BLOCK, range.end) },
+      sums,
+    );
   }
   mirrorLower(sums, columns);
   return sums;
@@ -32,39 +37,72 @@ function addBlock(data: Float64Array, columns: number, range: RowRange, sums: Fl
   }
 }
 
-/* eslint-disable-next-line max-params -- the innermost kernel: an object would be built millions of times */
-function addTile(data: Float64Array, row: number, column: number, columns: number, range: RowRange, sums: Float64Array): void {
+function addTile(
+  data: Float64Array,
+  row: number,
+  column: number,
+  columns: number,
+  range: RowRange,
+  sums: Float64Array,
+): void {
   const { rowCount, start, end } = range;
   const length = end - start;
   let a0 = row * rowCount + start;
-  const a1 = rowCount, a2 = 2 * rowCount, a3 = 3 * rowCount;
+  const a1 = rowCount,
+    a2 = 2 * rowCount,
+    a3 = 3 * rowCount;
   let b0 = column * rowCount + start;
-  let s00 = 0, s01 = 0, s10 = 0, s11 = 0, s20 = 0, s21 = 0, s30 = 0, s31 = 0;
+  let s00 = 0,
+    s01 = 0,
+    s10 = 0,
+    s11 = 0,
+    s20 = 0,
+    s21 = 0,
+    s30 = 0,
+    s31 = 0;
   for (let step = 0; step < length; step += 1) {
     const x = data[b0];
     const y = data[b0 + a1];
-    const p = data[a0], q = data[a0 + a1], r = data[a0 + a2], t = data[a0 + a3];
-    s00 += p * x; s01 += p * y;
-    s10 += q * x; s11 += q * y;
-    s20 += r * x; s21 += r * y;
-    s30 += t * x; s31 += t * y;
+    const p = data[a0],
+      q = data[a0 + a1],
+      r = data[a0 + a2],
+      t = data[a0 + a3];
+    s00 += p * x;
+    s01 += p * y;
+    s10 += q * x;
+    s11 += q * y;
+    s20 += r * x;
+    s21 += r * y;
+    s30 += t * x;
+    s31 += t * y;
     a0 += 1;
     b0 += 1;
   }
   const at = row * columns + column;
-  sums[at] += s00; sums[at + 1] += s01;
-  sums[at + columns] += s10; sums[at + columns + 1] += s11;
-  sums[at + 2 * columns] += s20; sums[at + 2 * columns + 1] += s21;
-  sums[at + 3 * columns] += s30; sums[at + 3 * columns + 1] += s31;
+  sums[at] += s00;
+  sums[at + 1] += s01;
+  sums[at + columns] += s10;
+  sums[at + columns + 1] += s11;
+  sums[at + 2 * columns] += s20;
+  sums[at + 2 * columns + 1] += s21;
+  sums[at + 3 * columns] += s30;
+  sums[at + 3 * columns + 1] += s31;
 }
 
-/* eslint-disable-next-line max-params -- as addTile */
-function addEdge(data: Float64Array, row: number, column: number, columns: number, range: RowRange, sums: Float64Array): void {
+function addEdge(
+  data: Float64Array,
+  row: number,
+  column: number,
+  columns: number,
+  range: RowRange,
+  sums: Float64Array,
+): void {
   const { rowCount, start, end } = range;
   for (let i = row; i < Math.min(row + 4, columns); i += 1) {
     for (let j = column; j < Math.min(column + 2, columns); j += 1) {
       let sum = 0;
-      const first = i * rowCount, second = j * rowCount;
+      const first = i * rowCount,
+        second = j * rowCount;
       for (let step = start; step < end; step += 1) sum += data[first + step] * data[second + step];
       sums[i * columns + j] += sum;
     }

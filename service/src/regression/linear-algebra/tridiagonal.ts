@@ -67,7 +67,13 @@ function makeReflector(vector: Float64Array, from: number, size: number): [numbe
 }
 
 /** A ← A − v wᵀ − w vᵀ on the block from `from` on, and A·next in the same pass; two rows at a time. */
-function updateAndMultiply(matrix: Float64Array, size: number, from: number, { v, w }: Pending, next: Float64Array): Float64Array {
+function updateAndMultiply(
+  matrix: Float64Array,
+  size: number,
+  from: number,
+  { v, w }: Pending,
+  next: Float64Array,
+): Float64Array {
   const product = new Float64Array(size);
   let i = from;
   for (; i + 1 < size; i += 2) {
@@ -77,10 +83,20 @@ function updateAndMultiply(matrix: Float64Array, size: number, from: number, { v
   return product;
 }
 
-/* eslint-disable max-params -- the innermost passes: an object would be built for every row */
-function updateRow(matrix: Float64Array, size: number, i: number, from: number, v: Float64Array, w: Float64Array, next: Float64Array, product: Float64Array): void {
+function updateRow(
+  matrix: Float64Array,
+  size: number,
+  i: number,
+  from: number,
+  v: Float64Array,
+  w: Float64Array,
+  next: Float64Array,
+  product: Float64Array,
+): void {
   const at = i * size;
-  const vi = v[i], wi = w[i], ni = next[i];
+  const vi = v[i],
+    wi = w[i],
+    ni = next[i];
   let sum = 0;
   for (let j = from; j < i; j += 1) {
     const value = matrix[at + j] - (vi * w[j] + wi * v[j]);
@@ -93,12 +109,30 @@ function updateRow(matrix: Float64Array, size: number, i: number, from: number, 
   product[i] += sum + value * ni;
 }
 
-function updateRowPair(matrix: Float64Array, size: number, i: number, from: number, v: Float64Array, w: Float64Array, next: Float64Array, product: Float64Array): void {
-  const first = i * size, second = first + size;
-  const v0 = v[i], w0 = w[i], n0 = next[i], v1 = v[i + 1], w1 = w[i + 1], n1 = next[i + 1];
-  let s0 = 0, s1 = 0;
+function updateRowPair(
+  matrix: Float64Array,
+  size: number,
+  i: number,
+  from: number,
+  v: Float64Array,
+  w: Float64Array,
+  next: Float64Array,
+  product: Float64Array,
+): void {
+  const first = i * size,
+    second = first + size;
+  const v0 = v[i],
+    w0 = w[i],
+    n0 = next[i],
+    v1 = v[i + 1],
+    w1 = w[i + 1],
+    n1 = next[i + 1];
+  let s0 = 0,
+    s1 = 0;
   for (let j = from; j < i; j += 1) {
-    const vj = v[j], wj = w[j], nj = next[j];
+    const vj = v[j],
+      wj = w[j],
+      nj = next[j];
     const a = matrix[first + j] - (v0 * wj + w0 * vj);
     const b = matrix[second + j] - (v1 * wj + w1 * vj);
     matrix[first + j] = a;
@@ -116,7 +150,6 @@ function updateRowPair(matrix: Float64Array, size: number, i: number, from: numb
   product[i] += s0 + corner * n0 + below * n1;
   product[i + 1] += s1 + below * n0 + last * n1;
 }
-/* eslint-enable max-params */
 
 /** w = βp − (β² pᵀv / 2) v. */
 function halfStep(product: Float64Array, v: Float64Array, beta: number, from: number, size: number): Float64Array {

@@ -51,7 +51,8 @@ export class UpdatedCholesky {
   /** x with A x = right on the leading `count` rows and columns. */
   solve(right: ArrayLike<number>, count: number = this.rows.length): Float64Array {
     const solution = new Float64Array(count);
-    for (let i = 0; i < count; i += 1) solution[i] = (right[i] - innerProduct(this.rows[i], solution, i)) / this.rows[i][i];
+    for (let i = 0; i < count; i += 1)
+      solution[i] = (right[i] - innerProduct(this.rows[i], solution, i)) / this.rows[i][i];
     for (let i = count - 1; i >= 0; i -= 1) {
       const row = this.rows[i];
       solution[i] /= row[i];
@@ -63,7 +64,10 @@ export class UpdatedCholesky {
 }
 
 function innerProduct(first: Float64Array, second: Float64Array, count: number): number {
-  let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
+  let s0 = 0,
+    s1 = 0,
+    s2 = 0,
+    s3 = 0;
   let k = 0;
   for (; k + 3 < count; k += 4) {
     s0 += first[k] * second[k];

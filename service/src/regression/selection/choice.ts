@@ -27,10 +27,12 @@ export function choosePenalty(ground: ChoiceGround, rule: PenaltyRule): Choice {
   if (generalised !== null) positions.generalised = smallestError(generalised);
   if (leaveOneOut !== null) positions['leave-one-out'] = smallestError(leaveOneOut);
   if (settled !== null) positions[rule] = lambdas.indexOf(settled);
-  const choices: PenaltyChoice[] = (['minimum', 'one-standard-error', 'leave-one-out', 'generalised'] as const).flatMap((name) => {
-    const at = positions[name];
-    return at === undefined ? [] : [{ rule: name, lambda: lambdas[at] }];
-  });
+  const choices: PenaltyChoice[] = (['minimum', 'one-standard-error', 'leave-one-out', 'generalised'] as const).flatMap(
+    (name) => {
+      const at = positions[name];
+      return at === undefined ? [] : [{ rule: name, lambda: lambdas[at] }];
+    },
+  );
   if (ground.evidence !== null && rule !== 'prior') choices.push({ rule: 'evidence', lambda: ground.evidence });
   if (settled !== null && (rule === 'fixed' || rule === 'prior')) choices.push({ rule, lambda: settled });
   return { at: positions[rule] ?? positions.minimum ?? 0, choices };

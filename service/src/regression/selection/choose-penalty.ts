@@ -20,10 +20,16 @@ export interface PenaltyPlan {
   readonly evidence: EvidenceAnswer | null;
 }
 
-export function planPenalty(part: TrainingPart, columns: readonly DesignColumn[], specification: ResolvedSpecification, kind: SolverKind): PenaltyPlan {
+export function planPenalty(
+  part: TrainingPart,
+  columns: readonly DesignColumn[],
+  specification: ResolvedSpecification,
+  kind: SolverKind,
+): PenaltyPlan {
   const penalties = penaltiesOf(columns, part.problem.kept);
   if (kind === 'least-squares') return { lambdas: [0], settled: 0, form: null, penalties, evidence: null };
-  if (specification.method === 'least-squares') return { lambdas: [0], settled: 0, form: null, penalties, evidence: null };
+  if (specification.method === 'least-squares')
+    return { lambdas: [0], settled: 0, form: null, penalties, evidence: null };
   const limitless = { ...penalties, signs: penalties.signs.map(() => 'any' as const) };
   const form = specification.method === 'ridge' ? ridgeForm(part, limitless) : null;
   const grid = form === null ? descentGrid(part, penalties, specification) : ridgePath(form);
@@ -33,11 +39,17 @@ export function planPenalty(part: TrainingPart, columns: readonly DesignColumn[]
 }
 
 function descentGrid(part: TrainingPart, penalties: ColumnPenalties, specification: ResolvedSpecification): number[] {
-  const held = part.rows !== null && isWide(part) ? wideProblem(part.rows, penalties) : projectFree(part.problem, penalties);
+  const held =
+    part.rows !== null && isWide(part) ? wideProblem(part.rows, penalties) : projectFree(part.problem, penalties);
   return lassoPath(held, penalties, specification.mixing, part.problem.size >= part.problem.weightSum);
 }
 
-function evidenceOf(form: RidgeForm, part: TrainingPart, specification: ResolvedSpecification, grid: readonly number[]): EvidenceAnswer | null {
+function evidenceOf(
+  form: RidgeForm,
+  part: TrainingPart,
+  specification: ResolvedSpecification,
+  grid: readonly number[],
+): EvidenceAnswer | null {
   const setting = { records: part.problem.weightSum, flat: form.freeCount + (specification.intercept ? 1 : 0) };
   if (setting.records - setting.flat <= 0 || form.targetSquare === 0 || form.eigenvalues.length === 0) return null;
   const { rule, value } = specification.penalty;
@@ -57,7 +69,12 @@ function withValue(grid: readonly number[], value: number | null): number[] {
 }
 
 /** n · RSS / (n − 1 − df)², the intercept counted (Golub, Heath and Wahba 1979). */
-export function generalisedErrors(form: RidgeForm, records: number, intercept: boolean, lambdas: readonly number[]): number[] {
+export function generalisedErrors(
+  form: RidgeForm,
+  records: number,
+  intercept: boolean,
+  lambdas: readonly number[],
+): number[] {
   return lambdas.map((lambda) => {
     const left = 1 - (degreesOfFreedom(form, lambda) + (intercept ? 1 : 0)) / records;
     return left > 0 ? form.parts(lambda).residualSquare / (left * left) : Number.MAX_VALUE;

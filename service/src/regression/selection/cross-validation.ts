@@ -15,7 +15,10 @@ export function combineFolds(answers: readonly PathAnswer[], pathLength: number)
   const standardErrors: number[] = [];
   for (let at = 0; at < pathLength; at += 1) {
     const error = answers.reduce((sum, answer) => sum + answer.squaredErrors[at], 0) / total;
-    const spread = answers.reduce((sum, answer) => sum + answer.heldOutWeight * (answer.squaredErrors[at] / answer.heldOutWeight - error) ** 2, 0);
+    const spread = answers.reduce(
+      (sum, answer) => sum + answer.heldOutWeight * (answer.squaredErrors[at] / answer.heldOutWeight - error) ** 2,
+      0,
+    );
     errors.push(error);
     standardErrors.push(answers.length > 1 ? Math.sqrt(spread / total / (answers.length - 1)) : 0);
   }

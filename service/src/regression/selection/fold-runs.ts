@@ -4,7 +4,11 @@ import { momentsOf, type FoldAnswer, type PathAnswer, type PathTask } from './fo
 import type { Fold } from './folds';
 
 /** The path on every fold. `moments` are those of the shared design's segments. Spline designs are built one fold at a time. */
-export async function runFoldPaths(context: FitContext, moments: readonly Moments[], lambdas: readonly number[]): Promise<PathAnswer[]> {
+export async function runFoldPaths(
+  context: FitContext,
+  moments: readonly Moments[],
+  lambdas: readonly number[],
+): Promise<PathAnswer[]> {
   const { folds } = context.plan;
   const answers: PathAnswer[] = [];
   const batch = context.designPerFold ? 1 : folds.length;
@@ -25,7 +29,8 @@ function expectPath(answer: FoldAnswer): PathAnswer {
 function pathTask(context: FitContext, fold: Fold, moments: readonly Moments[], lambdas: readonly number[]): PathTask {
   const { plan, route, settings } = context;
   const design = designForFold(context, fold);
-  const momentsAt = (segment: number): Moments => (context.designPerFold ? momentsOf(design, spanOf(plan, segment)) : moments[segment]);
+  const momentsAt = (segment: number): Moments =>
+    context.designPerFold ? momentsOf(design, spanOf(plan, segment)) : moments[segment];
   const used = (segments: readonly number[]): Moments[] => (route === 'moments' ? segments.map(momentsAt) : []);
   return {
     kind: 'path',

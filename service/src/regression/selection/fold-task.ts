@@ -1,5 +1,13 @@
 import type { DesignMatrix } from '../design/design-matrix';
-import { addMoments, squaredError, standardise, toColumnModel, shapeOf, type ColumnModel, type Moments } from '../design/moments';
+import {
+  addMoments,
+  squaredError,
+  standardise,
+  toColumnModel,
+  shapeOf,
+  type ColumnModel,
+  type Moments,
+} from '../design/moments';
 import { sumOfSquares, weightedResiduals } from '../design/predict';
 import { problemOfRows, standardisedRows, withoutGram, type RowSpan } from '../design/standardised-rows';
 import { crossProduct } from '../linear-algebra/cross-product';
@@ -57,7 +65,12 @@ export function momentsOf(design: DesignMatrix, span: RowSpan): Moments {
 }
 
 /** The training records as the route needs them. */
-export function trainingPart(design: DesignMatrix, route: Route, spans: readonly RowSpan[], moments: readonly Moments[]): TrainingPart {
+export function trainingPart(
+  design: DesignMatrix,
+  route: Route,
+  spans: readonly RowSpan[],
+  moments: readonly Moments[],
+): TrainingPart {
   const usable = design.columns.map((column) => column.leftOut === undefined);
   if (route === 'moments') return { problem: standardise(addMoments(moments), shapeOf(design), usable), rows: null };
   const rows = standardisedRows(design, spans, usable);
@@ -97,5 +110,8 @@ function heldOutError(task: PathTask, model: ColumnModel): number {
     const target = task.heldOutMoments.reduce((total, moments) => total + moments[width * width - 1], 0);
     if (fromMoments > SAFE_SHARE * target) return fromMoments;
   }
-  return task.heldOut.reduce((total, span) => total + sumOfSquares(weightedResiduals(task.design, model, span.start, span.end)), 0);
+  return task.heldOut.reduce(
+    (total, span) => total + sumOfSquares(weightedResiduals(task.design, model, span.start, span.end)),
+    0,
+  );
 }

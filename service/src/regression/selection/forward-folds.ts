@@ -7,7 +7,9 @@ import type { Fold, FoldPlan } from './folds';
  * block k is held out from a fit on the blocks before it, less the records closer than `gap` to its first moment.
  */
 export function forwardPlan(times: Float64Array, validation: ResolvedValidation): FoldPlan {
-  const order = Int32Array.from(times, (_, record) => record).sort((first, second) => times[first] - times[second] || first - second);
+  const order = Int32Array.from(times, (_, record) => record).sort(
+    (first, second) => times[first] - times[second] || first - second,
+  );
   const sorted = Float64Array.from(order, (record) => times[record]);
   const starts = blockStarts(sorted, validation.folds + 1);
   const pieces = starts.slice(1).map((start, index) => ({
@@ -17,11 +19,15 @@ export function forwardPlan(times: Float64Array, validation: ResolvedValidation)
   }));
   const usable = pieces.filter((piece) => piece.trainingEnd >= 2);
   if (usable.length < 1) {
-    throw new RegressionError('too-few-folds', 'The time column and the gap leave no fold with records before it.', validation.column);
+    throw new RegressionError(
+      'too-few-folds',
+      'The time column and the gap leave no fold with records before it.',
+      validation.column,
+    );
   }
-  const cuts = [...new Set([0, sorted.length, ...usable.flatMap((piece) => [piece.start, piece.end, piece.trainingEnd])])].sort(
-    (first, second) => first - second,
-  );
+  const cuts = [
+    ...new Set([0, sorted.length, ...usable.flatMap((piece) => [piece.start, piece.end, piece.trainingEnd])]),
+  ].sort((first, second) => first - second);
   return { order, segmentStarts: cuts, folds: usable.map((piece) => foldOf(cuts, piece)) };
 }
 

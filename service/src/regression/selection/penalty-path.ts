@@ -8,7 +8,9 @@ import { degreesOfFreedom, nullFloor, type RidgeForm } from '../solvers/ridge-fo
 export function logSpaced(strongest: number, weakest: number, count: number = PATH_LENGTH): number[] {
   const from = Math.log(strongest);
   const step = (Math.log(weakest) - from) / (count - 1);
-  return Array.from({ length: count }, (_, index) => (index === 0 ? strongest : index === count - 1 ? weakest : Math.exp(from + step * index)));
+  return Array.from({ length: count }, (_, index) =>
+    index === 0 ? strongest : index === count - 1 ? weakest : Math.exp(from + step * index),
+  );
 }
 
 /** From 1 % to 99.9 % of the degrees of freedom that the held columns have. */
@@ -33,11 +35,17 @@ export function penaltyForDegrees(form: RidgeForm, degrees: number): number {
 }
 
 /** From the smallest λ that zeroes every held weight down to the ratio of the conventions. */
-export function lassoPath(held: Pick<HeldProblem, 'held' | 'cross'>, penalties: ColumnPenalties, mixing: number, wide: boolean): number[] {
+export function lassoPath(
+  held: Pick<HeldProblem, 'held' | 'cross'>,
+  penalties: ColumnPenalties,
+  mixing: number,
+  wide: boolean,
+): number[] {
   let strongest = 0;
   held.held.forEach((column, j) => {
     const factor = penalties.factors[column];
-    if (factor > 0) strongest = Math.max(strongest, allowedPull(held.cross[j], penalties.signs[column]) / (mixing * factor));
+    if (factor > 0)
+      strongest = Math.max(strongest, allowedPull(held.cross[j], penalties.signs[column]) / (mixing * factor));
   });
   const ratio = wide ? LASSO_PATH_RATIO.wide : LASSO_PATH_RATIO.tall;
   return strongest > 0 ? logSpaced(strongest, strongest * ratio) : logSpaced(1, ratio);

@@ -37,6 +37,9 @@ export function losesDigits(part: TrainingPart, plan: PenaltyPlan, kind: SolverK
 }
 
 function squaredCondition(part: TrainingPart): number {
-  const condition = conditionNumber(part, Array.from({ length: part.problem.size }, (_, at) => at));
+  const condition = conditionNumber(
+    part,
+    Array.from({ length: part.problem.size }, (_, at) => at),
+  );
   return condition === null ? Infinity : condition * condition;
 }

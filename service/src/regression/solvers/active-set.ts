@@ -79,7 +79,12 @@ export class ActiveSetSolver {
   private stepToMinimum(held: HeldProblem, penalty: HeldPenalty, weights: Float64Array): number {
     const right = this.active.map((j) => held.cross[j] - penalty.absolute[j] * Math.sign(weights[j]));
     const target = this.factor.solve(right);
-    return moveAlong(target.map((value, at) => value - weights[this.active[at]]), weights, this.active, 1);
+    return moveAlong(
+      target.map((value, at) => value - weights[this.active[at]]),
+      weights,
+      this.active,
+      1,
+    );
   }
 
   /** v with (A + Q)v = 0 on the factor's columns and the dependent one, in the direction in which the penalty does not grow. */
@@ -95,7 +100,12 @@ export class ActiveSetSolver {
 }
 
 /** weights += step · direction with the largest step ≤ `longest` that changes no sign; the column that stops it, or −1. */
-function moveAlong(direction: Float64Array, weights: Float64Array, columns: readonly number[], longest: number): number {
+function moveAlong(
+  direction: Float64Array,
+  weights: Float64Array,
+  columns: readonly number[],
+  longest: number,
+): number {
   let step = longest;
   let leaving = -1;
   direction.forEach((change, at) => {

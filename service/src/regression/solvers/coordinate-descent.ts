@@ -38,7 +38,13 @@ export function startingState(held: HeldProblem): DescentState {
  * by the relative duality gap. When it is slow, or `polish` asks for it, the weights are solved exactly on the active set.
  * Updates `state` in place. `previous` is the penalty of the λ before, for the strong rule; null starts with no screening.
  */
-export function descend(held: HeldProblem, penalty: HeldPenalty, previous: HeldPenalty | null, state: DescentState, polish: boolean): DescentAnswer {
+export function descend(
+  held: HeldProblem,
+  penalty: HeldPenalty,
+  previous: HeldPenalty | null,
+  state: DescentState,
+  polish: boolean,
+): DescentAnswer {
   const working = workingSet(held, penalty, previous, state);
   const inside = new Uint8Array(held.size);
   working.forEach((j) => (inside[j] = 1));
@@ -60,7 +66,12 @@ export function descend(held: HeldProblem, penalty: HeldPenalty, previous: HeldP
 }
 
 /** Columns in use, and those that may come in: pull ≥ 2·threshold − previous threshold. */
-function workingSet(held: HeldProblem, penalty: HeldPenalty, previous: HeldPenalty | null, state: DescentState): number[] {
+function workingSet(
+  held: HeldProblem,
+  penalty: HeldPenalty,
+  previous: HeldPenalty | null,
+  state: DescentState,
+): number[] {
   const working: number[] = [];
   for (let j = 0; j < held.size; j += 1) {
     const screen = previous === null ? 0 : 2 * penalty.absolute[j] - previous.absolute[j];
@@ -81,7 +92,13 @@ function sweepRound(held: HeldProblem, penalty: HeldPenalty, state: DescentState
 }
 
 /** One sweep; returns the largest curvature · step². */
-function sweepOnce(held: HeldProblem, penalty: HeldPenalty, state: DescentState, columns: readonly number[], working: readonly number[]): number {
+function sweepOnce(
+  held: HeldProblem,
+  penalty: HeldPenalty,
+  state: DescentState,
+  columns: readonly number[],
+  working: readonly number[],
+): number {
   const { gram, size } = held;
   const { weights, gradient } = state;
   let largest = 0;
@@ -94,7 +111,8 @@ function sweepOnce(held: HeldProblem, penalty: HeldPenalty, state: DescentState,
     if (step === 0) continue;
     weights[j] = next;
     const row = j * size;
-    for (let other = 0; other < working.length; other += 1) gradient[working[other]] -= step * gram[row + working[other]];
+    for (let other = 0; other < working.length; other += 1)
+      gradient[working[other]] -= step * gram[row + working[other]];
     largest = Math.max(largest, curvature * step * step);
   }
   return largest;
@@ -112,7 +130,13 @@ function refreshGradient(held: HeldProblem, { weights, gradient }: DescentState)
   }
 }
 
-function addViolators(held: HeldProblem, penalty: HeldPenalty, state: DescentState, working: number[], inside: Uint8Array): boolean {
+function addViolators(
+  held: HeldProblem,
+  penalty: HeldPenalty,
+  state: DescentState,
+  working: number[],
+  inside: Uint8Array,
+): boolean {
   let added = false;
   for (let j = 0; j < held.size; j += 1) {
     if (inside[j] === 1 || allowedPull(state.gradient[j], penalty.signs[j]) <= penalty.absolute[j]) continue;

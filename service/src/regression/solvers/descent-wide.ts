@@ -13,7 +13,12 @@ import { crossWith, dotAt, wideProblem, type WideProblem } from './wide-problem'
  * enter (strong rule, then every column that violates its condition), the gradient of all columns from the residuals.
  * Cost a λ: a few passes over the data, plus products of new working columns.
  */
-export function descendWide(source: StandardisedRows, penalties: ColumnPenalties, settings: SolverSettings, lambdas: readonly number[]): PathSolution {
+export function descendWide(
+  source: StandardisedRows,
+  penalties: ColumnPenalties,
+  settings: SolverSettings,
+  lambdas: readonly number[],
+): PathSolution {
   const problem = wideProblem(source, penalties);
   const state = new WideState(problem);
   const outcome = { weights: [] as Float64Array[], degreesOfFreedom: [] as number[], gaps: [] as number[] };
@@ -82,14 +87,24 @@ class WideState {
 
   degrees(penalty: HeldPenalty): number {
     const compact = this.compact();
-    return activeDegrees(compact, pickPenalty(penalty, this.working), Float64Array.from(this.working, (j) => this.weights[j]));
+    return activeDegrees(
+      compact,
+      pickPenalty(penalty, this.working),
+      Float64Array.from(this.working, (j) => this.weights[j]),
+    );
   }
 
   private solveWorking(penalty: HeldPenalty, polish: boolean): ReturnType<typeof descend> {
     const compact = this.compact();
     const weights = Float64Array.from(this.working, (j) => this.weights[j]);
     const gradient = Float64Array.from(this.working, (j) => this.gradient[j]);
-    const answer = descend(compact, pickPenalty(penalty, this.working), null, { weights, gradient, exact: this.exact }, polish);
+    const answer = descend(
+      compact,
+      pickPenalty(penalty, this.working),
+      null,
+      { weights, gradient, exact: this.exact },
+      polish,
+    );
     this.working.forEach((j, at) => (this.weights[j] = answer.weights[at]));
     return answer;
   }
@@ -98,7 +113,9 @@ class WideState {
     const { x, rows, weightSum } = this.problem;
     this.inside[j] = 1;
     this.working.push(j);
-    this.products.push(Float64Array.from(this.working, (other) => dotAt(x, j * rows, x, other * rows, rows) / weightSum));
+    this.products.push(
+      Float64Array.from(this.working, (other) => dotAt(x, j * rows, x, other * rows, rows) / weightSum),
+    );
   }
 
   private enterViolators(penalty: HeldPenalty): boolean {
@@ -131,13 +148,29 @@ class WideState {
       }),
     );
     const { cross, targetSquare } = this.problem;
-    return { size, held: this.working, gram, cross: Float64Array.from(this.working, (j) => cross[j]), targetSquare, freeCount: 0, restore: (weights) => Float64Array.from(weights) };
+    return {
+      size,
+      held: this.working,
+      gram,
+      cross: Float64Array.from(this.working, (j) => cross[j]),
+      targetSquare,
+      freeCount: 0,
+      restore: (weights) => Float64Array.from(weights),
+    };
   }
 
   /** For the gap, which needs no products. */
   private asHeld(): HeldProblem {
     const { cross, held, targetSquare } = this.problem;
-    return { size: held.length, held, gram: new Float64Array(0), cross, targetSquare, freeCount: 0, restore: (weights) => Float64Array.from(weights) };
+    return {
+      size: held.length,
+      held,
+      gram: new Float64Array(0),
+      cross,
+      targetSquare,
+      freeCount: 0,
+      restore: (weights) => Float64Array.from(weights),
+    };
   }
 }
 

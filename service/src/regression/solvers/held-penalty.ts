@@ -40,10 +40,20 @@ export function allowedPull(gradient: number, sign: SignLimit): number {
  * sign limits): Σ v²/(2·square) from strong convexity, v the distance of 0 from the subgradient.
  * gradient = c − A b for every held column.
  */
-export function relativeGap(held: HeldProblem, penalty: HeldPenalty, weights: Float64Array, gradient: Float64Array): number {
+export function relativeGap(
+  held: HeldProblem,
+  penalty: HeldPenalty,
+  weights: Float64Array,
+  gradient: Float64Array,
+): number {
   if (held.targetSquare === 0) return 0;
   const scale = held.targetSquare / 2;
-  let explained = 0, fitted = 0, absolute = 0, square = 0, worst = 1, slack = 0;
+  let explained = 0,
+    fitted = 0,
+    absolute = 0,
+    square = 0,
+    worst = 1,
+    slack = 0;
   for (let j = 0; j < held.size; j += 1) {
     const weight = weights[j];
     const pull = gradient[j] - penalty.square[j] * weight;
@@ -67,5 +77,7 @@ function hasAbsolute(penalty: HeldPenalty): boolean {
 
 function unpenalisedSlack(pull: number, weight: number, penalty: HeldPenalty, j: number, held: HeldProblem): number {
   const violation = weight !== 0 ? Math.abs(pull) : allowedPull(pull, penalty.signs[j]);
-  return penalty.square[j] > 0 ? (violation * violation) / (2 * penalty.square[j]) : violation * (Math.abs(weight) + Math.sqrt(held.targetSquare));
+  return penalty.square[j] > 0
+    ? (violation * violation) / (2 * penalty.square[j])
+    : violation * (Math.abs(weight) + Math.sqrt(held.targetSquare));
 }

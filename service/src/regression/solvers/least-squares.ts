@@ -17,7 +17,10 @@ export function leastSquaresFromMoments(problem: StandardisedProblem): LeastSqua
   const { positions, dependent } = independentPositions(problem);
   const size = positions.length;
   const factor = cholesky(subGram(problem, positions), size);
-  const solved = solveCholesky(factor, positions.map((position) => problem.cross[position]));
+  const solved = solveCholesky(
+    factor,
+    positions.map((position) => problem.cross[position]),
+  );
   const weights = new Float64Array(problem.size);
   positions.forEach((position, index) => (weights[position] = solved[index]));
   return { weights, dependent, iterations: 0 };
@@ -38,7 +41,9 @@ function independentPositions(problem: StandardisedProblem): { positions: number
 function subGram(problem: StandardisedProblem, positions: readonly number[]): Float64Array {
   const size = positions.length;
   const gram = new Float64Array(size * size);
-  positions.forEach((row, i) => positions.forEach((column, j) => (gram[i * size + j] = problem.gram[row * problem.size + column])));
+  positions.forEach((row, i) =>
+    positions.forEach((column, j) => (gram[i * size + j] = problem.gram[row * problem.size + column])),
+  );
   return gram;
 }
 

@@ -18,9 +18,16 @@ export interface OriginalUnits {
  * rounding of standardised columns does not reach the answer. Null when a column is not plain numeric or depends on others.
  * Cost 2 n p² + O(n p) a round.
  */
-export function leastSquaresInOriginalUnits(read: ReadRecords, design: DesignMatrix, plan: FoldPlan): OriginalUnits | null {
+export function leastSquaresInOriginalUnits(
+  read: ReadRecords,
+  design: DesignMatrix,
+  plan: FoldPlan,
+): OriginalUnits | null {
   const used = design.columns.flatMap((column, at) => (column.leftOut === undefined ? [at] : []));
-  const plain = used.every((at) => design.columns[at].label === undefined && read.inputs[design.columns[at].input].input.transform !== 'spline');
+  const plain = used.every(
+    (at) =>
+      design.columns[at].label === undefined && read.inputs[design.columns[at].input].input.transform !== 'spline',
+  );
   if (!plain) return null;
   const rows = read.count;
   const offset = design.intercept ? 1 : 0;
@@ -30,7 +37,9 @@ export function leastSquaresInOriginalUnits(read: ReadRecords, design: DesignMat
   const powers = used.map((at, index) => {
     const { values } = read.inputs[design.columns[at].input];
     const power = powerOfTwoNear(values);
-    plan.order.forEach((record, row) => (matrix[(index + offset) * rows + row] = (values[record] / power) * roots[row]));
+    plan.order.forEach(
+      (record, row) => (matrix[(index + offset) * rows + row] = (values[record] / power) * roots[row]),
+    );
     return power;
   });
   const target = Float64Array.from(plan.order, (record, row) => read.target[record] * roots[row]);

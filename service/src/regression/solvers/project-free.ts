@@ -37,7 +37,15 @@ export function projectFree(problem: StandardisedProblem, penalties: ColumnPenal
     for (let j = 0; j < size; j += 1) gram[i * size + j] -= dot(row, solvedBlocks[j]);
   }
   const targetSquare = Math.max(0, problem.targetSquare - dot(freeCross, solvedCross));
-  return { size, held, gram, cross, targetSquare, freeCount: free.length, restore: restorer(problem, { free, held, factor, freeCross }) };
+  return {
+    size,
+    held,
+    gram,
+    cross,
+    targetSquare,
+    freeCount: free.length,
+    restore: restorer(problem, { free, held, factor, freeCross }),
+  };
 }
 
 export function dependentError(column: string | null = null): RegressionError {
@@ -64,7 +72,10 @@ interface Split {
 function restorer(problem: StandardisedProblem, split: Split): HeldProblem['restore'] {
   return (heldWeights) => {
     const right = Float64Array.from(split.free, (row, index) =>
-      split.held.reduce((rest, column, at) => rest - problem.gram[row * problem.size + column] * heldWeights[at], split.freeCross[index]),
+      split.held.reduce(
+        (rest, column, at) => rest - problem.gram[row * problem.size + column] * heldWeights[at],
+        split.freeCross[index],
+      ),
     );
     const freeWeights = solveCholesky(split.factor, right);
     const weights = new Float64Array(problem.size);
@@ -76,7 +87,9 @@ function restorer(problem: StandardisedProblem, split: Split): HeldProblem['rest
 
 function block(problem: StandardisedProblem, rows: readonly number[], columns: readonly number[]): Float64Array {
   const values = new Float64Array(rows.length * columns.length);
-  rows.forEach((row, i) => columns.forEach((column, j) => (values[i * columns.length + j] = problem.gram[row * problem.size + column])));
+  rows.forEach((row, i) =>
+    columns.forEach((column, j) => (values[i * columns.length + j] = problem.gram[row * problem.size + column])),
+  );
   return values;
 }
 

@@ -1,4 +1,11 @@
-import { factorise, multiplyForward, multiplyTransposed, solveUpper, solveUpperTransposed, type QrForm } from '../linear-algebra/householder-qr';
+import {
+  factorise,
+  multiplyForward,
+  multiplyTransposed,
+  solveUpper,
+  solveUpperTransposed,
+  type QrForm,
+} from '../linear-algebra/householder-qr';
 import { LongSum } from '../linear-algebra/double-double';
 import type { LeastSquaresAnswer } from './least-squares';
 
@@ -11,7 +18,12 @@ const MOST_ROUNDS = 12;
  * in twice the precision (Björck 1967; Björck, Numerical Methods for Least Squares Problems, 1996, section 2.9). Good for
  * condition numbers up to about 1e15, where normal equations stop at 1e8. `x` is column-major rows × columns.
  */
-export function refinedLeastSquares(x: Float64Array, rows: number, columns: number, y: Float64Array): LeastSquaresAnswer {
+export function refinedLeastSquares(
+  x: Float64Array,
+  rows: number,
+  columns: number,
+  y: Float64Array,
+): LeastSquaresAnswer {
   const { positions, dependent } = independentColumns(x, rows, columns);
   const used = positions.length;
   const matrix = new Float64Array(rows * used);
@@ -38,7 +50,13 @@ interface Step {
 }
 
 /** One solve of [I X; Xᵀ 0] (δr, δb) = (y − r − Xb, −Xᵀr). */
-function correction(matrix: Float64Array, qr: QrForm, y: Float64Array, solution: Float64Array, residual: Float64Array): { step: Step; change: number } {
+function correction(
+  matrix: Float64Array,
+  qr: QrForm,
+  y: Float64Array,
+  solution: Float64Array,
+  residual: Float64Array,
+): { step: Step; change: number } {
   const { rows, columns } = qr;
   const first = Float64Array.from({ length: rows }, (_, row) => {
     const sum = new LongSum();
@@ -54,7 +72,11 @@ function correction(matrix: Float64Array, qr: QrForm, y: Float64Array, solution:
   });
   const inner = solveUpperTransposed(qr, second, columns);
   multiplyTransposed(qr, first);
-  const weightStep = solveUpper(qr, Float64Array.from(inner, (value, k) => first[k] - value), columns);
+  const weightStep = solveUpper(
+    qr,
+    Float64Array.from(inner, (value, k) => first[k] - value),
+    columns,
+  );
   const residualStep = first.map((value, row) => (row < columns ? inner[row] : value));
   multiplyForward(qr, residualStep);
   let change = 0;
@@ -66,7 +88,11 @@ function correction(matrix: Float64Array, qr: QrForm, y: Float64Array, solution:
   return { step: { apply }, change };
 }
 
-function independentColumns(x: Float64Array, rows: number, columns: number): { positions: number[]; dependent: number[] } {
+function independentColumns(
+  x: Float64Array,
+  rows: number,
+  columns: number,
+): { positions: number[]; dependent: number[] } {
   const positions: number[] = [];
   const dependent: number[] = [];
   let qr = factorise(x.slice(), rows, columns);

@@ -28,7 +28,9 @@ export function ridgeFromDual(source: StandardisedRows, penalties: ColumnPenalti
     targetSquare: problem.targetSquare,
     weights: (lambdas) => {
       const solved = new Float64Array(rows * lambdas.length);
-      lambdas.forEach((lambda, at) => solveShifted(form, lambda, rotated).forEach((value, row) => (solved[row * lambdas.length + at] = value)));
+      lambdas.forEach((lambda, at) =>
+        solveShifted(form, lambda, rotated).forEach((value, row) => (solved[row * lambdas.length + at] = value)),
+      );
       applyForward(form, solved, lambdas.length);
       return primalWeights(problem, inverseRoots, solved, lambdas.length);
     },
@@ -42,7 +44,10 @@ export function ridgeFromDual(source: StandardisedRows, penalties: ColumnPenalti
         along += value * rotated[row] * weightSum;
       });
       const scaled = weightSum * lambda;
-      return { residualSquare: (scaled * scaled * square) / weightSum, penaltySquare: Math.max(0, along - scaled * square) };
+      return {
+        residualSquare: (scaled * scaled * square) / weightSum,
+        penaltySquare: Math.max(0, along - scaled * square),
+      };
     },
   };
 }
@@ -59,7 +64,12 @@ function transposeScaled({ x, rows, held }: WideProblem, inverseRoots: Float64Ar
 }
 
 /** b = P^(−½) Zᵀ u for every λ at once; `solved` is rows × count. */
-function primalWeights(problem: WideProblem, inverseRoots: Float64Array, solved: Float64Array, count: number): Float64Array[] {
+function primalWeights(
+  problem: WideProblem,
+  inverseRoots: Float64Array,
+  solved: Float64Array,
+  count: number,
+): Float64Array[] {
   const { rows, held, x } = problem;
   const weights = Array.from({ length: count }, () => new Float64Array(held.length));
   const sums = new Float64Array(count);
@@ -77,8 +87,13 @@ function primalWeights(problem: WideProblem, inverseRoots: Float64Array, solved:
 /** sums[k] += Σ over four rows of x · solved[row][k]. */
 function addFourRows(sums: Float64Array, x: Float64Array, at: number, solved: Float64Array, from: number): void {
   const count = sums.length;
-  const x0 = x[at], x1 = x[at + 1], x2 = x[at + 2], x3 = x[at + 3];
-  const second = from + count, third = second + count, fourth = third + count;
+  const x0 = x[at],
+    x1 = x[at + 1],
+    x2 = x[at + 2],
+    x3 = x[at + 3];
+  const second = from + count,
+    third = second + count,
+    fourth = third + count;
   for (let k = 0; k < count; k += 1) {
     sums[k] += x0 * solved[from + k] + x1 * solved[second + k] + (x2 * solved[third + k] + x3 * solved[fourth + k]);
   }

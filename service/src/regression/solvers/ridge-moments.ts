@@ -11,7 +11,8 @@ export function ridgeFromMoments(problem: StandardisedProblem, penalties: Column
   const { size } = held;
   const inverseRoots = Float64Array.from(held.held, (column) => 1 / Math.sqrt(penalties.factors[column]));
   const matrix = held.gram.slice();
-  for (let i = 0; i < size; i += 1) for (let j = 0; j < size; j += 1) matrix[i * size + j] *= inverseRoots[i] * inverseRoots[j];
+  for (let i = 0; i < size; i += 1)
+    for (let j = 0; j < size; j += 1) matrix[i * size + j] *= inverseRoots[i] * inverseRoots[j];
   const scaledCross = held.cross.map((value, index) => value * inverseRoots[index]);
   const form = tridiagonalise(matrix, size);
   const rotated = scaledCross.slice();
@@ -23,7 +24,9 @@ export function ridgeFromMoments(problem: StandardisedProblem, penalties: Column
     weights: (lambdas) => {
       const count = lambdas.length;
       const solved = new Float64Array(size * count);
-      lambdas.forEach((lambda, at) => solveShifted(form, lambda, rotated).forEach((value, row) => (solved[row * count + at] = value)));
+      lambdas.forEach((lambda, at) =>
+        solveShifted(form, lambda, rotated).forEach((value, row) => (solved[row * count + at] = value)),
+      );
       applyForward(form, solved, count);
       return lambdas.map((_, at) => held.restore(inverseRoots.map((root, row) => root * solved[row * count + at])));
     },

@@ -26,7 +26,9 @@ export function ridgeFromRows(rows: StandardisedRows, penalties: ColumnPenalties
   const freeCount = reduced.free.length;
   const { left, singular, right } = decompose(reduced);
   const rank = singular.length;
-  const projected = Float64Array.from({ length: rank }, (_, k) => left.reduce((sum, row, i) => sum + row[k] * reduced.rotatedTarget[freeCount + i], 0));
+  const projected = Float64Array.from({ length: rank }, (_, k) =>
+    left.reduce((sum, row, i) => sum + row[k] * reduced.rotatedTarget[freeCount + i], 0),
+  );
   const tailSquare = reduced.rotatedTarget.slice(freeCount).reduce((sum, value) => sum + value * value, 0);
   const explainable = projected.reduce((sum, value) => sum + value * value, 0);
   const unexplained = outsideSquare(reduced.rotatedTarget, freeCount, left, projected, tailSquare - explainable);
@@ -38,7 +40,13 @@ export function ridgeFromRows(rows: StandardisedRows, penalties: ColumnPenalties
     freeCount,
     eigenvalues: paddedEigenvalues(singular, reduced.held.length, weightSum),
     targetSquare: tailSquare / weightSum,
-    weights: (lambdas) => lambdas.map((lambda) => restore(reduced, right.map((row) => row.reduce((sum, entry, k) => sum + entry * shrink(lambda, k), 0)))),
+    weights: (lambdas) =>
+      lambdas.map((lambda) =>
+        restore(
+          reduced,
+          right.map((row) => row.reduce((sum, entry, k) => sum + entry * shrink(lambda, k), 0)),
+        ),
+      ),
     parts: (lambda) => {
       let residual = unexplained;
       let penaltySquare = 0;
@@ -57,7 +65,9 @@ function reduce(rows: StandardisedRows, penalties: ColumnPenalties): Reduced {
   const held = heldPositions(penalties);
   const order = [...free, ...held];
   const data = new Float64Array(rows.x.length);
-  order.forEach((column, at) => data.set(rows.x.subarray(column * rows.rowCount, (column + 1) * rows.rowCount), at * rows.rowCount));
+  order.forEach((column, at) =>
+    data.set(rows.x.subarray(column * rows.rowCount, (column + 1) * rows.rowCount), at * rows.rowCount),
+  );
   const qr = factorise(data, rows.rowCount, order.length);
   const limit = DEPENDENT_SHARE * Math.sqrt(rows.problem.weightSum);
   if (free.some((_, k) => k >= qr.diagonal.length || Math.abs(qr.diagonal[k]) <= limit)) throw dependentError();
@@ -79,14 +89,25 @@ function decompose({ free, held, qr, inverseRoots }: Reduced): Decomposition {
   if (held.length === 0 || rowCount <= 0) return { left: [], singular: [], right: held.map(() => []) };
   const block = new Matrix(rowCount, held.length);
   for (let i = 0; i < rowCount; i += 1) {
-    for (let j = 0; j < held.length; j += 1) block.set(i, j, upper(qr, free.length + i, free.length + j) * inverseRoots[j]);
+    for (let j = 0; j < held.length; j += 1)
+      block.set(i, j, upper(qr, free.length + i, free.length + j) * inverseRoots[j]);
   }
   const svd = new SingularValueDecomposition(block, { autoTranspose: true });
-  return { left: svd.leftSingularVectors.to2DArray(), singular: svd.diagonal, right: svd.rightSingularVectors.to2DArray() };
+  return {
+    left: svd.leftSingularVectors.to2DArray(),
+    singular: svd.diagonal,
+    right: svd.rightSingularVectors.to2DArray(),
+  };
 }
 
 /** Squared length of what no held column reaches: below R, plus what the left vectors miss inside it. */
-function outsideSquare(rotated: Float64Array, freeCount: number, left: Decomposition['left'], projected: Float64Array, difference: number): number {
+function outsideSquare(
+  rotated: Float64Array,
+  freeCount: number,
+  left: Decomposition['left'],
+  projected: Float64Array,
+  difference: number,
+): number {
   if (left.length > projected.length) return Math.max(0, difference);
   let square = 0;
   for (let row = freeCount + left.length; row < rotated.length; row += 1) square += rotated[row] * rotated[row];
@@ -100,13 +121,17 @@ function paddedEigenvalues(singular: readonly number[], count: number, weightSum
 }
 
 /** b_H = x/√p, then b_F by back substitution in R. */
-function restore({ free, held, qr, rotatedTarget, inverseRoots, size }: Reduced, scaled: readonly number[]): Float64Array {
+function restore(
+  { free, held, qr, rotatedTarget, inverseRoots, size }: Reduced,
+  scaled: readonly number[],
+): Float64Array {
   const heldWeights = scaled.map((value, index) => value * inverseRoots[index]);
   const weights = new Float64Array(size);
   held.forEach((column, index) => (weights[column] = heldWeights[index]));
   for (let row = free.length - 1; row >= 0; row -= 1) {
     let rest = rotatedTarget[row];
-    for (let column = row + 1; column < free.length; column += 1) rest -= upper(qr, row, column) * weights[free[column]];
+    for (let column = row + 1; column < free.length; column += 1)
+      rest -= upper(qr, row, column) * weights[free[column]];
     heldWeights.forEach((weight, index) => (rest -= upper(qr, row, free.length + index) * weight));
     weights[free[row]] = rest / qr.diagonal[row];
   }

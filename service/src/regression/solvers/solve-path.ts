@@ -49,7 +49,12 @@ export function solverKind(method: string, columns: readonly DesignColumn[]): So
 }
 
 /** Solves for every λ, strongest first. */
-export function solvePath(part: TrainingPart, columns: readonly DesignColumn[], settings: SolverSettings, lambdas: readonly number[]): PathSolution {
+export function solvePath(
+  part: TrainingPart,
+  columns: readonly DesignColumn[],
+  settings: SolverSettings,
+  lambdas: readonly number[],
+): PathSolution {
   const penalties = penaltiesOf(columns, part.problem.kept);
   if (settings.kind === 'least-squares') return solveLeastSquares(part, lambdas);
   if (settings.kind === 'ridge') return solveRidge(ridgeForm(part, penalties), lambdas);
@@ -68,7 +73,8 @@ export function isWide({ problem }: TrainingPart): boolean {
 }
 
 function solveLeastSquares(part: TrainingPart, lambdas: readonly number[]): PathSolution {
-  const answer: LeastSquaresAnswer = part.rows === null ? leastSquaresFromMoments(part.problem) : leastSquaresFromRows(part.rows);
+  const answer: LeastSquaresAnswer =
+    part.rows === null ? leastSquaresFromMoments(part.problem) : leastSquaresFromRows(part.rows);
   return {
     weights: lambdas.map(() => answer.weights),
     degreesOfFreedom: lambdas.map(() => part.problem.size - answer.dependent.length),
@@ -83,7 +89,10 @@ export function solveRidge(form: RidgeForm, lambdas: readonly number[]): PathSol
   const smallest = form.eigenvalues.length === 0 ? 1 : form.eigenvalues[0];
   const floor = Number.EPSILON * form.eigenvalues.length * (form.eigenvalues[form.eigenvalues.length - 1] ?? 0);
   if (lambdas.includes(0) && smallest <= floor) {
-    throw new RegressionError('not-identifiable', 'With penalty 0 the inputs depend on each other exactly, so no single set of weights exists. Choose a penalty above 0.');
+    throw new RegressionError(
+      'not-identifiable',
+      'With penalty 0 the inputs depend on each other exactly, so no single set of weights exists. Choose a penalty above 0.',
+    );
   }
   return {
     weights: form.weights(lambdas),
@@ -95,13 +104,23 @@ export function solveRidge(form: RidgeForm, lambdas: readonly number[]): PathSol
   };
 }
 
-function solveDescent(problem: StandardisedProblem, penalties: ColumnPenalties, settings: SolverSettings, lambdas: readonly number[]): PathSolution {
+function solveDescent(
+  problem: StandardisedProblem,
+  penalties: ColumnPenalties,
+  settings: SolverSettings,
+  lambdas: readonly number[],
+): PathSolution {
   const held = projectFree(problem, penalties);
   return descendPath(held, penalties, settings, lambdas);
 }
 
 /** Warm starts from one λ to the next. */
-export function descendPath(held: HeldProblem, penalties: ColumnPenalties, settings: SolverSettings, lambdas: readonly number[]): PathSolution {
+export function descendPath(
+  held: HeldProblem,
+  penalties: ColumnPenalties,
+  settings: SolverSettings,
+  lambdas: readonly number[],
+): PathSolution {
   const state = startingState(held);
   let previous: HeldPenalty | null = null;
   const weights: Float64Array[] = [];
@@ -121,4 +140,3 @@ export function descendPath(held: HeldProblem, penalties: ColumnPenalties, setti
   }
   return { weights, degreesOfFreedom: degrees, gaps, iterations, converged, dependent: [] };
 }
-

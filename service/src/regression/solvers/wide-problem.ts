@@ -26,7 +26,10 @@ export function wideProblem(source: StandardisedRows, penalties: ColumnPenalties
   const free = freePositions(penalties);
   const held = heldPositions(penalties);
   const { x: all, rowCount, problem } = source;
-  const projected = free.length === 0 ? { x: all, y: source.y, top: new Float64Array(0), restoreFree: () => new Float64Array(0) } : projectRows(source, free, held);
+  const projected =
+    free.length === 0
+      ? { x: all, y: source.y, top: new Float64Array(0), restoreFree: () => new Float64Array(0) }
+      : projectRows(source, free, held);
   const rows = rowCount - free.length;
   const cross = crossWith(projected.x, rows, held.length, projected.y, problem.weightSum);
   return {
@@ -53,12 +56,20 @@ interface ProjectedRows {
   restoreFree(heldWeights: ArrayLike<number>): Float64Array;
 }
 
-function projectRows({ x, y, rowCount, problem }: StandardisedRows, free: readonly number[], held: readonly number[]): ProjectedRows {
+function projectRows(
+  { x, y, rowCount, problem }: StandardisedRows,
+  free: readonly number[],
+  held: readonly number[],
+): ProjectedRows {
   const column = (at: number): Float64Array => x.slice(at * rowCount, (at + 1) * rowCount);
   const data = new Float64Array(free.length * rowCount);
   free.forEach((at, index) => data.set(column(at), index * rowCount));
   const qr = factorise(data, rowCount, free.length);
-  if (qr.diagonal.length < free.length || qr.diagonal.some((value) => Math.abs(value) <= 1e-12 * Math.sqrt(problem.weightSum))) throw dependentError();
+  if (
+    qr.diagonal.length < free.length ||
+    qr.diagonal.some((value) => Math.abs(value) <= 1e-12 * Math.sqrt(problem.weightSum))
+  )
+    throw dependentError();
   const rows = rowCount - free.length;
   const below = new Float64Array(rows * held.length);
   const top = held.map((at, index) => {
@@ -82,15 +93,25 @@ function projectRows({ x, y, rowCount, problem }: StandardisedRows, free: readon
 }
 
 /** Xᵀ vector / n. */
-export function crossWith(x: Float64Array, rows: number, columns: number, vector: Float64Array, weightSum: number): Float64Array {
+export function crossWith(
+  x: Float64Array,
+  rows: number,
+  columns: number,
+  vector: Float64Array,
+  weightSum: number,
+): Float64Array {
   const cross = new Float64Array(columns);
-  for (let column = 0; column < columns; column += 1) cross[column] = dotAt(x, column * rows, vector, 0, rows) / weightSum;
+  for (let column = 0; column < columns; column += 1)
+    cross[column] = dotAt(x, column * rows, vector, 0, rows) / weightSum;
   return cross;
 }
 
 /** Σ first[a + k] second[b + k] over `length`, in four running sums. */
 export function dotAt(first: Float64Array, a: number, second: Float64Array, b: number, length: number): number {
-  let s0 = 0, s1 = 0, s2 = 0, s3 = 0;
+  let s0 = 0,
+    s1 = 0,
+    s2 = 0,
+    s3 = 0;
   let k = 0;
   for (; k + 3 < length; k += 4) {
     s0 += first[a + k] * second[b + k];
