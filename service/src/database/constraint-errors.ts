@@ -1,7 +1,8 @@
 /** The columns of a broken UNIQUE constraint (`table.column`), or none when the error is another one. */
 export function uniqueColumnsOf(error: unknown): readonly string[] {
-  if (!(error instanceof Error)) return [];
-  const match = /UNIQUE constraint failed: ([\w., ]+)/.exec(error.message);
+  // By its shape: the driver is loaded once a process, so under jest its errors may stem from another file's Error.
+  const { message } = (error ?? {}) as { readonly message?: unknown };
+  const match = /UNIQUE constraint failed: ([\w., ]+)/.exec(typeof message === 'string' ? message : '');
   return match ? match[1].split(', ') : [];
 }
 
