@@ -18,10 +18,14 @@ export interface RecordsOptions {
 }
 
 /** Builds what brings records in and reads them. */
-export function composeRecords(options: RecordsOptions): RecordsService {
+export function composeRecords(options: RecordsOptions): {
+  readonly records: RecordsService;
+  readonly keptFiles: KeptFiles;
+} {
   const { database, journal, clock, maximumFileBytes, threadArguments } = options;
-  const records = new RecordsStore(database);
-  const files = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
-  const importer = new RevisionImporter({ database, records, files, clock, threadArguments });
-  return new RecordsService({ records, files, journal, clock, maximumFileBytes, importer });
+  const store = new RecordsStore(database);
+  const keptFiles = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
+  const importer = new RevisionImporter({ database, records: store, files: keptFiles, clock, threadArguments });
+  const records = new RecordsService({ records: store, files: keptFiles, journal, clock, maximumFileBytes, importer });
+  return { records, keptFiles };
 }

@@ -22,6 +22,7 @@ import { KeysStore } from './keys/keys-store';
 import { Schedule } from './jobs/schedule';
 import { sweepInvitations } from './jobs/sweep-invitations';
 import { sweepSignInAttempts } from './jobs/sweep-sign-in-attempts';
+import { sweepUploads } from './jobs/sweep-uploads';
 import { JournalService } from './journal/journal-service';
 import { JournalStore } from './journal/journal-store';
 import { MailService, openTransport } from './mail/mail-service';
@@ -104,7 +105,13 @@ export function compose(options: ComposeOptions): Services {
   const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
   const journalService = new JournalService(new JournalStore(database));
-  const schedule = new Schedule([sweepInvitations(invitations, clock), sweepSignInAttempts(throttle)], log);
+  const { records, keptFiles } = composeRecords({
+    ...{ database, journal, clock, config },
+    maximumFileBytes: options.maximumFileBytes ?? ordinaryFileBytes,
+    threadArguments: options.fitThreadArguments ?? [],
+  });
+  const sweeps = [sweepInvitations(invitations, clock), sweepSignInAttempts(throttle), sweepUploads(keptFiles)];
+  const schedule = new Schedule(sweeps, log);
   const partners = new PartnersStore(database);
   const sites = new SitesStore(database);
   const keys = new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock });
@@ -130,11 +137,7 @@ export function compose(options: ComposeOptions): Services {
     keys,
     fits,
     fitRunner,
-    records: composeRecords({
-      ...{ database, journal, clock, config },
-      maximumFileBytes: options.maximumFileBytes ?? ordinaryFileBytes,
-      threadArguments: options.fitThreadArguments ?? [],
-    }),
+    records,
     ...composeEditions({ database, editions, fits: fitsStore, estimators, journal, clock }),
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),

@@ -5,7 +5,7 @@ import type { Express } from 'express';
 import { pino } from 'pino';
 import supertest from 'supertest';
 import { createApp } from '../../service/src/app';
-import { compose, databasePathOf, type Services } from '../../service/src/compose';
+import { compose, databasePathOf, type ComposeOptions, type Services } from '../../service/src/compose';
 import { readConfig } from '../../service/src/config';
 import { newId } from '../../service/src/database/new-id';
 import { hashPassword } from '../../service/src/people/password';
@@ -61,12 +61,12 @@ export interface TestAgent {
 let passwordHash: Promise<string> | undefined;
 
 /** The service over a fresh copy of the migrated template, every answer checked against the contract. */
-export async function startTestService(): Promise<TestService> {
+export async function startTestService(options: Pick<ComposeOptions, 'maximumFileBytes'> = {}): Promise<TestService> {
   const folder = mkdtempSync(join(tmpdir(), 'tarebeam-api-'));
   const config = readConfig({ DATA_DIR: folder, DEMO: 'off', SESSION_SECRET: 'a secret that only the tests know of' });
   await copyTemplateDatabase(databasePathOf(config));
   const clock = new TestClock();
-  const services = compose({ config, log: pino({ level: 'silent' }), clock, validateAnswers: true, sessionCleanupMs: 0, fitThreadArguments });
+  const services = compose({ config, log: pino({ level: 'silent' }), clock, validateAnswers: true, sessionCleanupMs: 0, fitThreadArguments, ...options });
   const app = createApp(services);
 
   async function addPerson(roles: readonly Role[], options: { name?: string; partnerId?: string } = {}): Promise<TestPerson> {

@@ -1,3 +1,5 @@
+import type { DistinctCounter } from './distinct-counter';
+
 /** What `record_columns` holds about a column beside its name and kind. */
 export interface ColumnStatistics {
   readonly missingCount: number;
@@ -47,25 +49,12 @@ export function histogramOf(values: Float64Array, minimum: number, maximum: numb
 /** Sums of the very largest numbers overflow; then there is no figure to give. */
 const finite = (value: number): number | null => (Number.isFinite(value) ? value : null);
 
-function countDistinct(values: Float64Array): number {
-  const sorted = values.slice().sort();
-  let distinct = 0;
-  let previous = NaN;
-  for (const value of sorted) {
-    // NaN sorts last.
-    if (value !== value) break;
-    if (value !== previous) distinct++;
-    previous = value;
-  }
-  return distinct;
-}
-
 /**
  * Of n readings (NaN is missing): mean = Σx / n and standard deviation = √(Σ(x − mean)² / n), in two passes, the
  * second corrected by the sum of the deviations (Chan, Golub, LeVeque 1983, "Algorithms for computing the sample
- * variance", eq. 1.7). Cost: n log n for the distinct count, else a few passes.
+ * variance", eq. 1.7). Cost: a few passes.
  */
-export function statisticsOf(values: Float64Array, distinctLimit: number): ColumnStatistics {
+export function statisticsOf(values: Float64Array, distinct: DistinctCounter): ColumnStatistics {
   let count = 0;
   let sum = 0;
   let minimum = Infinity;
@@ -87,10 +76,9 @@ export function statisticsOf(values: Float64Array, distinctLimit: number): Colum
     squares += (value - mean) * (value - mean);
     deviations += value - mean;
   }
-  const distinct = countDistinct(values);
   return {
     missingCount,
-    distinctCount: distinct > distinctLimit ? null : distinct,
+    distinctCount: distinct.count(values),
     minimum,
     maximum,
     mean: finite(mean + deviations / count),

@@ -1,6 +1,5 @@
 import {
   cellsToCodes,
-  cellsToNumbers,
   cellsToTexts,
   codesToCells,
   numbersToCells,
@@ -10,6 +9,7 @@ import {
 import { decodeWords } from './cell-stores';
 import type { BuiltBlock, ColumnBuilder } from './column-builder';
 import { statisticsOf, statisticsOfLevels, type ColumnStatistics } from './column-statistics';
+import { DistinctCounter } from './distinct-counter';
 import { unitOf } from './header';
 import { maximumDistinct, maximumLevelLength, maximumLevels } from './limits';
 import type { SpilledCells, SpillFile } from './spill-file';
@@ -34,9 +34,14 @@ export interface FinishedColumn {
 /** With no more levels than this a column of words is a category however few rows there are. */
 const certainLevels = 50;
 
-export function finishColumn(builder: ColumnBuilder): FinishedColumn {
+export function finishColumns(builders: readonly ColumnBuilder[], rowCount: number): FinishedColumn[] {
+  const distinct = new DistinctCounter(rowCount, maximumDistinct);
+  return builders.map((builder) => finishColumn(builder, distinct));
+}
+
+function finishColumn(builder: ColumnBuilder, distinct: DistinctCounter): FinishedColumn {
   const { form } = builder;
-  if (form.kind === 'numeric' || form.kind === 'date') return finishNumbers(builder, form.kind);
+  if (form.kind === 'numeric' || form.kind === 'date') return finishNumbers(builder, form.kind, distinct);
   return form.kind === 'nothing' ? finishTexts(builder) : finishWords(builder);
 }
 
@@ -47,18 +52,18 @@ function placeBlocks(builder: ColumnBuilder, missing: (rowCount: number) => Uint
   );
 }
 
-function finishNumbers(builder: ColumnBuilder, kind: 'numeric' | 'date'): FinishedColumn {
+function finishNumbers(builder: ColumnBuilder, kind: 'numeric' | 'date', distinct: DistinctCounter): FinishedColumn {
   const { name, position, spill } = builder.options;
   const blocks = placeBlocks(builder, (rowCount) => numbersToCells(new Float64Array(rowCount).fill(NaN)));
   const values = new Float64Array(builder.blocks.reduce((total, block) => total + block.rowCount, 0));
+  const bytes = new Uint8Array(values.buffer);
   let at = 0;
   for (const place of blocks) {
-    const block = cellsToNumbers(spill.read(place));
-    values.set(block, at);
-    at += block.length;
+    spill.readInto(bytes.subarray(at), place);
+    at += place.length;
   }
   const unit = kind === 'numeric' ? unitOf(name) : null;
-  return { name, position, kind, unit, statistics: statisticsOf(values, maximumDistinct), levels: [], blocks };
+  return { name, position, kind, unit, statistics: statisticsOf(values, distinct), levels: [], blocks };
 }
 
 function countCodes(builder: ColumnBuilder): { readonly counts: number[]; readonly missing: number } {

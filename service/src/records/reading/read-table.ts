@@ -3,7 +3,7 @@ import { blockRowsFor } from '../cell-blocks';
 import { ColumnBuilder } from './column-builder';
 import { fileMarkOf, formOf, likelyFormOf, sameForm, type CellForm } from './column-evidence';
 import { detectFormat, type FileFormat } from './file-format';
-import { finishColumn, type FinishedColumn } from './finished-column';
+import { finishColumns, type FinishedColumn } from './finished-column';
 import { readHeader } from './header';
 import { guessRows, sampleBytes } from './limits';
 import type { DecimalMark } from './number-cell';
@@ -153,7 +153,7 @@ export async function readTable(path: string, spill: SpillFile): Promise<TableRe
   return {
     rowCount: pass.rowCount,
     blockRowCounts: pass.blockRowCounts,
-    columns: builders.map(finishColumn),
+    columns: finishColumns(builders, pass.rowCount),
     format,
     decimal,
   };

@@ -24,14 +24,19 @@ export class SpillFile {
     return place;
   }
 
-  read({ offset, length }: SpilledCells): Buffer {
-    const cells = Buffer.allocUnsafeSlow(length);
+  read(place: SpilledCells): Buffer {
+    const cells = Buffer.allocUnsafeSlow(place.length);
+    this.readInto(cells, place);
+    return cells;
+  }
+
+  /** Fills the beginning of `target`. */
+  readInto(target: Uint8Array, { offset, length }: SpilledCells): void {
     for (let at = 0; at < length;) {
-      const got = readSync(this.descriptor, cells, at, length - at, offset + at);
+      const got = readSync(this.descriptor, target, at, length - at, offset + at);
       if (got === 0) throw new Error('The spill file ends too early.');
       at += got;
     }
-    return cells;
   }
 
   close(): void {
