@@ -44,9 +44,9 @@ const knownFiles: readonly KnownFile[] = [
   },
   { begins: [bytes('SQLite format')], what: 'a database', remedy: 'Export the table as a CSV file.' },
   {
-    begins: [[0x1f, 0x8b], bytes('BZh'), [0xfd, 0x37, 0x7a], [0x28, 0xb5, 0x2f, 0xfd], bytes('7z')],
+    begins: [bytes('BZh'), [0xfd, 0x37, 0x7a], [0x28, 0xb5, 0x2f, 0xfd], bytes('7z')],
     what: 'a compressed file',
-    remedy: 'Unpack it first and send the CSV file.',
+    remedy: 'Unpack it first, or pack it with gzip.',
   },
 ];
 

@@ -1,12 +1,10 @@
-import { createReadStream } from 'node:fs';
 import { pipeline } from 'node:stream/promises';
 import { parse, type CsvError, type Info, type Parser } from 'csv-parse';
 import { checkedText } from './checked-text';
+import { fileBytes } from './file-bytes';
 import type { FileFormat } from './file-format';
 import { maximumRowBytes } from './limits';
 import { TableProblem } from './table-problem';
-
-const chunkBytes = 256 * 1024;
 
 const isCsvError = (error: unknown): error is CsvError & Info =>
   error instanceof Error && /^(CSV_|INVALID_)/.test(String((error as { code?: unknown }).code));
@@ -47,7 +45,7 @@ async function run(path: string, format: FileFormat, parser: Parser, onRow: (row
       parser.destroy(error instanceof Error ? error : new Error(String(error)));
     }
   });
-  const text = checkedText(createReadStream(path, { highWaterMark: chunkBytes }), format);
+  const text = checkedText(fileBytes(path), format);
   await pipeline(
     guardRowLength(text, () => rows),
     parser,

@@ -1,6 +1,7 @@
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { gzipSync } from 'node:zlib';
 import { cellsToCodes, cellsToNumbers, cellsToTexts } from '../cell-blocks';
 import { dateText } from './date-cell';
 import { readTable } from './read-table';
@@ -163,6 +164,20 @@ describe('reading a table', () => {
     const bad = Buffer.concat([Buffer.from(good), Buffer.from([0x31, 0x2c, 0xe9, 0x0a])]);
     expect((await read(good)).rowCount).toBe(60_000);
     await expect(read(bad)).rejects.toMatchObject({ code: 'file-encoding', line: 60_002 });
+  });
+
+  it('unpacks gzip, and says when the packed file breaks off', async () => {
+    const lines = Array.from({ length: 30_000 }, (_, row) => `${row},${(row * 7919) % 10_007}`);
+    const packed = gzipSync(`a,b\n${lines.join('\n')}\n`);
+    expect((await read(packed)).rowCount).toBe(30_000);
+    await expect(read(packed.subarray(0, packed.length - 500))).rejects.toMatchObject({
+      code: 'file-not-table',
+      detail: expect.stringContaining('breaks off'),
+    });
+    await expect(read(packed.subarray(0, 20))).rejects.toMatchObject({ code: 'file-not-table' });
+    await expect(read(gzipSync(Buffer.from([0x50, 0x4b, 3, 4, 20, 0])))).rejects.toMatchObject({
+      code: 'file-not-table',
+    });
   });
 
   it('says on which line a row is too short or too long', async () => {

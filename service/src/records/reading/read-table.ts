@@ -1,7 +1,7 @@
-import { openSync, readSync, closeSync } from 'node:fs';
 import { blockRowsFor } from '../cell-blocks';
 import { ColumnBuilder } from './column-builder';
 import { fileMarkOf, formOf, likelyFormOf, sameForm, type CellForm } from './column-evidence';
+import { readSample } from './file-bytes';
 import { detectFormat, type FileFormat } from './file-format';
 import { finishColumns, type FinishedColumn } from './finished-column';
 import { readHeader } from './header';
@@ -23,17 +23,6 @@ export interface TableReading {
 /** Cells of the rows that a first guess rests on, and of a batch: bounds on what is held as text. */
 const guessCells = 150_000;
 const batchCells = 8192;
-
-function readSample(path: string): { readonly sample: Buffer; readonly complete: boolean } {
-  const descriptor = openSync(path, 'r');
-  try {
-    const sample = Buffer.alloc(sampleBytes);
-    const length = readSync(descriptor, sample, 0, sampleBytes, 0);
-    return { sample: sample.subarray(0, length), complete: length < sampleBytes };
-  } finally {
-    closeSync(descriptor);
-  }
-}
 
 /** One pass over the file into blocks of cells. */
 class TablePass {
@@ -134,7 +123,7 @@ async function runPass(path: string, pass: TablePass, format: FileFormat): Promi
  * but for one column at a time while its statistics are taken.
  */
 export async function readTable(path: string, spill: SpillFile): Promise<TableReading> {
-  const { sample, complete } = readSample(path);
+  const { sample, complete } = await readSample(path, sampleBytes);
   const format = detectFormat(sample, complete);
   const pass = new TablePass(format, spill);
   await runPass(path, pass, format);
