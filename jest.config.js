@@ -14,6 +14,8 @@ const angular = {
 };
 
 module.exports = {
+  // One scrypt hash takes half a second, several while two workers are busy.
+  testTimeout: 30_000,
   projects: [
     { displayName: 'service', roots: ['<rootDir>/service'], ...node },
     { displayName: 'numerics', roots: ['<rootDir>/test/numerics'], ...node },

@@ -23,7 +23,7 @@ export function csrfGuard(secret: string, secure: boolean): CsrfGuard {
     getCsrfTokenFromRequest: (request) => request.get('x-xsrf-token'),
   });
   return {
-    issueToken: (request, response) => guard.generateCsrfToken(request, response, { overwrite: true }),
+    issueToken: (request, response) => guard.generateCsrfToken(request, response, { overwrite: false, validateOnReuse: false }),
     requireToken: guard.doubleCsrfProtection,
   };
 }
