@@ -4,9 +4,9 @@
  */
 const NARROW = 0.34;
 const WIDE = 0.92;
-const CAPITAL = 0.71;
-const FIGURE = 0.62;
-const OTHER = 0.57;
+const CAPITAL = 0.72;
+const FIGURE = 0.63;
+const OTHER = 0.59;
 
 export function textWidth(text: string, fontSize: number): number {
   return [...text].reduce((sum, character) => sum + widthOf(character), 0) * fontSize;
@@ -14,7 +14,8 @@ export function textWidth(text: string, fontSize: number): number {
 
 /** Cut to fit, with an ellipsis; at least one character stays. */
 export function shortenTo(text: string, width: number, fontSize: number): string {
-  if (textWidth(text, fontSize) <= width) {
+  // The scale may have been chosen so that this very label just fits; that must not fail by a rounding error.
+  if (textWidth(text, fontSize) <= width + 0.01) {
     return text;
   }
   const characters = [...text];

@@ -1,4 +1,4 @@
-import { printAlone } from './print-alone';
+import { documentRules, printAlone } from './print-alone';
 
 function part(): HTMLElement {
   const element = document.createElement('div');
@@ -53,5 +53,13 @@ describe('printAlone', () => {
     expect(element.querySelector('details')?.open).toBe(false);
     expect(element.querySelector('.no-print')).not.toBeNull();
     expect(element.querySelector('iframe')?.getAttribute('aria-hidden')).toBe('true');
+  });
+});
+
+describe('documentRules', () => {
+  it('turns the host into the body, and keeps the condition under which a rule holds', () => {
+    expect(documentRules(':host { color: red; } :host([hidden]) { display: none; } .a { color: red; }')).toBe(
+      'body { color: red; } body[hidden] { display: none; } .a { color: red; }',
+    );
   });
 });

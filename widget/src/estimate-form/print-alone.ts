@@ -52,7 +52,12 @@ function adoptRules(sheet: Document, rules: string): void {
   const constructor = sheet.defaultView?.CSSStyleSheet;
   if (constructor && 'adoptedStyleSheets' in sheet) {
     const styles = new constructor();
-    styles.replaceSync(rules.replace(/:host\(([^)]*)\)/g, 'body').replace(/:host/g, 'body'));
+    styles.replaceSync(documentRules(rules));
     sheet.adoptedStyleSheets = [styles];
   }
+}
+
+/** What a shadow root says about its host, a document says about its body. */
+export function documentRules(rules: string): string {
+  return rules.replace(/:host\(([^)]*)\)/g, 'body$1').replace(/:host/g, 'body');
 }
