@@ -182,3 +182,11 @@ describe('a formula', () => {
     expect(at(2) - at(1)).toBeCloseTo(at(4) - at(3), 9);
   });
 });
+
+describe('a case beyond all bounds', () => {
+  it('is refused rather than answered with infinity', () => {
+    const at = (length: number): number => evaluateFormula(formula, { ...caseInputs, length }).median;
+    const rising = at(31) > at(30) ? 1e9 : -1e9;
+    expect(() => at(rising)).toThrow(expect.objectContaining({ code: 'input-not-suitable' }));
+  });
+});

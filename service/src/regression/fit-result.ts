@@ -64,7 +64,7 @@ function penaltyOf({ context, lambda, part, solution, choice, plan }: FinishedFi
   return {
     lambda,
     lambdaSum,
-    priorSd: lambdaSum > 0 && context.settings.mixing < 1 ? Math.sqrt(variance / lambdaSum) : null,
+    priorSd: lambdaSum > 0 && context.settings.mixing === 0 ? Math.sqrt(variance / lambdaSum) : null,
     effectiveDegreesOfFreedom: solution.degreesOfFreedom[choice.at],
     choices: choice.choices,
   };

@@ -17,7 +17,7 @@ export interface FitPenalty {
   readonly lambda: number;
   /** λ·n: the textbook's "sum of squares + λ‖w‖²" on standardised inputs. */
   readonly lambdaSum: number;
-  /** γ = √(σ²/(nλ)); null when λ is 0 (a flat prior). */
+  /** γ = √(σ²/(nλ)), ridge only; null when λ is 0 (a flat prior) or the penalty is not a square. */
   readonly priorSd: number | null;
   /** Without the intercept. */
   readonly effectiveDegreesOfFreedom: number;

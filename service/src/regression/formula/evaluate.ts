@@ -1,3 +1,4 @@
+import { RegressionError } from '../errors';
 import { cvPlusInterval } from './cv-plus-interval';
 import type { Formula, FormulaInput } from './formula';
 import { leverageAt } from './leverage';
@@ -71,6 +72,7 @@ export function evaluateFormula(formula: Formula, inputs: CaseInputs): Evaluatio
   }
   const { logged, smearing } = { logged: formula.target.transform === 'log', smearing: formula.target.smearing };
   const median = logged ? Math.exp(additive) : additive;
+  refuseOverflow(formula, median * smearing);
   const gaussian = gaussianInterval(formula, additive, leverage);
   const ofFolds = formula.interval.folds.length > 0 ? foldInterval(formula, readings, flat) : null;
   return {
@@ -83,6 +85,14 @@ export function evaluateFormula(formula: Formula, inputs: CaseInputs): Evaluatio
     contributions,
     flags,
   };
+}
+
+function refuseOverflow(formula: Formula, value: number): void {
+  if (Number.isFinite(value)) return;
+  throw new RegressionError(
+    'input-not-suitable',
+    `The case lies so far outside the records that ${formula.target.name} has no finite estimate.`,
+  );
 }
 
 function contributionOf(input: FormulaInput, columns: Float64Array): Contribution {

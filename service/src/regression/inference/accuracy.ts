@@ -9,11 +9,16 @@ export interface HeldOutAccuracy {
   readonly r2: number;
 }
 
+/** exp(345) squared is still finite: a wild held-out estimate must not turn an error into infinity. */
+const MOST_LOGARITHM = 345;
+
 /** Held-out estimates in target units: the mean as it is shown, smeared by the fold's own factor when the target is logged. */
 export function shownEstimates(context: FitContext, heldOut: HeldOut): Float64Array {
   if (context.specification.target.transform !== 'log') return heldOut.estimates;
   return heldOut.estimates.map((value, record) =>
-    heldOut.foldOf[record] < 0 ? NaN : Math.exp(value) * heldOut.outcomes[heldOut.foldOf[record]].smearing,
+    heldOut.foldOf[record] < 0
+      ? NaN
+      : Math.exp(Math.min(value, MOST_LOGARITHM)) * heldOut.outcomes[heldOut.foldOf[record]].smearing,
   );
 }
 

@@ -55,6 +55,9 @@ export function holdOut(context: FitContext, models: readonly ColumnModel[]): He
 
 type Design = ReturnType<typeof designForFold>;
 
+/** A residual of the logarithm beyond this would overflow the mean. */
+const MOST_RESIDUAL = 300;
+
 /** Σ w exp(residual) / Σ w (Duan 1983). */
 export function smearingOf(
   context: FitContext,
@@ -69,7 +72,7 @@ export function smearingOf(
     const { start, end } = spanOf(plan, segment);
     weightedResiduals(design, model, start, end).forEach((value, offset) => {
       const weight = read.weights[plan.order[start + offset]];
-      sum += weight * Math.exp(value / Math.sqrt(weight));
+      sum += weight * Math.exp(Math.min(value / Math.sqrt(weight), MOST_RESIDUAL));
       weightSum += weight;
     });
   }

@@ -4,7 +4,8 @@ import type { Fold, FoldPlan } from './folds';
 
 /**
  * Forward in time: the records in time order are cut into folds + 1 blocks of nearly equal size, never inside one moment;
- * block k is held out from a fit on the blocks before it, less the records closer than `gap` to its first moment.
+ * block k is held out from a fit on the blocks before it, less the records of the `gap` before its first moment (from
+ * start − gap on).
  */
 export function forwardPlan(times: Float64Array, validation: ResolvedValidation): FoldPlan {
   const order = Int32Array.from(times, (_, record) => record).sort(
