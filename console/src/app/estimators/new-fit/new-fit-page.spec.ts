@@ -58,6 +58,20 @@ describe('the new fit page', () => {
     expect(field('Record set').tagName).toBe('SELECT');
   });
 
+  it('takes the records along that a person came from', async () => {
+    const screen = await show(NewFitPage, {
+      slug: 'refit-labour',
+      fromSet: recordSet.id,
+      fromRevision: revision.id,
+    });
+    await screen.answer('/api/estimators/refit-labour', estimator);
+    await screen.answer('/api/record-sets', { items: [recordSet], total: 1 });
+    await screen.answer(`/api/record-sets/${recordSet.id}`, { ...recordSet, revisions: [summary] });
+    await screen.answer(`/api/record-revisions/${revision.id}`, revision);
+    expect(field('Record set').value).toBe(recordSet.id);
+    expect(field('Target').tagName).toBe('SELECT');
+  });
+
   it('takes the newest revision and starts with one choice: the target', async () => {
     const screen = await ready();
     choose('Target', 'hours');

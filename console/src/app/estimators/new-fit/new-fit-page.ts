@@ -60,6 +60,9 @@ export class NewFitPage {
   private readonly injector = inject(Injector);
 
   readonly slug = input.required<string>();
+  /** Records taken along from their own sheet; from the address. */
+  readonly fromSet = input<string>();
+  readonly fromRevision = input<string>();
   private readonly summary = viewChild<ElementRef<HTMLElement>>('summary');
 
   /** What was changed on this visit; until then the draft that was kept from an earlier one stands. */
@@ -86,6 +89,10 @@ export class NewFitPage {
   });
 
   constructor() {
+    effect(() => {
+      const [recordSetId, revisionId] = [this.fromSet(), this.fromRevision()];
+      if (recordSetId && revisionId) untracked(() => this.change({ recordSetId, revisionId }));
+    });
     // The columns of a revision change the draft when they arrive; nothing else here follows from the draft.
     effect(() => {
       const revision = this.shownRevision();

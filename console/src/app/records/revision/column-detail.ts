@@ -23,7 +23,7 @@ export class ColumnDetail {
   protected readonly facts = computed(() => {
     const column = this.column();
     const inUnit = (figure: string): string => (figure === NO_FIGURE ? figure : withUnit(figure, column.unit));
-    return [
+    const facts = [
       { name: 'Kind', value: KIND_WORDS[column.kind] },
       { name: 'Missing', value: missingOf(column, this.rowCount()) },
       { name: 'Distinct values', value: distinctOf(column) },
@@ -31,6 +31,7 @@ export class ColumnDetail {
       { name: 'Mean', value: inUnit(meanOf(column)) },
       { name: 'Standard deviation', value: inUnit(spreadOf(column)) },
     ];
+    return facts.filter(({ value }) => value !== NO_FIGURE);
   });
   protected readonly bins = computed(() => {
     const { histogram, kind } = this.column();

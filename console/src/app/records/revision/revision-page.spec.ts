@@ -97,7 +97,7 @@ describe('RevisionPage', () => {
       total: 1,
     });
     const link = screen.page.querySelector('tb-start-fit a');
-    expect(link?.getAttribute('href')).toBe('/estimators/refit-labour/new-fit?recordSet=records1&revision=revision2');
+    expect(link?.getAttribute('href')).toBe('/estimators/refit-labour/new-fit?fromSet=records1&fromRevision=revision2');
   });
 
   it('sends an analyst without an estimator to name one', async () => {
