@@ -248,6 +248,12 @@ describe('the evidence', () => {
       10,
     );
     expect(result.penalty.priorSd).toBeCloseTo(Math.sqrt(evidence?.priorVariance ?? NaN), 10);
+    // Both conditions for the maximum (MacKay 1992; Bishop 2006, eqs 3.92 and 3.95), with the intercept integrated out.
+    const degrees = result.penalty.effectiveDegreesOfFreedom;
+    const lengthSquared = result.weights.reduce((sum, weight) => sum + weight.standardised ** 2, 0);
+    const residualSquares = 60 * result.accuracy.trainingRmse ** 2;
+    expect(lengthSquared / degrees / (evidence?.priorVariance ?? NaN)).toBeCloseTo(1, 10);
+    expect(residualSquares / (60 - 1 - degrees) / (evidence?.residualVariance ?? NaN)).toBeCloseTo(1, 10);
   });
 });
 

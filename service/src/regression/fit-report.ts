@@ -1,4 +1,5 @@
 import type { FinishedFit } from './fit-result';
+import { comparablePositions } from './inference/collinearity';
 import { conditionNumber } from './inference/condition';
 import type { FitReport } from './result';
 
@@ -22,13 +23,12 @@ const ROUTE_NAMES = {
 
 export function reportOf(fit: FinishedFit): FitReport {
   const { context, solution, choice, part } = fit;
-  const positions = Array.from({ length: part.problem.size }, (_, at) => at);
   return {
     route: ROUTE_NAMES[context.settings.kind][context.route],
     iterations: solution.iterations,
     converged: solution.converged && fit.foldsConverged,
     gap: solution.gaps[choice.at],
-    conditionNumber: conditionNumber(part, positions),
+    conditionNumber: conditionNumber(part, comparablePositions(part, context.design, context.read)),
     warnings: warningsOf(fit),
     recordCount: context.read.count,
     columnCount: context.design.columnCount,

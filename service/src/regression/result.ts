@@ -90,7 +90,10 @@ export interface FitReport {
   readonly converged: boolean;
   /** Relative duality gap of the chosen fit; 0 for a direct solution. */
   readonly gap: number;
-  /** Of the standardised columns that are kept: largest ÷ smallest singular value; null when it is not finite. */
+  /**
+   * Of the standardised columns that are kept, the commonest level of each category aside: largest ÷ smallest singular
+   * value; null when it is not finite.
+   */
   readonly conditionNumber: number | null;
   readonly warnings: readonly string[];
   readonly recordCount: number;

@@ -6,6 +6,8 @@ import { combineFolds, smallestError, withinOneStandardError } from '../selectio
 import { runFoldPaths } from '../selection/fold-runs';
 import type { PathAnswer } from '../selection/fold-task';
 
+const FOLD_RULES: readonly string[] = ['minimum', 'one-standard-error'];
+
 /**
  * Held-out root mean squared error (additive scale) of the whole procedure: for every fold the penalty is chosen anew by the
  * other folds among themselves, and the model without that fold at that penalty is measured on it (Stone 1974; Varma and Simon
@@ -19,6 +21,12 @@ export async function nestedError(
 ): Promise<number> {
   const { folds } = context.plan;
   const { rule } = context.specification.penalty;
+  if (!FOLD_RULES.includes(rule)) {
+    throw new RegressionError(
+      'bad-specification',
+      `The rule ${rule} does not choose by folds, so nested folds have nothing to add. Choose minimum or one-standard-error.`,
+    );
+  }
   if (context.specification.validation.scheme === 'forward' || folds.length < 3) {
     throw new RegressionError('bad-specification', 'Nested folds need at least 3 folds that are not forward in time.');
   }
