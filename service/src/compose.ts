@@ -36,6 +36,7 @@ import { PeopleService } from './people/people-service';
 import { PeopleStore } from './people/people-store';
 import { SignInService } from './people/sign-in-service';
 import { SignInThrottle } from './people/sign-in-throttle';
+import type { FindingsService } from './records/findings/findings-service';
 import type { RecordsService } from './records/records-service';
 import { Settings } from './settings/settings';
 import { SettingsService } from './settings/settings-service';
@@ -74,6 +75,7 @@ export interface Services extends EditionsRoom {
   readonly keys: KeysService;
   readonly fits: FitsService;
   readonly records: RecordsService;
+  readonly recordFindings: FindingsService;
   readonly fitRunner: FitRunner;
   readonly partners: PartnersService;
   readonly sites: SitesService;
@@ -105,8 +107,9 @@ export function compose(options: ComposeOptions): Services {
   const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
   const journalService = new JournalService(new JournalStore(database));
-  const { records, keptFiles } = composeRecords({
+  const { records, recordFindings, keptFiles } = composeRecords({
     ...{ database, journal, clock, config },
+    databasePath: databasePathOf(config),
     maximumFileBytes: options.maximumFileBytes ?? ordinaryFileBytes,
     threadArguments: options.fitThreadArguments ?? [],
   });
@@ -138,6 +141,7 @@ export function compose(options: ComposeOptions): Services {
     fits,
     fitRunner,
     records,
+    recordFindings,
     ...composeEditions({ database, editions, fits: fitsStore, estimators, journal, clock }),
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),

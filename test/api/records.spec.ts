@@ -101,6 +101,26 @@ describe('bringing in records', () => {
     });
   });
 
+  it('answers what to look at in a revision, with its rows', async () => {
+    const rows = Array.from(
+      { length: 40 },
+      (_, row) => `${row + 5},${row % 3 ? 'oak' : 'Oak'},${(row * 37) % 41},same`,
+    );
+    const { revision } = (await upload(`length,hull,count,yard\n${rows.join('\n')}\n${rows[4]}\n`, 'Findings')).body;
+    const found = await analyst.get(`/api/record-revisions/${revision.id}/findings?target=length`);
+    expect(found.status).toBe(200);
+    expect(found.body).toMatchObject({ revisionId: revision.id, target: 'length' });
+    expect(found.body.items).toEqual(
+      expect.arrayContaining([
+        expect.objectContaining({ kind: 'repeated-rows', rows: [41] }),
+        expect.objectContaining({ kind: 'levels-alike', columns: ['hull'] }),
+        expect.objectContaining({ kind: 'constant-column', columns: ['yard'] }),
+      ]),
+    );
+    const refused = await analyst.get(`/api/record-revisions/${revision.id}/findings?target=hull`);
+    expect(refused.body.code).toBe('request-invalid');
+  });
+
   it('numbers the revisions of a set and keeps the older ones', async () => {
     const set = (await upload(boats, 'Yearly')).body;
     const second = await analyst

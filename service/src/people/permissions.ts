@@ -29,6 +29,7 @@ export const permissions: Readonly<Record<DeskOperation, Access>> = {
   createRevision: analyst,
   readRevision: desk,
   listRevisionRows: desk,
+  listRevisionFindings: desk,
   readRevisionOriginal: desk,
   listEstimators: [...desk, 'partner-developer'],
   createEstimator: analyst,

@@ -5,6 +5,7 @@ import type { operations } from '../../../openapi/types/desk';
 import type { ContractRoutes } from '../http/contract-routes';
 import { pageOf } from '../http/page';
 import { personOf } from '../people/session-passport';
+import type { FindingsService } from './findings/findings-service';
 import type { RecordsService } from './records-service';
 
 /** Aborted when the client goes away before it is answered. */
@@ -16,7 +17,12 @@ function goneAway(response: Response): AbortSignal {
   return controller.signal;
 }
 
-export function mountRecords(routes: ContractRoutes<operations>, records: RecordsService): void {
+export interface RecordsRouterParts {
+  readonly records: RecordsService;
+  readonly findings: FindingsService;
+}
+
+export function mountRecords(routes: ContractRoutes<operations>, { records, findings }: RecordsRouterParts): void {
   routes.answer('listRecordSets', ({ query }) => records.list(pageOf(query)));
   routes.answer('createRecordSet', ({ request, response }) =>
     records.createFromForm(personOf(request).id, request, goneAway(response)),
@@ -27,6 +33,7 @@ export function mountRecords(routes: ContractRoutes<operations>, records: Record
   );
   routes.answer('readRevision', ({ path }) => records.readRevision(path.id));
   routes.answer('listRevisionRows', ({ path, query }) => records.listRows(path.id, pageOf(query)));
+  routes.answer('listRevisionFindings', ({ path, query }) => findings.list(path.id, query.target));
   routes.handle('readRevisionOriginal', async ({ path, response }) => {
     const { path: file, fileName, byteCount } = await records.original(path.id);
     // Always a download of plain bytes: a file that somebody sent must never be shown as a page of ours.

@@ -1,0 +1,41 @@
+export const findingKinds = [
+  'unit-mix-up',
+  'repeated-rows',
+  'nearly-repeated-rows',
+  'constant-column',
+  'levels-alike',
+  'nearly-numeric',
+  'outlying-values',
+  'columns-alike',
+  'column-combination',
+  'leakage-suspect',
+  'time-gap',
+] as const;
+export type FindingKind = (typeof findingKinds)[number];
+
+/** Something that a person should look at before a model hides it. */
+export interface Finding {
+  readonly kind: FindingKind;
+  readonly columns: readonly string[];
+  /** What was found, in a sentence. */
+  readonly message: string;
+  /** What may be done about it. */
+  readonly remedy: string;
+  /** How many rows it concerns; null when it concerns columns as a whole. */
+  readonly rowCount: number | null;
+  /** The first of these rows, counted from 1 below the header. */
+  readonly rows: readonly number[];
+}
+
+/** Rows that a finding lists. */
+export const listedRows = 100;
+
+/** From positions in the table, counted from 0. */
+export const listRows = (positions: readonly number[]): Pick<Finding, 'rowCount' | 'rows'> => ({
+  rowCount: positions.length,
+  rows: positions.slice(0, listedRows).map((position) => position + 1),
+});
+
+export const noRows: Pick<Finding, 'rowCount' | 'rows'> = { rowCount: null, rows: [] };
+
+export const rowsText = (count: number): string => (count === 1 ? '1 row' : `${count.toLocaleString('en-GB')} rows`);
