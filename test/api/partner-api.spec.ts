@@ -51,10 +51,10 @@ describe('the partner API', () => {
     });
 
     it.each([
-      ['key-missing', async () => ''],
-      ['key-malformed', async () => 'a guess of mine'],
-      ['key-malformed', async () => `${(await issue()).key.slice(0, -1)}!`],
-      ['key-refused', async () => newKeyText('partner').text],
+      ['key-missing', async (): Promise<string> => ''],
+      ['key-malformed', async (): Promise<string> => 'a guess of mine'],
+      ['key-malformed', async (): Promise<string> => `${(await issue()).key.slice(0, -1)}!`],
+      ['key-refused', async (): Promise<string> => newKeyText('partner').text],
       [
         'key-refused',
         async () => {
