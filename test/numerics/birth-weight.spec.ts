@@ -1,3 +1,7 @@
+import { resolveSpecification } from '../../service/src/regression/design/resolve-specification';
+import { allRows, prepareContext } from '../../service/src/regression/fit-context';
+import { trainingPart } from '../../service/src/regression/selection/fold-task';
+import { solvePath } from '../../service/src/regression/solvers/solve-path';
 import { fitRecords } from '../../service/src/regression/fit';
 import type { FitSpecification } from '../../service/src/regression/specification';
 import type { FitResult } from '../../service/src/regression/result';
@@ -16,6 +20,11 @@ interface Reference {
     readonly cvError: readonly number[];
     readonly cvStandardError: readonly number[];
   };
+  readonly elasticNet: {
+    readonly mixing: number;
+    readonly lambdas: readonly number[];
+    readonly standardised: readonly (readonly number[])[];
+  };
   readonly ridge: { readonly lambdas: readonly number[]; readonly standardised: readonly (readonly number[])[] };
 }
 
@@ -27,6 +36,20 @@ const records = table([
   numeric('weight', reference.weights),
   numeric('fold', reference.folds),
 ]);
+
+/** Standardised weights at every λ, in the order of the columns. */
+function solveAll(mixing: number, lambdas: readonly number[]): number[][] {
+  const resolved = resolveSpecification({
+    target: { column: 'grams', transform: 'none' },
+    inputs: [...Object.keys(reference.inputs), 'race'].map((column) => ({ column })),
+    weightColumn: 'weight',
+    method: 'lasso',
+  });
+  const context = prepareContext(records, resolved, {});
+  const part = trainingPart(context.design, 'orthogonal', allRows(context), []);
+  const solution = solvePath(part, context.design.columns, { kind: 'descent', mixing, polish: true }, lambdas);
+  return solution.weights.map((weights) => Array.from(weights));
+}
 
 async function fitAt(method: FitSpecification['method'], value: number): Promise<FitResult> {
   const { result } = await fitRecords(records, {
@@ -41,19 +64,15 @@ async function fitAt(method: FitSpecification['method'], value: number): Promise
 }
 
 describe(`birth weights with a category and weights (${reference.source.slice(0, 35)})`, () => {
-  it('gives the lasso of glmnet at every penalty, with the same active set, to 1e-6', async () => {
-    for (const [at, lambda] of reference.lasso.lambdas.entries()) {
-      if (at % 4 !== 1) continue;
-      const { weights } = await fitAt('lasso', lambda);
-      const expected = reference.lasso.standardised[at];
-      expect(
-        relativeDifference(
-          weights.map((weight) => weight.standardised),
-          expected,
-        ),
-      ).toBeLessThan(1e-6);
-      expect(weights.map((weight) => weight.standardised !== 0)).toEqual(expected.map((value) => value !== 0));
-    }
+  it.each([
+    ['lasso', 1, reference.lasso],
+    ['elastic net', reference.elasticNet.mixing, reference.elasticNet],
+  ])('gives the %s of glmnet over the whole path, with the same active sets, to 1e-6', (_, mixing, expected) => {
+    const weights = solveAll(mixing, expected.lambdas);
+    expected.standardised.forEach((standardised, at) => {
+      expect(relativeDifference(weights[at], standardised)).toBeLessThan(1e-6);
+      expect(weights[at].map((weight) => weight !== 0)).toEqual(standardised.map((value) => value !== 0));
+    });
   });
 
   it('gives the cross-validation error and its standard error of cv.glmnet to 1e-6', async () => {

@@ -1,5 +1,6 @@
 import { fitRecords } from '../../service/src/regression/fit';
 import { logEvidence } from '../../service/src/regression/inference/evidence';
+import { hatFeatures, penalisedInverse } from '../../service/src/regression/inference/hat-features';
 import { studentQuantile } from '../../service/src/regression/inference/student-t';
 import { seededRandom } from '../../service/src/regression/random';
 import type { FitResult } from '../../service/src/regression/result';
@@ -190,6 +191,25 @@ describe('the evidence', () => {
     const form = ridgeFromMoments(problem, { factors: Float64Array.of(1, 1), signs: ['any', 'any'] });
     expect(logEvidence(form, { records: 3, flat: 0 }, 0.25, 0.25 / 3)).toBeCloseTo(-4.177047701975482, 12);
     expect(Array.from(form.weights([0.25 / 3])[0])).toEqual([expect.closeTo(44 / 43, 13), expect.closeTo(24 / 43, 13)]);
+  });
+
+  it('goes with the exact posterior covariance σ²(XᵀX + nλI)⁻¹: [7/43, −4/43; −4/43, 13/129]', () => {
+    const problem = {
+      weightSum: 3,
+      size: 2,
+      kept: Int32Array.of(0, 1),
+      gram: Float64Array.of(1, 1, 1, 5 / 3),
+      cross: Float64Array.of(5 / 3, 2),
+      targetSquare: 3,
+      means: new Float64Array(2),
+      scales: Float64Array.of(1, 1),
+      targetMean: 0,
+      fills: [],
+    };
+    const features = hatFeatures(problem, { factors: Float64Array.of(1, 1), signs: ['any', 'any'] });
+    const covariance = penalisedInverse(features, 0.25 / 3).map((value) => (0.25 * value) / 3);
+    const expected = [7 / 43, -4 / 43, -4 / 43, 13 / 129];
+    expect(Array.from(covariance)).toEqual(expected.map((value) => expect.closeTo(value, 14)));
   });
 
   it('equals the numerical integral over one weight', () => {
