@@ -3,7 +3,7 @@ import express, { Router, type Response } from 'express';
 import { rootFolder } from '../root-folder';
 import { openToOtherOrigins } from './security-headers';
 
-const consoleFolder = join(rootFolder, 'dist', 'console');
+const consoleFolder = join(rootFolder, 'dist', 'console', 'browser');
 const widgetFolder = join(rootFolder, 'dist', 'widget', 'browser');
 
 /** Files whose names carry a hash never change. */
