@@ -25,7 +25,7 @@ const parts = [
   {
     name: 'console',
     sources: ['console', 'widget/src', 'openapi', 'angular.json', 'tsconfig.json', 'tsconfig.console.json'],
-    result: 'dist/console/index.html',
+    result: 'dist/console/browser/index.html',
     command: [binary('ng'), 'build', 'console'],
   },
   {
