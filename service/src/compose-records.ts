@@ -4,6 +4,7 @@ import type { Config } from './config';
 import type { Database } from './database/database';
 import type { Journal } from './journal/journal';
 import { FindingsService } from './records/findings/findings-service';
+import { MendingService } from './records/mending/mending-service';
 import { KeptFiles } from './records/kept-files';
 import { RecordsService } from './records/records-service';
 import { RecordsStore } from './records/records-store';
@@ -22,6 +23,7 @@ export interface RecordsOptions {
 export interface ComposedRecords {
   readonly records: RecordsService;
   readonly recordFindings: FindingsService;
+  readonly recordMending: MendingService;
   readonly keptFiles: KeptFiles;
 }
 
@@ -33,5 +35,15 @@ export function composeRecords(options: RecordsOptions): ComposedRecords {
   const importer = new RevisionImporter({ database, records: store, files: keptFiles, clock, threadArguments });
   const records = new RecordsService({ records: store, files: keptFiles, journal, clock, maximumFileBytes, importer });
   const recordFindings = new FindingsService({ records: store, databasePath: options.databasePath, threadArguments });
-  return { records, recordFindings, keptFiles };
+  const { databasePath } = options;
+  const recordMending = new MendingService({
+    database,
+    databasePath,
+    records: store,
+    files: keptFiles,
+    journal,
+    clock,
+    threadArguments,
+  });
+  return { records, recordFindings, recordMending, keptFiles };
 }

@@ -37,6 +37,7 @@ import { PeopleStore } from './people/people-store';
 import { SignInService } from './people/sign-in-service';
 import { SignInThrottle } from './people/sign-in-throttle';
 import type { FindingsService } from './records/findings/findings-service';
+import type { MendingService } from './records/mending/mending-service';
 import type { RecordsService } from './records/records-service';
 import { Settings } from './settings/settings';
 import { SettingsService } from './settings/settings-service';
@@ -76,6 +77,7 @@ export interface Services extends EditionsRoom {
   readonly fits: FitsService;
   readonly records: RecordsService;
   readonly recordFindings: FindingsService;
+  readonly recordMending: MendingService;
   readonly fitRunner: FitRunner;
   readonly partners: PartnersService;
   readonly sites: SitesService;
@@ -107,7 +109,7 @@ export function compose(options: ComposeOptions): Services {
   const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
   const journalService = new JournalService(new JournalStore(database));
-  const { records, recordFindings, keptFiles } = composeRecords({
+  const { records, recordFindings, recordMending, keptFiles } = composeRecords({
     ...{ database, journal, clock, config },
     databasePath: databasePathOf(config),
     maximumFileBytes: options.maximumFileBytes ?? ordinaryFileBytes,
@@ -142,6 +144,7 @@ export function compose(options: ComposeOptions): Services {
     fitRunner,
     records,
     recordFindings,
+    recordMending,
     ...composeEditions({ database, editions, fits: fitsStore, estimators, journal, clock }),
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),

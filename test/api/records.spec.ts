@@ -121,6 +121,45 @@ describe('bringing in records', () => {
     expect(refused.body.code).toBe('request-invalid');
   });
 
+  it('mends a revision into the next one, which says how, and leaves the first as it is', async () => {
+    const { id, revision } = (
+      await upload('length (m),hull,hours\n7.5,steel,10\n30,Steel,12\n9,oak,\n9,oak,\n', 'Mended')
+    ).body;
+    const steps = [
+      { kind: 'convert-unit', column: 'length (m)', factor: 0.3048, where: '[length (m)] > 20' },
+      { kind: 'map-levels', column: 'hull', levels: { Steel: 'steel' } },
+      { kind: 'drop-repeated-rows' },
+      { kind: 'derive', name: 'hours per metre', formula: 'hours / [length (m)]', unit: 'h/m' },
+    ];
+    const mended = await analyst.post(`/api/record-revisions/${revision.id}/mended-revisions`).send({ steps });
+    expect(mended.status).toBe(201);
+    expect(mended.body).toMatchObject({
+      number: 2,
+      rowCount: 3,
+      columnCount: 4,
+      sha256: revision.sha256,
+      mending: { from: revision.id, steps },
+    });
+    expect(mended.body.mending.changes[0]).toBe('Multiplied length (m) by 0.3048 in 1 row where [length (m)] > 20.');
+    const rows = await analyst.get(`/api/record-revisions/${mended.body.id}/rows`);
+    expect(rows.body.rows).toEqual([
+      [7.5, 'steel', 10, 10 / 7.5],
+      [30 * 0.3048, 'steel', 12, 12 / (30 * 0.3048)],
+      [9, 'oak', null, null],
+    ]);
+    expect((await analyst.get(`/api/record-revisions/${revision.id}`)).body).toMatchObject({
+      rowCount: 4,
+      mending: null,
+    });
+    expect((await analyst.get(`/api/record-sets/${id}`)).body.revision.number).toBe(2);
+    const kept = keptFiles();
+    const refused = await analyst
+      .post(`/api/record-revisions/${revision.id}/mended-revisions`)
+      .send({ steps: [steps[1], { kind: 'drop-rows', where: 'lenght > 2' }] });
+    expect(refused.body).toMatchObject({ code: 'request-invalid', errors: [{ pointer: '#/steps/1' }] });
+    expect(keptFiles()).toEqual(kept);
+  });
+
   it('numbers the revisions of a set and keeps the older ones', async () => {
     const set = (await upload(boats, 'Yearly')).body;
     const second = await analyst

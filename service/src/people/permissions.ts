@@ -30,6 +30,7 @@ export const permissions: Readonly<Record<DeskOperation, Access>> = {
   readRevision: desk,
   listRevisionRows: desk,
   listRevisionFindings: desk,
+  mendRevision: analyst,
   readRevisionOriginal: desk,
   listEstimators: [...desk, 'partner-developer'],
   createEstimator: analyst,

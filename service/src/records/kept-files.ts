@@ -58,6 +58,11 @@ export class KeptFiles {
     return `${file.path}.spill`;
   }
 
+  /** For cells that come from no received file. */
+  newSpillPath(): string {
+    return join(this.folder, `incoming-${newId()}.spill`);
+  }
+
   /** Gives a received file its lasting name. */
   async keep(file: ReceivedFile, name: string): Promise<void> {
     await rename(file.path, this.pathOf(name));

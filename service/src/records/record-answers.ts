@@ -21,6 +21,7 @@ export function toRevisionAnswer(
     recordSetId,
     recordSetName,
     reading: { ...reading },
+    mending: toMending(revision),
     columns: columns.map(toColumn),
   };
 }
@@ -86,4 +87,9 @@ function toColumn(column: ColumnRecord): Schemas['RecordColumn'] {
     histogram: histogram && { edges: [...histogram.edges], counts: [...histogram.counts] },
     levels: levels.map((level) => ({ ...level })),
   };
+}
+
+function toMending({ mendedFrom, mending }: RevisionRecord): Schemas['RecordRevision']['mending'] {
+  if (mendedFrom === null || mending === null) return null;
+  return { from: mendedFrom, steps: [...mending.steps], changes: [...mending.changes] };
 }

@@ -6,6 +6,7 @@ import type { ContractRoutes } from '../http/contract-routes';
 import { pageOf } from '../http/page';
 import { personOf } from '../people/session-passport';
 import type { FindingsService } from './findings/findings-service';
+import type { MendingService } from './mending/mending-service';
 import type { RecordsService } from './records-service';
 
 /** Aborted when the client goes away before it is answered. */
@@ -20,9 +21,13 @@ function goneAway(response: Response): AbortSignal {
 export interface RecordsRouterParts {
   readonly records: RecordsService;
   readonly findings: FindingsService;
+  readonly mending: MendingService;
 }
 
-export function mountRecords(routes: ContractRoutes<operations>, { records, findings }: RecordsRouterParts): void {
+export function mountRecords(
+  routes: ContractRoutes<operations>,
+  { records, findings, mending }: RecordsRouterParts,
+): void {
   routes.answer('listRecordSets', ({ query }) => records.list(pageOf(query)));
   routes.answer('createRecordSet', ({ request, response }) =>
     records.createFromForm(personOf(request).id, request, goneAway(response)),
@@ -34,6 +39,7 @@ export function mountRecords(routes: ContractRoutes<operations>, { records, find
   routes.answer('readRevision', ({ path }) => records.readRevision(path.id));
   routes.answer('listRevisionRows', ({ path, query }) => records.listRows(path.id, pageOf(query)));
   routes.answer('listRevisionFindings', ({ path, query }) => findings.list(path.id, query.target));
+  routes.answer('mendRevision', ({ path, body, request }) => mending.mend(personOf(request).id, path.id, body.steps));
   routes.handle('readRevisionOriginal', async ({ path, response }) => {
     const { path: file, fileName, byteCount } = await records.original(path.id);
     // Always a download of plain bytes: a file that somebody sent must never be shown as a page of ours.

@@ -1,6 +1,7 @@
 import type { Database } from '../database/database';
 import type { Page } from '../http/page';
 import type { ColumnKind } from './cell-blocks';
+import type { MendStep } from './mending/apply-steps';
 import type { Histogram } from './reading/column-statistics';
 import type { FinishedColumn, Level } from './reading/finished-column';
 
@@ -14,6 +15,12 @@ export interface Reading {
 export interface PersonName {
   readonly id: string;
   readonly name: string;
+}
+
+/** How a revision was made from another one. */
+export interface Mending {
+  readonly steps: readonly MendStep[];
+  readonly changes: readonly string[];
 }
 
 export interface NewRecordSet {
@@ -35,6 +42,9 @@ export interface NewRevision {
   readonly fileName: string;
   readonly originalPath: string;
   readonly reading: Reading;
+  /** The revision that was mended, and how; null when it came from a file. */
+  readonly mendedFrom: string | null;
+  readonly mending: Mending | null;
   readonly createdAt: string;
   readonly createdBy: string;
 }
@@ -73,7 +83,12 @@ export interface NewBlock {
 }
 
 type SetRow = NewRecordSet & { createdByName: string; revisionCount: number };
-type RevisionRow = Omit<NewRevision, 'reading'> & { reading: string; createdByName: string; recordSetName: string };
+type RevisionRow = Omit<NewRevision, 'reading' | 'mending'> & {
+  mending: string | null;
+  reading: string;
+  createdByName: string;
+  recordSetName: string;
+};
 type ColumnRow = Omit<ColumnRecord, 'histogram' | 'levels'> & { histogram: string | null; levels: string };
 
 export const nameKeyOf = (name: string): string => name.trim().toLowerCase();
@@ -88,7 +103,11 @@ export class RecordsStore {
   async insertRevision(revision: NewRevision): Promise<void> {
     await this.database
       .connection('recordRevisions')
-      .insert({ ...revision, reading: JSON.stringify(revision.reading) });
+      .insert({
+        ...revision,
+        reading: JSON.stringify(revision.reading),
+        mending: revision.mending && JSON.stringify(revision.mending),
+      });
   }
 
   async insertColumn(revisionId: string, column: FinishedColumn): Promise<void> {
@@ -219,6 +238,7 @@ function toRevision({ createdByName, ...row }: RevisionRow): RevisionRecord {
     ...row,
     byteCount: Number(row.byteCount),
     reading: JSON.parse(row.reading) as Reading,
+    mending: row.mending === null ? null : (JSON.parse(row.mending) as Mending),
     createdBy: { id: row.createdBy, name: createdByName },
   };
 }

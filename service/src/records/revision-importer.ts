@@ -5,8 +5,8 @@ import { newId } from '../database/new-id';
 import { readTableInThread } from './import-thread';
 import type { KeptFiles, ReceivedFile } from './kept-files';
 import type { TableReading } from './reading/read-table';
-import { SpillFile } from './reading/spill-file';
 import type { RecordsStore } from './records-store';
+import { storeCells } from './store-cells';
 
 export interface Import {
   readonly file: ReceivedFile;
@@ -78,37 +78,14 @@ export class RevisionImporter {
       columnCount: columns.length,
       fileName: given.fileName,
       originalPath: names.id,
+      mendedFrom: null,
+      mending: null,
       reading: { encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
       createdAt: timeText(clock),
       createdBy: given.personId,
     });
-    await this.storeCells(names.id, reading, files.spillPathOf(given.file));
+    await storeCells(records, names.id, reading, files.spillPathOf(given.file));
     await files.keep(given.file, names.id);
     return rowCount;
-  }
-
-  private async storeCells(
-    revisionId: string,
-    { columns, blockRowCounts }: TableReading,
-    spillPath: string,
-  ): Promise<void> {
-    const spill = new SpillFile(spillPath, 'r');
-    try {
-      for (const column of columns) {
-        await this.parts.records.insertColumn(revisionId, column);
-        for (const [block, place] of column.blocks.entries()) {
-          const cells = spill.read(place);
-          await this.parts.records.insertBlock({
-            revisionId,
-            position: column.position,
-            block,
-            rowCount: blockRowCounts[block],
-            cells,
-          });
-        }
-      }
-    } finally {
-      spill.close();
-    }
   }
 }

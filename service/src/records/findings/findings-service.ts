@@ -1,9 +1,9 @@
 import { extname, join } from 'node:path';
-import { Worker } from 'node:worker_threads';
 import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
 import { DeskError, notFound } from '../../errors';
 import type { RecordsStore } from '../records-store';
+import { answerOfThread } from '../worker-answer';
 import type { FindingsOutcome, FindingsTask } from './findings-task';
 
 export interface FindingsParts {
@@ -44,25 +44,17 @@ export class FindingsService {
     const key = JSON.stringify([revisionId, target]);
     const known = this.known.get(key);
     if (known) return known;
-    const { databasePath, threadArguments } = this.parts;
-    const searched = this.queue(() => searchInThread({ databasePath, revisionId, target }, threadArguments));
+    const searched = this.queue(() =>
+      this.searchInThread({ databasePath: this.parts.databasePath, revisionId, target }),
+    );
     this.known.set(key, searched);
     searched.catch(() => this.known.delete(key));
     const [oldest] = this.known.keys();
     if (this.known.size > remembered) this.known.delete(oldest);
     return searched;
   }
-}
 
-async function searchInThread(task: FindingsTask, threadArguments: readonly string[]): Promise<FindingsOutcome> {
-  const worker = new Worker(workerPath, { workerData: task, execArgv: [...threadArguments] });
-  try {
-    return await new Promise<FindingsOutcome>((resolve, reject) => {
-      worker.once('message', resolve);
-      worker.once('error', reject);
-      worker.once('exit', () => reject(new Error('The searching thread ended without an answer.')));
-    });
-  } finally {
-    await worker.terminate();
+  private searchInThread(task: FindingsTask): Promise<FindingsOutcome> {
+    return answerOfThread(workerPath, task, this.parts.threadArguments);
   }
 }

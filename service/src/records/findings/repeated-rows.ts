@@ -68,6 +68,9 @@ class RowHashes {
   }
 }
 
+/** Rows that repeat an earlier one in every column; positions counted from 0. */
+export const repeatedRows = (table: RecordTable): number[] => [...new RowHashes(table).repeats(table.columns).keys()];
+
 /** Rows that repeat an earlier row in everything, or in everything but one column. Cost: rows × columns². */
 export function findRepeatedRows(table: RecordTable): Finding[] {
   if (table.columns.length < fewestColumns) return [];

@@ -1,0 +1,103 @@
+import { extname, join } from 'node:path';
+import pLimit from 'p-limit';
+import type { components } from '../../../../openapi/types/desk';
+import { timeText, type Clock } from '../../clock';
+import type { Database } from '../../database/database';
+import { newId } from '../../database/new-id';
+import { DeskError, notFound } from '../../errors';
+import type { Journal } from '../../journal/journal';
+import type { KeptFiles } from '../kept-files';
+import { toRevisionAnswer } from '../record-answers';
+import type { RecordsStore, RevisionRecord } from '../records-store';
+import { storeCells } from '../store-cells';
+import { answerOfThread } from '../worker-answer';
+import type { MendStep } from './apply-steps';
+import type { MendOutcome, MendTask } from './mend-task';
+
+export interface MendingParts {
+  readonly database: Database;
+  readonly databasePath: string;
+  readonly records: RecordsStore;
+  readonly files: KeptFiles;
+  readonly journal: Journal;
+  readonly clock: Clock;
+  /** Node's own arguments for the mending thread; none when compiled. */
+  readonly threadArguments: readonly string[];
+}
+
+type Mended = Extract<MendOutcome, { kind: 'mended' }>;
+
+/** Compiled beside this file, or its TypeScript source where this file is one. */
+const workerPath = join(__dirname, `mend-worker${extname(__filename)}`);
+
+export class MendingService {
+  private readonly queue = pLimit(1);
+
+  constructor(private readonly parts: MendingParts) {}
+
+  /** A new revision of the same set, made from this one by steps that are kept with it. */
+  async mend(
+    personId: string,
+    revisionId: string,
+    steps: readonly MendStep[],
+  ): Promise<components['schemas']['RecordRevision']> {
+    const { records, files, database } = this.parts;
+    const base = await records.findRevision(revisionId);
+    if (!base) throw notFound('revision');
+    const spillPath = files.newSpillPath();
+    const id = newId();
+    try {
+      await this.queue(async () => {
+        const mended = await this.apply({ databasePath: this.parts.databasePath, revisionId, steps, spillPath });
+        await database.unitOfWork(() => this.store({ id, base, steps, personId, spillPath }, mended));
+      });
+    } finally {
+      await files.remove(spillPath);
+    }
+    const stored = await records.findRevision(id);
+    if (!stored) throw new Error('The mended revision was not stored.');
+    return toRevisionAnswer(stored, await records.columnsOf(id));
+  }
+
+  private async apply(task: MendTask): Promise<Mended> {
+    const outcome = await answerOfThread<MendOutcome>(workerPath, task, this.parts.threadArguments);
+    if (outcome.kind === 'mended') return outcome;
+    const { step, message } = outcome;
+    const errors = [{ pointer: `#/steps/${step}`, detail: message }];
+    throw new DeskError('request-invalid', `Mend step ${step + 1} and send the steps again: ${message}`, { errors });
+  }
+
+  private async store(made: NewMending, { table, changes }: Mended): Promise<void> {
+    const { records, journal, clock } = this.parts;
+    const { id, base, steps, personId } = made;
+    const { recordSetId, sha256, byteCount, fileName, originalPath, reading } = base;
+    const [newest] = await records.revisionsOf([recordSetId]);
+    const number = newest.number + 1;
+    await records.insertRevision({
+      ...{ id, recordSetId, number, sha256, byteCount, fileName, originalPath, reading },
+      rowCount: table.rowCount,
+      columnCount: table.columns.length,
+      mendedFrom: base.id,
+      mending: { steps, changes },
+      createdAt: timeText(clock),
+      createdBy: personId,
+    });
+    await storeCells(records, id, table, made.spillPath);
+    const summary = `Revision ${number} of ${base.recordSetName} was mended from revision ${base.number} in ${steps.length} steps`;
+    await journal.write({
+      actorId: personId,
+      action: 'record-revision-mended',
+      subjectKind: 'record-set',
+      subjectId: recordSetId,
+      summary,
+    });
+  }
+}
+
+interface NewMending {
+  readonly id: string;
+  readonly base: RevisionRecord;
+  readonly steps: readonly MendStep[];
+  readonly personId: string;
+  readonly spillPath: string;
+}
