@@ -192,3 +192,31 @@ describe('a case beyond all bounds', () => {
     );
   });
 });
+
+describe('a record of the fit', () => {
+  it('is estimated by the formula as it was fitted, missing readings, splines and levels included', async () => {
+    const wanted: FitSpecification = {
+      ...specification,
+      inputs: [
+        { column: 'length', transform: 'spline', knots: 5 },
+        { column: 'draught', transform: 'spline', missing: 'typical' },
+        { column: 'waterline', transform: 'square-root' },
+        { column: 'hull' },
+        { column: 'booked' },
+      ],
+    };
+    for (const method of ['ridge', 'lasso', 'least-squares'] as const) {
+      const made = await fitRecords(records, { ...wanted, method, penalty: { rule: 'minimum' } });
+      for (const point of made.result.diagnostics.residuals.slice(0, 100)) {
+        const given = Object.fromEntries(
+          records.columns.map((column) => {
+            const value =
+              column.kind === 'category' ? column.levels[column.codes[point.row]] : column.values[point.row];
+            return [column.name, typeof value === 'number' && Number.isNaN(value) ? null : value];
+          }),
+        );
+        expect(Math.log(evaluateFormula(made.formula, given).median)).toBeCloseTo(point.fitted, 9);
+      }
+    }
+  });
+});

@@ -131,18 +131,36 @@ function commonestLevel(readings: InputReadings, weights: Float64Array): number 
 /** Writes the raw columns; missing readings become NaN, which standardising then fills with the column's mean. */
 function writeInput(readings: InputReadings, layout: InputLayout, order: Int32Array, data: Float64Array): void {
   const rows = order.length;
-  const width = layout.columns.length - (readings.missingCount > 0 ? 1 : 0);
-  for (let position = 0; position < rows; position += 1) {
-    const record = order[position];
-    const start = layout.first * rows + position;
-    if (readings.kind === 'category') {
-      const code = readings.codes[record];
-      for (let column = 0; column < width; column += 1) data[start + column * rows] = code === column ? 1 : 0;
-    } else if (layout.knots.length > 0) {
-      const basis = splineColumns(readings.recorded[record], layout.knots);
-      for (let column = 0; column < width; column += 1) data[start + column * rows] = basis[column] ?? 0;
-    } else data[start] = readings.values[record];
-    if (readings.missingCount > 0) data[start + width * rows] = isMissing(readings, record) ? 1 : 0;
+  const marked = readings.missingCount > 0;
+  const columns = layout.columns.map((_, at) =>
+    data.subarray((layout.first + at) * rows, (layout.first + at + 1) * rows),
+  );
+  const own = marked ? columns.slice(0, -1) : columns;
+  if (readings.kind === 'category') own.forEach((column, level) => writeLevel(column, level, readings.codes, order));
+  else if (layout.knots.length > 0) writeSpline(own, readings.recorded, layout.knots, order);
+  else for (let position = 0; position < rows; position += 1) own[0][position] = readings.values[order[position]];
+  if (!marked) return;
+  const indicator = columns[columns.length - 1];
+  for (let position = 0; position < rows; position += 1)
+    indicator[position] = isMissing(readings, order[position]) ? 1 : 0;
+}
+
+function writeLevel(column: Float64Array, level: number, codes: Int32Array, order: Int32Array): void {
+  for (let position = 0; position < column.length; position += 1)
+    column[position] = codes[order[position]] === level ? 1 : 0;
+}
+
+/** A missing reading is missing in every basis column; columns beyond the knots stay 0. */
+function writeSpline(
+  columns: readonly Float64Array[],
+  recorded: Float64Array,
+  knots: readonly number[],
+  order: Int32Array,
+): void {
+  for (let position = 0; position < order.length; position += 1) {
+    const reading = recorded[order[position]];
+    const basis = Number.isNaN(reading) ? columns.map(() => NaN) : splineColumns(reading, knots);
+    for (let at = 0; at < columns.length; at += 1) columns[at][position] = basis[at] ?? 0;
   }
 }
 

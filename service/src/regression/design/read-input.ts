@@ -42,16 +42,17 @@ function readNumbers(column: RecordColumn, kind: InputKind, input: ResolvedInput
   let missingCount = 0;
   for (let at = 0; at < recorded.length; at += 1) {
     const value = recorded[at];
-    if (Number.isNaN(value)) {
-      missingCount += 1;
-      refuseMissing(input, rows[at]);
-    } else if (!Number.isFinite(value)) throw notFinite(input.column, rows[at]);
-    else refuseTransform(input, value, rows[at]);
+    // Finite less itself is 0; NaN and infinity are not.
+    if (value - value === 0) continue;
+    if (!Number.isNaN(value)) throw notFinite(input.column, rows[at]);
+    missingCount += 1;
+    refuseMissing(input, rows[at]);
   }
   if (missingCount === recorded.length) {
     throw new RegressionError('no-usable-input', `${input.column} is missing in every record.`, input.column);
   }
   const plain = input.transform === 'none' || input.transform === 'spline';
+  if (!plain) recorded.forEach((value, at) => refuseTransform(input, value, rows[at]));
   const values = plain ? recorded : recorded.map(transformOf(input.transform));
   return { input, kind, unit: unitOf(column), values, recorded, codes: new Int32Array(0), levels: [], missingCount };
 }
@@ -66,8 +67,8 @@ function refuseMissing(input: ResolvedInput, row: number): void {
 }
 
 function refuseTransform(input: ResolvedInput, value: number, row: number): void {
-  const possible = input.transform === 'log' ? value > 0 : input.transform === 'square-root' ? value >= 0 : true;
-  if (possible) return;
+  const possible = input.transform === 'log' ? value > 0 : value >= 0;
+  if (possible || Number.isNaN(value)) return;
   throw new RegressionError(
     'transform-not-possible',
     `${input.column} is ${value} in row ${row + 1}: no ${input.transform} of it exists.`,

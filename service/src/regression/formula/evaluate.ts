@@ -48,7 +48,7 @@ export interface Evaluation {
 }
 
 /** A case this much above the records' largest leverage is flagged; the margin covers the rounding of the packed matrix. */
-const LEVERAGE_MARGIN = 1 + 1e-6;
+const LEVERAGE_MARGIN = 1 + 1e-5;
 
 /**
  * Evaluates one case: additive value = typical + Σ contributions. Deterministic: the same formula and case give the same bits.

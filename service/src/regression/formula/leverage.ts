@@ -15,9 +15,9 @@ export function leverageAt(leverage: FormulaLeverage, columns: ArrayLike<number>
   return Math.max(0, total);
 }
 
-const DIGITS = 9;
+const DIGITS = 6;
 
-/** Packs a symmetric matrix, rounded to nine digits: leverage decides a flag and a width, not a value. */
+/** Packs a symmetric matrix, rounded to six digits: leverage decides a flag and a width, not a value. */
 export function packLower(matrix: Float64Array, size: number): number[] {
   const packed: number[] = [];
   for (let row = 0; row < size; row += 1)

@@ -17,13 +17,16 @@ const MOST_SORTED = 20000;
 
 /** The present readings in ascending order: all of them, or an even selection of 20,000. */
 export function sortedSample(readings: Float64Array): Float64Array {
-  const step = Math.max(1, readings.length / MOST_SORTED);
-  const sample: number[] = [];
-  for (let place = 0; Math.floor(place) < readings.length; place += step) {
-    const value = readings[Math.floor(place)];
-    if (!Number.isNaN(value)) sample.push(value);
+  const most = Math.min(readings.length, MOST_SORTED);
+  const sample = new Float64Array(most);
+  let count = 0;
+  for (let at = 0; at < most; at += 1) {
+    const value = readings[Math.floor((at * readings.length) / most)];
+    if (Number.isNaN(value)) continue;
+    sample[count] = value;
+    count += 1;
   }
   // A column that is present only where the selection did not look.
-  if (sample.length === 0) return readings.filter((value) => !Number.isNaN(value)).sort();
-  return Float64Array.from(sample).sort();
+  if (count === 0) return readings.filter((value) => !Number.isNaN(value)).sort();
+  return sample.subarray(0, count).sort();
 }
