@@ -19,6 +19,11 @@ export interface InputDraft {
 export interface FitDraft {
   readonly recordSetId: string;
   readonly revisionId: string;
+  /** Empty: every record is used. */
+  readonly filterColumn: string;
+  readonly filterLevels: readonly string[];
+  readonly filterFrom: string;
+  readonly filterTo: string;
   readonly target: string;
   readonly targetTransform: 'none' | 'log';
   readonly inputs: readonly InputDraft[];
@@ -42,6 +47,10 @@ const mostLevels = 40;
 export const emptyDraft: FitDraft = {
   recordSetId: '',
   revisionId: '',
+  filterColumn: '',
+  filterLevels: [],
+  filterFrom: '',
+  filterTo: '',
   target: '',
   targetTransform: 'none',
   inputs: [],
@@ -85,6 +94,7 @@ export function draftOn(revision: RecordRevision, before: FitDraft): FitDraft {
     ...before,
     recordSetId: revision.recordSetId,
     revisionId: revision.id,
+    filterColumn: has(revision.columns, before.filterColumn),
     target: has(numericColumns(revision), before.target),
     groupColumn: has(groupColumns(revision), before.groupColumn) || firstOf(revision, 'category'),
     timeColumn: has(timeColumns(revision), before.timeColumn) || firstOf(revision, 'date'),

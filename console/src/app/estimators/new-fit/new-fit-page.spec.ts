@@ -152,6 +152,24 @@ describe('the new fit page', () => {
     expect(saidBeside('Prior standard deviation γ')).toContain('one standard deviation of an input');
   });
 
+  it('keeps to some of the records', async () => {
+    const screen = await ready();
+    choose('Target', 'hours');
+    choose('Records to use', 'hull');
+    await screen.settle();
+    await screen.press(find('button', 'Start the fit'));
+    expect(pageText()).toContain('Tick what hull may be, or use all records.');
+    field('steel').click();
+    await screen.settle();
+    await screen.press(find('button', 'Start the fit'));
+    const request = await screen.answer(
+      '/api/estimators/refit-labour/fits',
+      { id: 'fit000000008', state: 'queued' },
+      'POST',
+    );
+    expect(request.request.body).toMatchObject({ specification: { rowFilter: { column: 'hull', equals: ['steel'] } } });
+  });
+
   it('lets an input be left out, read otherwise, and named', async () => {
     const screen = await ready();
     choose('Target', 'hours');

@@ -29,6 +29,7 @@ import { InputsTable } from './inputs-table';
 import { PenaltyChoice } from './penalty-choice';
 import { problemsByInput, readDraft, type DraftProblems } from './read-draft';
 import { RecordsChoice } from './records-choice';
+import { RowFilterChoice } from './row-filter-choice';
 import { TargetChoice } from './target-choice';
 import { ValidationChoice } from './validation-choice';
 
@@ -43,6 +44,7 @@ import { ValidationChoice } from './validation-choice';
     ProblemNotice,
     RecordsChoice,
     RouterLink,
+    RowFilterChoice,
     Sheet,
     SheetSection,
     TargetChoice,
@@ -116,7 +118,7 @@ export class NewFitPage {
 
   protected start(): void {
     this.problem.set(undefined);
-    const reading = readDraft(this.draft());
+    const reading = readDraft(this.draft(), this.shownRevision());
     if ('problems' in reading) return this.complain(reading.problems);
     this.problems.set(new Map());
     this.starting.set(true);

@@ -1,7 +1,8 @@
-import type { FitNew, Specification, SpecificationInput } from '../../api/contract';
+import type { FitNew, RecordRevision, Specification, SpecificationInput } from '../../api/contract';
 import { typedNumber } from '../words/typed-number';
 import { rulesFor } from '../words/method-words';
 import { type FitDraft, type InputDraft, usedInputs } from './fit-draft';
+import { readRowFilter } from './read-row-filter';
 
 /** Complaints under the path that the service would give them, such as `specification/validation/folds`. */
 export type DraftProblems = ReadonlyMap<string, string>;
@@ -31,7 +32,7 @@ const levelNumber: Bounds = {
 };
 
 /** Turns what was typed into a request, or says beside which fields it cannot. */
-export function readDraft(draft: FitDraft): DraftReading {
+export function readDraft(draft: FitDraft, revision?: RecordRevision): DraftReading {
   const problems = new Map<string, string>();
   const number = (field: string, text: string, bounds: Bounds): number => {
     const reading = typedNumber(text);
@@ -48,6 +49,7 @@ export function readDraft(draft: FitDraft): DraftReading {
     inputs: used.map((input, position) =>
       inputOf(input, number(`specification/inputs/${position}/penaltyFactor`, input.penaltyFactor, notNegative)),
     ),
+    ...rowFilterOf(draft, revision, problems),
     weightColumn: draft.weightColumn || null,
     method: draft.method,
     ...(draft.method === 'elastic-net' ? { mixing: number('specification/mixing', draft.mixing, between0and1) } : {}),
@@ -56,6 +58,17 @@ export function readDraft(draft: FitDraft): DraftReading {
     intervalLevel: number('specification/intervalLevel', draft.level, levelNumber) / 100,
   };
   return problems.size > 0 ? { problems } : { fit: { revisionId: draft.revisionId, specification } };
+}
+
+function rowFilterOf(
+  draft: FitDraft,
+  revision: RecordRevision | undefined,
+  problems: Map<string, string>,
+): Pick<Specification, 'rowFilter'> {
+  if (!revision) return {};
+  const reading = readRowFilter(draft, revision);
+  for (const [part, words] of Object.entries(reading.problems)) problems.set(`specification/rowFilter/${part}`, words);
+  return reading.filter ? { rowFilter: reading.filter } : {};
 }
 
 type NumberReader = (field: string, text: string, bounds: Bounds) => number;

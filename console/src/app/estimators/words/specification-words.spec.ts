@@ -23,6 +23,16 @@ describe('a specification in words', () => {
     ]);
   });
 
+  it('says which records it keeps to', () => {
+    const byLevel = specificationWords(
+      { ...specification, rowFilter: { column: 'hull', equals: ['GRP', 'steel'] } },
+      'h',
+    );
+    expect(byLevel).toContain('Only records whose hull is GRP or steel.');
+    const byRange = specificationWords({ ...specification, rowFilter: { column: 'length', from: 6.5 } }, 'h');
+    expect(byRange).toContain('Only records whose length runs from 6.5 (dates as days since 1970-01-01).');
+  });
+
   it('says nothing of a penalty for least squares', () => {
     const words = specificationWords({ ...specification, method: 'least-squares' }, 'h');
     expect(words.some((line) => line.startsWith('Penalty'))).toBe(false);

@@ -8,6 +8,7 @@ export function specificationWords(specification: Specification, unit: string): 
   return [
     targetWords(specification),
     inputWords(specification),
+    ...filterWords(specification),
     methodWords(specification),
     ...penaltyWords(specification, unit),
     validationWords(specification),
@@ -26,6 +27,16 @@ function targetWords({ target }: Specification): string {
 function inputWords({ inputs }: Specification): string {
   const columns = inputs.length === 1 ? 'one input' : `${inputs.length} inputs`;
   return `From ${columns}: ${inputs.map((input) => input.column).join(', ')}.`;
+}
+
+function filterWords({ rowFilter }: Specification): readonly string[] {
+  if (!rowFilter) return [];
+  const { column, equals, from, to } = rowFilter;
+  if (equals) return [`Only records whose ${column} is ${equals.join(' or ')}.`];
+  const ends = [from === undefined ? '' : `from ${exact(from)}`, to === undefined ? '' : `to ${exact(to)}`].filter(
+    Boolean,
+  );
+  return [`Only records whose ${column} runs ${ends.join(' ')} (dates as days since 1970-01-01).`];
 }
 
 function methodWords(specification: Specification): string {
