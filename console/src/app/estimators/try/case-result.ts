@@ -18,6 +18,7 @@ const LOCALE = 'en-GB';
   // The beam's table is styled once for the program that shows it; its classes are its own.
   styleUrls: ['../../../../../widget/src/beam-diagram/beam-diagram.css', './case-result.scss'],
   encapsulation: ViewEncapsulation.None,
+  host: { '[class.tb-case-on-log]': "evaluation().scale === 'log'" },
 })
 export class CaseResult {
   readonly evaluation = input.required<Evaluation>();
