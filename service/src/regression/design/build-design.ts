@@ -30,26 +30,15 @@ export function buildDesign(
   layouts.forEach((layout, index) => writeInput(read.inputs[index], layout, plan.order, data));
   const rootWeights = Float64Array.from(plan.order, (record) => Math.sqrt(read.weights[record]));
   data.set(rootWeights, columnCount * read.count);
-  data.set(
-    Float64Array.from(plan.order, (record) => read.target[record]),
-    (columnCount + 1) * read.count,
-  );
-  const centres = new Float64Array(columnCount);
-  const scales = new Float64Array(columnCount);
-  for (let column = 0; column < columnCount; column += 1) {
-    const values = data.subarray(column * read.count, (column + 1) * read.count);
-    [centres[column], scales[column]] = standardiseColumn(
-      values,
-      rootWeights,
-      specification.intercept,
-      columns[column].leftOut === 'reference-level',
-    );
-  }
-  const targetCentre = centreTarget(
-    data.subarray((columnCount + 1) * read.count),
-    rootWeights,
-    specification.intercept,
-  );
+  const target = data.subarray((columnCount + 1) * read.count);
+  plan.order.forEach((record, position) => (target[position] = read.target[record]));
+  const { intercept } = specification;
+  const coded = columns.map((column, at) => {
+    const values = data.subarray(at * read.count, (at + 1) * read.count);
+    return standardiseColumn(values, rootWeights, intercept, column.leftOut === 'reference-level');
+  });
+  const centres = Float64Array.from(coded, ([centre]) => centre);
+  const scales = Float64Array.from(coded, ([, scale]) => scale);
   return {
     rowCount: read.count,
     columnCount,
@@ -59,10 +48,10 @@ export function buildDesign(
     data,
     centres,
     scales,
-    targetCentre,
+    targetCentre: centreTarget(target, rootWeights, intercept),
     filled: layouts.flatMap((layout, index) => filledColumns(read.inputs[index], layout)),
     codings: layouts.map((layout, index) => codingOf(read.inputs[index], layout, centres, scales)),
-    intercept: specification.intercept,
+    intercept,
   };
 }
 

@@ -59,42 +59,44 @@ export function standardise(moments: Moments, shape: DesignShape, usable: readon
   const fills = foldFills(moments, shape);
   const sums = fills.length === 0 ? moments : applyFills(moments, shape, fills);
   const mean = (column: number): number => (intercept ? sums[d * width + column] / weightSum : 0);
+  const covariance = (row: number, column: number): number =>
+    sums[row * width + column] / weightSum - mean(row) * mean(column);
   const kept: number[] = [];
-  const scales: number[] = [];
   for (let column = 0; column < d; column += 1) {
     const square = sums[column * width + column] / weightSum;
-    const variance = square - mean(column) ** 2;
-    if (!usable[column] || !(variance > CONSTANT_SHARE * square)) continue;
-    kept.push(column);
-    scales.push(Math.sqrt(variance));
+    if (usable[column] && covariance(column, column) > CONSTANT_SHARE * square) kept.push(column);
   }
+  const scales = Float64Array.from(kept, (column) => Math.sqrt(covariance(column, column)));
+  return {
+    weightSum,
+    size: kept.length,
+    kept: Int32Array.from(kept),
+    gram: correlations(kept, scales, covariance),
+    cross: Float64Array.from(kept, (column, at) => covariance(column, d + 1) / scales[at]),
+    targetSquare: Math.max(0, covariance(d + 1, d + 1)),
+    means: Float64Array.from(kept, mean),
+    scales,
+    targetMean: mean(d + 1),
+    fills,
+  };
+}
+
+function correlations(
+  kept: readonly number[],
+  scales: Float64Array,
+  covariance: (row: number, column: number) => number,
+): Float64Array {
   const size = kept.length;
   const gram = new Float64Array(size * size);
-  const cross = new Float64Array(size);
-  const targetMean = mean(d + 1);
   for (let i = 0; i < size; i += 1) {
-    const row = kept[i] * width;
-    const centre = mean(kept[i]);
-    cross[i] = (sums[row + d + 1] / weightSum - centre * targetMean) / scales[i];
     for (let j = 0; j < i; j += 1) {
-      const value = (sums[row + kept[j]] / weightSum - centre * mean(kept[j])) / (scales[i] * scales[j]);
+      const value = covariance(kept[i], kept[j]) / (scales[i] * scales[j]);
       gram[i * size + j] = value;
       gram[j * size + i] = value;
     }
     gram[i * size + i] = 1;
   }
-  return {
-    weightSum,
-    size,
-    kept: Int32Array.from(kept),
-    gram,
-    cross,
-    targetSquare: Math.max(0, sums[(d + 1) * width + d + 1] / weightSum - targetMean * targetMean),
-    means: Float64Array.from(kept, mean),
-    scales: Float64Array.from(scales),
-    targetMean,
-    fills,
-  };
+  return gram;
 }
 
 /** Mean of the present readings of the fold, in z; missing ones stand at z = 0 and must move there. */

@@ -29,44 +29,70 @@ export function standardisedRows(
   const rootWeights = gather(design, columnCount, spans);
   const weightSum = sumOfSquares(rootWeights);
   const fills = rowFills(design, spans, rootWeights, weightSum);
-  const kept: number[] = [];
-  const means: number[] = [];
-  const scales: number[] = [];
-  const x = new Float64Array(usable.filter(Boolean).length * rootWeights.length);
-  for (let column = 0; column < columnCount; column += 1) {
-    if (!usable[column]) continue;
-    const values = gather(design, column, spans);
-    applyFill(values, column, fills, design, spans, rootWeights);
-    const mean = intercept ? centre(values, rootWeights, weightSum) : 0;
-    const square = sumOfSquares(values) / weightSum;
-    if (!(square > CONSTANT_SHARE * (mean * mean + 1))) continue;
-    const scale = Math.sqrt(square);
-    x.set(
-      values.map((value) => value / scale),
-      kept.length * rootWeights.length,
-    );
-    kept.push(column);
-    means.push(mean);
-    scales.push(scale);
-  }
+  const columns = standardisedColumns({ design, spans, usable, rootWeights, weightSum, fills });
   const y = gather(design, columnCount + 1, spans);
   const targetMean = intercept ? centre(y, rootWeights, weightSum) : 0;
   return {
     rowCount: rootWeights.length,
-    x: x.subarray(0, kept.length * rootWeights.length),
+    x: columns.x,
     y,
     rootWeights,
     problem: {
       weightSum,
-      size: kept.length,
-      kept: Int32Array.from(kept),
+      size: columns.kept.length,
+      kept: Int32Array.from(columns.kept),
       targetSquare: sumOfSquares(y) / weightSum,
-      means: Float64Array.from(means),
-      scales: Float64Array.from(scales),
+      means: Float64Array.from(columns.means),
+      scales: Float64Array.from(columns.scales),
       targetMean,
       fills,
     },
   };
+}
+
+interface ColumnSource {
+  readonly design: DesignMatrix;
+  readonly spans: readonly RowSpan[];
+  readonly usable: readonly boolean[];
+  readonly rootWeights: Float64Array;
+  readonly weightSum: number;
+  readonly fills: readonly FoldFill[];
+}
+
+interface StandardisedColumns {
+  readonly x: Float64Array;
+  readonly kept: readonly number[];
+  readonly means: readonly number[];
+  readonly scales: readonly number[];
+}
+
+function standardisedColumns({
+  design,
+  spans,
+  usable,
+  rootWeights,
+  weightSum,
+  fills,
+}: ColumnSource): StandardisedColumns {
+  const rows = rootWeights.length;
+  const x = new Float64Array(usable.filter(Boolean).length * rows);
+  const kept: number[] = [];
+  const means: number[] = [];
+  const scales: number[] = [];
+  for (let column = 0; column < design.columnCount; column += 1) {
+    if (!usable[column]) continue;
+    const values = gather(design, column, spans);
+    applyFill(values, column, fills, design, spans, rootWeights);
+    const mean = design.intercept ? centre(values, rootWeights, weightSum) : 0;
+    const square = sumOfSquares(values) / weightSum;
+    if (!(square > CONSTANT_SHARE * (mean * mean + 1))) continue;
+    const scale = Math.sqrt(square);
+    for (let row = 0; row < rows; row += 1) x[kept.length * rows + row] = values[row] / scale;
+    kept.push(column);
+    means.push(mean);
+    scales.push(scale);
+  }
+  return { x: x.subarray(0, kept.length * rows), kept, means, scales };
 }
 
 function gather(design: DesignMatrix, column: number, spans: readonly RowSpan[]): Float64Array {
