@@ -17,6 +17,14 @@ const workerPath = join(__dirname, `import-worker${extname(__filename)}`);
 /** Heap of the thread: a table that needs more is refused, instead of the service running out of memory. */
 const threadHeapMegabytes = 512;
 
+/** The thread's heap is bounded; what does not fit is the file's fault, not the service's. */
+function translate(error: unknown): unknown {
+  if ((error as { code?: unknown }).code !== 'ERR_WORKER_OUT_OF_MEMORY') return error;
+  const detail =
+    'The table holds more different text than can be read at once. Leave out long text columns, or send it in parts.';
+  return new DeskError('file-too-large', detail, { cause: error });
+}
+
 function outcomeOf(worker: Worker, signal?: AbortSignal): Promise<ImportOutcome> {
   return new Promise((resolve, reject) => {
     const stop = (): void => {
@@ -25,7 +33,7 @@ function outcomeOf(worker: Worker, signal?: AbortSignal): Promise<ImportOutcome>
     };
     signal?.addEventListener('abort', stop, { once: true });
     worker.once('message', resolve);
-    worker.once('error', reject);
+    worker.once('error', (error) => reject(translate(error)));
     worker.once('exit', () => {
       signal?.removeEventListener('abort', stop);
       reject(new Error('The reading thread ended without an answer.'));

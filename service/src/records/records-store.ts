@@ -101,13 +101,11 @@ export class RecordsStore {
   }
 
   async insertRevision(revision: NewRevision): Promise<void> {
-    await this.database
-      .connection('recordRevisions')
-      .insert({
-        ...revision,
-        reading: JSON.stringify(revision.reading),
-        mending: revision.mending && JSON.stringify(revision.mending),
-      });
+    await this.database.connection('recordRevisions').insert({
+      ...revision,
+      reading: JSON.stringify(revision.reading),
+      mending: revision.mending && JSON.stringify(revision.mending),
+    });
   }
 
   async insertColumn(revisionId: string, column: FinishedColumn): Promise<void> {
