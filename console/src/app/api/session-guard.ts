@@ -23,7 +23,7 @@ export const signedIn: CanActivateFn = (_route, state) => {
 /** Lets in whoever holds one of the roles; the service checks again, this only spares people a refusal. */
 export function withRole(...roles: readonly Role[]): CanActivateFn {
   return () => {
-    const notPermitted = inject(Router).parseUrl('/not-permitted');
-    return inject(SessionStore).holds(...roles) || new RedirectCommand(notPermitted, { skipLocationChange: true });
+    const router = inject(Router);
+    return inject(SessionStore).holds(...roles) || router.parseUrl('/not-permitted');
   };
 }

@@ -1,5 +1,5 @@
 import { RecordsScreen } from '../testing/records-screen';
-import { REVISION, ROWS } from '../testing/refits';
+import { LENGTH, REVISION, ROWS } from '../testing/refits';
 
 const PATH = '/api/record-revisions/revision2';
 const ROWS_PATH = `${PATH}/rows`;
@@ -65,6 +65,17 @@ describe('RevisionPage', () => {
       ['1', '12.25', '15 Oct 2020', 'GRP'],
       ['2', '9.00', '22 Oct 2020', 'missing'],
     ]);
+  });
+
+  it('writes a unit beside a column only where its name does not say it', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
+    const named = { ...LENGTH, name: 'draught (m)' };
+    await screen.answer(PATH, { ...REVISION, columns: [LENGTH, named] });
+    await screen.answer(ROWS_PATH, { total: 1, offset: 0, columns: [LENGTH.name, named.name], rows: [[12, 2]] });
+    const heads = [...screen.page.querySelectorAll('tb-rows-table th[scope="col"]')].map((head) =>
+      head.textContent?.trim().replace(/\s+/g, ' '),
+    );
+    expect(heads).toEqual(['Row', 'Length overall m', 'draught (m)']);
   });
 
   it('asks for the next page of rows', async () => {

@@ -30,7 +30,7 @@ export class RowsTable {
     return (this.page.value()?.columns ?? []).map((name) => ({
       name,
       kind: known.get(name)?.kind,
-      unit: known.get(name)?.unit,
+      unit: unitBeside(name, known.get(name)?.unit),
     }));
   });
   protected readonly rows = computed(() => {
@@ -51,4 +51,9 @@ export class RowsTable {
   protected moveTo(offset: number): void {
     this.wanted.set(offset);
   }
+}
+
+/** Many headers carry their unit already, as in `draught (m)`. */
+function unitBeside(name: string, unit: string | null | undefined): string | undefined {
+  return unit && !name.endsWith(`(${unit})`) && !name.endsWith(`[${unit}]`) ? unit : undefined;
 }
