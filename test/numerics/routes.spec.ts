@@ -187,3 +187,23 @@ describe('a fit', () => {
     expect(result.report.conditionNumber).toBeGreaterThan(1e5);
   });
 });
+
+describe('progress', () => {
+  it('names every fold as it is done, and ends with the diagnostics', async () => {
+    const seen: string[] = [];
+    await fitRecords(
+      inventedRefits(120, 4),
+      {
+        target: { column: 'labour', transform: 'none' },
+        inputs: [{ column: 'length' }],
+        method: 'ridge',
+        validation: { scheme: 'k-fold', folds: 3 },
+      },
+      { onProgress: ({ stage, done, total }) => seen.push(`${stage} ${done}/${total}`) },
+    );
+    expect(seen.filter((line) => line.startsWith('validation'))).toEqual(
+      [0, 1, 2, 3].map((done) => `validation ${done}/3`),
+    );
+    expect(seen[seen.length - 1]).toBe('diagnostics 1/1');
+  });
+});

@@ -27,6 +27,8 @@ export interface FitContext {
   /** Whether a fold needs a design of its own (spline knots). */
   readonly designPerFold: boolean;
   readonly run: TaskRunner;
+  /** Folds handed over together: one at a time on this thread, so that progress shows each. */
+  readonly foldsAtOnce: number;
   readonly progress: (progress: FitProgress) => void;
 }
 
@@ -65,6 +67,7 @@ export function prepareContext(
     settings: { kind, mixing: specification.mixing, polish: true },
     designPerFold: specification.inputs.some((input) => input.transform === 'spline'),
     run: hooks.runFolds ?? runHere,
+    foldsAtOnce: hooks.runFolds === undefined ? 1 : plan.folds.length,
     progress: hooks.onProgress ?? (() => undefined),
   };
 }

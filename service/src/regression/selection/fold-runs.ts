@@ -11,7 +11,7 @@ export async function runFoldPaths(
 ): Promise<PathAnswer[]> {
   const { folds } = context.plan;
   const answers: PathAnswer[] = [];
-  const batch = context.designPerFold ? 1 : folds.length;
+  const batch = context.designPerFold ? 1 : context.foldsAtOnce;
   for (let first = 0; first < folds.length; first += batch) {
     context.progress({ stage: 'validation', done: first, total: folds.length });
     const tasks = folds.slice(first, first + batch).map((fold) => pathTask(context, fold, moments, lambdas));
