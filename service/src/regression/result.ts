@@ -116,7 +116,7 @@ export interface FitDiagnostics {
     readonly level?: string;
     readonly factor: number | null;
   }[];
-  /** Belsley, Kuh and Welsch (1980), chapter 3: columns scaled to length 1, not centred, with the intercept. */
+  /** Belsley, Kuh and Welsch (1980), chapter 3: columns scaled to length 1, not centred, with the intercept; the 60 largest. */
   readonly conditionIndices: readonly ConditionIndex[];
   /** What the proportions of a condition index belong to, in order. */
   readonly conditionColumns: readonly { readonly input: string; readonly level?: string }[];

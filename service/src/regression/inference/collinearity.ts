@@ -9,6 +9,9 @@ import { symmetricEigen } from './condition';
 /** Beyond this many columns an eigendecomposition for diagnostics costs more than the fit. */
 const MOST_COLUMNS = 300;
 
+/** Indices that are kept, the largest: each carries a share for every column. */
+const MOST_INDICES = 60;
+
 /** Eigenvalues below this share of the largest are rounding: the direction is missing. */
 const MISSING_SHARE = 1e-13;
 
@@ -86,7 +89,8 @@ function conditionIndices(part: TrainingPart, design: DesignMatrix, positions: r
       index: missing(value) ? null : largest / value,
       proportions: totals.map((total, j) => (total > 0 ? weight(j, k) / total : 0)),
     }))
-    .sort((first, second) => (first.index ?? Infinity) - (second.index ?? Infinity));
+    .sort((first, second) => (first.index ?? Infinity) - (second.index ?? Infinity))
+    .slice(-MOST_INDICES);
 }
 
 interface Decomposed {
