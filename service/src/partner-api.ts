@@ -7,7 +7,7 @@ import { noSuchAddress } from './http/problem-details';
 import { noStore, openToOtherOrigins } from './http/security-headers';
 import { answerListedOrigins, requireListedOrigin } from './keys/cross-origin';
 import { keyGuard } from './keys/key-guard';
-import { limitPerKey, limitRefusals } from './keys/key-limits';
+import { limitPerKey, limitPerVisitor, limitRefusals } from './keys/key-limits';
 import { recogniseKey } from './keys/key-passport';
 
 /** What partners call: `/v1`. The order is the point: who asks, from where, how often, and only then what. */
@@ -27,6 +27,7 @@ export function createPartnerApi(services: Services): Router {
     limitRefusals(recogniseKey(keys)),
     requireListedOrigin({ keys, log, publicUrl: config.publicUrl }),
     limitPerKey(),
+    limitPerVisitor(),
   );
   router.use(express.json({ limit: '1mb' }), routes.router, noSuchAddress);
   return router;

@@ -1,5 +1,5 @@
 import supertest from 'supertest';
-import { mostRefusalsPerMinute } from '../../service/src/keys/key-limits';
+import { mostEmbedCallsPerAddressMinute, mostRefusalsPerMinute } from '../../service/src/keys/key-limits';
 import { newKeyText } from '../../service/src/keys/key-text';
 import { addPartner, boat, openDesk, putInForce, type Desk } from '../support/published-estimator';
 import { startTestService, type TestService } from '../support/test-service';
@@ -157,6 +157,16 @@ describe('the partner API', () => {
       expect((await developer.post(`/api/keys/${own.body.id}/revoke`)).body.state).toBe('revoked');
     });
 
+    it('get at most sixty calls a minute from a partner developer, and more from the desk', async () => {
+      const developer = await service.signIn(await service.addPerson(['partner-developer'], { partnerId }));
+      const generous = { kind: 'partner', label: 'Generous', perMinute: 61 };
+      const refused = await developer.post(`/api/partners/${partnerId}/keys`).send(generous);
+      expect(refused.status).toBe(400);
+      expect(refused.body.errors[0].pointer).toBe('#/perMinute');
+      await developer.post(`/api/partners/${partnerId}/keys`).send({ ...generous, perMinute: 60 }).expect(201);
+      await issue(generous);
+    });
+
     it('tell how much they were used this month, and when last', async () => {
       const { id, key } = await issue();
       await ask(key).expect(200);
@@ -243,6 +253,18 @@ describe('the partner API', () => {
         'RateLimit,RateLimit-Policy,Retry-After,X-Request-Id',
       );
       expect(answer.headers).not.toHaveProperty('access-control-allow-credentials');
+    });
+
+    it('limits one visitor without limiting the others', async () => {
+      const { key } = await issue({ kind: 'embed', label: 'Busy form', perMinute: 1000 });
+      const calls = await Promise.all(
+        Array.from({ length: mostEmbedCallsPerAddressMinute + 5 }, () => list(key).set('Origin', site)),
+      );
+      const refused = calls.filter(({ status }) => status === 429);
+      expect(refused).toHaveLength(5);
+      expect(refused[0].body.code).toBe('rate-exceeded');
+      expect(refused[0].headers['access-control-allow-origin']).toBe(site);
+      expect((await askFrom(site)).status).toBe(200);
     });
 
     it.each([

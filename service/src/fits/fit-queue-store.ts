@@ -52,6 +52,16 @@ export class FitQueueStore {
     return rows as ClaimableFit[];
   }
 
+  /** What the fit's estimator is called, for the journal. */
+  async estimatorNameOf(id: string): Promise<string> {
+    const row = await this.database
+      .connection('fits')
+      .join('estimators', 'estimators.id', 'fits.estimatorId')
+      .where({ 'fits.id': id })
+      .first('estimators.name');
+    return String(row?.name ?? 'an estimator');
+  }
+
   /** True for the one process whose claim was first; the fit then runs from its beginning. */
   async claim(fit: ClaimableFit, claimedBy: string, at: string): Promise<boolean> {
     const { id, state } = fit;

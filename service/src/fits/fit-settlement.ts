@@ -43,7 +43,7 @@ export class FitSettlement {
     const at = timeText(clock);
     if (outcome.kind === 'done') {
       const kept = await queue.finish(id, claimName, { ...outcome.finished, finishedAt: at });
-      return this.noted(fit, kept ? 'done' : null, `The fit ${id} is done`);
+      return this.noted(fit, kept ? 'done' : null, 'is done');
     }
     if (outcome.kind === 'failed') return this.keepFailure(fit, outcome.failure);
     if (fit.stopping === 'released') await queue.release(id, claimName);
@@ -53,18 +53,19 @@ export class FitSettlement {
 
   private async keepFailure(fit: EndedFit, failure: FitFailure): Promise<FitState | null> {
     const kept = await this.parts.queue.fail(fit.id, fit.claimName, failure, timeText(this.parts.clock));
-    return this.noted(fit, kept ? 'failed' : null, `The fit ${fit.id} failed: ${failure.code}`);
+    return this.noted(fit, kept ? 'failed' : null, `failed: ${failure.code}`);
   }
 
-  private async noted(fit: EndedFit, state: FitState | null, summary: string): Promise<FitState | null> {
-    if (state)
-      await this.parts.journal.write({
-        actorId: null,
-        action: `fit-${state}`,
-        subjectKind: 'fit',
-        subjectId: fit.id,
-        summary,
-      });
+  private async noted(fit: EndedFit, state: FitState | null, what: string): Promise<FitState | null> {
+    if (!state) return null;
+    const summary = `A fit of ${await this.parts.queue.estimatorNameOf(fit.id)} ${what}`;
+    await this.parts.journal.write({
+      actorId: null,
+      action: `fit-${state}`,
+      subjectKind: 'fit',
+      subjectId: fit.id,
+      summary,
+    });
     return state;
   }
 }

@@ -28,6 +28,24 @@ export function limitPerKey(): RequestHandler {
   });
 }
 
+/** Calls of one visitor of a partner's pages, a minute and key. */
+export const mostEmbedCallsPerAddressMinute = 30;
+
+/** An embed key is public, so no single visitor may use up its minute. Partner keys come from servers and are not counted. */
+export function limitPerVisitor(): RequestHandler {
+  return rateLimit({
+    windowMs: minuteMs,
+    identifier: 'per-visitor-minute',
+    standardHeaders: 'draft-8',
+    legacyHeaders: false,
+    passOnStoreError: false,
+    limit: mostEmbedCallsPerAddressMinute,
+    skip: (request) => partnerKeyOf(request).kind === 'partner',
+    keyGenerator: (request) => `${partnerKeyOf(request).id} ${ipKeyGenerator(request.ip ?? '')}`,
+    handler: exceeded('This form has been used very often from your connection.'),
+  });
+}
+
 /**
  * Bounds guessing: an address whose calls are refused too often is refused without a look at its key. Calls with a good key
  * are not counted, so that many people behind one address do not get in each other's way.

@@ -16,6 +16,8 @@ type KeyNew = components['schemas']['KeyNew'];
 type KeyIssued = components['schemas']['KeyIssued'];
 
 const useNotedEveryMs = 60_000;
+/** What a partner may give their own keys; the desk may give more. */
+const mostPerMinuteOfPartner = 60;
 
 export interface KeysParts {
   readonly database: Database;
@@ -36,6 +38,7 @@ export class KeysService {
     await database.unitOfWork(async () => {
       await this.requireOwnPartner(person, partnerId);
       await this.requireSiteFor(kind, partnerId);
+      requireModestLimit(person, perMinute);
       const estimatorIds = await this.idsOfScope(given.estimators ?? 'all');
       const columns = {
         id,
@@ -180,4 +183,12 @@ export class KeysService {
 
 function mayManage(person: SignedInPerson, partnerId: string): boolean {
   return person.roles.includes('administrator') || person.partnerId === partnerId;
+}
+
+/** A partner developer issues keys of their own, and must not set their own limits aside. */
+function requireModestLimit(person: SignedInPerson, perMinute: number): void {
+  if (person.roles.includes('administrator') || perMinute <= mostPerMinuteOfPartner) return;
+  throw new DeskError('request-invalid', `Ask the desk for a key of more than ${mostPerMinuteOfPartner} calls a minute.`, {
+    errors: [{ pointer: '#/perMinute', detail: `at most ${mostPerMinuteOfPartner}; the desk can give more` }],
+  });
 }
