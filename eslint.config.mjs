@@ -32,9 +32,21 @@ const service = {
       {
         default: 'allow',
         rules: [
-          { from: ['regression'], disallow: ['store', 'router', 'database', 'assembly', 'rest'], message: 'regression/ imports nothing of ours' },
-          { from: ['store'], disallow: ['router', 'store', 'regression'], message: 'a store holds SQL; it imports the database and types' },
-          { from: ['router'], disallow: ['store', 'database'], message: 'a router calls one service; it never reaches a store' },
+          {
+            from: ['regression'],
+            disallow: ['store', 'router', 'database', 'assembly', 'rest'],
+            message: 'regression/ imports nothing of ours',
+          },
+          {
+            from: ['store'],
+            disallow: ['router', 'store', 'regression'],
+            message: 'a store holds SQL; it imports the database and types',
+          },
+          {
+            from: ['router'],
+            disallow: ['store', 'database'],
+            message: 'a router calls one service; it never reaches a store',
+          },
           { from: ['rest', 'store', 'database'], disallow: ['router'], message: 'only app.ts mounts routers' },
         ],
       },
@@ -43,7 +55,10 @@ const service = {
 };
 
 const noRestrictedImports = (patterns) => ({ 'no-restricted-imports': ['error', { patterns }] });
-const foreignPrograms = { group: ['**/service/**', '**/migrations/**'], message: 'Types come from openapi/, not from the service.' };
+const foreignPrograms = {
+  group: ['**/service/**', '**/migrations/**'],
+  message: 'Types come from openapi/, not from the service.',
+};
 
 export default tseslint.config(
   { ignores: ['dist/', 'node_modules/', 'data/', '.angular/', 'openapi/types/', 'coverage/', '**/*.js'] },
@@ -56,15 +71,21 @@ export default tseslint.config(
     rules: noRestrictedImports([foreignPrograms]),
   },
   {
-    files: ['console/src/app/{desk,records,estimators,partners,people,journal,settings,estimates,invitation,sign-in}/**/*.ts'],
+    files: [
+      'console/src/app/{desk,records,estimators,partners,people,journal,settings,estimates,invitation,sign-in}/**/*.ts',
+    ],
     ignores: ['**/*.spec.ts'],
     rules: noRestrictedImports([
       foreignPrograms,
       {
-        regex: '^\\.\\./(\\.\\./)?(desk|records|estimators|partners|people|journal|settings|estimates|invitation|sign-in)/',
+        regex:
+          '^\\.\\./(\\.\\./)?(desk|records|estimators|partners|people|journal|settings|estimates|invitation|sign-in)/',
         message: 'A feature imports api/, ui/ and shell/ only, never another feature.',
       },
     ]),
   },
-  { files: ['console/src/**/*.html', 'widget/src/**/*.html'], extends: [angular.configs.templateRecommended, angular.configs.templateAccessibility] },
+  {
+    files: ['console/src/**/*.html', 'widget/src/**/*.html'],
+    extends: [angular.configs.templateRecommended, angular.configs.templateAccessibility],
+  },
 );

@@ -46,10 +46,7 @@ export async function up(knex: Knex): Promise<void> {
     table.string('estimator_id', 32).notNullable().references('id').inTable('estimators');
     table.integer('number').notNullable();
     table.string('fit_id', 32).notNullable().references('id').inTable('fits');
-    table
-      .string('state', 16)
-      .notNullable()
-      .checkIn(['draft', 'under-review', 'in-force', 'superseded', 'withdrawn']);
+    table.string('state', 16).notNullable().checkIn(['draft', 'under-review', 'in-force', 'superseded', 'withdrawn']);
     table.text('change_note').notNullable();
     // The frozen formula as canonical JSON, and the SHA-256 of exactly that text.
     table.text('formula').notNullable();

@@ -13,16 +13,22 @@ const folder = mkdtempSync(join(tmpdir(), 'tarebeam-run-'));
 const total = { passed: 0, failed: 0 };
 
 function chromiumPath() {
-  return [process.env.CHROMIUM, '/usr/bin/chromium', '/usr/bin/chromium-browser'].find((path) => path && existsSync(path));
+  return [process.env.CHROMIUM, '/usr/bin/chromium', '/usr/bin/chromium-browser'].find(
+    (path) => path && existsSync(path),
+  );
 }
 
 /** The browser tests drive Debian's chromium. */
 function requireChromium() {
   if (chromiumPath()) return true;
   console.log('Installing chromium for the browser tests.');
-  const apt = (...args) => spawnSync('apt-get', args, { stdio: 'inherit', env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' } }).status === 0;
+  const apt = (...args) =>
+    spawnSync('apt-get', args, { stdio: 'inherit', env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' } })
+      .status === 0;
   if (process.getuid?.() === 0 && apt('update', '-qq') && apt('install', '-y', '-qq', 'chromium')) return true;
-  console.error('The browser tests need chromium, and it may not be installed from here. Install it as root (apt-get install chromium) or name one in CHROMIUM.');
+  console.error(
+    'The browser tests need chromium, and it may not be installed from here. Install it as root (apt-get install chromium) or name one in CHROMIUM.',
+  );
   return false;
 }
 

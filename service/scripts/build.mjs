@@ -54,7 +54,12 @@ function contentOf(sources) {
 
 export function run(command, options = {}) {
   const [file, ...args] = command;
-  const { status, error } = spawnSync(file, args, { cwd: rootFolder, stdio: 'inherit', env: { ...process.env, NG_CLI_ANALYTICS: 'false' }, ...options });
+  const { status, error } = spawnSync(file, args, {
+    cwd: rootFolder,
+    stdio: 'inherit',
+    env: { ...process.env, NG_CLI_ANALYTICS: 'false' },
+    ...options,
+  });
   if (error) throw error;
   return status ?? 1;
 }
@@ -68,13 +73,17 @@ function runOrStop(command, what) {
 function requireNode() {
   const [major, minor] = process.versions.node.split('.').map(Number);
   if ((major === 20 && minor >= 19) || (major === 22 && minor >= 12)) return;
-  console.error(`Node.js ${process.versions.node} is installed; this needs 20.19 or newer of 20, or 22.12 or newer of 22.`);
+  console.error(
+    `Node.js ${process.versions.node} is installed; this needs 20.19 or newer of 20, or 22.12 or newer of 22.`,
+  );
   process.exit(1);
 }
 
 export function install() {
   requireNode();
-  const wanted = createHash('sha256').update(readFileSync(join(rootFolder, 'package-lock.json'))).digest('hex');
+  const wanted = createHash('sha256')
+    .update(readFileSync(join(rootFolder, 'package-lock.json')))
+    .digest('hex');
   if (existsSync(installedMark) && readFileSync(installedMark, 'utf8') === wanted) return;
   console.log('Installing packages. The database driver is compiled, so the first time takes a few minutes.');
   runOrStop(['npm', 'ci', '--no-audit', '--no-fund'], 'Installing');

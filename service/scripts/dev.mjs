@@ -7,7 +7,13 @@ install();
 build();
 const bin = (name) => join(rootFolder, 'node_modules', '.bin', name);
 const watchers = [
-  [process.execPath, '--watch-path=openapi/paths', '--watch-path=openapi/schemas', '--watch-preserve-output', 'openapi/bundle.mjs'],
+  [
+    process.execPath,
+    '--watch-path=openapi/paths',
+    '--watch-path=openapi/schemas',
+    '--watch-preserve-output',
+    'openapi/bundle.mjs',
+  ],
   [bin('tsc'), '-p', 'tsconfig.service.json', '--watch', '--preserveWatchOutput'],
   [bin('ng'), 'build', 'console', '--watch', '--configuration', 'development'],
   [bin('ng'), 'build', 'widget', '--watch', '--configuration', 'development'],

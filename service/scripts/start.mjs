@@ -5,6 +5,9 @@ import { build, install, rootFolder } from './build.mjs';
 
 install();
 build();
-const service = spawn(process.execPath, [join(rootFolder, 'dist', 'service', 'src', 'main.js')], { cwd: rootFolder, stdio: 'inherit' });
+const service = spawn(process.execPath, [join(rootFolder, 'dist', 'service', 'src', 'main.js')], {
+  cwd: rootFolder,
+  stdio: 'inherit',
+});
 for (const signal of ['SIGINT', 'SIGTERM']) process.on(signal, () => service.kill(signal));
 service.on('exit', (code, signal) => process.exit(signal ? 0 : (code ?? 1)));

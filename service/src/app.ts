@@ -59,7 +59,11 @@ function deskApi(services: Services, secure: boolean): express.Router {
     requireOwnSite: requireOwnSite(config.publicUrl),
   });
   mountEstimators(routes, services.estimators);
-  mountRecords(routes, { records: services.records, findings: services.recordFindings, mending: services.recordMending });
+  mountRecords(routes, {
+    records: services.records,
+    findings: services.recordFindings,
+    mending: services.recordMending,
+  });
   mountFits(routes, services.fits);
   mountEditions(routes, { editions: services.editions, review: services.editionReview });
   mountEstimates(routes, services.estimateTraces);

@@ -26,7 +26,13 @@ export class ConfigurationError extends Error {
 
 type Environment = Readonly<Record<string, string | undefined>>;
 
-function read<Value>(environment: Environment, name: string, fallback: string, takes: string, parse: (text: string) => Value | undefined): Value {
+function read<Value>(
+  environment: Environment,
+  name: string,
+  fallback: string,
+  takes: string,
+  parse: (text: string) => Value | undefined,
+): Value {
   const text = environment[name]?.trim() || fallback;
   const value = parse(text);
   if (value === undefined) throw new ConfigurationError(name, text, takes);
@@ -53,8 +59,14 @@ function readAdministrator(environment: Environment): Config['administrator'] {
   const email = environment['ADMIN_EMAIL']?.trim();
   const password = environment['ADMIN_PASSWORD'];
   if (!email && !password) return null;
-  if (!email || !/^[^\s@]+@[^\s@]+$/.test(email)) throw new ConfigurationError('ADMIN_EMAIL', email ?? '', 'an e-mail address, together with ADMIN_PASSWORD');
-  if (!password || password.length < 15) throw new ConfigurationError('ADMIN_PASSWORD', password ? 'a shorter password' : '', 'at least 15 characters, together with ADMIN_EMAIL');
+  if (!email || !/^[^\s@]+@[^\s@]+$/.test(email))
+    throw new ConfigurationError('ADMIN_EMAIL', email ?? '', 'an e-mail address, together with ADMIN_PASSWORD');
+  if (!password || password.length < 15)
+    throw new ConfigurationError(
+      'ADMIN_PASSWORD',
+      password ? 'a shorter password' : '',
+      'at least 15 characters, together with ADMIN_EMAIL',
+    );
   return { email, password };
 }
 
@@ -73,7 +85,8 @@ function sessionSecretOf(environment: Environment, dataFolder: string): string {
 function readSmtpUrl(environment: Environment): string | null {
   const text = environment['SMTP_URL']?.trim();
   if (!text) return null;
-  if (!URL.canParse(text) || !/^smtps?:$/.test(new URL(text).protocol)) throw new ConfigurationError('SMTP_URL', text, 'an smtp:// or smtps:// address');
+  if (!URL.canParse(text) || !/^smtps?:$/.test(new URL(text).protocol))
+    throw new ConfigurationError('SMTP_URL', text, 'an smtp:// or smtps:// address');
   return text;
 }
 
@@ -81,10 +94,17 @@ function readSmtpUrl(environment: Environment): string | null {
 export function readConfig(environment: Environment): Config {
   const port = read(environment, 'PORT', '4300', 'a port number from 1 to 65535', parsePort);
   const partnerPagePort = read(environment, 'PARTNER_PAGE_PORT', '4301', 'a port number from 1 to 65535', parsePort);
-  if (port === partnerPagePort) throw new ConfigurationError('PARTNER_PAGE_PORT', String(partnerPagePort), 'another port than PORT');
+  if (port === partnerPagePort)
+    throw new ConfigurationError('PARTNER_PAGE_PORT', String(partnerPagePort), 'another port than PORT');
   const dataFolder = resolve(rootFolder, environment['DATA_DIR']?.trim() || 'data');
   const demonstration = read(environment, 'DEMO', 'on', 'on or off', parseSwitch);
-  const publicUrl = read(environment, 'PUBLIC_URL', `http://localhost:${port}`, 'an http:// or https:// address without a path', parseOrigin);
+  const publicUrl = read(
+    environment,
+    'PUBLIC_URL',
+    `http://localhost:${port}`,
+    'an http:// or https:// address without a path',
+    parseOrigin,
+  );
   const smtpUrl = readSmtpUrl(environment);
   const logLevel = read(environment, 'LOG_LEVEL', 'warn', `one of ${logLevels.join(', ')}`, parseLogLevel);
   const administrator = readAdministrator(environment);

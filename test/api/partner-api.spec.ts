@@ -163,7 +163,10 @@ describe('the partner API', () => {
       const refused = await developer.post(`/api/partners/${partnerId}/keys`).send(generous);
       expect(refused.status).toBe(400);
       expect(refused.body.errors[0].pointer).toBe('#/perMinute');
-      await developer.post(`/api/partners/${partnerId}/keys`).send({ ...generous, perMinute: 60 }).expect(201);
+      await developer
+        .post(`/api/partners/${partnerId}/keys`)
+        .send({ ...generous, perMinute: 60 })
+        .expect(201);
       await issue(generous);
     });
 

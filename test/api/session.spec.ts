@@ -8,7 +8,9 @@ describe('signing in', () => {
 
   it('gives a strict, http-only cookie and tells who is signed in', async () => {
     const person = await service.addPerson(['analyst', 'reviewer']);
-    const answer = await supertest(service.app).post('/api/session').send({ email: person.email.toUpperCase(), password: testPassword });
+    const answer = await supertest(service.app)
+      .post('/api/session')
+      .send({ email: person.email.toUpperCase(), password: testPassword });
     expect(answer.status).toBe(200);
     expect(answer.body.person).toMatchObject({ id: person.id, roles: ['analyst', 'reviewer'], partnerId: null });
     const cookie = (answer.headers['set-cookie'] as unknown as string[]).find((line) => line.startsWith('tarebeam='));
@@ -18,8 +20,12 @@ describe('signing in', () => {
 
   it('answers an unknown address and a wrong password alike', async () => {
     const person = await service.addPerson(['viewer']);
-    const wrong = await supertest(service.app).post('/api/session').send({ email: person.email, password: 'not the password' });
-    const unknown = await supertest(service.app).post('/api/session').send({ email: 'nobody@desk.example', password: 'not the password' });
+    const wrong = await supertest(service.app)
+      .post('/api/session')
+      .send({ email: person.email, password: 'not the password' });
+    const unknown = await supertest(service.app)
+      .post('/api/session')
+      .send({ email: 'nobody@desk.example', password: 'not the password' });
     expect(wrong.status).toBe(401);
     expect(wrong.type).toBe('application/problem+json');
     expect(wrong.body.code).toBe('sign-in-refused');
@@ -28,7 +34,8 @@ describe('signing in', () => {
 
   it('makes an account wait, longer each time, after repeated failures', async () => {
     const person = await service.addPerson(['viewer']);
-    const attempt = (password: string) => supertest(service.app).post('/api/session').send({ email: person.email, password });
+    const attempt = (password: string) =>
+      supertest(service.app).post('/api/session').send({ email: person.email, password });
     for (let failure = 0; failure < 3; failure++) expect((await attempt('wrong')).status).toBe(401);
     const first = await attempt(testPassword);
     expect(first.status).toBe(429);

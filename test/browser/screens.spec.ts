@@ -58,12 +58,15 @@ describe('every screen of the demonstration', () => {
   async function violationsOf(page: Page): Promise<string[]> {
     // A scatter has two thousand marks, which are one picture with a name; looking at each takes axe minutes.
     const { violations } = await new AxeBuilder({ page }).exclude('tb-held-out-figure svg').withTags(rules).analyze();
-    return violations.map((violation) => `${violation.id}: ${violation.nodes.map((node) => node.target.join(' ')).join(', ')}`);
+    return violations.map(
+      (violation) => `${violation.id}: ${violation.nodes.map((node) => node.target.join(' ')).join(', ')}`,
+    );
   }
 
   beforeAll(async () => {
     service = await startService({ DEMO: 'on' }, 220_000);
-    password = (JSON.parse(readFileSync(join(service.dataFolder, 'demonstration.json'), 'utf8')) as DemonstrationNote).password;
+    password = (JSON.parse(readFileSync(join(service.dataFolder, 'demonstration.json'), 'utf8')) as DemonstrationNote)
+      .password;
     browser = await startChromium();
   });
   afterAll(async () => {
@@ -74,10 +77,18 @@ describe('every screen of the demonstration', () => {
   /** The addresses of one record set, fit, edition and so on of the demonstration. */
   async function addresses(page: Page): Promise<Record<string, string>> {
     const [set] = (await read<Listed<{ id: string; revision: { id: string } }>>(page, '/record-sets')).items;
-    const [edition] = (await read<Listed<{ id: string; fitId: string }>>(page, '/estimators/refit-labour/editions')).items;
+    const [edition] = (await read<Listed<{ id: string; fitId: string }>>(page, '/estimators/refit-labour/editions'))
+      .items;
     const [estimate] = (await read<Listed<{ id: string }>>(page, '/estimators/refit-labour/estimates?limit=1')).items;
     const [partner] = (await read<Listed<{ id: string }>>(page, '/partners')).items;
-    return { set: set.id, revision: set.revision.id, edition: edition.id, fit: edition.fitId, estimate: estimate.id, partner: partner.id };
+    return {
+      set: set.id,
+      revision: set.revision.id,
+      edition: edition.id,
+      fit: edition.fitId,
+      estimate: estimate.id,
+      partner: partner.id,
+    };
   }
 
   describe.each([
@@ -110,7 +121,10 @@ describe('every screen of the demonstration', () => {
 
     it.each(paths)('%s is readable at both widths', async (pattern) => {
       try {
-        await inspect(page, pattern.replace(/\{(\w+)\}/g, (_whole, name: string) => found[name]));
+        await inspect(
+          page,
+          pattern.replace(/\{(\w+)\}/g, (_whole, name: string) => found[name]),
+        );
       } catch (error) {
         await keepPictures({ page });
         throw error;

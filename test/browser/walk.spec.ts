@@ -71,8 +71,16 @@ describe('records become a form on a partner’s page', () => {
 
   step('1. people sign in after an invitation', async () => {
     await signIn(ada, service.url, administrator);
-    const analystLink = await invite(ada, service.url, { name: 'Noor Falk', email: 'noor@desk.example', role: 'Analyst' });
-    const reviewerLink = await invite(ada, service.url, { name: 'Ivo Brandt', email: 'ivo@desk.example', role: 'Reviewer' });
+    const analystLink = await invite(ada, service.url, {
+      name: 'Noor Falk',
+      email: 'noor@desk.example',
+      role: 'Analyst',
+    });
+    const reviewerLink = await invite(ada, service.url, {
+      name: 'Ivo Brandt',
+      email: 'ivo@desk.example',
+      role: 'Reviewer',
+    });
     await acceptInvitation(noor, analystLink);
     await acceptInvitation(ivo, reviewerLink);
     await signIn(noor, service.url, 'noor@desk.example');
@@ -89,7 +97,10 @@ describe('records become a form on a partner’s page', () => {
 
   step('3. a ridge fit chooses the penalty that scikit-learn chooses', async () => {
     await noor.goto(`${service.url}/estimators`);
-    await noor.getByRole('button', { name: /Name (an|the first) estimator/ }).first().click();
+    await noor
+      .getByRole('button', { name: /Name (an|the first) estimator/ })
+      .first()
+      .click();
     await noor.getByLabel('Name', { exact: true }).fill('Leaf uptake');
     await noor.getByLabel('What it estimates').fill('Uptake of carbon dioxide');
     await noor.getByLabel('Unit').fill('µmol/m²s');
@@ -144,7 +155,9 @@ describe('records become a form on a partner’s page', () => {
 
   step('6. the partner’s server gets the estimate that scikit-learn gives', async () => {
     const headers = { 'X-Api-Key': partnerKey, 'Content-Type': 'application/json' };
-    const listed = (await (await fetch(`${service.url}/v1/estimators`, { headers })).json()) as { items: { slug: string }[] };
+    const listed = (await (await fetch(`${service.url}/v1/estimators`, { headers })).json()) as {
+      items: { slug: string }[];
+    };
     expect(listed.items.map((estimator) => estimator.slug)).toEqual(['leaf-uptake']);
     const answer = await fetch(`${service.url}/v1/estimators/leaf-uptake/estimates`, {
       method: 'POST',
@@ -161,12 +174,17 @@ describe('records become a form on a partner’s page', () => {
   });
 
   step('7. the form on the partner’s page shows the same estimate, with its edition and reference', async () => {
-    writeFileSync(partnerPageSettingsPath(service.dataFolder), JSON.stringify({ estimator: 'leaf-uptake', key: embedKey }));
+    writeFileSync(
+      partnerPageSettingsPath(service.dataFolder),
+      JSON.stringify({ estimator: 'leaf-uptake', key: embedKey }),
+    );
     const visitor = await newPage();
     await visitor.goto(service.partnerPageUrl);
     await visitor.evaluate(() => {
       document.addEventListener('tarebeam-estimate', (event) => {
-        document.body.dataset['answered'] = JSON.stringify((event as CustomEvent<{ estimate: unknown }>).detail.estimate);
+        document.body.dataset['answered'] = JSON.stringify(
+          (event as CustomEvent<{ estimate: unknown }>).detail.estimate,
+        );
       });
     });
     const form = visitor.locator('tarebeam-form');
@@ -175,7 +193,9 @@ describe('records become a form on a partner’s page', () => {
     await form.getByLabel('conc').fill('420');
     await form.getByRole('button', { name: 'Estimate' }).click();
     await form.getByText('nine of ten', { exact: false }).first().waitFor();
-    const answered = JSON.parse((await visitor.locator('body').getAttribute('data-answered')) ?? 'null') as AnsweredEstimate;
+    const answered = JSON.parse(
+      (await visitor.locator('body').getAttribute('data-answered')) ?? 'null',
+    ) as AnsweredEstimate;
     expect(Math.abs(answered.value / reference.value - 1)).toBeLessThan(1e-8);
     const shown = Number(await form.locator('.figure').first().innerText());
     expect(Math.abs(shown - reference.value)).toBeLessThanOrEqual(0.5);

@@ -21,7 +21,9 @@ describe('migrations', () => {
   });
 
   const tables = async (): Promise<string[]> => {
-    const rows = (await knex.raw("select name from sqlite_master where type = 'table' and name not like 'sqlite_%' order by name")) as { name: string }[];
+    const rows = (await knex.raw(
+      "select name from sqlite_master where type = 'table' and name not like 'sqlite_%' order by name",
+    )) as { name: string }[];
     return rows.map((row) => row.name).filter((name) => !name.startsWith('knex_'));
   };
 
@@ -56,8 +58,22 @@ describe('migrations', () => {
     await migrate(knex, folder);
     await knex.raw('PRAGMA foreign_keys = OFF');
     const edition = (id: string, number: number) => ({
-      id, estimatorId: 'estimator', number, fitId: 'fit', state: 'in-force', changeNote: '', formula: '{}', checksum: '',
-      inputSchema: '{}', cautions: '[]', method: 'ridge', rmse: 1, recordCount: 1, inputCount: 1, createdAt: '', createdBy: 'person',
+      id,
+      estimatorId: 'estimator',
+      number,
+      fitId: 'fit',
+      state: 'in-force',
+      changeNote: '',
+      formula: '{}',
+      checksum: '',
+      inputSchema: '{}',
+      cautions: '[]',
+      method: 'ridge',
+      rmse: 1,
+      recordCount: 1,
+      inputCount: 1,
+      createdAt: '',
+      createdBy: 'person',
     });
     await knex('editions').insert(edition('first', 1));
     await expect(knex('editions').insert(edition('second', 2))).rejects.toThrow(/UNIQUE/);

@@ -15,7 +15,9 @@ const flags = [
 ];
 
 export async function startChromium(): Promise<Browser> {
-  const path = [process.env['CHROMIUM'], '/usr/bin/chromium', '/usr/bin/chromium-browser'].find((candidate) => candidate && existsSync(candidate));
+  const path = [process.env['CHROMIUM'], '/usr/bin/chromium', '/usr/bin/chromium-browser'].find(
+    (candidate) => candidate && existsSync(candidate),
+  );
   if (!path) throw new Error('Install chromium (apt-get install chromium) or name one in CHROMIUM.');
   return chromium.launch({ executablePath: path, headless: true, args: flags });
 }

@@ -11,7 +11,11 @@ export async function signIn(page: Page, service: string, email: string): Promis
 }
 
 /** Invites a person and gives the link that is shown this once. */
-export async function invite(page: Page, service: string, person: { name: string; email: string; role: string }): Promise<string> {
+export async function invite(
+  page: Page,
+  service: string,
+  person: { name: string; email: string; role: string },
+): Promise<string> {
   await page.goto(`${service}/people`);
   await page.getByRole('button', { name: 'Invite a person' }).click();
   await page.getByLabel('Name').fill(person.name);

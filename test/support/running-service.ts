@@ -37,12 +37,21 @@ async function untilHealthy(url: string, process: ChildProcess, output: () => st
 }
 
 /** Starts the built service as `npm start` does, with a data folder and ports of its own. */
-export async function startService(environment: Readonly<Record<string, string>>, waitMs = 60_000): Promise<RunningService> {
+export async function startService(
+  environment: Readonly<Record<string, string>>,
+  waitMs = 60_000,
+): Promise<RunningService> {
   const dataFolder = environment['DATA_DIR'] ?? mkdtempSync(join(tmpdir(), 'tarebeam-run-'));
   const [port, partnerPagePort] = [await freePort(), await freePort()];
   const child = spawn(process.execPath, [join(rootFolder, 'dist', 'service', 'src', 'main.js')], {
     cwd: rootFolder,
-    env: { ...process.env, PORT: String(port), PARTNER_PAGE_PORT: String(partnerPagePort), DATA_DIR: dataFolder, ...environment },
+    env: {
+      ...process.env,
+      PORT: String(port),
+      PARTNER_PAGE_PORT: String(partnerPagePort),
+      DATA_DIR: dataFolder,
+      ...environment,
+    },
   });
   let text = '';
   for (const stream of [child.stdout, child.stderr]) stream.on('data', (chunk: Buffer) => (text += chunk.toString()));

@@ -35,7 +35,10 @@ export interface TestService {
   readonly app: Express;
   readonly services: Services;
   readonly clock: TestClock;
-  addPerson(roles: readonly Role[], options?: { readonly name?: string; readonly partnerId?: string }): Promise<TestPerson>;
+  addPerson(
+    roles: readonly Role[],
+    options?: { readonly name?: string; readonly partnerId?: string },
+  ): Promise<TestPerson>;
   /** Signs in and gives an agent that carries the cookie and the CSRF header. */
   signIn(person: TestPerson): Promise<TestAgent>;
   /** The two together. */
@@ -66,14 +69,32 @@ export async function startTestService(options: Pick<ComposeOptions, 'maximumFil
   const config = readConfig({ DATA_DIR: folder, DEMO: 'off', SESSION_SECRET: 'a secret that only the tests know of' });
   await copyTemplateDatabase(databasePathOf(config));
   const clock = new TestClock();
-  const services = compose({ config, log: pino({ level: 'silent' }), clock, validateAnswers: true, sessionCleanupMs: 0, fitThreadArguments, ...options });
+  const services = compose({
+    config,
+    log: pino({ level: 'silent' }),
+    clock,
+    validateAnswers: true,
+    sessionCleanupMs: 0,
+    fitThreadArguments,
+    ...options,
+  });
   const app = createApp(services);
 
-  async function addPerson(roles: readonly Role[], options: { name?: string; partnerId?: string } = {}): Promise<TestPerson> {
+  async function addPerson(
+    roles: readonly Role[],
+    options: { name?: string; partnerId?: string } = {},
+  ): Promise<TestPerson> {
     passwordHash ??= hashPassword(testPassword);
     const id = newId();
     const person = { id, name: options.name ?? `Person ${id.slice(0, 4)}`, email: `${id}@desk.example` };
-    await services.people.insert({ ...person, roles, partnerId: options.partnerId ?? null, state: 'active', passwordHash: await passwordHash, createdAt: clock.now().toISOString() });
+    await services.people.insert({
+      ...person,
+      roles,
+      partnerId: options.partnerId ?? null,
+      state: 'active',
+      passwordHash: await passwordHash,
+      createdAt: clock.now().toISOString(),
+    });
     return person;
   }
 

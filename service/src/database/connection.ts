@@ -12,7 +12,8 @@ function camelCaseKeys(row: unknown): unknown {
 
 /** Rows are camelCase in code and snake_case in tables. */
 const caseMapping: Pick<Knex.Config, 'wrapIdentifier' | 'postProcessResponse'> = {
-  wrapIdentifier: (value: string | undefined, original) => (value === undefined ? '' : value === '*' ? '*' : original(snakeCase(value))),
+  wrapIdentifier: (value: string | undefined, original) =>
+    value === undefined ? '' : value === '*' ? '*' : original(snakeCase(value)),
   postProcessResponse: (result: unknown) => (Array.isArray(result) ? result.map(camelCaseKeys) : camelCaseKeys(result)),
 };
 

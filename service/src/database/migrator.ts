@@ -36,7 +36,10 @@ export class FolderMigrations implements Knex.MigrationSource<MigrationFile> {
  */
 export async function migrate(knex: Knex, folder: string): Promise<readonly string[]> {
   await knex.raw('PRAGMA foreign_keys = OFF');
-  const [, applied] = (await knex.migrate.latest({ migrationSource: new FolderMigrations(folder) })) as [number, string[]];
+  const [, applied] = (await knex.migrate.latest({ migrationSource: new FolderMigrations(folder) })) as [
+    number,
+    string[],
+  ];
   const broken = (await knex.raw('PRAGMA foreign_key_check')) as unknown[];
   if (broken.length > 0) throw new Error(`After migrating, ${broken.length} rows refer to rows that do not exist.`);
   await knex.raw('PRAGMA foreign_keys = ON');

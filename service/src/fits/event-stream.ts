@@ -10,13 +10,11 @@ export interface EventStream {
 
 /** Answers with server-sent events (WHATWG HTML, section 9.2). `onClose` runs when either side closes. */
 export function openEventStream(response: Response, onClose: () => void): EventStream {
-  response
-    .status(200)
-    .set({
-      'Content-Type': 'text/event-stream; charset=utf-8',
-      'Cache-Control': 'no-store',
-      'X-Accel-Buffering': 'no',
-    });
+  response.status(200).set({
+    'Content-Type': 'text/event-stream; charset=utf-8',
+    'Cache-Control': 'no-store',
+    'X-Accel-Buffering': 'no',
+  });
   response.flushHeaders();
   const heartbeat = setInterval(() => response.write(': still here\n\n'), heartbeatEveryMs).unref();
   response.on('close', () => {

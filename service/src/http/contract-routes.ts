@@ -36,14 +36,19 @@ function pointed(errors: readonly ErrorObject[] | null | undefined): PointedErro
     const missing = error.keyword === 'required' ? `/${String(error.params['missingProperty'])}` : '';
     const unknown = error.keyword === 'additionalProperties' ? `: ${String(error.params['additionalProperty'])}` : '';
     const allowed = error.keyword === 'enum' ? `: ${(error.params['allowedValues'] as unknown[]).join(', ')}` : '';
-    return { pointer: `#${error.instancePath}${missing}`, detail: `${error.message ?? 'is not valid'}${unknown}${allowed}` };
+    return {
+      pointer: `#${error.instancePath}${missing}`,
+      detail: `${error.message ?? 'is not valid'}${unknown}${allowed}`,
+    };
   });
 }
 
 function requireValid(validate: ValidateFunction, value: unknown, place: string): void {
   if (validate(value)) return;
   const errors = pointed(validate.errors);
-  const where = errors[0] ? `${errors[0].pointer === '#' ? place : `${place} ${errors[0].pointer}`} ${errors[0].detail}` : place;
+  const where = errors[0]
+    ? `${errors[0].pointer === '#' ? place : `${place} ${errors[0].pointer}`} ${errors[0].detail}`
+    : place;
   throw new DeskError('request-invalid', `Mend the request and send it again: ${where}.`, { errors });
 }
 
@@ -85,12 +90,19 @@ export class ContractRoutes<Operations extends { [Id in keyof Operations]: Opera
   }
 
   /** A handler that writes the answer itself: files and event streams. */
-  handle<Id extends keyof Operations & string>(id: Id, handler: (call: Call<Operations[Id]>) => Promise<void> | void): void {
+  handle<Id extends keyof Operations & string>(
+    id: Id,
+    handler: (call: Call<Operations[Id]>) => Promise<void> | void,
+  ): void {
     const operation = this.contract.operation(id);
     this.mounted.add(id);
-    this.router[operation.method](operation.path, this.options.guard(id), async (request: Request, response: Response) => {
-      await handler(this.validCall<Operations[Id]>(operation, request, response));
-    });
+    this.router[operation.method](
+      operation.path,
+      this.options.guard(id),
+      async (request: Request, response: Response) => {
+        await handler(this.validCall<Operations[Id]>(operation, request, response));
+      },
+    );
   }
 
   requireComplete(): void {
@@ -121,7 +133,13 @@ export class ContractRoutes<Operations extends { [Id in keyof Operations]: Opera
       }
       requireValid(validators.body, request.body, 'The body');
     }
-    return { path: path as PathOf<Op>, query: query as QueryOf<Op>, body: request.body as BodyOf<Op>, request, response };
+    return {
+      path: path as PathOf<Op>,
+      query: query as QueryOf<Op>,
+      body: request.body as BodyOf<Op>,
+      request,
+      response,
+    };
   }
 
   private checkAnswer(id: string, answer: unknown): void {

@@ -112,12 +112,16 @@ export class Contract {
   private compileParameters(path: string, method: HttpMethod, place: 'path' | 'query'): ValidateFunction {
     const item = (this.document['paths'] as Record<string, Json>)[path];
     const listed = ((item[method] as Json)['parameters'] as Json[] | undefined) ?? [];
-    const parameters = listed.map((parameter) => this.resolve(parameter)).filter((parameter) => parameter['in'] === place);
+    const parameters = listed
+      .map((parameter) => this.resolve(parameter))
+      .filter((parameter) => parameter['in'] === place);
     return this.coercing.compile({
       type: 'object',
       additionalProperties: false,
       required: parameters.filter((parameter) => parameter['required']).map((parameter) => parameter['name']),
-      properties: Object.fromEntries(parameters.map((parameter) => [parameter['name'], this.resolve(parameter['schema'] as Json)])),
+      properties: Object.fromEntries(
+        parameters.map((parameter) => [parameter['name'], this.resolve(parameter['schema'] as Json)]),
+      ),
     });
   }
 

@@ -23,7 +23,8 @@ export function csrfGuard(secret: string, secure: boolean): CsrfGuard {
     getCsrfTokenFromRequest: (request) => request.get('x-xsrf-token'),
   });
   return {
-    issueToken: (request, response) => guard.generateCsrfToken(request, response, { overwrite: false, validateOnReuse: false }),
+    issueToken: (request, response) =>
+      guard.generateCsrfToken(request, response, { overwrite: false, validateOnReuse: false }),
     requireToken: guard.doubleCsrfProtection,
   };
 }
@@ -33,7 +34,8 @@ export function requireOwnSite(publicUrl: string): RequestHandler {
   return (request, _response, next) => {
     const site = request.get('sec-fetch-site');
     const origin = request.get('origin');
-    const foreign = (site !== undefined && site !== 'same-origin') || (origin !== undefined && !isOwn(origin, publicUrl, request));
+    const foreign =
+      (site !== undefined && site !== 'same-origin') || (origin !== undefined && !isOwn(origin, publicUrl, request));
     next(foreign ? new DeskError('request-forged', 'Sign in from the console’s own page.') : undefined);
   };
 }

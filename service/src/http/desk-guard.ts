@@ -9,7 +9,9 @@ export function deskGuard(csrf: CsrfGuard): (operationId: string) => RequestHand
     const access = requireAccess(operationId);
     if (permissions[operationId as DeskOperation] === 'public') return access;
     return (request, response, next) => {
-      access(request, response, (error?: unknown) => (error ? next(error) : csrf.requireToken(request, response, next)));
+      access(request, response, (error?: unknown) =>
+        error ? next(error) : csrf.requireToken(request, response, next),
+      );
     };
   };
 }

@@ -7,7 +7,10 @@ const escapeHtml = (text: string): string => text.replace(/[&<>"]/g, (mark) => `
 
 function problemsPage(): string {
   const rows = Object.entries(problemKinds)
-    .map(([code, kind]) => `<tr id="${code}"><td><code>${code}</code></td><td>${kind.status}</td><td>${escapeHtml(kind.title)}</td></tr>`)
+    .map(
+      ([code, kind]) =>
+        `<tr id="${code}"><td><code>${code}</code></td><td>${kind.status}</td><td>${escapeHtml(kind.title)}</td></tr>`,
+    )
     .join('\n');
   return `<!doctype html><html lang="en"><head><meta charset="utf-8"><title>Problems</title></head><body>
 <h1>Problems</h1><p>Every error is answered as RFC 9457 problem details. Rely on <code>code</code>; <code>detail</code> says what to do this time.</p>
@@ -26,6 +29,13 @@ export function documentation(contracts: readonly Contract[]): Router {
     url: `/docs/${contract.name}.json`,
   }));
   router.use('/', swaggerUi.serve);
-  router.get('/', swaggerUi.setup(undefined, { explorer: true, customSiteTitle: 'Tarebeam documentation', swaggerOptions: { urls, validatorUrl: null } }));
+  router.get(
+    '/',
+    swaggerUi.setup(undefined, {
+      explorer: true,
+      customSiteTitle: 'Tarebeam documentation',
+      swaggerOptions: { urls, validatorUrl: null },
+    }),
+  );
   return router;
 }

@@ -23,7 +23,9 @@ function translate(error: unknown): DeskError | null {
     return new DeskError('body-unreadable', 'The body is not valid JSON. Mend it and send it again.', { cause: error });
   }
   if (error.status >= 400 && error.status < 500) {
-    return new DeskError('request-invalid', 'The request could not be read. Check its address and headers.', { cause: error });
+    return new DeskError('request-invalid', 'The request could not be read. Check its address and headers.', {
+      cause: error,
+    });
   }
   return null;
 }
@@ -40,7 +42,8 @@ export function problemDetails(log: Logger): ErrorRequestHandler {
     const problem = known ?? new DeskError('internal', `Tell the desk this number: ${request.requestId}.`);
     const { errors, line, retryAfter } = problem.more;
     if (retryAfter !== undefined) response.setHeader('Retry-After', String(retryAfter));
-    if (problem.status === 401) response.setHeader('WWW-Authenticate', problem.code.startsWith('key-') ? 'ApiKey header="X-Api-Key"' : 'Session');
+    if (problem.status === 401)
+      response.setHeader('WWW-Authenticate', problem.code.startsWith('key-') ? 'ApiKey header="X-Api-Key"' : 'Session');
     response
       .status(problem.status)
       .type('application/problem+json')

@@ -188,7 +188,11 @@ function mayManage(person: SignedInPerson, partnerId: string): boolean {
 /** A partner developer issues keys of their own, and must not set their own limits aside. */
 function requireModestLimit(person: SignedInPerson, perMinute: number): void {
   if (person.roles.includes('administrator') || perMinute <= mostPerMinuteOfPartner) return;
-  throw new DeskError('request-invalid', `Ask the desk for a key of more than ${mostPerMinuteOfPartner} calls a minute.`, {
-    errors: [{ pointer: '#/perMinute', detail: `at most ${mostPerMinuteOfPartner}; the desk can give more` }],
-  });
+  throw new DeskError(
+    'request-invalid',
+    `Ask the desk for a key of more than ${mostPerMinuteOfPartner} calls a minute.`,
+    {
+      errors: [{ pointer: '#/perMinute', detail: `at most ${mostPerMinuteOfPartner}; the desk can give more` }],
+    },
+  );
 }

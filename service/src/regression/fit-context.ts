@@ -1,4 +1,4 @@
-import { buildDesign } from './design/build-design';
+import { buildDesign, sharedArray } from './design/build-design';
 import type { DesignMatrix } from './design/design-matrix';
 import type { Moments } from './design/moments';
 import { findColumn } from './design/read-input';
@@ -106,6 +106,9 @@ export async function segmentMoments(context: FitContext): Promise<readonly Mome
   const answers = await context.run(segmentSpans(plan).map((span) => ({ kind: 'moments', design, span })));
   return answers.map((answer) => {
     if (answer.kind !== 'moments') throw new TypeError('A moments task was answered with something else.');
-    return answer.moments;
+    // Shared, so that handing them to a worker thread copies nothing.
+    const shared = sharedArray(answer.moments.length);
+    shared.set(answer.moments);
+    return shared;
   });
 }

@@ -1,9 +1,9 @@
-import { of, toArray } from 'rxjs';
-import { Page, everyItem, queryOf } from './page';
+import { Observable, of, toArray } from 'rxjs';
+import { Page, Paged, everyItem, queryOf } from './page';
 
 describe('everyItem', () => {
   function listOf(total: number): {
-    read: (page: Page) => ReturnType<typeof of<{ items: number[]; total: number }>>;
+    read: (page: Page) => Observable<Paged<number>>;
     asked: Page[];
   } {
     const all = Array.from({ length: total }, (_, index) => index);
