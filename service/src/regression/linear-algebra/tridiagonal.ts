@@ -28,7 +28,6 @@ export function tridiagonalise(matrix: Float64Array, size: number): Tridiagonal 
   const diagonal = new Float64Array(size);
   const offDiagonal = new Float64Array(size);
   const betas = new Float64Array(size);
-  const reflectors = new Float64Array(size * size);
   let pending: Pending = { v: new Float64Array(size), w: new Float64Array(size) };
   for (let k = 0; k < size; k += 1) {
     updateColumn(matrix, size, k, pending);
@@ -37,12 +36,13 @@ export function tridiagonalise(matrix: Float64Array, size: number): Tridiagonal 
     const v = new Float64Array(size);
     for (let i = k + 1; i < size; i += 1) v[i] = matrix[i * size + k];
     [betas[k], offDiagonal[k]] = makeReflector(v, k + 1, size);
-    reflectors.set(v, k * size);
+    // Row k right of the diagonal is not used again: it keeps the reflector.
+    matrix.set(v.subarray(k + 1), k * size + k + 1);
     const product = updateAndMultiply(matrix, size, k + 1, pending, v);
     pending = { v, w: halfStep(product, v, betas[k], k + 1, size) };
     if (betas[k] === 0) pending = { v: new Float64Array(size), w: new Float64Array(size) };
   }
-  return { size, diagonal, offDiagonal, reflectors, betas };
+  return { size, diagonal, offDiagonal, reflectors: matrix, betas };
 }
 
 /** Column k of the trailing block with the pending reflection applied. */

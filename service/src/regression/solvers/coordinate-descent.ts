@@ -49,6 +49,8 @@ export function descend(
   const inside = new Uint8Array(held.size);
   working.forEach((j) => (inside[j] = 1));
   const most = penalty.square.some((value) => value > 0) ? MOST_POLISHED.elasticNet : MOST_POLISHED.lasso;
+  const followed = followExactly(held, penalty, state, most, polish);
+  if (followed !== null) return followed;
   let iterations = 0;
   let polished = false;
   for (;;) {
@@ -63,6 +65,40 @@ export function descend(
       return { weights: state.weights.slice(), gap, iterations, converged: gap <= DUALITY_GAP };
     }
   }
+}
+
+/** Active sets from this size on are followed exactly from λ to λ; sweeps would bring columns in only to lose them again. */
+const LEAST_FOLLOWED = 40;
+const MOST_ROUNDS = 60;
+
+/**
+ * Lasso with a large active set: solve exactly with the signs as they are, let every column outside that violates its condition
+ * take one descent step, and again, until none does. Null where that does not apply or does not end; sweeps then go on.
+ */
+function followExactly(
+  held: HeldProblem,
+  penalty: HeldPenalty,
+  state: DescentState,
+  most: number,
+  polish: boolean,
+): DescentAnswer | null {
+  const { weights, gradient } = state;
+  const used = weights.reduce((count, weight) => count + (weight === 0 ? 0 : 1), 0);
+  if (used < LEAST_FOLLOWED || most !== MOST_POLISHED.lasso) return null;
+  for (let round = 1; round <= MOST_ROUNDS; round += 1) {
+    if (!state.exact.solve(held, penalty, weights, most)) return null;
+    refreshGradient(held, state);
+    const violating = Array.from(weights.keys()).filter(
+      (j) => weights[j] === 0 && allowedPull(gradient[j], penalty.signs[j]) > penalty.absolute[j] * (1 + 1e-9),
+    );
+    const gap = relativeGap(held, penalty, weights, gradient);
+    if (gap <= DUALITY_GAP && (!polish || violating.length === 0)) {
+      return { weights: weights.slice(), gap, iterations: round, converged: true };
+    }
+    if (violating.length === 0) return null;
+    sweepOnce(held, penalty, state, violating, violating);
+  }
+  return null;
 }
 
 /** Columns in use, and those that may come in: pull ≥ 2·threshold − previous threshold. */
