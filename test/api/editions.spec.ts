@@ -139,9 +139,10 @@ describe('editions', () => {
   it('cannot be two in force, even past the service', async () => {
     const { knex } = service.services;
     const id = await submitted();
-    await expect(knex('editions').where({ id }).update({ state: 'in-force' })).rejects.toThrow(
-      /UNIQUE constraint failed/,
-    );
+    // The driver's errors belong to the worker's first test file, so they are known by their message alone.
+    await expect(knex('editions').where({ id }).update({ state: 'in-force' })).rejects.toMatchObject({
+      message: expect.stringMatching(/UNIQUE constraint failed/),
+    });
   });
 
   it('are sent back as drafts with a note, and may then be submitted again', async () => {

@@ -76,6 +76,8 @@ describe('migrations', () => {
       createdBy: 'person',
     });
     await knex('editions').insert(edition('first', 1));
-    await expect(knex('editions').insert(edition('second', 2))).rejects.toThrow(/UNIQUE/);
+    await expect(knex('editions').insert(edition('second', 2))).rejects.toMatchObject({
+      message: expect.stringMatching(/UNIQUE/),
+    });
   });
 });
