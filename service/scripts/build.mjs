@@ -102,3 +102,10 @@ export function build() {
     writeFileSync(builtMark, JSON.stringify(built, null, 1));
   }
 }
+
+/** Makes the next `build` build these parts whatever their sources: a watcher puts development builds in their place. */
+export function forget(names) {
+  const built = JSON.parse(readFileSync(builtMark, 'utf8'));
+  for (const name of names) delete built[name];
+  writeFileSync(builtMark, JSON.stringify(built, null, 1));
+}

@@ -1,10 +1,11 @@
 /** `npm run dev`: the same as `npm start`, and every program is built again as its sources change. */
 import { spawn } from 'node:child_process';
 import { join } from 'node:path';
-import { build, install, rootFolder } from './build.mjs';
+import { build, forget, install, rootFolder } from './build.mjs';
 
 install();
 build();
+forget(['console', 'widget']);
 const bin = (name) => join(rootFolder, 'node_modules', '.bin', name);
 const watchers = [
   [
