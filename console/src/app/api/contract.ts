@@ -22,6 +22,8 @@ export type RecordColumn = Schemas['RecordRevision']['columns'][number];
 export type ColumnKind = RecordColumn['kind'];
 export type Histogram = NonNullable<RecordColumn['histogram']>;
 export type RecordRows = Schemas['RecordRows'];
+export type RecordFindings = Schemas['RecordFindings'];
+export type Finding = Schemas['Finding'];
 
 export type Estimator = Schemas['Estimator'];
 export type EstimatorList = Schemas['EstimatorList'];

@@ -1,7 +1,7 @@
 import { HttpClient } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
 import { Observable } from 'rxjs';
-import type { RecordRevision, RecordRows, RecordSet, RecordSetDetail, RecordSetList } from './contract';
+import type { RecordFindings, RecordRevision, RecordRows, RecordSet, RecordSetDetail, RecordSetList } from './contract';
 import { Page, queryOf } from './page';
 import { Upload, upload } from './upload';
 
@@ -29,6 +29,12 @@ export class RecordsClient {
 
   readRows(revisionId: string, page: Page): Observable<RecordRows> {
     return this.http.get<RecordRows>(`/api/record-revisions/${revisionId}/rows`, { params: queryOf(page) });
+  }
+
+  /** Name a numeric column as the target to have columns sought that may be known too late to estimate it. */
+  readFindings(revisionId: string, target?: string): Observable<RecordFindings> {
+    const params = queryOf({ target });
+    return this.http.get<RecordFindings>(`/api/record-revisions/${revisionId}/findings`, { params });
   }
 
   /** Unsubscribe to cancel. The service reads the fields before the file, so they go first. */
