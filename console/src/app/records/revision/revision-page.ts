@@ -11,6 +11,7 @@ import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
 import { SheetSection } from '../../ui/sheet/sheet-section';
 import { ColumnsTable } from './columns-table';
+import { FindingsList } from './findings-list';
 import { RowsTable } from './rows-table';
 import { StartFit } from './start-fit';
 
@@ -23,6 +24,7 @@ const DELIMITER_WORDS: Readonly<Record<string, string>> = { ',': 'comma', ';': '
     BytesPipe,
     ColumnsTable,
     CountPipe,
+    FindingsList,
     LoadingState,
     MomentPipe,
     PageHead,
