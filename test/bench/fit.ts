@@ -10,7 +10,7 @@ import { join } from 'node:path';
 import { fitRecords } from '../../service/src/regression/fit';
 import { crossProduct } from '../../service/src/regression/linear-algebra/cross-product';
 import type { FitResult } from '../../service/src/regression/result';
-import { FoldPool } from './fold-pool';
+import { FoldPool } from '../../service/src/fits/fold-pool';
 import { asRecords, FOLDS, generateData, type BenchSize, type GeneratedData } from './generated-records';
 
 type BenchMethod = 'ridge' | 'lasso';
@@ -46,7 +46,7 @@ interface Timed {
 /** `seconds` ends when penalty and weights are known; `wholeSeconds` also has intervals, diagnostics and the formula. */
 async function timeFit(data: GeneratedData, size: BenchSize, method: BenchMethod): Promise<Timed> {
   const records = asRecords(data, size);
-  const pool = new FoldPool(THREADS);
+  const pool = new FoldPool({ threads: THREADS });
   const start = performance.now();
   let chosen = start;
   const { result } = await fitRecords(

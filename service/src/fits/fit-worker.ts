@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os';
 import { parentPort, workerData } from 'node:worker_threads';
 import { readRecordTable } from '../records/record-table-reader';
 import { RegressionError } from '../regression/errors';
@@ -5,16 +6,39 @@ import { fitRecords } from '../regression/fit';
 import { canonicalJson } from './canonical-json';
 import { columnsOf, toEngineSpecification } from './engine-specification';
 import type { FitMessage, FitOutcome, FitTask } from './fit-task';
+import { FoldPool } from './fold-pool';
 import { publishedResult } from './published-result';
 
 const say = (message: FitMessage): void => parentPort?.postMessage(message);
 
-async function compute(task: FitTask): Promise<FitOutcome> {
+const tell = (stage: string, done: number, total: number): void =>
+  say({ kind: 'progress', progress: { stage, done: Math.round(done), total: Math.round(total) } });
+
+/** Cells from which the folds are worth threads of their own; below, starting threads takes longer than the fit. */
+const cellsWorthThreads = 1_000_000;
+
+function poolFor(task: FitTask, rowCount: number): FoldPool | null {
+  const threads = Math.min(availableParallelism(), task.specification.validation?.folds ?? 10);
+  if (threads < 2 || rowCount * task.specification.inputs.length < cellsWorthThreads) return null;
+  return new FoldPool({ threads, onAnswered: (done, total) => tell('validation', done, total) });
+}
+
+/** The same bits with threads for the folds as without. */
+async function fit(task: FitTask): ReturnType<typeof fitRecords> {
   const records = await readRecordTable(task.databasePath, task.revisionId, columnsOf(task.specification));
-  const { result, formula } = await fitRecords(records, toEngineSpecification(task.specification), {
-    onProgress: ({ stage, done, total }) =>
-      say({ kind: 'progress', progress: { stage, done: Math.round(done), total: Math.round(total) } }),
-  });
+  const pool = poolFor(task, records.rowCount);
+  try {
+    return await fitRecords(records, toEngineSpecification(task.specification), {
+      onProgress: ({ stage, done, total }) => tell(stage, done, total),
+      ...(pool && { runFolds: pool.run }),
+    });
+  } finally {
+    await pool?.close();
+  }
+}
+
+async function compute(task: FitTask): Promise<FitOutcome> {
+  const { result, formula } = await fit(task);
   const { penalty, accuracy } = result;
   return {
     kind: 'done',

@@ -1,5 +1,5 @@
 import { parentPort } from 'node:worker_threads';
-import { runFoldTask, type FoldTask } from '../../service/src/regression/selection/fold-task';
+import { runFoldTask, type FoldTask } from '../regression/selection/fold-task';
 
 interface Message {
   readonly at: number;
