@@ -10,7 +10,7 @@ import { join } from 'node:path';
 import { fitRecords } from '../../service/src/regression/fit';
 import { crossProduct } from '../../service/src/regression/linear-algebra/cross-product';
 import type { FitResult } from '../../service/src/regression/result';
-import { FoldPool } from '../../service/src/fits/fold-pool';
+import { FoldPool, threadsForFolds } from '../../service/src/fits/fold-pool';
 import { asRecords, FOLDS, generateData, type BenchSize, type GeneratedData } from './generated-records';
 
 type BenchMethod = 'ridge' | 'lasso';
@@ -46,7 +46,8 @@ interface Timed {
 /** `seconds` ends when penalty and weights are known; `wholeSeconds` also has intervals, diagnostics and the formula. */
 async function timeFit(data: GeneratedData, size: BenchSize, method: BenchMethod): Promise<Timed> {
   const records = asRecords(data, size);
-  const pool = new FoldPool({ threads: THREADS });
+  const threads = threadsForFolds({ rowCount: size.records, inputCount: size.inputs, folds: FOLDS });
+  const pool = threads === 1 ? null : new FoldPool({ threads });
   const start = performance.now();
   let chosen = start;
   const { result } = await fitRecords(
@@ -59,14 +60,14 @@ async function timeFit(data: GeneratedData, size: BenchSize, method: BenchMethod
       validation: { scheme: 'grouped', folds: FOLDS, column: 'fold' },
     },
     {
-      runFolds: pool.run,
+      ...(pool && { runFolds: pool.run }),
       onProgress: ({ stage, done }) => {
         if (stage === 'diagnostics' && done === 0) chosen = performance.now();
       },
     },
   );
   const end = performance.now();
-  await pool.close();
+  await pool?.close();
   return { result, seconds: (chosen - start) / 1000, wholeSeconds: (end - start) / 1000 };
 }
 

@@ -1,4 +1,3 @@
-import { availableParallelism } from 'node:os';
 import { parentPort, workerData } from 'node:worker_threads';
 import { readRecordTable } from '../records/record-table-reader';
 import { RegressionError } from '../regression/errors';
@@ -6,7 +5,7 @@ import { fitRecords } from '../regression/fit';
 import { canonicalJson } from './canonical-json';
 import { columnsOf, toEngineSpecification } from './engine-specification';
 import type { FitMessage, FitOutcome, FitTask } from './fit-task';
-import { FoldPool } from './fold-pool';
+import { FoldPool, threadsForFolds } from './fold-pool';
 import { publishedResult } from './published-result';
 
 const say = (message: FitMessage): void => parentPort?.postMessage(message);
@@ -14,13 +13,10 @@ const say = (message: FitMessage): void => parentPort?.postMessage(message);
 const tell = (stage: string, done: number, total: number): void =>
   say({ kind: 'progress', progress: { stage, done: Math.round(done), total: Math.round(total) } });
 
-/** Cells from which the folds are worth threads of their own; below, starting threads takes longer than the fit. */
-const cellsWorthThreads = 1_000_000;
-
 function poolFor(task: FitTask, rowCount: number): FoldPool | null {
-  const threads = Math.min(availableParallelism(), task.specification.validation?.folds ?? 10);
-  if (threads < 2 || rowCount * task.specification.inputs.length < cellsWorthThreads) return null;
-  return new FoldPool({ threads, onAnswered: (done, total) => tell('validation', done, total) });
+  const { inputs, validation } = task.specification;
+  const threads = threadsForFolds({ rowCount, inputCount: inputs.length, folds: validation?.folds ?? 10 });
+  return threads === 1 ? null : new FoldPool({ threads, onAnswered: (done, total) => tell('validation', done, total) });
 }
 
 /** The same bits with threads for the folds as without. */

@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os';
 import { extname, join } from 'node:path';
 import { Worker } from 'node:worker_threads';
 import type { FoldAnswer, FoldTask } from '../regression/selection/fold-task';
@@ -13,6 +14,24 @@ export interface FoldPoolOptions {
   readonly onAnswered?: (done: number, total: number) => void;
   /** Node's own arguments for the threads; those of the thread that opens the pool when absent. */
   readonly nodeArguments?: readonly string[];
+}
+
+/** Cells from which the folds are worth threads of their own; below, starting threads takes longer than the fit. */
+const cellsWorthThreads = 250_000;
+/** Order of the square matrices from which another thread's copies cost more memory than its time is worth. */
+const largestSharedOrder = 1_500;
+
+export interface FoldWork {
+  readonly rowCount: number;
+  readonly inputCount: number;
+  readonly folds: number;
+}
+
+/** How many threads a fit's folds deserve; 1 means none beside the fit's own. */
+export function threadsForFolds({ rowCount, inputCount, folds }: FoldWork): number {
+  if (rowCount * inputCount < cellsWorthThreads) return 1;
+  if (Math.min(rowCount, inputCount) > largestSharedOrder) return 1;
+  return Math.min(availableParallelism(), folds);
 }
 
 const workerPath = join(__dirname, `fold-worker${extname(__filename)}`);
