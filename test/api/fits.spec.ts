@@ -67,6 +67,21 @@ describe('fits', () => {
     expect(texts[0].formula).toContain('"format":"tarebeam-formula/1"');
   });
 
+  it('work out the longer things that are asked for', async () => {
+    const extras = { nestedFolds: true, selectionSamples: 20, learningCurve: true };
+    const [spline, ...others] = inputs;
+    const id = await finished({
+      ...ridge,
+      inputs: [{ ...spline, transform: 'spline', knots: 3 }, ...others],
+      method: 'lasso',
+      extras,
+    });
+    const { result } = (await analyst.get(`/api/fits/${id}`).expect(200)).body;
+    expect(result.accuracy.nestedRmse).toBeGreaterThan(0);
+    expect(result.diagnostics.learningCurve.length).toBeGreaterThan(1);
+    expect(result.diagnostics.selectionFrequency.length).toBeGreaterThan(0);
+  });
+
   it('use the records that the filter keeps', async () => {
     const id = await finished({
       ...ridge,

@@ -11,8 +11,8 @@ export type SpecificationInput = components['schemas']['SpecificationInput'];
 
 /** The contract's specification as the engine takes it: null and absent are one, and the words for the form stay behind. */
 export function toEngineSpecification(specification: Specification): FitSpecification {
-  const { target, inputs, weightColumn, rowFilter, method, mixing, penalty, validation, intervalLevel, intercept } =
-    specification;
+  const { target, inputs, weightColumn, rowFilter, method, mixing, penalty, validation } = specification;
+  const { intervalLevel, intercept, extras } = specification;
   return {
     target: { column: target.column, transform: target.transform ?? 'none' },
     inputs: inputs.map(toEngineInput),
@@ -24,12 +24,13 @@ export function toEngineSpecification(specification: Specification): FitSpecific
     ...(validation && { validation: toEngineValidation(validation) }),
     ...(intervalLevel !== undefined && { intervalLevel }),
     ...(intercept !== undefined && { intercept }),
+    ...(extras && { extras }),
   };
 }
 
 function toEngineInput(input: SpecificationInput): InputSpecification {
-  const { column, kind, transform, missing, unseen, penaltyFactor, sign } = input;
-  return { column, kind, transform, missing, penaltyFactor, sign, unseenLevel: unseen };
+  const { column, kind, transform, knots, missing, unseen, penaltyFactor, sign } = input;
+  return { column, kind, transform, knots, missing, penaltyFactor, sign, unseenLevel: unseen };
 }
 
 function toEnginePenalty(penalty: Specification['penalty']): PenaltySpecification {

@@ -14,6 +14,10 @@ import { formatFigure, formatShare } from '../../ui/figure';
           <span class="tb-small">, ± {{ spread() }} standard error</span>
         }
       </dd>
+      @if (nested()) {
+        <dt>With the penalty chosen anew in every fold</dt>
+        <dd>{{ nested() }}</dd>
+      }
       <dt>Mean absolute error</dt>
       <dd>{{ meanAbsolute() }}</dd>
       <dt>Share of the spread explained (R²)</dt>
@@ -33,6 +37,13 @@ export class FitAccuracy {
 
   private readonly accuracy = computed(() => this.result().accuracy);
   protected readonly error = computed(() => formatFigure(this.accuracy().rmse, { significant: 3, unit: this.unit() }));
+  protected readonly nested = computed(() => {
+    const { nestedRmse } = this.accuracy();
+    if (nestedRmse === undefined) return '';
+    return this.onLog()
+      ? `${formatFigure(nestedRmse, { significant: 3 })} on the log scale`
+      : formatFigure(nestedRmse, { significant: 3, unit: this.unit() });
+  });
   protected readonly meanAbsolute = computed(() =>
     formatFigure(this.accuracy().mae, { significant: 3, unit: this.unit() }),
   );

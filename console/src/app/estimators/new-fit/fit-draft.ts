@@ -39,6 +39,9 @@ export interface FitDraft {
   readonly gap: string;
   readonly level: string;
   readonly weightColumn: string;
+  readonly nestedFolds: boolean;
+  readonly selectionFrequency: boolean;
+  readonly learningCurve: boolean;
 }
 
 /** A category with more levels than this is left out at first: names and remarks are no measurement. */
@@ -66,6 +69,9 @@ export const emptyDraft: FitDraft = {
   gap: '0',
   level: '90',
   weightColumn: '',
+  nestedFolds: false,
+  selectionFrequency: false,
+  learningCurve: false,
 };
 
 /** Columns that can be an input at all. */
@@ -152,5 +158,13 @@ export function withInputs(draft: FitDraft, { columns, change }: InputsChange): 
   return {
     ...draft,
     inputs: draft.inputs.map((input) => (touched.has(input.column) ? { ...input, ...change } : input)),
+  };
+}
+
+/** The longer computations that the chosen method and rule have a use for. */
+export function extrasOffered({ method, rule }: FitDraft): { nestedFolds: boolean; selectionFrequency: boolean } {
+  return {
+    nestedFolds: method !== 'least-squares' && (rule === 'minimum' || rule === 'one-standard-error'),
+    selectionFrequency: method === 'lasso' || method === 'elastic-net',
   };
 }

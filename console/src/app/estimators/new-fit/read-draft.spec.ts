@@ -34,6 +34,20 @@ describe('a draft of a fit', () => {
     });
   });
 
+  it('asks for the longer computations that suit its method, and only those that were ticked', () => {
+    const extrasOf = (draft: FitDraft): unknown => {
+      const reading = readDraft(draft);
+      return 'fit' in reading ? reading.fit.specification.extras : undefined;
+    };
+    const ticked = { ...ready, nestedFolds: true, selectionFrequency: true, learningCurve: true };
+    expect(extrasOf(ready)).toBeUndefined();
+    expect(extrasOf(ticked)).toEqual({ nestedFolds: true, learningCurve: true });
+    expect(extrasOf({ ...ticked, method: 'lasso', rule: 'fixed', penaltyValue: '1' })).toEqual({
+      selectionSamples: 100,
+      learningCurve: true,
+    });
+  });
+
   it('offers no text as an input, and leaves dates out until they are ticked', () => {
     expect(ready.inputs.map((input) => input.column)).not.toContain('remarks');
     expect(ready.inputs.find((input) => input.column === 'booked')?.used).toBe(false);

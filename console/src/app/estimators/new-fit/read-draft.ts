@@ -1,7 +1,7 @@
 import type { FitNew, RecordRevision, Specification, SpecificationInput } from '../../api/contract';
 import { typedNumber } from '../words/typed-number';
 import { rulesFor } from '../words/method-words';
-import { type FitDraft, type InputDraft, usedInputs } from './fit-draft';
+import { type FitDraft, type InputDraft, extrasOffered, usedInputs } from './fit-draft';
 import { readRowFilter } from './read-row-filter';
 
 /** Complaints under the path that the service would give them, such as `specification/validation/folds`. */
@@ -55,6 +55,7 @@ export function readDraft(draft: FitDraft, revision?: RecordRevision): DraftRead
     ...(draft.method === 'elastic-net' ? { mixing: number('specification/mixing', draft.mixing, between0and1) } : {}),
     ...penaltyOf(draft, number),
     validation: validationOf(draft, number, problems),
+    ...extrasOf(draft),
     intervalLevel: number('specification/intervalLevel', draft.level, levelNumber) / 100,
   };
   return problems.size > 0 ? { problems } : { fit: { revisionId: draft.revisionId, specification } };
@@ -69,6 +70,19 @@ function rowFilterOf(
   const reading = readRowFilter(draft, revision);
   for (const [part, words] of Object.entries(reading.problems)) problems.set(`specification/rowFilter/${part}`, words);
   return reading.filter ? { rowFilter: reading.filter } : {};
+}
+
+/** Half samples that show how steadily an input is chosen: the usual hundred (Meinshausen and Bühlmann 2010). */
+const selectionSamples = 100;
+
+function extrasOf(draft: FitDraft): Pick<Specification, 'extras'> {
+  const offered = extrasOffered(draft);
+  const extras = {
+    ...(offered.nestedFolds && draft.nestedFolds ? { nestedFolds: true } : {}),
+    ...(offered.selectionFrequency && draft.selectionFrequency ? { selectionSamples } : {}),
+    ...(draft.learningCurve ? { learningCurve: true } : {}),
+  };
+  return Object.keys(extras).length > 0 ? { extras } : {};
 }
 
 type NumberReader = (field: string, text: string, bounds: Bounds) => number;

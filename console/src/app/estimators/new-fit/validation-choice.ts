@@ -4,7 +4,7 @@ import { ChoiceField } from '../fields/choice-field';
 import { SelectField, type Option } from '../fields/select-field';
 import { TextField } from '../fields/text-field';
 import { schemeChoices } from '../words/method-words';
-import { groupColumns, timeColumns, type FitDraft } from './fit-draft';
+import { extrasOffered, groupColumns, timeColumns, type FitDraft } from './fit-draft';
 import type { DraftProblems } from './read-draft';
 
 /** Which records are held out, and how much the intervals are to hold. */
@@ -21,6 +21,7 @@ export class ValidationChoice {
   readonly changed = output<Partial<FitDraft>>();
 
   protected readonly schemes = schemeChoices;
+  protected readonly offered = computed(() => extrasOffered(this.draft()));
   protected readonly groups = computed<readonly Option[]>(() =>
     groupColumns(this.revision()).map(({ name }) => ({ value: name, name })),
   );
