@@ -8,6 +8,7 @@ import { assembleResult, gaussianOf, leverageOf, type FinishedFit } from './fit-
 import { holdOut, smearingOf } from './inference/held-out';
 import { hatFeatures } from './inference/hat-features';
 import { leaveOneOutErrors } from './inference/leave-one-out';
+import { leaveOneOutErrorsWide } from './inference/leave-one-out-wide';
 import { leverageMatrix } from './inference/lever';
 import { nestedError } from './inference/nested';
 import type { RecordTable } from './records';
@@ -18,6 +19,7 @@ import { combineFolds, type CrossValidation } from './selection/cross-validation
 import { runFoldPaths } from './selection/fold-runs';
 import { trainingPart, type FoldAnswer, type FoldTask } from './selection/fold-task';
 import { losesDigits } from './selection/route';
+import { freePositions, type ColumnPenalties } from './solvers/column-penalties';
 import { leastSquaresInOriginalUnits } from './solvers/original-units';
 import { solvePath, type PathSolution, type TrainingPart } from './solvers/solve-path';
 import type { FitSpecification } from './specification';
@@ -134,28 +136,37 @@ function groundOf(
   const { specification, design, read, settings } = context;
   const { lambdas, form, penalties } = plan;
   const plainRidge = form !== null && settings.kind === 'ridge';
-  refuseWideLeaveOneOut(context);
-  const cost = read.count * part.problem.size * (part.problem.size + lambdas.length);
-  const wanted =
-    plainRidge &&
-    context.route !== 'wide' &&
-    (specification.penalty.rule === 'leave-one-out' || cost <= CHEAP_LEAVE_ONE_OUT);
   return {
     lambdas,
     crossValidation,
     generalised: plainRidge ? generalisedErrors(form, part.problem.weightSum, specification.intercept, lambdas) : null,
-    leaveOneOut: wanted ? leaveOneOutErrors(design, part.problem, hatFeatures(part.problem, penalties), lambdas) : null,
+    leaveOneOut: plainRidge ? leaveOneOutOf(context, part, plan) : null,
     evidence: plan.evidence?.lambda ?? null,
     settled: plan.settled,
   };
 }
 
-/** The hat matrix by columns that leave-one-out needs does not exist on the wide route. */
-function refuseWideLeaveOneOut({ route, specification }: FitContext): void {
-  if (route !== 'wide' || specification.penalty.rule !== 'leave-one-out') return;
+/** Given unasked where that is cheap; by records where inputs outnumber them, and then only when asked for. */
+function leaveOneOutOf(context: FitContext, part: TrainingPart, plan: PenaltyPlan): number[] | null {
+  const { specification, design, read, route } = context;
+  const { lambdas, penalties } = plan;
+  const asked = specification.penalty.rule === 'leave-one-out';
+  if (route === 'wide') {
+    if (!asked || part.rows === null) return null;
+    refuseFreeColumns(penalties);
+    return leaveOneOutErrorsWide(part.rows, penalties, specification.intercept, lambdas);
+  }
+  const cost = read.count * part.problem.size * (part.problem.size + lambdas.length);
+  if (!asked && cost > CHEAP_LEAVE_ONE_OUT) return null;
+  return leaveOneOutErrors(design, part.problem, hatFeatures(part.problem, penalties), lambdas);
+}
+
+/** By records, free columns would have to be projected out of the rows, which then are no records any more. */
+function refuseFreeColumns(penalties: ColumnPenalties): void {
+  if (freePositions(penalties).length === 0) return;
   throw new RegressionError(
     'bad-specification',
-    'Leave-one-out is not offered for so many inputs beside so few records. Choose generalised cross-validation or folds.',
+    'Leave-one-out is not offered for inputs left free among more inputs than records. Hold them, or choose generalised cross-validation or folds.',
   );
 }
 
