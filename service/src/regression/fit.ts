@@ -133,8 +133,8 @@ function groundOf(
   plan: PenaltyPlan,
   crossValidation: CrossValidation,
 ): Parameters<typeof choosePenalty>[0] {
-  const { specification, design, read, settings } = context;
-  const { lambdas, form, penalties } = plan;
+  const { specification, settings } = context;
+  const { lambdas, form } = plan;
   const plainRidge = form !== null && settings.kind === 'ridge';
   return {
     lambdas,
