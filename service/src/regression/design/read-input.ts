@@ -38,7 +38,9 @@ export function readInput(records: RecordTable, input: ResolvedInput, rows: Int3
 }
 
 function readNumbers(column: RecordColumn, kind: InputKind, input: ResolvedInput, rows: Int32Array): InputReadings {
-  const recorded = pick(numbersOf(column, 'input'), rows);
+  const all = numbersOf(column, 'input');
+  // Rows stand in their order, so as many as there are means all: no copy, which costs more than the reading itself.
+  const recorded = rows.length === all.length ? all : pick(all, rows);
   let missingCount = 0;
   for (let at = 0; at < recorded.length; at += 1) {
     const value = recorded[at];
