@@ -59,11 +59,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
     requireOwnSite: requireOwnSite(config.publicUrl),
   });
   mountEstimators(routes, services.estimators);
-  mountRecords(routes, {
-    records: services.records,
-    findings: services.recordFindings,
-    mending: services.recordMending,
-  });
+  mountRecords(routes, services);
   mountFits(routes, services.fits);
   mountEditions(routes, { editions: services.editions, review: services.editionReview });
   mountEstimates(routes, services.estimateTraces);
@@ -73,7 +69,6 @@ function deskApi(services: Services, secure: boolean): express.Router {
   mountSettings(routes, services.settingsService);
   mountPartners(routes, { partners: services.partners, sites: services.sites });
   mountDesk(routes, services.desk);
-  routes.requireComplete();
   routes.refuseOtherMethods();
 
   const router = express.Router();

@@ -1,4 +1,5 @@
 import { join } from 'node:path';
+import type { Logger } from 'pino';
 import type { Clock } from './clock';
 import type { Config } from './config';
 import type { Database } from './database/database';
@@ -9,6 +10,8 @@ import { KeptFiles } from './records/kept-files';
 import { RecordsService } from './records/records-service';
 import { RecordsStore } from './records/records-store';
 import { RevisionImporter } from './records/revision-importer';
+import { RecordTasks } from './records/tasks/record-tasks';
+import { RecordTasksStore } from './records/tasks/record-tasks-store';
 
 export interface RecordsOptions {
   readonly config: Config;
@@ -16,26 +19,29 @@ export interface RecordsOptions {
   readonly databasePath: string;
   readonly journal: Journal;
   readonly clock: Clock;
+  readonly log: Logger;
   readonly maximumFileBytes: number;
   readonly threadArguments: readonly string[];
 }
 
-export interface ComposedRecords {
+/** What brings records in, looks at them, mends them and lets them go. */
+export interface RecordsRoom {
   readonly records: RecordsService;
   readonly recordFindings: FindingsService;
   readonly recordMending: MendingService;
+  readonly recordTasks: RecordTasks;
   readonly keptFiles: KeptFiles;
 }
 
-/** Builds what brings records in and reads them. */
-export function composeRecords(options: RecordsOptions): ComposedRecords {
-  const { database, journal, clock, maximumFileBytes, threadArguments } = options;
+export function composeRecords(options: RecordsOptions): RecordsRoom {
+  const { database, journal, clock, log, maximumFileBytes, threadArguments } = options;
   const store = new RecordsStore(database);
   const keptFiles = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
   const importer = new RevisionImporter({ database, records: store, files: keptFiles, clock, threadArguments });
   const records = new RecordsService({ records: store, files: keptFiles, journal, clock, maximumFileBytes, importer });
   const recordFindings = new FindingsService({ records: store, databasePath: options.databasePath, threadArguments });
   const { databasePath } = options;
+  const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
   const recordMending = new MendingService({
     database,
     databasePath,
@@ -43,7 +49,8 @@ export function composeRecords(options: RecordsOptions): ComposedRecords {
     files: keptFiles,
     journal,
     clock,
+    tasks: recordTasks,
     threadArguments,
   });
-  return { records, recordFindings, recordMending, keptFiles };
+  return { records, recordFindings, recordMending, recordTasks, keptFiles };
 }

@@ -4,7 +4,7 @@ import type { Logger } from 'pino';
 import { systemClock, type Clock } from './clock';
 import { composeEditions, type EditionsRoom } from './compose-editions';
 import { composeFits } from './compose-fits';
-import { composeRecords } from './compose-records';
+import { composeRecords, type RecordsRoom } from './compose-records';
 import type { Config } from './config';
 import { openDatabase } from './database/connection';
 import { Database } from './database/database';
@@ -36,9 +36,6 @@ import { PeopleService } from './people/people-service';
 import { PeopleStore } from './people/people-store';
 import { SignInService } from './people/sign-in-service';
 import { SignInThrottle } from './people/sign-in-throttle';
-import type { FindingsService } from './records/findings/findings-service';
-import type { MendingService } from './records/mending/mending-service';
-import type { RecordsService } from './records/records-service';
 import { Settings } from './settings/settings';
 import { SettingsService } from './settings/settings-service';
 
@@ -56,7 +53,7 @@ export interface ComposeOptions {
   readonly sessionCleanupMs?: number;
 }
 
-export interface Services extends EditionsRoom {
+export interface Services extends EditionsRoom, RecordsRoom {
   readonly config: Config;
   readonly log: Logger;
   readonly clock: Clock;
@@ -75,9 +72,6 @@ export interface Services extends EditionsRoom {
   readonly estimators: EstimatorsService;
   readonly keys: KeysService;
   readonly fits: FitsService;
-  readonly records: RecordsService;
-  readonly recordFindings: FindingsService;
-  readonly recordMending: MendingService;
   readonly fitRunner: FitRunner;
   readonly partners: PartnersService;
   readonly sites: SitesService;
@@ -109,13 +103,17 @@ export function compose(options: ComposeOptions): Services {
   const invitations = new InvitationsStore(database);
   const throttle = new SignInThrottle(database, clock);
   const journalService = new JournalService(new JournalStore(database));
-  const { records, recordFindings, recordMending, keptFiles } = composeRecords({
-    ...{ database, journal, clock, config },
+  const recordsRoom = composeRecords({
+    ...{ database, journal, clock, config, log },
     databasePath: databasePathOf(config),
     maximumFileBytes: options.maximumFileBytes ?? ordinaryFileBytes,
     threadArguments: options.fitThreadArguments ?? [],
   });
-  const sweeps = [sweepInvitations(invitations, clock), sweepSignInAttempts(throttle), sweepUploads(keptFiles)];
+  const sweeps = [
+    sweepInvitations(invitations, clock),
+    sweepSignInAttempts(throttle),
+    sweepUploads(recordsRoom.keptFiles),
+  ];
   const schedule = new Schedule(sweeps, log);
   const partners = new PartnersStore(database);
   const sites = new SitesStore(database);
@@ -142,9 +140,7 @@ export function compose(options: ComposeOptions): Services {
     keys,
     fits,
     fitRunner,
-    records,
-    recordFindings,
-    recordMending,
+    ...recordsRoom,
     ...composeEditions({ database, editions, fits: fitsStore, estimators, journal, clock }),
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),
@@ -168,6 +164,7 @@ export function compose(options: ComposeOptions): Services {
     close: async () => {
       await schedule.stop();
       await fitRunner.close();
+      await recordsRoom.recordTasks.close();
       mail.close();
       await database.close();
     },

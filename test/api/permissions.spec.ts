@@ -21,6 +21,7 @@ interface Sender {
   get(path: string): supertest.Test;
   post(path: string): supertest.Test;
   patch(path: string): supertest.Test;
+  put(path: string): supertest.Test;
   delete(path: string): supertest.Test;
 }
 
@@ -28,6 +29,7 @@ function send(sender: Sender, operation: Operation): supertest.Test {
   const address = addressOf(operation);
   if (operation.method === 'get') return sender.get(address);
   if (operation.method === 'delete') return sender.delete(address);
+  if (operation.method === 'put') return sender.put(address).send({});
   return operation.method === 'patch' ? sender.patch(address).send({}) : sender.post(address).send({});
 }
 

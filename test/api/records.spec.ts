@@ -6,6 +6,7 @@ import { join } from 'node:path';
 import { Readable } from 'node:stream';
 import { databasePathOf } from '../../service/src/compose';
 import { readRecordTable } from '../../service/src/records/record-table-reader';
+import { endOfTask } from '../support/record-task';
 import { startTestService, testPassword, type TestAgent, type TestService } from '../support/test-service';
 
 const boats = [
@@ -72,6 +73,7 @@ describe('bringing in records', () => {
       total: 3,
       offset: 1,
       columns: ['length (m)', 'hull', 'launched', 'remark'],
+      numbers: [2, 3],
       rows: [
         [9.25, 'oak', '2020-05-02', null],
         [null, 'steel', null, 'wet'],
@@ -131,8 +133,11 @@ describe('bringing in records', () => {
       { kind: 'drop-repeated-rows' },
       { kind: 'derive', name: 'hours per metre', formula: 'hours / [length (m)]', unit: 'h/m' },
     ];
-    const mended = await analyst.post(`/api/record-revisions/${revision.id}/mended-revisions`).send({ steps });
-    expect(mended.status).toBe(201);
+    const begun = await analyst.post(`/api/record-revisions/${revision.id}/mended-revisions`).send({ steps });
+    expect(begun.status).toBe(202);
+    const task = await endOfTask(analyst, begun.body.id);
+    expect(task).toMatchObject({ kind: 'mend', state: 'done', recordSetId: id });
+    const mended = await analyst.get(`/api/record-revisions/${task.revisionId}`);
     expect(mended.body).toMatchObject({
       number: 2,
       rowCount: 3,
@@ -153,10 +158,14 @@ describe('bringing in records', () => {
     });
     expect((await analyst.get(`/api/record-sets/${id}`)).body.revision.number).toBe(2);
     const kept = keptFiles();
-    const refused = await analyst
+    const wrong = await analyst
       .post(`/api/record-revisions/${revision.id}/mended-revisions`)
       .send({ steps: [steps[1], { kind: 'drop-rows', where: 'lenght > 2' }] });
-    expect(refused.body).toMatchObject({ code: 'request-invalid', errors: [{ pointer: '#/steps/1' }] });
+    expect(await endOfTask(analyst, wrong.body.id)).toMatchObject({
+      state: 'failed',
+      revisionId: null,
+      problem: { code: 'request-invalid', errors: [{ pointer: '#/steps/1' }] },
+    });
     expect(keptFiles()).toEqual(kept);
   });
 

@@ -57,6 +57,7 @@ export interface TestAgent {
   get(path: string): supertest.Test;
   post(path: string): supertest.Test;
   patch(path: string): supertest.Test;
+  put(path: string): supertest.Test;
   delete(path: string): supertest.Test;
 }
 
@@ -107,6 +108,7 @@ export async function startTestService(options: Pick<ComposeOptions, 'maximumFil
       get: (path) => agent.get(path),
       post: (path) => agent.post(path).set('X-XSRF-TOKEN', token),
       patch: (path) => agent.patch(path).set('X-XSRF-TOKEN', token),
+      put: (path) => agent.put(path).set('X-XSRF-TOKEN', token),
       delete: (path) => agent.delete(path).set('X-XSRF-TOKEN', token),
     };
   }

@@ -8,7 +8,24 @@ const listedLevels = 50;
 
 export function toRevisionSummary(revision: RevisionRecord): Schemas['RevisionSummary'] {
   const { id, number, sha256, rowCount, columnCount, byteCount, fileName, createdAt, createdBy } = revision;
-  return { id, number, sha256, rowCount, columnCount, byteCount, fileName, createdAt, createdBy: { ...createdBy } };
+  const { originalKept, erasedAt } = revision;
+  const facts = { sha256, rowCount, columnCount, byteCount, fileName, originalKept, erasedAt, createdAt };
+  return {
+    id,
+    number,
+    origin: originOf(revision),
+    basedOn: basedOnOf(revision),
+    ...facts,
+    createdBy: { ...createdBy },
+  };
+}
+
+const originOf = ({ mendedFrom, appendedTo }: RevisionRecord): Schemas['RevisionSummary']['origin'] =>
+  mendedFrom !== null ? 'mended' : appendedTo !== null ? 'appended' : 'file';
+
+function basedOnOf({ mendedFrom, appendedTo, basedOnNumber }: RevisionRecord): Schemas['RevisionSummary']['basedOn'] {
+  const id = mendedFrom ?? appendedTo;
+  return id === null || basedOnNumber === null ? null : { id, number: basedOnNumber };
 }
 
 export function toRevisionAnswer(
@@ -20,19 +37,22 @@ export function toRevisionAnswer(
     ...toRevisionSummary(revision),
     recordSetId,
     recordSetName,
-    reading: { ...reading },
+    reading: {
+      ...reading,
+      missingMarks: [...reading.missingMarks],
+      setAside: [...reading.setAside],
+      unreadable: reading.unreadable.map((column) => ({ ...column })),
+    },
     mending: toMending(revision),
+    appendedRowCount: revision.appendedRowCount,
     columns: columns.map(toColumn),
   };
 }
 
 export function toSetSummary(set: RecordSetRecord, newest: RevisionRecord): Schemas['RecordSetSummary'] {
-  const { id, name, description, createdAt, createdBy, revisionCount } = set;
+  const { id, name, description, retainUntil, createdAt, createdBy, revisionCount } = set;
   return {
-    id,
-    name,
-    description,
-    createdAt,
+    ...{ id, name, description, retainUntil, createdAt },
     createdBy: { ...createdBy },
     revisionCount,
     revision: toRevisionSummary(newest),
@@ -44,46 +64,25 @@ export function toSetDetail(
   revisions: readonly RevisionRecord[],
   columns: readonly ColumnRecord[],
 ): Schemas['RecordSetDetail'] {
-  const { id, name, description, createdAt, createdBy } = set;
+  const { id, name, description, retainUntil, changedAt, createdAt, createdBy } = set;
   return {
-    id,
-    name,
-    description,
-    createdAt,
+    ...{ id, name, description, retainUntil, changedAt, createdAt },
     createdBy: { ...createdBy },
     revision: toRevisionAnswer(revisions[0], columns),
     revisions: revisions.map(toRevisionSummary),
   };
 }
 
-function toColumn(column: ColumnRecord): Schemas['RecordColumn'] {
-  const {
-    name,
-    position,
-    kind,
-    unit,
-    missingCount,
-    distinctCount,
-    minimum,
-    maximum,
-    mean,
-    standardDeviation,
-    histogram,
-  } = column;
+export function toColumn(column: ColumnRecord): Schemas['RecordColumn'] {
+  const { name, position, kind, unit, missingCount, distinctCount, minimum, maximum, mean, standardDeviation } = column;
+  const { quantiles, outlying, histogram } = column;
   const levels = [...column.levels]
     .sort((a, b) => b.count - a.count || (a.value < b.value ? -1 : 1))
     .slice(0, listedLevels);
   return {
-    name,
-    position,
-    kind,
-    unit,
-    missingCount,
-    distinctCount,
-    minimum,
-    maximum,
-    mean,
-    standardDeviation,
+    ...{ name, position, kind, unit, missingCount, distinctCount, minimum, maximum, mean, standardDeviation },
+    quantiles: quantiles && quantiles.map((quantile) => ({ ...quantile })),
+    outlying: outlying && { ...outlying },
     histogram: histogram && { edges: [...histogram.edges], counts: [...histogram.counts] },
     levels: levels.map((level) => ({ ...level })),
   };

@@ -2,12 +2,13 @@ import { createReadStream } from 'node:fs';
 import { pipeline } from 'node:stream/promises';
 import type { Response } from 'express';
 import type { operations } from '../../../openapi/types/desk';
+import type { RecordsRoom } from '../compose-records';
 import type { ContractRoutes } from '../http/contract-routes';
 import { pageOf } from '../http/page';
 import { personOf } from '../people/session-passport';
-import type { FindingsService } from './findings/findings-service';
-import type { MendingService } from './mending/mending-service';
-import type { RecordsService } from './records-service';
+import { mountLooking } from './looking/looking-router';
+import { mountMending } from './mending/mending-router';
+import { mountTasks } from './tasks/tasks-router';
 
 /** Aborted when the client goes away before it is answered. */
 function goneAway(response: Response): AbortSignal {
@@ -18,16 +19,11 @@ function goneAway(response: Response): AbortSignal {
   return controller.signal;
 }
 
-export interface RecordsRouterParts {
-  readonly records: RecordsService;
-  readonly findings: FindingsService;
-  readonly mending: MendingService;
-}
-
-export function mountRecords(
-  routes: ContractRoutes<operations>,
-  { records, findings, mending }: RecordsRouterParts,
-): void {
+export function mountRecords(routes: ContractRoutes<operations>, room: RecordsRoom): void {
+  const { records } = room;
+  mountLooking(routes, room);
+  mountMending(routes, room);
+  mountTasks(routes, room);
   routes.answer('listRecordSets', ({ query }) => records.list(pageOf(query)));
   routes.answer('createRecordSet', ({ request, response }) =>
     records.createFromForm(personOf(request).id, request, goneAway(response)),
@@ -38,8 +34,6 @@ export function mountRecords(
   );
   routes.answer('readRevision', ({ path }) => records.readRevision(path.id));
   routes.answer('listRevisionRows', ({ path, query }) => records.listRows(path.id, pageOf(query)));
-  routes.answer('listRevisionFindings', ({ path, query }) => findings.list(path.id, query.target));
-  routes.answer('mendRevision', ({ path, body, request }) => mending.mend(personOf(request).id, path.id, body.steps));
   routes.handle('readRevisionOriginal', async ({ path, response }) => {
     const { path: file, fileName, byteCount } = await records.original(path.id);
     // Always a download of plain bytes: a file that somebody sent must never be shown as a page of ours.

@@ -65,7 +65,11 @@ export class RecordsService {
     const revision = await this.requireRevision(id);
     const columns = await this.parts.records.columnsOf(id);
     const rows = await readRows(this.parts.records, id, columns, page);
-    return { total: revision.rowCount, offset: page.offset, columns: columns.map((column) => column.name), rows };
+    const numbers = rows.map((_, index) => page.offset + index + 1);
+    return {
+      ...{ total: revision.rowCount, offset: page.offset, numbers, rows },
+      columns: columns.map((column) => column.name),
+    };
   }
 
   /** Where the uploaded file lies, and the name that it came with. */
@@ -128,7 +132,8 @@ export class RecordsService {
     if (await records.nameIsTaken(words.name)) throw nameTaken(words.name);
     const id = newId();
     await this.parts.importer.bringIn(given, async (store) => {
-      const set = { id, ...words, createdAt: timeText(clock), createdBy: given.personId };
+      const now = timeText(clock);
+      const set = { id, ...words, retainUntil: null, changedAt: now, createdAt: now, createdBy: given.personId };
       await translateUnique(
         () => records.insertSet(set),
         'record_sets.name_key',

@@ -2,7 +2,7 @@ import type { Database } from '../database/database';
 import type { Page } from '../http/page';
 import type { ColumnKind } from './cell-blocks';
 import type { MendStep } from './mending/apply-steps';
-import type { Histogram } from './reading/column-statistics';
+import type { Histogram, Outlying, Quantile } from './reading/column-statistics';
 import type { FinishedColumn, Level } from './reading/finished-column';
 
 export interface Reading {
@@ -10,7 +10,19 @@ export interface Reading {
   readonly delimiter: string;
   readonly decimal: '.' | ',';
   readonly header: boolean;
+  /** Of a workbook. */
+  readonly sheet: string | null;
+  readonly headerLine: number;
+  /** Marks taken as missing beside the usual ones. */
+  readonly missingMarks: readonly string[];
+  /** Columns of the file that were never stored. */
+  readonly setAside: readonly string[];
+  /** Columns with cells that do not fit the kind chosen for them. */
+  readonly unreadable: readonly { readonly column: string; readonly count: number }[];
 }
+
+/** What the readings of files said before they said more. */
+const plainReading = { sheet: null, headerLine: 1, missingMarks: [], setAside: [], unreadable: [] };
 
 export interface PersonName {
   readonly id: string;
@@ -27,6 +39,9 @@ export interface NewRecordSet {
   readonly id: string;
   readonly name: string;
   readonly description: string;
+  /** The last day on which its rows are kept; null keeps them. */
+  readonly retainUntil: string | null;
+  readonly changedAt: string;
   readonly createdAt: string;
   readonly createdBy: string;
 }
@@ -45,6 +60,10 @@ export interface NewRevision {
   /** The revision that was mended, and how; null when it came from a file. */
   readonly mendedFrom: string | null;
   readonly mending: Mending | null;
+  /** The revision whose rows come first, and how many were added to it; null when nothing was appended. */
+  readonly appendedTo: string | null;
+  readonly appendedRowCount: number | null;
+  readonly originalKept: boolean;
   readonly createdAt: string;
   readonly createdBy: string;
 }
@@ -56,6 +75,9 @@ export interface RecordSetRecord extends Omit<NewRecordSet, 'createdBy'> {
 
 export interface RevisionRecord extends Omit<NewRevision, 'createdBy'> {
   readonly recordSetName: string;
+  /** Number of the revision that was mended or appended to, while there is one. */
+  readonly basedOnNumber: number | null;
+  readonly erasedAt: string | null;
   readonly createdBy: PersonName;
 }
 
@@ -70,6 +92,8 @@ export interface ColumnRecord {
   readonly maximum: number | null;
   readonly mean: number | null;
   readonly standardDeviation: number | null;
+  readonly quantiles: readonly Quantile[] | null;
+  readonly outlying: Outlying | null;
   readonly histogram: Histogram | null;
   readonly levels: readonly Level[];
 }
@@ -83,13 +107,23 @@ export interface NewBlock {
 }
 
 type SetRow = NewRecordSet & { createdByName: string; revisionCount: number };
-type RevisionRow = Omit<NewRevision, 'reading' | 'mending'> & {
+type RevisionRow = Omit<NewRevision, 'reading' | 'mending' | 'originalKept'> & {
   mending: string | null;
   reading: string;
+  originalKept: boolean | number;
+  basedOnNumber: number | null;
+  erasedAt: string | null;
   createdByName: string;
   recordSetName: string;
 };
-type ColumnRow = Omit<ColumnRecord, 'histogram' | 'levels'> & { histogram: string | null; levels: string };
+type ColumnRow = Omit<ColumnRecord, 'quantiles' | 'outlying' | 'histogram' | 'levels'> & {
+  quantiles: string | null;
+  outlying: string | null;
+  histogram: string | null;
+  levels: string;
+};
+
+const parsed = <Value>(json: string | null): Value | null => (json === null ? null : (JSON.parse(json) as Value));
 
 export const nameKeyOf = (name: string): string => name.trim().toLowerCase();
 
@@ -110,10 +144,15 @@ export class RecordsStore {
 
   async insertColumn(revisionId: string, column: FinishedColumn): Promise<void> {
     const { name, position, kind, unit, statistics, levels } = column;
-    const histogram = statistics.histogram && JSON.stringify(statistics.histogram);
+    const figures = {
+      ...statistics,
+      quantiles: statistics.quantiles && JSON.stringify(statistics.quantiles),
+      outlying: statistics.outlying && JSON.stringify(statistics.outlying),
+      histogram: statistics.histogram && JSON.stringify(statistics.histogram),
+    };
     await this.database
       .connection('recordColumns')
-      .insert({ revisionId, name, position, kind, unit, ...statistics, histogram, levels: JSON.stringify(levels) });
+      .insert({ revisionId, name, position, kind, unit, ...figures, levels: JSON.stringify(levels) });
   }
 
   async insertBlock(block: NewBlock): Promise<void> {
@@ -151,8 +190,8 @@ export class RecordsStore {
   /** Newest first. */
   async revisionsOf(recordSetIds: readonly string[]): Promise<RevisionRecord[]> {
     const rows = (await this.revisions()
-      .whereIn('recordSetId', [...recordSetIds])
-      .orderBy('number', 'desc')
+      .whereIn('recordRevisions.recordSetId', [...recordSetIds])
+      .orderBy('recordRevisions.number', 'desc')
       .orderBy('recordRevisions.id')) as RevisionRow[];
     return rows.map(toRevision);
   }
@@ -169,7 +208,9 @@ export class RecordsStore {
       .orderBy('position')) as ColumnRow[];
     return rows.map((row) => ({
       ...row,
-      histogram: row.histogram === null ? null : (JSON.parse(row.histogram) as Histogram),
+      quantiles: parsed<Quantile[]>(row.quantiles),
+      outlying: parsed<Outlying>(row.outlying),
+      histogram: parsed<Histogram>(row.histogram),
       levels: JSON.parse(row.levels) as Level[],
     }));
   }
@@ -215,17 +256,18 @@ export class RecordsStore {
       .connection('recordRevisions')
       .join('people', 'people.id', 'recordRevisions.createdBy')
       .join('recordSets', 'recordSets.id', 'recordRevisions.recordSetId')
-      .select('recordRevisions.*', 'people.name as createdByName', 'recordSets.name as recordSetName');
+      .leftJoin('recordRevisions as base', (join) =>
+        join.on('base.id', 'recordRevisions.mendedFrom').orOn('base.id', 'recordRevisions.appendedTo'),
+      )
+      .select('recordRevisions.*', 'people.name as createdByName', 'recordSets.name as recordSetName')
+      .select('base.number as basedOnNumber');
   }
 }
 
 function toSet(row: SetRow): RecordSetRecord {
-  const { id, name, description, createdAt } = row;
+  const { id, name, description, retainUntil, changedAt, createdAt } = row;
   return {
-    id,
-    name,
-    description,
-    createdAt,
+    ...{ id, name, description, retainUntil, changedAt, createdAt },
     createdBy: { id: row.createdBy, name: row.createdByName },
     revisionCount: Number(row.revisionCount),
   };
@@ -235,7 +277,8 @@ function toRevision({ createdByName, ...row }: RevisionRow): RevisionRecord {
   return {
     ...row,
     byteCount: Number(row.byteCount),
-    reading: JSON.parse(row.reading) as Reading,
+    originalKept: Boolean(row.originalKept),
+    reading: { ...plainReading, ...(JSON.parse(row.reading) as Reading) },
     mending: row.mending === null ? null : (JSON.parse(row.mending) as Mending),
     createdBy: { id: row.createdBy, name: createdByName },
   };

@@ -80,7 +80,13 @@ export class RevisionImporter {
       originalPath: names.id,
       mendedFrom: null,
       mending: null,
-      reading: { encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
+      appendedTo: null,
+      appendedRowCount: null,
+      originalKept: true,
+      reading: {
+        ...{ encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
+        ...{ sheet: null, headerLine: format.headerLine, missingMarks: [], setAside: [], unreadable: [] },
+      },
       createdAt: timeText(clock),
       createdBy: given.personId,
     });

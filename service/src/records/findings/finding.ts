@@ -1,3 +1,5 @@
+import type { MendStep } from '../mending/apply-steps';
+
 export const findingKinds = [
   'unit-mix-up',
   'repeated-rows',
@@ -25,6 +27,10 @@ export interface Finding {
   readonly rowCount: number | null;
   /** The first of these rows, counted from 1 below the header. */
   readonly rows: readonly number[];
+  /** A condition that these rows meet and no others, where there is one. */
+  readonly where?: string;
+  /** The remedy as mending steps; none when a person has to judge. */
+  readonly steps?: readonly MendStep[];
 }
 
 /** Rows that a finding lists. */

@@ -29,7 +29,10 @@ export class FindingsService {
     if (!(await this.parts.records.findRevision(revisionId))) throw notFound('revision');
     if (target !== undefined) await this.requireNumeric(revisionId, target);
     const found = await this.search(revisionId, target ?? null);
-    const items = found.map((finding) => ({ ...finding, columns: [...finding.columns], rows: [...finding.rows] }));
+    const items = found.map(({ where = null, steps = [], ...finding }) => ({
+      ...finding,
+      ...{ columns: [...finding.columns], rows: [...finding.rows], where, steps: [...steps] },
+    }));
     return { revisionId, target: target ?? null, items };
   }
 

@@ -4,6 +4,7 @@ import { repeatedRows } from '../findings/repeated-rows';
 import { rowsText } from '../findings/finding';
 import { bindCondition, bindNumber } from './formula-evaluation';
 import { FormulaError } from './formula-tokens';
+import { changeKind } from './set-kind';
 
 export type MendStep = components['schemas']['MendStep'];
 type StepOf<Kind extends MendStep['kind']> = Extract<MendStep, { kind: Kind }>;
@@ -195,6 +196,22 @@ function derive(table: RecordTable, step: StepOf<'derive'>): Change {
   return { table: { ...table, columns: [...table.columns, column] }, told: `Added ${name} = ${step.formula}.` };
 }
 
+const kindWords: Readonly<Record<RecordColumn['kind'], string>> = {
+  numeric: 'a number',
+  category: 'a category',
+  date: 'a date',
+  text: 'text',
+};
+
+function setKind(table: RecordTable, step: StepOf<'set-kind'>): Change {
+  const { column, unreadable } = changeKind(columnOf(table, step.column), step.to, step.dateOrder);
+  const lost = unreadable === 0 ? '' : `; ${rowsText(unreadable)} could not be read so and became missing`;
+  return {
+    table: replaceColumn(table, step.column, column),
+    told: `Made ${step.column} ${kindWords[step.to]}${lost}.`,
+  };
+}
+
 function setAside(table: RecordTable, name: string): Change {
   columnOf(table, name);
   if (table.columns.length === 1) throw new Refusal('No column would be left.');
@@ -222,6 +239,8 @@ function apply(table: RecordTable, step: MendStep): Change {
           : `Set the unit of ${step.column} to ${step.unit}.`;
       return { table: replaceColumn(table, step.column, { ...column, unit: step.unit ?? undefined }), told };
     }
+    case 'set-kind':
+      return setKind(table, step);
     case 'set-aside':
       return setAside(table, step.column);
     case 'convert-unit':

@@ -1,15 +1,13 @@
 import { extname, join } from 'node:path';
-import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
 import { timeText, type Clock } from '../../clock';
 import type { Database } from '../../database/database';
-import { newId } from '../../database/new-id';
 import { DeskError, notFound } from '../../errors';
 import type { Journal } from '../../journal/journal';
 import type { KeptFiles } from '../kept-files';
-import { toRevisionAnswer } from '../record-answers';
 import type { RecordsStore, RevisionRecord } from '../records-store';
 import { storeCells } from '../store-cells';
+import type { RecordTasks, TaskContext, TaskWork } from '../tasks/record-tasks';
 import { answerOfThread } from '../worker-answer';
 import type { MendStep } from './apply-steps';
 import type { MendOutcome, MendTask } from './mend-task';
@@ -21,6 +19,7 @@ export interface MendingParts {
   readonly files: KeptFiles;
   readonly journal: Journal;
   readonly clock: Clock;
+  readonly tasks: RecordTasks;
   /** Node's own arguments for the mending thread; none when compiled. */
   readonly threadArguments: readonly string[];
 }
@@ -31,32 +30,44 @@ type Mended = Extract<MendOutcome, { kind: 'mended' }>;
 const workerPath = join(__dirname, `mend-worker${extname(__filename)}`);
 
 export class MendingService {
-  private readonly queue = pLimit(1);
-
   constructor(private readonly parts: MendingParts) {}
 
-  /** A new revision of the same set, made from this one by steps that are kept with it. */
+  /** Begins a new revision of the same set, made from this one by steps that are kept with it. */
   async mend(
     personId: string,
     revisionId: string,
     steps: readonly MendStep[],
-  ): Promise<components['schemas']['RecordRevision']> {
-    const { records, files, database } = this.parts;
-    const base = await records.findRevision(revisionId);
+  ): Promise<components['schemas']['RecordTask']> {
+    return this.parts.tasks.start(await this.workOf(personId, revisionId, steps));
+  }
+
+  /** The same, to its end: the new revision's id. */
+  async mendToEnd(personId: string, revisionId: string, steps: readonly MendStep[]): Promise<string> {
+    return this.parts.tasks.finish(await this.workOf(personId, revisionId, steps));
+  }
+
+  private async workOf(personId: string, revisionId: string, steps: readonly MendStep[]): Promise<TaskWork> {
+    const base = await this.parts.records.findRevision(revisionId);
     if (!base) throw notFound('revision');
+    return { kind: 'mend', personId, run: (context) => this.make({ base, steps, personId }, context) };
+  }
+
+  private async make(
+    { base, steps, personId }: Pick<NewMending, 'base' | 'steps' | 'personId'>,
+    context: TaskContext,
+  ): Promise<{ readonly recordSetId: string }> {
+    const { files, database, databasePath } = this.parts;
     const spillPath = files.newSpillPath();
-    const id = newId();
     try {
-      await this.queue(async () => {
-        const mended = await this.apply({ databasePath: this.parts.databasePath, revisionId, steps, spillPath });
-        await database.unitOfWork(() => this.store({ id, base, steps, personId, spillPath }, mended));
-      });
+      context.progress({ stage: 'mending', done: 0, total: steps.length });
+      const mended = await this.apply({ databasePath, revisionId: base.id, steps, spillPath });
+      context.progress({ stage: 'storing', done: 0, total: 0 });
+      const id = context.revisionId;
+      await database.unitOfWork(() => this.store({ id, base, steps, personId, spillPath }, mended));
+      return { recordSetId: base.recordSetId };
     } finally {
       await files.remove(spillPath);
     }
-    const stored = await records.findRevision(id);
-    if (!stored) throw new Error('The mended revision was not stored.');
-    return toRevisionAnswer(stored, await records.columnsOf(id));
   }
 
   private async apply(task: MendTask): Promise<Mended> {
@@ -70,11 +81,12 @@ export class MendingService {
   private async store(made: NewMending, { table, changes }: Mended): Promise<void> {
     const { records, journal, clock } = this.parts;
     const { id, base, steps, personId } = made;
-    const { recordSetId, sha256, byteCount, fileName, originalPath, reading } = base;
+    const { recordSetId, sha256, byteCount, fileName, originalPath, originalKept, reading } = base;
     const [newest] = await records.revisionsOf([recordSetId]);
     const number = newest.number + 1;
     await records.insertRevision({
-      ...{ id, recordSetId, number, sha256, byteCount, fileName, originalPath, reading },
+      ...{ id, recordSetId, number, sha256, byteCount, fileName, originalPath, originalKept, reading },
+      ...{ appendedTo: null, appendedRowCount: null },
       rowCount: table.rowCount,
       columnCount: table.columns.length,
       mendedFrom: base.id,

@@ -8,7 +8,23 @@ export interface ColumnStatistics {
   readonly maximum: number | null;
   readonly mean: number | null;
   readonly standardDeviation: number | null;
+  readonly quantiles: readonly Quantile[] | null;
+  readonly outlying: Outlying | null;
   readonly histogram: Histogram | null;
+}
+
+export interface Quantile {
+  readonly share: number;
+  readonly value: number;
+}
+
+/** Readings further from the median than five scaled median absolute deviations: below `low` or above `high`. */
+export interface Outlying {
+  readonly count: number;
+  readonly low: number;
+  readonly high: number;
+  /** Median absolute deviation × 1.4826. */
+  readonly deviation: number;
 }
 
 export interface Histogram {
@@ -25,6 +41,8 @@ const nothing: ColumnStatistics = {
   maximum: null,
   mean: null,
   standardDeviation: null,
+  quantiles: null,
+  outlying: null,
   histogram: null,
 };
 
@@ -83,6 +101,8 @@ export function statisticsOf(values: Float64Array, distinct: DistinctCounter): C
     maximum,
     mean: finite(mean + deviations / count),
     standardDeviation: finite(Math.sqrt(Math.max(0, squares - (deviations * deviations) / count) / count)),
+    quantiles: null,
+    outlying: null,
     histogram: histogramOf(values, minimum, maximum),
   };
 }

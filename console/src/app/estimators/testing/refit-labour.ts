@@ -17,6 +17,7 @@ export const tomas = { id: 'person0tomas', name: 'Tomas Lindqvist' };
 export const revisionReference = {
   id: 'revision0003',
   number: 3,
+  ...{ origin: 'file', basedOn: null, originalKept: true, erasedAt: null },
   sha256: 'ab'.repeat(32),
   rowCount: 2391,
   recordSetId: 'recordset001',
@@ -206,6 +207,8 @@ const emptyColumn = {
   maximum: 9,
   mean: 4,
   standardDeviation: 2,
+  quantiles: null,
+  outlying: null,
   histogram: null,
   levels: [],
   unit: null,
@@ -214,6 +217,7 @@ const emptyColumn = {
 export const revision: RecordRevision = {
   id: 'revision0003',
   number: 3,
+  ...{ origin: 'file', basedOn: null, originalKept: true, erasedAt: null },
   sha256: 'ab'.repeat(32),
   rowCount: 2391,
   columnCount: 6,
@@ -223,7 +227,10 @@ export const revision: RecordRevision = {
   createdBy: ines,
   recordSetId: 'recordset001',
   recordSetName: 'Refit jobs',
-  reading: { encoding: 'utf-8', delimiter: ',', decimal: '.', header: true },
+  reading: {
+    ...{ encoding: 'utf-8', delimiter: ',', decimal: '.', header: true, sheet: null, headerLine: 1 },
+    ...{ missingMarks: [], setAside: [], unreadable: [] },
+  },
   columns: [
     { ...emptyColumn, name: 'hours', position: 0, kind: 'numeric', unit: 'h' },
     { ...emptyColumn, name: 'length', position: 1, kind: 'numeric', unit: 'm' },

@@ -12,6 +12,8 @@ const MIX_UP: Finding = {
   remedy: 'Look at the rows; where the unit was wrong, divide by 3.2808.',
   rowCount: 12,
   rows: [3, 14, 25, 36, 47, 58, 69, 80, 91, 102, 1113, 1124],
+  where: null,
+  steps: [],
 };
 
 const ALIKE: Finding = {
@@ -21,6 +23,8 @@ const ALIKE: Finding = {
   remedy: 'Use one of the two as an input.',
   rowCount: null,
   rows: [],
+  where: null,
+  steps: [],
 };
 
 describe('FindingsList', () => {

@@ -14,6 +14,10 @@ export function revisionSummary(number: number): RevisionSummary {
   return {
     id: `revision${number}`,
     number,
+    origin: 'file',
+    basedOn: null,
+    originalKept: true,
+    erasedAt: null,
     sha256: String(number).repeat(64),
     rowCount: 2000 + number,
     columnCount: 3,
@@ -35,6 +39,12 @@ export const LENGTH: RecordColumn = {
   maximum: 24.6,
   mean: 11.83217,
   standardDeviation: 3.214,
+  quantiles: [
+    { share: 0.25, value: 9.4 },
+    { share: 0.5, value: 11.6 },
+    { share: 0.75, value: 14.1 },
+  ],
+  outlying: { count: 3, low: 2.1, high: 21.1, deviation: 1.9 },
   histogram: { edges: [5, 10, 25], counts: [900, 1090] },
   levels: [],
 };
@@ -50,6 +60,8 @@ export const FINISHED: RecordColumn = {
   maximum: 20_740,
   mean: 19_700,
   standardDeviation: 600,
+  quantiles: null,
+  outlying: null,
   histogram: { edges: [18_550, 20_740], counts: [2002] },
 };
 
@@ -65,6 +77,8 @@ export const HULL: RecordColumn = {
   maximum: null,
   mean: null,
   standardDeviation: null,
+  quantiles: null,
+  outlying: null,
   histogram: null,
   levels: [
     { value: 'GRP', count: 1500 },
@@ -79,13 +93,17 @@ export const REVISION: RecordRevision = {
   recordSetId: 'records1',
   recordSetName: 'Refits, nine yards',
   columns: [LENGTH, FINISHED, HULL],
-  reading: { encoding: 'UTF-8', delimiter: ';', decimal: ',', header: true },
+  reading: {
+    ...{ encoding: 'UTF-8', delimiter: ';', decimal: ',', header: true, sheet: null, headerLine: 1 },
+    ...{ missingMarks: [], setAside: [], unreadable: [] },
+  },
 };
 
 export const ROWS: RecordRows = {
   total: 2002,
   offset: 0,
   columns: ['Length overall', 'Finished', 'Hull material'],
+  numbers: [1, 2],
   rows: [
     [12.25, 18_550, 'GRP'],
     [9, 18_557, null],
@@ -96,6 +114,8 @@ export const RECORD_SET: RecordSetDetail = {
   id: 'records1',
   name: 'Refits, nine yards',
   description: 'One row a finished job.',
+  retainUntil: null,
+  changedAt: '2026-10-21T09:14:00Z',
   createdAt: '2023-10-21T09:00:00Z',
   createdBy: INES,
   revision: REVISION,
@@ -107,6 +127,7 @@ export function recordSetSummary(id: string, name: string, rowCount: number): Re
     id,
     name,
     description: '',
+    retainUntil: null,
     createdAt: '2023-10-21T09:00:00Z',
     createdBy: INES,
     revision: { ...revisionSummary(1), rowCount },
