@@ -134,6 +134,11 @@ export class RecordsStore {
     await this.database.connection('recordSets').insert({ ...set, nameKey: nameKeyOf(set.name) });
   }
 
+  /** Its words, its retention date or its revisions have changed. */
+  async markSetChanged(id: string, changedAt: string): Promise<void> {
+    await this.database.connection('recordSets').where({ id }).update({ changedAt });
+  }
+
   async insertRevision(revision: NewRevision): Promise<void> {
     await this.database.connection('recordRevisions').insert({
       ...revision,
