@@ -6,6 +6,7 @@ import type { Database } from './database/database';
 import type { Journal } from './journal/journal';
 import { FindingsService } from './records/findings/findings-service';
 import { MendingService } from './records/mending/mending-service';
+import { CellStorage } from './records/storing/cell-storage';
 import { KeptFiles } from './records/kept-files';
 import { RecordsService } from './records/records-service';
 import { RecordsStore } from './records/records-store';
@@ -31,26 +32,28 @@ export interface RecordsRoom {
   readonly recordMending: MendingService;
   readonly recordTasks: RecordTasks;
   readonly keptFiles: KeptFiles;
+  readonly cellStorage: CellStorage;
 }
 
 export function composeRecords(options: RecordsOptions): RecordsRoom {
-  const { database, journal, clock, log, maximumFileBytes, threadArguments } = options;
+  const { database, databasePath, journal, clock, log, maximumFileBytes, threadArguments } = options;
   const store = new RecordsStore(database);
   const keptFiles = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
-  const importer = new RevisionImporter({ database, records: store, files: keptFiles, clock, threadArguments });
+  const cells = new CellStorage({ databasePath, threadArguments });
+  const importer = new RevisionImporter({ database, records: store, files: keptFiles, cells, clock, threadArguments });
   const records = new RecordsService({ records: store, files: keptFiles, journal, clock, maximumFileBytes, importer });
-  const recordFindings = new FindingsService({ records: store, databasePath: options.databasePath, threadArguments });
-  const { databasePath } = options;
+  const recordFindings = new FindingsService({ records: store, databasePath, threadArguments });
   const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
   const recordMending = new MendingService({
     database,
     databasePath,
     records: store,
     files: keptFiles,
+    cells,
     journal,
     clock,
     tasks: recordTasks,
     threadArguments,
   });
-  return { records, recordFindings, recordMending, recordTasks, keptFiles };
+  return { records, recordFindings, recordMending, recordTasks, keptFiles, cellStorage: cells };
 }

@@ -20,6 +20,7 @@ import { Journal } from './journal/journal';
 import { KeysService } from './keys/keys-service';
 import { KeysStore } from './keys/keys-store';
 import { Schedule } from './jobs/schedule';
+import { sweepCells } from './jobs/sweep-cells';
 import { sweepInvitations } from './jobs/sweep-invitations';
 import { sweepSignInAttempts } from './jobs/sweep-sign-in-attempts';
 import { sweepUploads } from './jobs/sweep-uploads';
@@ -113,6 +114,7 @@ export function compose(options: ComposeOptions): Services {
     sweepInvitations(invitations, clock),
     sweepSignInAttempts(throttle),
     sweepUploads(recordsRoom.keptFiles),
+    sweepCells(recordsRoom.cellStorage, clock),
   ];
   const schedule = new Schedule(sweeps, log);
   const partners = new PartnersStore(database);

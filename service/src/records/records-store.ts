@@ -98,14 +98,6 @@ export interface ColumnRecord {
   readonly levels: readonly Level[];
 }
 
-export interface NewBlock {
-  readonly revisionId: string;
-  readonly position: number;
-  readonly block: number;
-  readonly rowCount: number;
-  readonly cells: Buffer;
-}
-
 type SetRow = NewRecordSet & { createdByName: string; revisionCount: number };
 type RevisionRow = Omit<NewRevision, 'reading' | 'mending' | 'originalKept'> & {
   mending: string | null;
@@ -160,8 +152,9 @@ export class RecordsStore {
       .insert({ revisionId, name, position, kind, unit, ...figures, levels: JSON.stringify(levels) });
   }
 
-  async insertBlock(block: NewBlock): Promise<void> {
-    await this.database.connection('recordBlocks').insert(block);
+  async countBlocks(revisionId: string): Promise<number> {
+    const row = await this.database.connection('recordBlocks').where({ revisionId }).count({ total: '*' }).first();
+    return Number(row?.['total'] ?? 0);
   }
 
   async nameIsTaken(name: string): Promise<boolean> {

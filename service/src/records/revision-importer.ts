@@ -6,7 +6,8 @@ import { readTableInThread } from './import-thread';
 import type { KeptFiles, ReceivedFile } from './kept-files';
 import type { TableReading } from './reading/read-table';
 import type { RecordsStore } from './records-store';
-import { storeCells } from './store-cells';
+import { storeColumns } from './store-columns';
+import type { CellStorage } from './storing/cell-storage';
 
 export interface Import {
   readonly file: ReceivedFile;
@@ -19,6 +20,7 @@ export interface ImporterParts {
   readonly database: Database;
   readonly records: RecordsStore;
   readonly files: KeptFiles;
+  readonly cells: CellStorage;
   readonly clock: Clock;
   /** Node's own arguments for the reading thread; none when compiled. */
   readonly threadArguments: readonly string[];
@@ -34,23 +36,25 @@ export class RevisionImporter {
   constructor(private readonly parts: ImporterParts) {}
 
   /**
-   * Reads the file in a thread, then stores revision, columns and cells in one unit of work together with what
-   * `around` adds; it gets a function that stores them and answers the number of rows.
+   * Reads the file in a thread and stores its cells ahead in another, then stores revision and columns in one unit
+   * of work together with what `around` adds; it gets a function that stores them and answers the number of rows.
    */
   async bringIn(
     given: Import,
     around: (store: (recordSetId: string, number: number) => Promise<number>) => Promise<void>,
   ): Promise<string> {
-    const { database, files, threadArguments } = this.parts;
+    const { database, files, cells, threadArguments } = this.parts;
     const id = newId();
     const spillPath = files.spillPathOf(given.file);
     try {
       await this.queue(async () => {
         const task = { path: given.file.path, spillPath };
         const reading = await readTableInThread(task, { nodeArguments: threadArguments, signal: given.signal });
-        await database.unitOfWork(() =>
-          around((recordSetId, number) => this.store({ id, recordSetId, number }, reading, given)),
-        );
+        const keep = (): Promise<void> =>
+          database.unitOfWork(() =>
+            around((recordSetId, number) => this.store({ id, recordSetId, number }, reading, given)),
+          );
+        await cells.storeFor({ revisionId: id, table: reading, spillPath }, keep, { signal: given.signal });
       });
     } catch (error) {
       // The unit of work was undone, so the name that the file was given is undone too.
@@ -90,7 +94,7 @@ export class RevisionImporter {
       createdAt: timeText(clock),
       createdBy: given.personId,
     });
-    await storeCells(records, names.id, reading, files.spillPathOf(given.file));
+    await storeColumns(records, names.id, reading);
     await files.keep(given.file, names.id);
     return rowCount;
   }

@@ -6,7 +6,8 @@ import { DeskError, notFound } from '../../errors';
 import type { Journal } from '../../journal/journal';
 import type { KeptFiles } from '../kept-files';
 import type { RecordsStore, RevisionRecord } from '../records-store';
-import { storeCells } from '../store-cells';
+import { storeColumns } from '../store-columns';
+import type { CellStorage } from '../storing/cell-storage';
 import type { RecordTasks, TaskContext, TaskWork } from '../tasks/record-tasks';
 import { answerOfThread } from '../worker-answer';
 import type { MendStep } from './apply-steps';
@@ -17,6 +18,7 @@ export interface MendingParts {
   readonly databasePath: string;
   readonly records: RecordsStore;
   readonly files: KeptFiles;
+  readonly cells: CellStorage;
   readonly journal: Journal;
   readonly clock: Clock;
   readonly tasks: RecordTasks;
@@ -56,14 +58,17 @@ export class MendingService {
     { base, steps, personId }: Pick<NewMending, 'base' | 'steps' | 'personId'>,
     context: TaskContext,
   ): Promise<{ readonly recordSetId: string }> {
-    const { files, database, databasePath } = this.parts;
+    const { files, cells, database, databasePath } = this.parts;
     const spillPath = files.newSpillPath();
     try {
       context.progress({ stage: 'mending', done: 0, total: steps.length });
       const mended = await this.apply({ databasePath, revisionId: base.id, steps, spillPath });
-      context.progress({ stage: 'storing', done: 0, total: 0 });
       const id = context.revisionId;
-      await database.unitOfWork(() => this.store({ id, base, steps, personId, spillPath }, mended));
+      const keep = (): Promise<void> => database.unitOfWork(() => this.store({ id, base, steps, personId }, mended));
+      await cells.storeFor({ revisionId: id, table: mended.table, spillPath }, keep, {
+        signal: context.signal,
+        onProgress: context.progress,
+      });
       return { recordSetId: base.recordSetId };
     } finally {
       await files.remove(spillPath);
@@ -94,7 +99,7 @@ export class MendingService {
       createdAt: timeText(clock),
       createdBy: personId,
     });
-    await storeCells(records, id, table, made.spillPath);
+    await storeColumns(records, id, table);
     const summary = `Revision ${number} of ${base.recordSetName} was mended from revision ${base.number} in ${steps.length} steps`;
     await journal.write({
       actorId: personId,
@@ -111,5 +116,4 @@ interface NewMending {
   readonly base: RevisionRecord;
   readonly steps: readonly MendStep[];
   readonly personId: string;
-  readonly spillPath: string;
 }
