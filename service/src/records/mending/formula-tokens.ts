@@ -18,9 +18,17 @@ export interface Token {
 /** Long enough for people; short enough that nesting cannot exhaust the stack. */
 export const maximumFormulaLength = 500;
 
-/** `[name]` for any column; a bare word for a column whose name is one word. */
+/**
+ * `[name]` for any column; a bare word for a column whose name is one word. A bracket or a quotation mark that
+ * belongs to the name or the text is written twice, as in SQL: `[length]] (m)]`, `"3"" planks"`.
+ */
 const pattern =
-  /\s*(?:(?<number>\d+\.?\d*(?:[eE][+-]?\d+)?|\.\d+)|"(?<text>[^"]*)"|\[(?<name>[^\]]+)\]|(?<word>[\p{L}_][\p{L}\p{N}_]*)|(?<sign><=|>=|<>|!=|[-+*/^()=<>,]))/uy;
+  /\s*(?:(?<number>\d+\.?\d*(?:[eE][+-]?\d+)?|\.\d+)|"(?<text>(?:[^"]|"")*)"|\[(?<name>(?:[^\]]|\]\])+)\]|(?<word>[\p{L}_][\p{L}\p{N}_]*)|(?<sign><=|>=|<>|!=|[-+*/^()=<>,]))/uy;
+
+const undoubled: Readonly<Partial<Record<string, (text: string) => string>>> = {
+  text: (text) => text.replaceAll('""', '"'),
+  name: (name) => name.replaceAll(']]', ']'),
+};
 
 export function tokensOf(formula: string): Token[] {
   if (formula.length > maximumFormulaLength)
@@ -35,7 +43,7 @@ export function tokensOf(formula: string): Token[] {
       Token['kind'],
       string,
     ];
-    tokens.push({ kind, text, at: at + 1 });
+    tokens.push({ kind, text: undoubled[kind]?.(text) ?? text, at: at + 1 });
     at = pattern.lastIndex;
   }
   return [...tokens, { kind: 'end', text: '', at: formula.length + 1 }];

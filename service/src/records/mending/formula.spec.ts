@@ -60,6 +60,21 @@ describe('a formula', () => {
     expect(() => bindCondition(formula, table)).toThrow(FormulaError);
   });
 
+  it('names any column and any level, a bracket or a quotation mark in them written twice', () => {
+    const odd: RecordTable = {
+      rowCount: 2,
+      columns: [
+        { name: 'beam [m]', kind: 'numeric', values: Float64Array.of(1, 2) },
+        { name: ']', kind: 'category', codes: Int32Array.of(0, 1), levels: ['3" planks', '"'] },
+      ],
+    };
+    const met = (formula: string) => [0, 1].map(bindCondition(formula, odd));
+    expect(met('[beam [m]]] > 1')).toEqual([false, true]);
+    expect(met('[]]] = "3"" planks"')).toEqual([true, false]);
+    expect(met('[]]] = """"')).toEqual([false, true]);
+    expect(met('[]]] = ""')).toEqual([false, false]);
+  });
+
   it('survives the deepest nesting that fits', () => {
     expect(numbers(`${'('.repeat(249)}1${')'.repeat(249)}`)).toEqual([1, 1, 1]);
   });
