@@ -1,11 +1,13 @@
 /**
- * How fast a large file becomes a revision, against merely parsing it with the same library, and in how much memory.
+ * How fast a large file becomes a revision, against merely parsing it with the same library, in how much memory, and
+ * how long at most the main thread could answer nothing else meanwhile.
  * `npm run bench:import [rows]`. Each side runs in a process of its own, by turns, and the best of the runs counts.
  */
 import { spawnSync } from 'node:child_process';
 import { createReadStream, createWriteStream, mkdtempSync, rmSync, statSync } from 'node:fs';
-import { tmpdir } from 'node:os';
+import { availableParallelism, loadavg, tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { monitorEventLoopDelay } from 'node:perf_hooks';
 import { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { parse } from 'csv-parse';
@@ -17,6 +19,7 @@ import { copyTemplateDatabase } from '../support/template-database';
 
 const goals = { ratio: 0.6, memoryMegabytes: 700 };
 const runs = 2;
+const stallResolutionMs = 5;
 const columnCount = 30;
 const hulls = ['steel', 'aluminium', 'oak', 'larch on oak', 'glass fibre', 'ferrocement'];
 const hook = join(__dirname, '..', 'support', 'typescript-hook.js');
@@ -24,6 +27,7 @@ const hook = join(__dirname, '..', 'support', 'typescript-hook.js');
 interface Measured {
   readonly seconds: number;
   readonly memoryMegabytes: number;
+  readonly longestStallMs: number;
   readonly rows: number;
 }
 
@@ -93,10 +97,15 @@ async function bringIn(path: string): Promise<() => Promise<number>> {
 
 async function measure(side: string, path: string): Promise<Measured> {
   const work = side === 'parse' ? () => merelyParse(path) : await bringIn(path);
+  // What it measures includes the interval between two of its looks.
+  const delays = monitorEventLoopDelay({ resolution: stallResolutionMs });
+  delays.enable();
   const begun = process.hrtime.bigint();
   const rows = await work();
   const seconds = Number(process.hrtime.bigint() - begun) / 1e9;
-  return { seconds, rows, memoryMegabytes: process.resourceUsage().maxRSS / 1024 };
+  delays.disable();
+  const longestStallMs = Math.max(0, delays.max / 1e6 - stallResolutionMs);
+  return { seconds, rows, longestStallMs, memoryMegabytes: process.resourceUsage().maxRSS / 1024 };
 }
 
 function inOwnProcess(side: 'parse' | 'import', path: string): Measured {
@@ -114,6 +123,7 @@ async function compare(rowCount: number): Promise<void> {
   const folder = mkdtempSync(join(tmpdir(), 'tarebeam-bench-'));
   const path = join(folder, 'bench.csv');
   await pipeline(Readable.from(madeUpLines(rowCount)), createWriteStream(path));
+  console.log(`${availableParallelism()} processors, load ${loadavg()[0].toFixed(1)}`);
   console.log(`${rowCount} rows × ${columnCount} columns, ${(statSync(path).size / 1e6).toFixed(0)} MB`);
   const parsed: Measured[] = [];
   const imported: Measured[] = [];
@@ -126,11 +136,13 @@ async function compare(rowCount: number): Promise<void> {
   const memory = Math.max(...imported.map((run) => run.memoryMegabytes));
   if (bring.rows !== rowCount || parse.rows !== rowCount)
     throw new Error(`${bring.rows} and ${parse.rows} rows came out.`);
+  const stall = Math.max(...imported.map((run) => run.longestStallMs));
   const ratio = parse.seconds / bring.seconds;
   console.log(`merely parsing   ${parse.seconds.toFixed(2)} s, ${parse.memoryMegabytes.toFixed(0)} MB at most`);
   console.log(
     `bringing in      ${bring.seconds.toFixed(2)} s, ${memory.toFixed(0)} MB at most (goal: under ${goals.memoryMegabytes})`,
   );
+  console.log(`longest stall    ${stall.toFixed(0)} ms of the main thread`);
   console.log(`ratio of rates   ${ratio.toFixed(2)} (goal: at least ${goals.ratio})`);
   if (rowCount >= 1_000_000 && (ratio < goals.ratio || memory >= goals.memoryMegabytes)) process.exitCode = 1;
 }
