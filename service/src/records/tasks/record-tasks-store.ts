@@ -24,7 +24,15 @@ export interface TaskRecord extends Omit<NewTask, 'createdBy'> {
   readonly recordSetId: string | null;
   readonly problem: TaskProblem | null;
   readonly cancelAsked: boolean;
+  /** The set that the revision belongs to, once there is one. */
+  readonly madeIn: string | null;
   readonly createdBy: PersonName;
+}
+
+/** How far a task was at its end, and when that was. */
+export interface TaskLastWord {
+  readonly progress: TaskProgress;
+  readonly saidAt: string;
 }
 
 export interface TaskEnd {
@@ -54,8 +62,10 @@ export class RecordTasksStore {
     const row = (await this.database
       .connection('recordTasks')
       .join('people', 'people.id', 'recordTasks.createdBy')
+      .leftJoin('recordRevisions', 'recordRevisions.id', 'recordTasks.revisionId')
       .where('recordTasks.id', id)
-      .first('recordTasks.*', 'people.name as createdByName')) as TaskRow | undefined;
+      .first('recordTasks.*', 'people.name as createdByName', 'recordRevisions.recordSetId as madeIn')) as
+      TaskRow | undefined;
     return row ? toTask(row) : null;
   }
 
@@ -66,10 +76,9 @@ export class RecordTasksStore {
       .where({ id })
       .whereIn('state', underWay)
       .update({ state, progress: JSON.stringify(progress), saidAt });
-    const row = (await connection('recordTasks').where({ id }).first('cancelAsked')) as {
-      cancelAsked: boolean | number;
-    };
-    return Boolean(row.cancelAsked);
+    const row = (await connection('recordTasks').where({ id }).first('cancelAsked')) as
+      { cancelAsked: boolean | number } | undefined;
+    return Boolean(row?.cancelAsked);
   }
 
   /** False when the task had ended already. */
@@ -82,12 +91,13 @@ export class RecordTasksStore {
     return changed > 0;
   }
 
-  async end(id: string, { state, recordSetId, problem }: TaskEnd): Promise<void> {
+  async end(id: string, end: TaskEnd, { progress, saidAt }: TaskLastWord): Promise<void> {
+    const problem = end.problem && JSON.stringify(end.problem);
     await this.database
       .connection('recordTasks')
       .where({ id })
       .whereIn('state', underWay)
-      .update({ state, recordSetId, problem: problem && JSON.stringify(problem) });
+      .update({ ...end, problem, progress: JSON.stringify(progress), saidAt });
   }
 
   async removeBefore(time: string): Promise<void> {
