@@ -5,7 +5,10 @@ import type { Config } from './config';
 import type { Database } from './database/database';
 import type { Journal } from './journal/journal';
 import { FindingsService } from './records/findings/findings-service';
+import { MendingDrafts } from './records/mending/mending-drafts';
+import { MendingDraftsStore } from './records/mending/mending-drafts-store';
 import { MendingService } from './records/mending/mending-service';
+import { MendingThread } from './records/mending/mending-thread';
 import { CellStorage } from './records/storing/cell-storage';
 import { KeptFiles } from './records/kept-files';
 import { RecordsService } from './records/records-service';
@@ -30,6 +33,7 @@ export interface RecordsRoom {
   readonly records: RecordsService;
   readonly recordFindings: FindingsService;
   readonly recordMending: MendingService;
+  readonly mendingDrafts: MendingDrafts;
   readonly recordTasks: RecordTasks;
   readonly keptFiles: KeptFiles;
   readonly cellStorage: CellStorage;
@@ -44,16 +48,11 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   const records = new RecordsService({ records: store, files: keptFiles, journal, clock, maximumFileBytes, importer });
   const recordFindings = new FindingsService({ records: store, databasePath, threadArguments });
   const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
+  const drafts = new MendingDraftsStore(database);
   const recordMending = new MendingService({
-    database,
-    databasePath,
-    records: store,
-    files: keptFiles,
-    cells,
-    journal,
-    clock,
-    tasks: recordTasks,
-    threadArguments,
+    ...{ database, records: store, files: keptFiles, cells, drafts, journal, clock, tasks: recordTasks },
+    thread: new MendingThread({ databasePath, threadArguments }),
   });
-  return { records, recordFindings, recordMending, recordTasks, keptFiles, cellStorage: cells };
+  const mendingDrafts = new MendingDrafts({ database, records: store, drafts, clock });
+  return { records, recordFindings, recordMending, mendingDrafts, recordTasks, keptFiles, cellStorage: cells };
 }

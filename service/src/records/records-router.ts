@@ -1,23 +1,14 @@
 import { createReadStream } from 'node:fs';
 import { pipeline } from 'node:stream/promises';
-import type { Response } from 'express';
 import type { operations } from '../../../openapi/types/desk';
 import type { RecordsRoom } from '../compose-records';
 import type { ContractRoutes } from '../http/contract-routes';
+import { goneAway } from '../http/gone-away';
 import { pageOf } from '../http/page';
 import { personOf } from '../people/session-passport';
 import { mountLooking } from './looking/looking-router';
 import { mountMending } from './mending/mending-router';
 import { mountTasks } from './tasks/tasks-router';
-
-/** Aborted when the client goes away before it is answered. */
-function goneAway(response: Response): AbortSignal {
-  const controller = new AbortController();
-  response.once('close', () => {
-    if (!response.writableFinished) controller.abort();
-  });
-  return controller.signal;
-}
 
 export function mountRecords(routes: ContractRoutes<operations>, room: RecordsRoom): void {
   const { records } = room;

@@ -1,7 +1,7 @@
 import type { Database } from '../database/database';
 import type { Page } from '../http/page';
 import type { ColumnKind } from './cell-blocks';
-import type { MendStep } from './mending/apply-steps';
+import type { MendStep } from './mending/step-change';
 import type { Histogram, Outlying, Quantile } from './reading/column-statistics';
 import type { FinishedColumn, Level } from './reading/finished-column';
 

@@ -1,19 +1,43 @@
 import { Worker } from 'node:worker_threads';
 
-/** Runs a worker file with one task in a thread of its own and gives the one message that it answers with. */
-export async function answerOfThread<Answer>(
+export interface ThreadWatch<Progress> {
+  /** Aborted: the thread is ended, and with it whatever it was at. */
+  readonly signal?: AbortSignal;
+  readonly onProgress?: (progress: Progress) => void;
+}
+
+/** What a worker posts on the way to its answer. */
+export interface ProgressMessage<Progress> {
+  readonly progress: Progress;
+}
+
+const isProgress = <Progress>(message: unknown): message is ProgressMessage<Progress> =>
+  typeof message === 'object' && message !== null && Object.keys(message).join() === 'progress';
+
+/**
+ * Runs a worker file with one task in a thread of its own and gives the answer that it posts, before which it may post
+ * `ProgressMessage`s. Throws the signal's reason when that is aborted first.
+ */
+export async function answerOfThread<Answer, Progress = never>(
   path: string,
   task: object,
   nodeArguments: readonly string[],
+  { signal, onProgress }: ThreadWatch<Progress> = {},
 ): Promise<Answer> {
+  signal?.throwIfAborted();
   const worker = new Worker(path, { workerData: task, execArgv: [...nodeArguments] });
+  const watch = new AbortController();
   try {
     return await new Promise<Answer>((resolve, reject) => {
-      worker.once('message', resolve);
+      worker.on('message', (message: Answer | ProgressMessage<Progress>) =>
+        isProgress<Progress>(message) ? onProgress?.(message.progress) : resolve(message),
+      );
       worker.once('error', reject);
       worker.once('exit', () => reject(new Error('The thread ended without an answer.')));
+      signal?.addEventListener('abort', () => reject(signal.reason as Error), { signal: watch.signal });
     });
   } finally {
+    watch.abort();
     await worker.terminate();
   }
 }

@@ -1,4 +1,4 @@
-import type { MendStep } from '../mending/apply-steps';
+import type { MendStep } from '../mending/step-change';
 
 export const findingKinds = [
   'unit-mix-up',

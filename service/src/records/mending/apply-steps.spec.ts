@@ -1,5 +1,6 @@
 import type { RecordTable } from '../../regression/records';
-import { applySteps, StepProblem, type MendStep } from './apply-steps';
+import { applySteps, StepProblem } from './apply-steps';
+import type { MendStep } from './step-change';
 
 const table = (): RecordTable => ({
   rowCount: 4,
@@ -70,12 +71,12 @@ describe('a mending step', () => {
   });
 
   it('drops rows from every column', () => {
-    const { table: left, changes } = after({ kind: 'drop-rows', where: 'length is missing or length > 20' });
+    const { table: left, effects } = after({ kind: 'drop-rows', where: 'length is missing or length > 20' });
     expect(left.rowCount).toBe(2);
     expect(left.columns.map((found) => (found.kind === 'category' ? found.codes : found.values).length)).toEqual([
       2, 2, 2,
     ]);
-    expect(changes).toEqual(['Dropped 2 rows where length is missing or length > 20.']);
+    expect(effects).toEqual([{ told: 'Dropped 2 rows where length is missing or length > 20.', rowsConcerned: 2 }]);
   });
 
   it('drops every repeated row, however many there are', () => {

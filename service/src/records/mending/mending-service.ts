@@ -1,119 +1,136 @@
-import { extname, join } from 'node:path';
 import type { components } from '../../../../openapi/types/desk';
 import { timeText, type Clock } from '../../clock';
 import type { Database } from '../../database/database';
 import { DeskError, notFound } from '../../errors';
 import type { Journal } from '../../journal/journal';
 import type { KeptFiles } from '../kept-files';
+import { requireExpectedNewest } from '../newest-guard';
 import type { RecordsStore, RevisionRecord } from '../records-store';
+import { requireRows } from '../required-rows';
 import { storeColumns } from '../store-columns';
 import type { CellStorage } from '../storing/cell-storage';
 import type { RecordTasks, TaskContext, TaskWork } from '../tasks/record-tasks';
-import { answerOfThread } from '../worker-answer';
-import type { MendStep } from './apply-steps';
-import type { MendOutcome, MendTask } from './mend-task';
+import type { MendingDraftsStore } from './mending-drafts-store';
+import type { Mended, MendingThread } from './mending-thread';
+import type { MendStep } from './step-change';
+
+type Schemas = components['schemas'];
 
 export interface MendingParts {
   readonly database: Database;
-  readonly databasePath: string;
   readonly records: RecordsStore;
   readonly files: KeptFiles;
   readonly cells: CellStorage;
+  readonly drafts: MendingDraftsStore;
+  readonly thread: MendingThread;
   readonly journal: Journal;
   readonly clock: Clock;
   readonly tasks: RecordTasks;
-  /** Node's own arguments for the mending thread; none when compiled. */
-  readonly threadArguments: readonly string[];
 }
 
-type Mended = Extract<MendOutcome, { kind: 'mended' }>;
-
-/** Compiled beside this file, or its TypeScript source where this file is one. */
-const workerPath = join(__dirname, `mend-worker${extname(__filename)}`);
+/** What to make of which revision, for whom. */
+interface WantedMending {
+  readonly personId: string;
+  readonly revisionId: string;
+  readonly steps: readonly MendStep[];
+  /** The set's newest revision as the person knows it. */
+  readonly expectedNewest?: number;
+}
 
 export class MendingService {
   constructor(private readonly parts: MendingParts) {}
 
   /** Begins a new revision of the same set, made from this one by steps that are kept with it. */
-  async mend(
-    personId: string,
-    revisionId: string,
-    steps: readonly MendStep[],
-  ): Promise<components['schemas']['RecordTask']> {
-    return this.parts.tasks.start(await this.workOf(personId, revisionId, steps));
+  async mend(personId: string, revisionId: string, request: Schemas['MendRequest']): Promise<Schemas['RecordTask']> {
+    return this.parts.tasks.start(await this.workOf({ personId, revisionId, ...request }));
   }
 
   /** The same, to its end: the new revision's id. */
   async mendToEnd(personId: string, revisionId: string, steps: readonly MendStep[]): Promise<string> {
-    return this.parts.tasks.finish(await this.workOf(personId, revisionId, steps));
+    return this.parts.tasks.finish(await this.workOf({ personId, revisionId, steps }));
   }
 
-  private async workOf(personId: string, revisionId: string, steps: readonly MendStep[]): Promise<TaskWork> {
-    const base = await this.parts.records.findRevision(revisionId);
-    if (!base) throw notFound('revision');
-    return { kind: 'mend', personId, run: (context) => this.make({ base, steps, personId }, context) };
+  /** What the steps would do. */
+  async tryOut(revisionId: string, steps: readonly MendStep[], signal?: AbortSignal): Promise<Schemas['MendingTrial']> {
+    await this.requireBase(revisionId);
+    return this.parts.thread.tryOut({ revisionId, steps }, signal);
   }
 
-  private async make(
-    { base, steps, personId }: Pick<NewMending, 'base' | 'steps' | 'personId'>,
-    context: TaskContext,
-  ): Promise<{ readonly recordSetId: string }> {
-    const { files, cells, database, databasePath } = this.parts;
+  private async workOf(wanted: WantedMending): Promise<TaskWork> {
+    const base = await this.requireBase(wanted.revisionId);
+    await requireExpectedNewest(this.parts.records, base.recordSetId, wanted.expectedNewest);
+    return { kind: 'mend', personId: wanted.personId, run: (context) => this.make(wanted, context) };
+  }
+
+  private async make(wanted: WantedMending, context: TaskContext): Promise<{ readonly recordSetId: string }> {
+    const { files, cells, database } = this.parts;
+    const { revisionId: id, signal, progress } = context;
     const spillPath = files.newSpillPath();
+    const { recordSetId } = await this.requireBase(wanted.revisionId);
     try {
-      context.progress({ stage: 'mending', done: 0, total: steps.length });
-      const mended = await this.apply({ databasePath, revisionId: base.id, steps, spillPath });
-      const id = context.revisionId;
-      const keep = (): Promise<void> => database.unitOfWork(() => this.store({ id, base, steps, personId }, mended));
-      await cells.storeFor({ revisionId: id, table: mended.table, spillPath }, keep, {
-        signal: context.signal,
-        onProgress: context.progress,
-      });
-      return { recordSetId: base.recordSetId };
+      const mended = await this.apply(wanted, spillPath, context);
+      const keep = (): Promise<void> => database.unitOfWork(() => this.store(id, wanted, mended));
+      const stored = { revisionId: id, table: mended.table, spillPath };
+      await cells.storeFor(stored, keep, { signal, onProgress: progress });
+      return { recordSetId };
     } finally {
       await files.remove(spillPath);
     }
   }
 
-  private async apply(task: MendTask): Promise<Mended> {
-    const outcome = await answerOfThread<MendOutcome>(workerPath, task, this.parts.threadArguments);
-    if (outcome.kind === 'mended') return outcome;
-    const { step, message } = outcome;
-    const errors = [{ pointer: `#/steps/${step}`, detail: message }];
-    throw new DeskError('request-invalid', `Mend step ${step + 1} and send the steps again: ${message}`, { errors });
+  private async apply(wanted: WantedMending, spillPath: string, { signal, progress }: TaskContext): Promise<Mended> {
+    const { revisionId, steps } = wanted;
+    const told = (done: number): void => progress({ stage: 'mending', done, total: steps.length });
+    told(0);
+    try {
+      return await this.parts.thread.mend({ revisionId, steps, spillPath }, { signal, onProgress: told });
+    } catch (error) {
+      // A thread that lost its records on the way fails in its own words; whoever asked is told what became of them.
+      if (!(error instanceof DeskError)) await this.requireBase(revisionId);
+      throw error;
+    }
   }
 
-  private async store(made: NewMending, { table, changes }: Mended): Promise<void> {
-    const { records, journal, clock } = this.parts;
-    const { id, base, steps, personId } = made;
+  /** Asked again inside the unit of work: the revision may have been deleted or erased while the thread was at it. */
+  private async store(id: string, wanted: WantedMending, { table, effects }: Mended): Promise<void> {
+    const { records, drafts, clock } = this.parts;
+    const { personId, steps } = wanted;
+    const base = await this.requireBase(wanted.revisionId);
     const { recordSetId, sha256, byteCount, fileName, originalPath, originalKept, reading } = base;
-    const [newest] = await records.revisionsOf([recordSetId]);
+    const newest = await requireExpectedNewest(records, recordSetId, wanted.expectedNewest);
     const number = newest.number + 1;
+    const createdAt = timeText(clock);
     await records.insertRevision({
       ...{ id, recordSetId, number, sha256, byteCount, fileName, originalPath, originalKept, reading },
       ...{ appendedTo: null, appendedRowCount: null },
       rowCount: table.rowCount,
       columnCount: table.columns.length,
       mendedFrom: base.id,
-      mending: { steps, changes },
-      createdAt: timeText(clock),
+      mending: { steps, changes: effects.map((effect) => effect.told) },
+      createdAt,
       createdBy: personId,
     });
     await storeColumns(records, id, table);
-    const summary = `Revision ${number} of ${base.recordSetName} was mended from revision ${base.number} in ${steps.length} steps`;
-    await journal.write({
+    await records.markSetChanged(recordSetId, createdAt);
+    await drafts.remove(base.id, personId);
+    await this.note(wanted, base, number);
+  }
+
+  private async note({ personId, steps }: WantedMending, base: RevisionRecord, number: number): Promise<void> {
+    const count = steps.length === 1 ? '1 step' : `${steps.length} steps`;
+    await this.parts.journal.write({
       actorId: personId,
       action: 'record-revision-mended',
       subjectKind: 'record-set',
-      subjectId: recordSetId,
-      summary,
+      subjectId: base.recordSetId,
+      summary: `Revision ${number} of ${base.recordSetName} was mended from revision ${base.number} in ${count}`,
     });
   }
-}
 
-interface NewMending {
-  readonly id: string;
-  readonly base: RevisionRecord;
-  readonly steps: readonly MendStep[];
-  readonly personId: string;
+  private async requireBase(id: string): Promise<RevisionRecord> {
+    const base = await this.parts.records.findRevision(id);
+    if (!base) throw notFound('revision');
+    requireRows(base);
+    return base;
+  }
 }
