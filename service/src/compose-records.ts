@@ -5,6 +5,7 @@ import type { Config } from './config';
 import type { Database } from './database/database';
 import type { Journal } from './journal/journal';
 import { FindingsService } from './records/findings/findings-service';
+import { LookingService } from './records/looking/looking-service';
 import { MendingDrafts } from './records/mending/mending-drafts';
 import { MendingDraftsStore } from './records/mending/mending-drafts-store';
 import { MendingService } from './records/mending/mending-service';
@@ -32,6 +33,7 @@ export interface RecordsOptions {
 export interface RecordsRoom {
   readonly records: RecordsService;
   readonly recordFindings: FindingsService;
+  readonly recordLooking: LookingService;
   readonly recordMending: MendingService;
   readonly mendingDrafts: MendingDrafts;
   readonly recordTasks: RecordTasks;
@@ -47,6 +49,7 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   const importer = new RevisionImporter({ database, records: store, files: keptFiles, cells, clock, threadArguments });
   const records = new RecordsService({ records: store, files: keptFiles, journal, clock, maximumFileBytes, importer });
   const recordFindings = new FindingsService({ records: store, databasePath, threadArguments });
+  const recordLooking = new LookingService({ records: store, databasePath, threadArguments });
   const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
   const drafts = new MendingDraftsStore(database);
   const recordMending = new MendingService({
@@ -54,5 +57,14 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
     thread: new MendingThread({ databasePath, threadArguments }),
   });
   const mendingDrafts = new MendingDrafts({ database, records: store, drafts, clock });
-  return { records, recordFindings, recordMending, mendingDrafts, recordTasks, keptFiles, cellStorage: cells };
+  return {
+    records,
+    recordFindings,
+    recordLooking,
+    recordMending,
+    mendingDrafts,
+    recordTasks,
+    keptFiles,
+    cellStorage: cells,
+  };
 }

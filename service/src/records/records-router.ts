@@ -24,7 +24,6 @@ export function mountRecords(routes: ContractRoutes<operations>, room: RecordsRo
     records.reviseFromForm(path.id, personOf(request).id, request, goneAway(response)),
   );
   routes.answer('readRevision', ({ path }) => records.readRevision(path.id));
-  routes.answer('listRevisionRows', ({ path, query }) => records.listRows(path.id, pageOf(query)));
   routes.handle('readRevisionOriginal', async ({ path, response }) => {
     const { path: file, fileName, byteCount } = await records.original(path.id);
     // Always a download of plain bytes: a file that somebody sent must never be shown as a page of ours.

@@ -11,7 +11,6 @@ import type { Import, RevisionImporter } from './revision-importer';
 import { plainFileName, receiveUpload, type Upload } from './receive-upload';
 import { toRevisionAnswer, toSetDetail, toSetSummary } from './record-answers';
 import type { RecordSetRecord, RecordsStore, RevisionRecord } from './records-store';
-import { readRows } from './revision-rows';
 
 type Schemas = components['schemas'];
 
@@ -59,17 +58,6 @@ export class RecordsService {
   async readRevision(id: string): Promise<Schemas['RecordRevision']> {
     const revision = await this.requireRevision(id);
     return toRevisionAnswer(revision, await this.parts.records.columnsOf(id));
-  }
-
-  async listRows(id: string, page: Page): Promise<Schemas['RecordRows']> {
-    const revision = await this.requireRevision(id);
-    const columns = await this.parts.records.columnsOf(id);
-    const rows = await readRows(this.parts.records, id, columns, page);
-    const numbers = rows.map((_, index) => page.offset + index + 1);
-    return {
-      ...{ total: revision.rowCount, offset: page.offset, numbers, rows },
-      columns: columns.map((column) => column.name),
-    };
   }
 
   /** Where the uploaded file lies, and the name that it came with. */

@@ -1,5 +1,5 @@
 import type { Page } from '../http/page';
-import { cellBytesOf, cellsToCodes, cellsToNumbers, cellsToTexts } from './cell-blocks';
+import { cellBytesOf, cellsToCodes, cellsToNumbers, cellsToTexts, type ColumnKind } from './cell-blocks';
 import { dateText } from './reading/date-cell';
 import type { ColumnRecord, RecordsStore } from './records-store';
 
@@ -24,22 +24,36 @@ export function partsOf(blockRowCounts: readonly number[], { limit, offset }: Pa
   return parts;
 }
 
-const present = (value: number): number | null => (Number.isNaN(value) ? null : value);
+/** Stored cells as people read them, each when it is asked for; dates as year-month-day, null for a missing one. */
+export function cellsAsShown(
+  kind: ColumnKind,
+  levels: readonly { readonly value: string }[],
+  cells: Uint8Array,
+): (at: number) => CellValue {
+  if (kind === 'text') {
+    const texts = cellsToTexts(cells);
+    return (at) => texts[at];
+  }
+  if (kind === 'category') {
+    const codes = cellsToCodes(cells);
+    return (at) => (codes[at] < 0 ? null : levels[codes[at]].value);
+  }
+  const values = cellsToNumbers(cells);
+  const shown = (value: number): CellValue => (kind === 'date' ? dateText(value) : value);
+  return (at) => (Number.isNaN(values[at]) ? null : shown(values[at]));
+}
 
 async function readCells(
   store: RecordsStore,
   revisionId: string,
-  column: ColumnRecord,
+  { kind, position, levels }: ColumnRecord,
   part: BlockPart,
 ): Promise<CellValue[]> {
-  const { kind, position, levels } = column;
   const width = cellBytesOf(kind);
   const bytes = width === 0 ? null : { start: part.start * width, length: part.rowCount * width };
-  const cells = await store.cellsOf(revisionId, position, part.block, bytes);
-  if (kind === 'text') return cellsToTexts(cells).slice(part.start, part.start + part.rowCount);
-  if (kind === 'category') return Array.from(cellsToCodes(cells), (code) => (code < 0 ? null : levels[code].value));
-  const values = Array.from(cellsToNumbers(cells), present);
-  return kind === 'date' ? values.map((days) => (days === null ? null : dateText(days))) : values;
+  const shown = cellsAsShown(kind, levels, await store.cellsOf(revisionId, position, part.block, bytes));
+  const first = bytes ? 0 : part.start;
+  return Array.from({ length: part.rowCount }, (_, at) => shown(first + at));
 }
 
 /** A page of a revision's rows, read from the bytes of just those rows (whole blocks for text). */

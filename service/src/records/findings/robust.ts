@@ -26,6 +26,7 @@ export interface PairMoments {
   readonly meanY: number;
   readonly sdX: number;
   readonly sdY: number;
+  readonly covariance: number;
   readonly correlation: number;
 }
 
@@ -46,6 +47,7 @@ export function pairMoments(x: Float64Array, y: Float64Array, use?: Uint8Array):
     products += fromX * (b - meanY);
   }
   const [sdX, sdY] = [Math.sqrt(squaresX / count), Math.sqrt(squaresY / count)];
-  const correlation = sdX > 0 && sdY > 0 ? products / count / (sdX * sdY) : NaN;
-  return { count, meanX, meanY, sdX, sdY, correlation };
+  const covariance = products / count;
+  const correlation = sdX > 0 && sdY > 0 ? covariance / (sdX * sdY) : NaN;
+  return { count, meanX, meanY, sdX, sdY, covariance, correlation };
 }
