@@ -11,6 +11,8 @@ import { MendingDraftsStore } from './records/mending/mending-drafts-store';
 import { MendingService } from './records/mending/mending-service';
 import { MendingThread } from './records/mending/mending-thread';
 import { CellStorage } from './records/storing/cell-storage';
+import { IncomingFilesStore } from './records/incoming/incoming-files-store';
+import { IncomingSweep } from './records/incoming/incoming-sweep';
 import { KeptFiles } from './records/kept-files';
 import { RecordsService } from './records/records-service';
 import { RecordsStore } from './records/records-store';
@@ -37,6 +39,7 @@ export interface RecordsRoom {
   readonly recordMending: MendingService;
   readonly mendingDrafts: MendingDrafts;
   readonly recordTasks: RecordTasks;
+  readonly incomingSweep: IncomingSweep;
   readonly keptFiles: KeptFiles;
   readonly cellStorage: CellStorage;
 }
@@ -57,6 +60,7 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
     thread: new MendingThread({ databasePath, threadArguments }),
   });
   const mendingDrafts = new MendingDrafts({ database, records: store, drafts, clock });
+  const incoming = new IncomingFilesStore(database);
   return {
     records,
     recordFindings,
@@ -64,6 +68,7 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
     recordMending,
     mendingDrafts,
     recordTasks,
+    incomingSweep: new IncomingSweep({ incoming, files: keptFiles, clock }),
     keptFiles,
     cellStorage: cells,
   };

@@ -21,6 +21,7 @@ import { KeysService } from './keys/keys-service';
 import { KeysStore } from './keys/keys-store';
 import { Schedule } from './jobs/schedule';
 import { sweepCells } from './jobs/sweep-cells';
+import { sweepIncomingFiles } from './jobs/sweep-incoming-files';
 import { sweepInvitations } from './jobs/sweep-invitations';
 import { sweepSignInAttempts } from './jobs/sweep-sign-in-attempts';
 import { sweepUploads } from './jobs/sweep-uploads';
@@ -113,7 +114,8 @@ export function compose(options: ComposeOptions): Services {
   const sweeps = [
     sweepInvitations(invitations, clock),
     sweepSignInAttempts(throttle),
-    sweepUploads(recordsRoom.keptFiles),
+    sweepUploads(recordsRoom.incomingSweep),
+    sweepIncomingFiles(recordsRoom.incomingSweep, recordsRoom.recordTasks),
     sweepCells(recordsRoom.cellStorage, clock),
   ];
   const schedule = new Schedule(sweeps, log);

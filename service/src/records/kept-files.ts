@@ -1,11 +1,12 @@
 import { createHash } from 'node:crypto';
 import { createReadStream, createWriteStream, mkdirSync } from 'node:fs';
-import { readdir, rename, rm, stat } from 'node:fs/promises';
-import { join } from 'node:path';
+import { readdir, rename, rm, stat, utimes } from 'node:fs/promises';
+import { basename, join } from 'node:path';
 import type { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { newId } from '../database/new-id';
 import { DeskError } from '../errors';
+import { translateFullDisk } from './storage-full';
 
 /** A file on its way in: whole, on disk, under a name of its own. */
 export interface ReceivedFile {
@@ -15,7 +16,10 @@ export interface ReceivedFile {
 }
 
 const megabytes = (bytes: number): string => `${Math.floor(bytes / 1_000_000).toLocaleString('en-GB')} MB`;
-const incoming = /^incoming-[0-9a-z]+(\.spill)?$/;
+
+/** A file of ours: on its way in, its cells, or under its lasting name. */
+const ours = /^(incoming-)?[0-9a-z]{16}(\.spill)?$/;
+const dayMs = 24 * 60 * 60 * 1000;
 
 /** The uploaded files, byte for byte, in one folder. */
 export class KeptFiles {
@@ -44,7 +48,7 @@ export class KeptFiles {
       await pipeline(source, measured, createWriteStream(path, { flags: 'wx' }), { signal });
     } catch (error) {
       await rm(path, { force: true });
-      throw error;
+      throw translateFullDisk(error);
     }
     return { path, sha256: hash.digest('hex'), byteCount };
   }
@@ -63,9 +67,26 @@ export class KeptFiles {
     return join(this.folder, `incoming-${newId()}.spill`);
   }
 
-  /** Gives a received file its lasting name. */
+  /** A received file by the name that `nameOf` gave. */
+  received(name: string, facts: Pick<ReceivedFile, 'sha256' | 'byteCount'>): ReceivedFile {
+    return { path: this.pathOf(name), sha256: facts.sha256, byteCount: facts.byteCount };
+  }
+
+  /** What to write down of a received file, to find it again. */
+  nameOf(file: ReceivedFile): string {
+    return basename(file.path);
+  }
+
+  /** Gives a received file its lasting name. It counts as young from now on, so that no sweep takes it. */
   async keep(file: ReceivedFile, name: string): Promise<void> {
+    const now = new Date();
+    await utimes(file.path, now, now);
     await rename(file.path, this.pathOf(name));
+  }
+
+  /** Undoes `keep`, whether it came to that or not. */
+  async takeBack(file: ReceivedFile, name: string): Promise<void> {
+    await unlessMissing(rename(this.pathOf(name), file.path));
   }
 
   pathOf(name: string): string {
@@ -76,14 +97,30 @@ export class KeptFiles {
     for (const path of paths) await rm(path, { force: true });
   }
 
-  /** Removes what a process that was killed left behind. Younger files may be another process's. */
-  async sweep(now: Date, olderThanMs = 24 * 60 * 60 * 1000): Promise<void> {
-    for (const name of (await readdir(this.folder)).filter((name) => incoming.test(name))) {
-      const { mtimeMs } = await stat(this.pathOf(name));
-      if (mtimeMs < now.getTime() - olderThanMs) await this.remove(this.pathOf(name));
+  /**
+   * Removes what a process that was killed left behind: files that nobody has named, by what the database knows.
+   * Younger files may be another process's, on their way.
+   */
+  async sweep(now: Date, isNamed: (name: string) => boolean, olderThanMs = dayMs): Promise<void> {
+    for (const name of await readdir(this.folder)) {
+      if (!ours.test(name) || isNamed(name)) continue;
+      const changedAt = await changeTimeOf(this.pathOf(name));
+      if (changedAt !== null && changedAt < now.getTime() - olderThanMs) await this.remove(this.pathOf(name));
     }
   }
 }
+
+async function unlessMissing<Result>(work: Promise<Result>): Promise<Result | null> {
+  try {
+    return await work;
+  } catch (error) {
+    if ((error as NodeJS.ErrnoException).code === 'ENOENT') return null;
+    throw error;
+  }
+}
+
+/** Null when another process has removed the file in the meantime. */
+const changeTimeOf = async (path: string): Promise<number | null> => (await unlessMissing(stat(path)))?.mtimeMs ?? null;
 
 export const tooLarge = (maximumBytes: number): DeskError =>
   new DeskError(
