@@ -24,6 +24,7 @@ import { mountPartners } from './partners/partners-router';
 import { createPartnerApi } from './partner-api';
 import { mountPeople } from './people/people-router';
 import { mountSession } from './people/session-router';
+import { mountKeeping } from './records/keeping/keeping-router';
 import { mountRecords } from './records/records-router';
 import { sessionPassport } from './people/session-passport';
 
@@ -60,6 +61,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
   });
   mountEstimators(routes, services.estimators);
   mountRecords(routes, services);
+  mountKeeping(routes, services);
   mountFits(routes, services.fits);
   mountEditions(routes, { editions: services.editions, review: services.editionReview });
   mountEstimates(routes, services.estimateTraces);

@@ -4,6 +4,7 @@ import type { Logger } from 'pino';
 import { systemClock, type Clock } from './clock';
 import { composeEditions, type EditionsRoom } from './compose-editions';
 import { composeFits } from './compose-fits';
+import { composeKeeping, type KeepingRoom } from './compose-keeping';
 import { composeRecords, type RecordsRoom } from './compose-records';
 import type { Config } from './config';
 import { openDatabase } from './database/connection';
@@ -19,6 +20,7 @@ import { loadContract, type Contract } from './http/contract';
 import { Journal } from './journal/journal';
 import { KeysService } from './keys/keys-service';
 import { KeysStore } from './keys/keys-store';
+import { eraseRetainedRecords } from './jobs/erase-retained-records';
 import { Schedule } from './jobs/schedule';
 import { sweepCells } from './jobs/sweep-cells';
 import { sweepIncomingFiles } from './jobs/sweep-incoming-files';
@@ -55,7 +57,7 @@ export interface ComposeOptions {
   readonly sessionCleanupMs?: number;
 }
 
-export interface Services extends EditionsRoom, RecordsRoom {
+export interface Services extends EditionsRoom, RecordsRoom, KeepingRoom {
   readonly config: Config;
   readonly log: Logger;
   readonly clock: Clock;
@@ -111,14 +113,6 @@ export function compose(options: ComposeOptions): Services {
     maximumFileBytes: options.maximumFileBytes ?? ordinaryFileBytes,
     threadArguments: options.fitThreadArguments ?? [],
   });
-  const sweeps = [
-    sweepInvitations(invitations, clock),
-    sweepSignInAttempts(throttle),
-    sweepUploads(recordsRoom.incomingSweep),
-    sweepIncomingFiles(recordsRoom.incomingSweep, recordsRoom.recordTasks),
-    sweepCells(recordsRoom.cellStorage, clock),
-  ];
-  const schedule = new Schedule(sweeps, log);
   const partners = new PartnersStore(database);
   const sites = new SitesStore(database);
   const keys = new KeysService({ database, keys: new KeysStore(database), estimators, journal, clock });
@@ -127,6 +121,20 @@ export function compose(options: ComposeOptions): Services {
     databasePath: databasePathOf(config),
     threadArguments: options.fitThreadArguments ?? [],
   });
+  const keepingRoom = composeKeeping({
+    ...{ database, journal, clock, log, fits, recordsRoom },
+    databasePath: databasePathOf(config),
+    threadArguments: options.fitThreadArguments ?? [],
+  });
+  const sweeps = [
+    sweepInvitations(invitations, clock),
+    sweepSignInAttempts(throttle),
+    sweepUploads(recordsRoom.incomingSweep),
+    sweepIncomingFiles(recordsRoom.incomingSweep, recordsRoom.recordTasks),
+    sweepCells(recordsRoom.cellStorage, clock),
+    eraseRetainedRecords(keepingRoom.retention),
+  ];
+  const schedule = new Schedule(sweeps, log);
   return {
     config,
     log,
@@ -145,6 +153,7 @@ export function compose(options: ComposeOptions): Services {
     fits,
     fitRunner,
     ...recordsRoom,
+    ...keepingRoom,
     ...composeEditions({ database, editions, fits: fitsStore, estimators, journal, clock }),
     partners: new PartnersService({ database, partners, sites, keys, journal, clock }),
     sites: new SitesService({ database, partners, sites, journal, clock }),

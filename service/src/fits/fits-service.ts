@@ -8,6 +8,7 @@ import type { EstimatorsStore } from '../estimators/estimators-store';
 import type { Page } from '../http/page';
 import type { Journal } from '../journal/journal';
 import type { SignedInPerson } from '../people/person';
+import { requireRows } from '../records/required-rows';
 import { checkSpecification } from './check-specification';
 import type { FitRunner } from './fit-runner';
 import type { FitRecord, FitsStore, FitState } from './fits-store';
@@ -146,6 +147,7 @@ export class FitsService {
 
   private async requireSound({ revisionId, specification }: FitNew): Promise<void> {
     const facts = await this.parts.revisions.find(revisionId);
+    if (facts) requireRows(facts);
     const errors = facts
       ? checkSpecification(specification, facts)
       : [{ pointer: '#/revisionId', detail: 'There is no such revision of a record set.' }];
