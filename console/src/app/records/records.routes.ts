@@ -10,6 +10,12 @@ export const recordsRoutes: Routes = [
     loadComponent: () => import('./bring-in/bring-in-page').then((m) => m.BringInPage),
   },
   {
+    path: 'revisions/:id/mend',
+    title: 'Mending',
+    canActivate: [withRole('analyst')],
+    loadComponent: () => import('./mending/mending-page').then((m) => m.MendingPage),
+  },
+  {
     path: 'revisions/:id',
     title: 'Revision',
     loadComponent: () => import('./revision/revision-page').then((m) => m.RevisionPage),

@@ -1,0 +1,28 @@
+/** What the service says about a formula, taken apart at the character (from 1) that it names. */
+export interface FormulaComplaint {
+  readonly words: string;
+  /** The formula around the place; undefined where no place was named. */
+  readonly place?: { readonly before: string; readonly at: string; readonly after: string; readonly character: number };
+}
+
+export function formulaComplaint(reason: string, formula: string): FormulaComplaint {
+  const named = /^(.*?)\s*\(at character (\d+)\)\s*\.?$/s.exec(reason);
+  if (!named) return { words: reason };
+  const character = Number(named[2]);
+  const start = Math.min(Math.max(character - 1, 0), formula.length);
+  return {
+    words: named[1],
+    place: {
+      before: formula.slice(0, start),
+      // Past its end the formula breaks off: a space shows where.
+      at: formula.charAt(start) || '\u00a0',
+      after: formula.slice(start + 1),
+      character,
+    },
+  };
+}
+
+/** A column as a formula names it; a bracket that belongs to the name is written twice. */
+export function columnInFormula(name: string): string {
+  return `[${name.replaceAll(']', ']]')}]`;
+}
