@@ -3,6 +3,7 @@ import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
 import { DeskError, notFound } from '../../errors';
 import type { RecordsStore } from '../records-store';
+import { requireRows } from '../required-rows';
 import { answerOfThread } from '../worker-answer';
 import type { FindingsOutcome, FindingsTask } from './findings-task';
 
@@ -26,7 +27,9 @@ export class FindingsService {
   constructor(private readonly parts: FindingsParts) {}
 
   async list(revisionId: string, target: string | undefined): Promise<components['schemas']['RecordFindings']> {
-    if (!(await this.parts.records.findRevision(revisionId))) throw notFound('revision');
+    const revision = await this.parts.records.findRevision(revisionId);
+    if (!revision) throw notFound('revision');
+    requireRows(revision);
     if (target !== undefined) await this.requireNumeric(revisionId, target);
     const found = await this.search(revisionId, target ?? null);
     const items = found.map(({ where = null, steps = [], ...finding }) => ({

@@ -30,9 +30,12 @@ export function correlationMap(cells: RevisionCells, names: readonly string[], o
   const every = columns.map((_, position) => position);
   const distance = (a: number, b: number): number => (a === b ? 0 : 1 - Math.abs(pairOf(a, b).correlation ?? 0));
   const order = ordering(every.map((a) => every.map((b) => distance(a, b))));
+  // Rounding may leave a column's correlation with itself just short of 1.
+  const shown = (a: number, b: number): number | null =>
+    a === b && pairOf(a, a).correlation !== null ? 1 : pairOf(a, b).correlation;
   return {
     columns: order.map((position) => names[position]),
-    correlations: order.map((a) => order.map((b) => pairOf(a, b).correlation)),
+    correlations: order.map((a) => order.map((b) => shown(a, b))),
     counts: order.map((a) => order.map((b) => pairOf(a, b).count)),
   };
 }

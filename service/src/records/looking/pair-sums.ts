@@ -25,8 +25,9 @@ export class PairSums {
     this.squaresX += count * sdX * sdX + fromX * fromX * share;
     this.squaresY += count * sdY * sdY + fromY * fromY * share;
     this.products += count * covariance + fromX * fromY * share;
-    this.meanX += (fromX * count) / together;
-    this.meanY += (fromY * count) / together;
+    // In this order of reckoning a column that does not vary keeps its mean exactly.
+    this.meanX += fromX * (count / together);
+    this.meanY += fromY * (count / together);
     this.count = together;
   }
 
