@@ -1,6 +1,5 @@
 import { Component, computed, inject, input, output, signal } from '@angular/core';
 import type { ColumnKind, MendStep, RecordRevision } from '../../api/contract';
-import { ChoiceGroup } from '../../ui/choice-group';
 import { EntryForm } from '../../ui/entry-form';
 import { Field, FieldInput } from '../../ui/field';
 import { ProblemNotice } from '../../ui/problem-notice';
@@ -33,7 +32,6 @@ const FORMULA_FIELD: Readonly<Partial<Record<StepKind, StepField>>> = {
 @Component({
   selector: 'tb-step-fields',
   imports: [
-    ChoiceGroup,
     ColumnChoiceField,
     ConversionFields,
     Field,

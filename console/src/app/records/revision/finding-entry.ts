@@ -1,15 +1,24 @@
-import { Component, computed, input, linkedSignal } from '@angular/core';
+import { Component, computed, input, linkedSignal, output } from '@angular/core';
+import { RouterLink } from '@angular/router';
 import type { Finding } from '../../api/contract';
-import { FINDING_WORDS, listedOf, rowsHidden, rowsOf } from './finding-words';
+import { wordsOfStep } from '../mending/step-words';
+import { FINDING_WORDS, listedOf, rowsAddressOf, rowsHidden, rowsOf } from './finding-words';
 
 /** One finding: what was found, where, and what may be done about it. */
 @Component({
   selector: 'tb-finding-entry',
+  imports: [RouterLink],
   templateUrl: './finding-entry.html',
   styleUrl: './finding-entry.scss',
 })
 export class FindingEntry {
   readonly finding = input.required<Finding>();
+  /** Whether its steps can be added to the mending by whoever looks. */
+  readonly addable = input(false);
+  /** Whether they wait there already. */
+  readonly added = input(false);
+  readonly adding = input(false);
+  readonly add = output();
 
   protected readonly all = linkedSignal({ source: () => this.finding(), computation: () => false });
   protected readonly kind = computed(() => FINDING_WORDS[this.finding().kind]);
@@ -17,6 +26,8 @@ export class FindingEntry {
   protected readonly listed = computed(() => listedOf(this.finding()));
   protected readonly rows = computed(() => rowsOf(this.finding(), this.all()));
   protected readonly hidden = computed(() => rowsHidden(this.finding()));
+  protected readonly rowsAddress = computed(() => rowsAddressOf(this.finding()));
+  protected readonly steps = computed(() => this.finding().steps.map(wordsOfStep));
 
   protected toggle(): void {
     this.all.update((all) => !all);

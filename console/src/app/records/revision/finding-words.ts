@@ -33,3 +33,11 @@ export function listedOf({ rowCount, rows }: Finding): string {
   if (rowCount === null || rowCount <= rows.length) return '';
   return `The first ${formatCount(rows.length)} of ${formatCount(rowCount)}:`;
 }
+
+/** Query of the rows behind a finding: by their condition where there is one, else by the numbers that are listed. */
+export function rowsAddressOf({ where, rows }: Finding): {
+  readonly where: string | null;
+  readonly numbers: string | null;
+} {
+  return where === null ? { where, numbers: rows.join(',') } : { where, numbers: null };
+}
