@@ -11,6 +11,7 @@ import { MendingDraftsStore } from './records/mending/mending-drafts-store';
 import { MendingService } from './records/mending/mending-service';
 import { MendingThread } from './records/mending/mending-thread';
 import { CellStorage } from './records/storing/cell-storage';
+import { BringingIn } from './records/incoming/bringing-in';
 import { IncomingFilesStore } from './records/incoming/incoming-files-store';
 import { IncomingSweep } from './records/incoming/incoming-sweep';
 import { KeptFiles } from './records/kept-files';
@@ -49,11 +50,14 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   const store = new RecordsStore(database);
   const keptFiles = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
   const cells = new CellStorage({ databasePath, threadArguments });
+  const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
   const importer = new RevisionImporter({ database, records: store, files: keptFiles, cells, clock, threadArguments });
-  const records = new RecordsService({ records: store, files: keptFiles, journal, clock, maximumFileBytes, importer });
+  const bringingIn = new BringingIn({ records: store, importer, journal, clock });
+  const records = new RecordsService({
+    ...{ records: store, files: keptFiles, bringingIn, tasks: recordTasks, maximumFileBytes },
+  });
   const recordFindings = new FindingsService({ records: store, databasePath, threadArguments });
   const recordLooking = new LookingService({ records: store, databasePath, threadArguments });
-  const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
   const drafts = new MendingDraftsStore(database);
   const recordMending = new MendingService({
     ...{ database, records: store, files: keptFiles, cells, drafts, journal, clock, tasks: recordTasks },

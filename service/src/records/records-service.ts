@@ -1,26 +1,24 @@
 import type { Request } from 'express';
 import type { components } from '../../../openapi/types/desk';
-import { timeText, type Clock } from '../clock';
-import { translateUnique } from '../database/constraint-errors';
-import { newId } from '../database/new-id';
 import { DeskError, notFound } from '../errors';
 import type { Page } from '../http/page';
-import type { Journal } from '../journal/journal';
+import type { BringingIn, Destination } from './incoming/bringing-in';
+import { nameTaken, readWords, type SetWords } from './incoming/record-set-words';
 import type { KeptFiles, ReceivedFile } from './kept-files';
-import type { Import, RevisionImporter } from './revision-importer';
 import { plainFileName, receiveUpload, type Upload } from './receive-upload';
 import { toRevisionAnswer, toSetDetail, toSetSummary } from './record-answers';
 import type { RecordSetRecord, RecordsStore, RevisionRecord } from './records-store';
+import { requireRows } from './required-rows';
+import type { RecordTasks } from './tasks/record-tasks';
 
 type Schemas = components['schemas'];
 
 export interface RecordsParts {
   readonly records: RecordsStore;
   readonly files: KeptFiles;
-  readonly journal: Journal;
-  readonly clock: Clock;
+  readonly bringingIn: BringingIn;
+  readonly tasks: RecordTasks;
   readonly maximumFileBytes: number;
-  readonly importer: RevisionImporter;
 }
 
 export interface FileToImport {
@@ -31,11 +29,14 @@ export interface FileToImport {
   readonly personId: string;
 }
 
-export type RevisionToImport = Pick<FileToImport, 'path' | 'fileName' | 'personId'> & { readonly recordSetId: string };
+export interface RevisionToImport extends Omit<FileToImport, 'name' | 'description'> {
+  readonly recordSetId: string;
+}
 
-interface SetWords {
-  readonly name: string;
-  readonly description: string;
+interface FileToFinish {
+  readonly file: ReceivedFile;
+  readonly fileName: string;
+  readonly personId: string;
 }
 
 export class RecordsService {
@@ -64,17 +65,25 @@ export class RecordsService {
   async original(
     id: string,
   ): Promise<{ readonly path: string; readonly fileName: string; readonly byteCount: number }> {
-    const { originalPath, fileName, byteCount } = await this.requireRevision(id);
+    const revision = await this.requireRevision(id);
+    const { originalPath, originalKept, fileName, byteCount, reading } = revision;
+    requireRows(revision);
+    if (!originalKept) {
+      const columns = reading.setAside.length === 1 ? 'a column of it was' : 'columns of it were';
+      throw new DeskError(
+        'original-not-kept',
+        `${fileName} was not kept, because ${columns} set aside before storing. Its SHA-256, name and size are; what was stored can be exported as CSV.`,
+      );
+    }
     return { path: this.parts.files.pathOf(originalPath), fileName, byteCount };
   }
 
   /** A new record set from an uploaded form. */
   async createFromForm(personId: string, request: Request, signal: AbortSignal): Promise<Schemas['RecordSetDetail']> {
-    const upload = await this.receive(request);
-    return this.discardingOnFailure(upload.file, async () => {
-      const words = readWords(upload.fields);
-      return this.createSet(words, { ...upload, personId, signal });
-    });
+    const { file, fileName, fields } = await this.receive(request);
+    return this.discardingOnFailure(file, () =>
+      this.createSet(readWords(fields), { file, fileName, personId }, signal),
+    );
   }
 
   /** A further revision of a set from an uploaded form. */
@@ -84,30 +93,28 @@ export class RecordsService {
     request: Request,
     signal: AbortSignal,
   ): Promise<Schemas['RecordRevision']> {
-    const set = await this.requireSet(recordSetId);
-    const upload = await this.receive(request);
-    return this.discardingOnFailure(upload.file, () => this.addRevision(set, { ...upload, personId, signal }));
-  }
-
-  /** A new record set from a file on this machine, which is copied. */
-  async importFile({ path, fileName, name, description, personId }: FileToImport): Promise<Schemas['RecordSetDetail']> {
-    const file = await this.parts.files.receiveCopy(path);
+    await this.requireSet(recordSetId);
+    const { file, fileName } = await this.receive(request);
     return this.discardingOnFailure(file, () =>
-      this.createSet({ name, description }, { file, fileName: plainFileName(fileName), personId }),
+      this.addRevision({ kind: 'revision', recordSetId }, { file, fileName, personId }, signal),
     );
   }
 
-  /** A further revision of a set from a file on this machine, which is copied. */
-  async importRevision({
-    path,
-    fileName,
-    recordSetId,
-    personId,
-  }: RevisionToImport): Promise<Schemas['RecordRevision']> {
-    const set = await this.requireSet(recordSetId);
+  /** A new record set from a file on this machine, which is copied. */
+  async importFile({ path, name, description, ...given }: FileToImport): Promise<Schemas['RecordSetDetail']> {
     const file = await this.parts.files.receiveCopy(path);
+    const fileName = plainFileName(given.fileName);
+    return this.discardingOnFailure(file, () => this.createSet({ name, description }, { ...given, file, fileName }));
+  }
+
+  /** A further revision of a set from a file on this machine, which is copied. */
+  async importRevision(given: RevisionToImport): Promise<Schemas['RecordRevision']> {
+    const { path, recordSetId, personId } = given;
+    await this.requireSet(recordSetId);
+    const file = await this.parts.files.receiveCopy(path);
+    const fileName = plainFileName(given.fileName);
     return this.discardingOnFailure(file, () =>
-      this.addRevision(set, { file, fileName: plainFileName(fileName), personId }),
+      this.addRevision({ kind: 'revision', recordSetId }, { file, fileName, personId }),
     );
   }
 
@@ -115,47 +122,28 @@ export class RecordsService {
     return receiveUpload(request, this.parts.files, this.parts.maximumFileBytes);
   }
 
-  private async createSet(words: SetWords, given: Import): Promise<Schemas['RecordSetDetail']> {
-    const { records, journal, clock } = this.parts;
-    if (await records.nameIsTaken(words.name)) throw nameTaken(words.name);
-    const id = newId();
-    await this.parts.importer.bringIn(given, async (store) => {
-      const now = timeText(clock);
-      const set = { id, ...words, retainUntil: null, changedAt: now, createdAt: now, createdBy: given.personId };
-      await translateUnique(
-        () => records.insertSet(set),
-        'record_sets.name_key',
-        () => nameTaken(words.name),
-      );
-      const rowCount = await store(id, 1);
-      const summary = `The record set ${words.name} was brought in from ${given.fileName}: ${rowCount} rows`;
-      await journal.write({
-        actorId: given.personId,
-        action: 'record-set-created',
-        subjectKind: 'record-set',
-        subjectId: id,
-        summary,
-      });
-    });
-    return this.readSet(id);
+  private async createSet(
+    words: SetWords,
+    given: FileToFinish,
+    signal?: AbortSignal,
+  ): Promise<Schemas['RecordSetDetail']> {
+    if (await this.parts.records.nameIsTaken(words.name)) throw nameTaken(words.name);
+    const { recordSetId } = await this.finish({ kind: 'record-set', ...words }, given, signal);
+    return this.readSet(recordSetId);
   }
 
-  private async addRevision(set: RecordSetRecord, given: Import): Promise<Schemas['RecordRevision']> {
-    const { records, journal } = this.parts;
-    const revisionId = await this.parts.importer.bringIn(given, async (store) => {
-      const [newest] = await records.revisionsOf([set.id]);
-      const number = (newest?.number ?? 0) + 1;
-      const rowCount = await store(set.id, number);
-      const summary = `Revision ${number} of ${set.name} was brought in from ${given.fileName}: ${rowCount} rows`;
-      await journal.write({
-        actorId: given.personId,
-        action: 'record-revision-added',
-        subjectKind: 'record-set',
-        subjectId: set.id,
-        summary,
-      });
-    });
-    return this.readRevision(revisionId);
+  private async addRevision(
+    destination: Destination,
+    given: FileToFinish,
+    signal?: AbortSignal,
+  ): Promise<Schemas['RecordRevision']> {
+    return this.readRevision((await this.finish(destination, given, signal)).id);
+  }
+
+  /** The same way in as a file that was looked at before, to its end. */
+  private async finish(destination: Destination, given: FileToFinish, signal?: AbortSignal): Promise<RevisionRecord> {
+    const work = await this.parts.bringingIn.workOf(given, destination);
+    return this.requireRevision(await this.parts.tasks.finish(work, signal));
   }
 
   private async discardingOnFailure<Result>(file: ReceivedFile, work: () => Promise<Result>): Promise<Result> {
@@ -183,24 +171,4 @@ export class RecordsService {
 function requireNewest(revisions: readonly RevisionRecord[]): RevisionRecord {
   if (!revisions[0]) throw new Error('A record set has no revision.');
   return revisions[0];
-}
-
-const nameTaken = (name: string): DeskError =>
-  new DeskError(
-    'name-taken',
-    `A record set is called ${name} already. Choose another name, or bring the file in as its next revision.`,
-    { errors: [{ pointer: '#/name', detail: 'is in use' }] },
-  );
-
-function readWords(fields: ReadonlyMap<string, string>): SetWords {
-  const name = (fields.get('name') ?? '').trim();
-  const description = (fields.get('description') ?? '').trim();
-  const wrong = (pointer: string, detail: string): DeskError =>
-    new DeskError('request-invalid', `Mend the form and send it again: ${pointer.slice(2)} ${detail}.`, {
-      errors: [{ pointer, detail }],
-    });
-  if (name === '') throw wrong('#/name', 'is missing');
-  if (name.length > 120) throw wrong('#/name', 'is longer than 120 characters');
-  if (description.length > 2000) throw wrong('#/description', 'is longer than 2000 characters');
-  return { name, description };
 }

@@ -1,20 +1,38 @@
-import pLimit from 'p-limit';
 import { timeText, type Clock } from '../clock';
 import type { Database } from '../database/database';
-import { newId } from '../database/new-id';
 import { readTableInThread } from './import-thread';
 import type { KeptFiles, ReceivedFile } from './kept-files';
 import type { TableReading } from './reading/read-table';
-import type { RecordsStore } from './records-store';
-import { storeColumns } from './store-columns';
+import type { Reading, RecordsStore, RevisionRecord } from './records-store';
+import { translateFullDisk } from './storage-full';
+import { storeColumns, type SpilledTable } from './store-columns';
 import type { CellStorage } from './storing/cell-storage';
+import type { TaskContext } from './tasks/record-tasks';
 
+/** What a revision is to be made from. */
 export interface Import {
   readonly file: ReceivedFile;
   readonly fileName: string;
   readonly personId: string;
-  readonly signal?: AbortSignal;
+  /** The revision whose rows come first; null when the file stands alone. */
+  readonly base: RevisionRecord | null;
 }
+
+/** Where the revision belongs. */
+export interface RevisionPlace {
+  readonly recordSetId: string;
+  readonly number: number;
+}
+
+/** What is told of a revision that was stored. */
+export interface StoredRevision {
+  readonly rowCount: number;
+  readonly appendedRowCount: number | null;
+  readonly setAsideCount: number;
+}
+
+export type StoreRevision = (place: RevisionPlace) => Promise<StoredRevision>;
+export type Around = (store: StoreRevision) => Promise<void>;
 
 export interface ImporterParts {
   readonly database: Database;
@@ -22,80 +40,87 @@ export interface ImporterParts {
   readonly files: KeptFiles;
   readonly cells: CellStorage;
   readonly clock: Clock;
-  /** Node's own arguments for the reading thread; none when compiled. */
+  /** Node's own arguments for the threads; none when compiled. */
   readonly threadArguments: readonly string[];
 }
 
-/** Files read at the same time; the others wait, so that memory stays bounded. */
-const readAtOnce = 1;
+interface ReadImport {
+  readonly reading: Reading;
+  /** The reading's own, or with the rows of the base before it. */
+  readonly table: SpilledTable & { readonly rowCount: number };
+}
 
-/** Turns a received file into a stored revision, wholly or not at all. */
+/** Turns a received file into a stored revision, wholly or not at all: when it fails, the file lies where it lay. */
 export class RevisionImporter {
-  private readonly queue = pLimit(readAtOnce);
-
   constructor(private readonly parts: ImporterParts) {}
 
   /**
    * Reads the file in a thread and stores its cells ahead in another, then stores revision and columns in one unit
-   * of work together with what `around` adds; it gets a function that stores them and answers the number of rows.
+   * of work together with what `around` adds; it gets a function that stores them. Cancelling counts until the unit
+   * of work is through. The file gets its lasting name, unless columns of it were set aside: then it is deleted.
    */
-  async bringIn(
-    given: Import,
-    around: (store: (recordSetId: string, number: number) => Promise<number>) => Promise<void>,
-  ): Promise<string> {
-    const { database, files, cells, threadArguments } = this.parts;
-    const id = newId();
+  async bringIn(given: Import, context: TaskContext, around: Around): Promise<void> {
+    const { files, cells } = this.parts;
+    const { revisionId, signal, progress } = context;
     const spillPath = files.spillPathOf(given.file);
+    let originalKept = true;
     try {
-      await this.queue(async () => {
-        const task = { path: given.file.path, spillPath };
-        const reading = await readTableInThread(task, { nodeArguments: threadArguments, signal: given.signal });
-        const keep = (): Promise<void> =>
-          database.unitOfWork(() =>
-            around((recordSetId, number) => this.store({ id, recordSetId, number }, reading, given)),
-          );
-        await cells.storeFor({ revisionId: id, table: reading, spillPath }, keep, { signal: given.signal });
-      });
+      const read = await this.read(given, spillPath, context);
+      originalKept = read.reading.setAside.length === 0;
+      const keep = (): Promise<void> => this.keep(given, read, context, around);
+      await cells.storeFor({ revisionId, table: read.table, spillPath }, keep, { signal, onProgress: progress });
     } catch (error) {
       // The unit of work was undone, so the name that the file was given is undone too.
-      await files.remove(files.pathOf(id));
-      throw error;
+      await files.takeBack(given.file, revisionId);
+      throw translateFullDisk(error);
     } finally {
       await files.remove(spillPath);
     }
-    return id;
+    if (!originalKept) await files.remove(given.file.path);
   }
 
-  private async store(
-    names: { readonly id: string; readonly recordSetId: string; readonly number: number },
-    reading: TableReading,
-    given: Import,
-  ): Promise<number> {
-    const { records, clock, files } = this.parts;
-    const { rowCount, columns, format, decimal } = reading;
-    const { sha256, byteCount } = given.file;
-    await records.insertRevision({
-      ...names,
-      sha256,
-      byteCount,
-      rowCount,
-      columnCount: columns.length,
-      fileName: given.fileName,
-      originalPath: names.id,
-      mendedFrom: null,
-      mending: null,
-      appendedTo: null,
-      appendedRowCount: null,
-      originalKept: true,
-      reading: {
-        ...{ encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
-        ...{ sheet: null, headerLine: format.headerLine, missingMarks: [], setAside: [], unreadable: [] },
-      },
-      createdAt: timeText(clock),
-      createdBy: given.personId,
+  private async read(given: Import, spillPath: string, { signal, progress }: TaskContext): Promise<ReadImport> {
+    const { threadArguments } = this.parts;
+    const task = { path: given.file.path, spillPath };
+    progress({ stage: 'reading', done: 0, total: given.file.byteCount });
+    const table = await readTableInThread(task, { nodeArguments: threadArguments, signal });
+    return { table, reading: readingOf(table) };
+  }
+
+  private async keep(given: Import, read: ReadImport, context: TaskContext, around: Around): Promise<void> {
+    const { database, files } = this.parts;
+    const { revisionId, signal } = context;
+    await database.unitOfWork(async () => {
+      await around((place) => this.store(revisionId, place, read, given));
+      signal.throwIfAborted();
+      if (read.reading.setAside.length === 0) await files.keep(given.file, revisionId);
     });
-    await storeColumns(records, names.id, reading);
-    await files.keep(given.file, names.id);
-    return rowCount;
+  }
+
+  private async store(id: string, place: RevisionPlace, read: ReadImport, given: Import): Promise<StoredRevision> {
+    const { records, clock } = this.parts;
+    const { file, fileName, base, personId } = given;
+    const { table, reading } = read;
+    const appendedRowCount = base && table.rowCount - base.rowCount;
+    const { sha256, byteCount } = file;
+    await records.insertRevision({
+      ...{ id, ...place, sha256, byteCount, fileName, reading },
+      rowCount: table.rowCount,
+      columnCount: table.columns.length,
+      // Without its original a revision still needs a name of its own here: no other's file may go with it.
+      originalPath: id,
+      originalKept: reading.setAside.length === 0,
+      ...{ mendedFrom: null, mending: null },
+      ...{ appendedTo: base && base.id, appendedRowCount },
+      createdAt: timeText(clock),
+      createdBy: personId,
+    });
+    await storeColumns(records, id, table);
+    return { rowCount: table.rowCount, appendedRowCount, setAsideCount: reading.setAside.length };
   }
 }
+
+const readingOf = ({ format, decimal }: TableReading): Reading => ({
+  ...{ encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
+  ...{ sheet: null, headerLine: format.headerLine, missingMarks: [], setAside: [], unreadable: [] },
+});
