@@ -65,7 +65,9 @@ export interface TestAgent {
 let passwordHash: Promise<string> | undefined;
 
 /** The service over a fresh copy of the migrated template, every answer checked against the contract. */
-export async function startTestService(options: Pick<ComposeOptions, 'maximumFileBytes'> = {}): Promise<TestService> {
+export async function startTestService(
+  options: Partial<Pick<ComposeOptions, 'maximumFileBytes' | 'log'>> = {},
+): Promise<TestService> {
   const folder = mkdtempSync(join(tmpdir(), 'tarebeam-api-'));
   const config = readConfig({ DATA_DIR: folder, DEMO: 'off', SESSION_SECRET: 'a secret that only the tests know of' });
   await copyTemplateDatabase(databasePathOf(config));

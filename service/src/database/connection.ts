@@ -31,6 +31,8 @@ export function openDatabase(filename: string): Knex {
     client: ImmediateSqliteClient,
     connection: { filename },
     useNullAsDefault: true,
+    // Else a statement's values, cells of records among them, would stand in the message of its error and be logged.
+    compileSqlOnError: false,
     pool: {
       min: 1,
       max: 1,
