@@ -41,14 +41,14 @@ export class RevisionDeletions {
   async outlook(id: string): Promise<Outlook> {
     const { records, keeping } = this.parts;
     const revision = await this.require(id);
-    const { number, rowCount, byteCount, originalPath } = revision;
+    const { number, rowCount, byteCount, originalPath, originalKept } = revision;
     const fits = await keeping.fitsOn(id);
     return {
       ...{ revisionNumber: number, rowCount, byteCount },
       editions: await keeping.editionsOn(id),
       fits: fits.map(({ id: fitId, estimatorSlug, estimatorName }) => ({ id: fitId, estimatorSlug, estimatorName })),
       goesWithSet: (await records.revisionsOf([revision.recordSetId])).length === 1,
-      originalGoes: !(await keeping.originalIsShared(originalPath, id)),
+      originalGoes: originalKept && !(await keeping.originalIsShared(originalPath, id)),
       basedOnIt: await keeping.numbersBasedOn(id),
     };
   }

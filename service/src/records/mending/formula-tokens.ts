@@ -23,7 +23,7 @@ export const maximumFormulaLength = 500;
  * belongs to the name or the text is written twice, as in SQL: `[length]] (m)]`, `"3"" planks"`.
  */
 const pattern =
-  /\s*(?:(?<number>\d+\.?\d*(?:[eE][+-]?\d+)?|\.\d+)|"(?<text>(?:[^"]|"")*)"|\[(?<name>(?:[^\]]|\]\])+)\]|(?<word>[\p{L}_][\p{L}\p{N}_]*)|(?<sign><=|>=|<>|!=|[-+*/^()=<>,]))/uy;
+  /(?:(?<number>\d+\.?\d*(?:[eE][+-]?\d+)?|\.\d+)|"(?<text>(?:[^"]|"")*)"|\[(?<name>(?:[^\]]|\]\])+)\]|(?<word>[\p{L}_][\p{L}\p{N}_]*)|(?<sign><=|>=|<>|!=|[-+*/^()=<>,]))/uy;
 
 const undoubled: Readonly<Partial<Record<string, (text: string) => string>>> = {
   text: (text) => text.replaceAll('""', '"'),
@@ -36,6 +36,7 @@ export function tokensOf(formula: string): Token[] {
   const tokens: Token[] = [];
   let at = 0;
   while (formula.slice(at).trim() !== '') {
+    at += /^\s*/u.exec(formula.slice(at))?.[0].length ?? 0;
     pattern.lastIndex = at;
     const match = pattern.exec(formula);
     if (!match?.groups) throw new FormulaError('This cannot stand in a formula', at + 1);
