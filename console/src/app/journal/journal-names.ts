@@ -17,6 +17,7 @@ export const ACTIONS: readonly string[] = [
   'record-set-created',
   'record-set-changed',
   'record-revision-added',
+  'record-revision-appended',
   'record-revision-mended',
   'record-revision-deleted',
   'records-erased',
