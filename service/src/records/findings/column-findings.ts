@@ -1,38 +1,28 @@
-import type {
-  CategoryRecordColumn,
-  DateRecordColumn,
-  NumericRecordColumn,
-  RecordColumn,
-  TextRecordColumn,
-} from '../../regression/records';
-import { dateText } from '../reading/date-cell';
+import type { CategoryRecordColumn, RecordColumn, TextRecordColumn } from '../../regression/records';
+import { changeKind } from '../mending/set-kind';
 import { NumberClass, NumberReader } from '../reading/number-cell';
+import { oneOfTexts } from './conditions';
 import { listRows, noRows, rowsText, type Finding } from './finding';
-import { median, quantile, robustDeviation, sortedPresent } from './robust';
 
-const positionsWhere = (length: number, holds: (row: number) => boolean): number[] => {
-  const rows: number[] = [];
-  for (let row = 0; row < length; row++) if (holds(row)) rows.push(row);
-  return rows;
-};
-
-function presentValues(column: RecordColumn): Set<number | string> {
-  if (column.kind === 'category') return new Set(column.codes.filter((code) => code >= 0));
-  const values: Iterable<number | string | null> = column.values;
-  const present = new Set<number | string>();
-  for (const value of values) {
-    if (value === null || Number.isNaN(value)) continue;
-    present.add(value);
-    if (present.size > 1) break;
+/** How many different values there are, counted up to two. Cost: one pass at most. */
+function differentUpToTwo(column: RecordColumn): number {
+  const cells: ArrayLike<number | string | null> = column.kind === 'category' ? column.codes : column.values;
+  let first: number | string | null = null;
+  for (let row = 0; row < cells.length; row++) {
+    const cell = cells[row];
+    if (cell === null || cell !== cell || (column.kind === 'category' && cell === -1)) continue;
+    if (first === null) first = cell;
+    else if (cell !== first) return 2;
   }
-  return present;
+  return first === null ? 0 : 1;
 }
 
-export function findConstant(column: RecordColumn): Finding[] {
-  const { size } = presentValues(column);
-  if (size > 1) return [];
+/** A column that never varies. It can be set aside unless it is the target or the only column. */
+export function findConstant(column: RecordColumn, canBeSetAside: boolean): Finding[] {
+  const different = differentUpToTwo(column);
+  if (different > 1) return [];
   const message =
-    size === 0
+    different === 0
       ? `${column.name} is empty in every row.`
       : `${column.name} has the same value in every row that has one.`;
   return [
@@ -42,114 +32,100 @@ export function findConstant(column: RecordColumn): Finding[] {
       message,
       remedy: 'Set the column aside: it cannot tell cases apart.',
       ...noRows,
+      steps: canBeSetAside ? [{ kind: 'set-aside', column: column.name }] : [],
     },
   ];
 }
 
 const plainLevel = (level: string): string => level.normalize('NFKC').trim().replace(/\s+/g, ' ').toLowerCase();
 
-/** Levels that differ only by case or by spaces. */
+/** Levels that differ only by case or by spaces (Unicode's compatible forms of a character count as the same). Cost: one pass. */
 export function findLevelsAlike(column: CategoryRecordColumn): Finding[] {
-  const groups = new Map<string, number[]>();
-  column.levels.forEach((level, code) =>
-    groups.set(plainLevel(level), [...(groups.get(plainLevel(level)) ?? []), code]),
-  );
   const counts = new Array<number>(column.levels.length).fill(0);
   for (const code of column.codes) if (code >= 0) counts[code]++;
+  const groups = new Map<string, number[]>();
+  column.levels.forEach((level, code) => {
+    const plain = plainLevel(level);
+    const group = groups.get(plain);
+    if (group) group.push(code);
+    else groups.set(plain, [code]);
+  });
   return [...groups.values()]
     .filter((codes) => codes.length > 1)
     .map((codes) =>
       levelsAlike(
         column,
-        [...codes].sort((a, b) => counts[b] - counts[a]),
+        codes.toSorted((a, b) => counts[b] - counts[a]),
       ),
     );
 }
 
-function levelsAlike(column: CategoryRecordColumn, codes: readonly number[]): Finding {
-  const [usual, ...others] = codes;
-  const written = codes.map((code) => `“${column.levels[code]}”`).join(', ');
+function levelsAlike({ name, codes, levels }: CategoryRecordColumn, alike: readonly number[]): Finding {
+  const [usual, ...others] = alike.map((code) => levels[code]);
+  const unusual = new Set(alike.slice(1));
+  const rows: number[] = [];
+  codes.forEach((code, row) => {
+    if (unusual.has(code)) rows.push(row);
+  });
   return {
     kind: 'levels-alike',
-    columns: [column.name],
-    message: `${column.name} writes one level in ${codes.length} ways: ${written}.`,
-    remedy: `Map them to “${column.levels[usual]}”, the most frequent.`,
-    ...listRows(positionsWhere(column.codes.length, (row) => others.includes(column.codes[row]))),
+    columns: [name],
+    message: `${name} writes one level in ${alike.length} ways: ${alike.map((code) => `“${levels[code]}”`).join(', ')}.`,
+    remedy: `Map them to “${usual}”, the most frequent.`,
+    ...listRows(rows),
+    where: oneOfTexts(name, others),
+    steps: [{ kind: 'map-levels', column: name, levels: Object.fromEntries(others.map((level) => [level, usual])) }],
   };
 }
 
 /** Share of numbers from which words in a column look like slips. */
 const nearlyShare = 0.8;
 
-/** A column of numbers that a few words have turned into words. */
-export function findNearlyNumeric(column: CategoryRecordColumn | TextRecordColumn): Finding[] {
+interface Words {
+  readonly rows: readonly number[];
+  /** Different words, in the order in which they come up; no more than are needed. */
+  readonly texts: readonly string[];
+}
+
+/** Cells that are not numbers; null as soon as there are too many for slips. */
+function wordsAmongNumbers(column: CategoryRecordColumn | TextRecordColumn): Words | null {
   const reader = new NumberReader();
   const isNumber = (text: string): boolean => reader.read(text) !== NumberClass.none;
   const levelIsNumber = column.kind === 'category' ? column.levels.map(isNumber) : [];
   const length = column.kind === 'category' ? column.codes.length : column.values.length;
-  const textOf = (row: number): string | null =>
-    column.kind === 'text' ? column.values[row] : (column.levels[column.codes[row]] ?? null);
-  const words = positionsWhere(length, (row) => {
-    const text = textOf(row);
-    return text !== null && !(column.kind === 'category' ? levelIsNumber[column.codes[row]] : isNumber(text));
-  });
-  const present = positionsWhere(length, (row) => textOf(row) !== null).length;
-  if (words.length === 0 || words.length > (1 - nearlyShare) * present) return [];
-  const examples = [...new Set(words.slice(0, 1000).map(textOf))].slice(0, 3).map((text) => `“${text?.slice(0, 30)}”`);
+  const rows: number[] = [];
+  const texts = new Set<string>();
+  let present = 0;
+  for (let row = 0; row < length; row++) {
+    const code = column.kind === 'category' ? column.codes[row] : 0;
+    const text = column.kind === 'category' ? column.levels[code] : column.values[row];
+    if (code < 0 || text === null) continue;
+    present++;
+    if (column.kind === 'category' ? levelIsNumber[code] : isNumber(text)) continue;
+    rows.push(row);
+    if (texts.size < 100) texts.add(text);
+    if (rows.length > (1 - nearlyShare) * length) return null;
+  }
+  return rows.length === 0 || rows.length > (1 - nearlyShare) * present ? null : { rows, texts: [...texts] };
+}
+
+/** A column of numbers that a few words have turned into words. Cost: one pass. */
+export function findNearlyNumeric(column: CategoryRecordColumn | TextRecordColumn): Finding[] {
+  const words = wordsAmongNumbers(column);
+  if (!words) return [];
+  const { name } = column;
+  const examples = words.texts.slice(0, 3).map((text) => `“${text.slice(0, 30)}”`);
+  // Where the decimal mark is a comma, more than the words would be lost.
+  const losesWordsOnly = changeKind(column, 'numeric').unreadable <= words.rows.length;
   return [
     {
       kind: 'nearly-numeric',
-      columns: [column.name],
-      message: `${column.name} holds numbers but for ${rowsText(words.length)}, such as ${examples.join(', ')}.`,
-      remedy: 'Set these cells to missing, or write them as numbers, so that the column can be used as a measure.',
-      ...listRows(words),
+      columns: [name],
+      message: `${name} holds numbers but for ${rowsText(words.rows.length)}, such as ${examples.join(', ')}.`,
+      remedy: 'Make the column numeric, by which these cells become missing, or write them as numbers first.',
+      ...listRows(words.rows),
+      where: words.texts.length < 100 ? oneOfTexts(name, words.texts) : undefined,
+      steps: losesWordsOnly ? [{ kind: 'set-kind', column: name, to: 'numeric' }] : [],
     },
   ];
-}
-
-const outlyingDeviations = 8;
-
-/** Readings far from the median, measured by the median absolute deviation; on the log scale where that is the more even one. */
-export function findOutlying(column: NumericRecordColumn): Finding[] {
-  const sorted = sortedPresent(column.values);
-  if (sorted.length < 20 || sorted[0] === sorted[sorted.length - 1]) return [];
-  const [low, middle, high] = [quantile(sorted, 0.05), quantile(sorted, 0.5), quantile(sorted, 0.95)];
-  const useLog = sorted[0] > 0 && high - middle > 2 * (middle - low);
-  const values = useLog ? column.values.map(Math.log) : column.values;
-  const centre = median(values);
-  const spread = robustDeviation(values, centre);
-  if (!(spread > 0)) return [];
-  const rows = positionsWhere(values.length, (row) => Math.abs(values[row] - centre) > outlyingDeviations * spread);
-  if (rows.length === 0 || rows.length > 0.05 * sorted.length) return [];
-  return [
-    {
-      kind: 'outlying-values',
-      columns: [column.name],
-      message: `${rowsText(rows.length)} of ${column.name} lie more than ${outlyingDeviations} deviations from the median${useLog ? ' on the log scale' : ''} (deviation: 1.4826 × median absolute deviation).`,
-      remedy: 'Look at the rows; set to missing what cannot be true.',
-      ...listRows(rows),
-    },
-  ];
-}
-
-/** Spans without a record that are long beside the usual step: ten times the median step and three times the 95th percentile. */
-export function findTimeGaps(column: DateRecordColumn): Finding[] {
-  const days = Float64Array.from(new Set(sortedPresent(column.values.map(Math.floor))));
-  if (days.length < 20) return [];
-  const steps = days.subarray(1).map((day, at) => day - days[at]);
-  const ordered = steps.slice().sort();
-  const long = Math.max(10 * quantile(ordered, 0.5), 3 * quantile(ordered, 0.95));
-  const gaps = positionsWhere(steps.length, (at) => steps[at] > long);
-  return gaps.map((at) => ({
-    kind: 'time-gap',
-    columns: [column.name],
-    message: `${column.name} has no record between ${dateText(days[at])} and ${dateText(days[at + 1])}: ${steps[at]} days.`,
-    remedy: 'Ask whether records are missing; if not, say in the description why there were none.',
-    ...listRows(
-      positionsWhere(
-        column.values.length,
-        (row) => Math.floor(column.values[row]) === days[at] || Math.floor(column.values[row]) === days[at + 1],
-      ),
-    ),
-  }));
 }

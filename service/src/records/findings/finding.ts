@@ -42,6 +42,19 @@ export const listRows = (positions: readonly number[]): Pick<Finding, 'rowCount'
   rows: positions.slice(0, listedRows).map((position) => position + 1),
 });
 
+/** Rows that one mending step may list. */
+const rowsOfStep = 100_000;
+
+/** A step for the rows at these positions: by number, or by condition where they are too many to list; else none. */
+export function stepForRows(
+  positions: readonly number[],
+  where: string | undefined,
+  step: (choice: { rows: number[] } | { where: string }) => MendStep,
+): readonly MendStep[] {
+  if (positions.length <= rowsOfStep) return [step({ rows: positions.map((position) => position + 1) })];
+  return where === undefined ? [] : [step({ where })];
+}
+
 export const noRows: Pick<Finding, 'rowCount' | 'rows'> = { rowCount: null, rows: [] };
 
 export const rowsText = (count: number): string => (count === 1 ? '1 row' : `${count.toLocaleString('en-GB')} rows`);
