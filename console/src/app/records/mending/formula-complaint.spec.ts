@@ -8,6 +8,13 @@ describe('a complaint about a formula', () => {
     });
   });
 
+  it('names what follows where the place is a space', () => {
+    expect(formulaComplaint('“>” does not fit here (at character 9)', '[Beam] > > 3').place).toMatchObject({
+      at: '>',
+      character: 10,
+    });
+  });
+
   it('points behind the end of a formula that breaks off', () => {
     const { place } = formulaComplaint('The formula breaks off (at character 9)', '[Beam] >');
     expect(place).toEqual({ before: '[Beam] >', at: '\u00a0', after: '', character: 9 });

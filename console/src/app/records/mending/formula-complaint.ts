@@ -8,8 +8,7 @@ export interface FormulaComplaint {
 export function formulaComplaint(reason: string, formula: string): FormulaComplaint {
   const named = /^(.*?)\s*\(at character (\d+)\)\s*\.?$/s.exec(reason);
   if (!named) return { words: reason };
-  const character = Number(named[2]);
-  const start = Math.min(Math.max(character - 1, 0), formula.length);
+  const start = firstVisible(formula, Number(named[2]) - 1);
   return {
     words: named[1],
     place: {
@@ -17,9 +16,16 @@ export function formulaComplaint(reason: string, formula: string): FormulaCompla
       // Past its end the formula breaks off: a space shows where.
       at: formula.charAt(start) || '\u00a0',
       after: formula.slice(start + 1),
-      character,
+      character: start + 1,
     },
   };
+}
+
+/** The place itself, or what follows the space there. */
+function firstVisible(formula: string, index: number): number {
+  const place = Math.min(Math.max(index, 0), formula.length);
+  const visible = formula.slice(place).search(/\S/);
+  return visible < 0 ? place : place + visible;
 }
 
 /** A column as a formula names it; a bracket that belongs to the name is written twice. */

@@ -7,6 +7,8 @@ import type { LevelCount } from './levels-at';
 import { mappedLevels, type StepField } from './read-step';
 import type { StepDraft } from './step-draft';
 
+let choiceCount = 0;
+
 /** Ticks levels of a category and says what they become. */
 @Component({
   selector: 'tb-level-choice',
@@ -23,6 +25,7 @@ export class LevelChoice {
   readonly complaints = input.required<Complaints<StepField>>();
   readonly changed = output<Partial<StepDraft>>();
 
+  protected readonly listId = `tb-level-choice-${++choiceCount}`;
   protected readonly mapped = computed(() => Object.entries(this.draft().levels));
   /** Ticked levels that are not listed were typed in. */
   protected readonly offered = computed<readonly { readonly value: string; readonly count?: number }[]>(() => {

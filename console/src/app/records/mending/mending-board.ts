@@ -1,5 +1,5 @@
 import { Component, OnInit, computed, inject, input, linkedSignal, signal } from '@angular/core';
-import { Router } from '@angular/router';
+import { Router, RouterLink } from '@angular/router';
 import { map, switchMap, timer } from 'rxjs';
 import type { MendStep } from '../../api/contract';
 import { MendingClient } from '../../api/mending-client';
@@ -27,7 +27,17 @@ import { Trials } from './trials';
 /** The list of steps, what would come out of it, and the making of the new revision. */
 @Component({
   selector: 'tb-mending-board',
-  imports: [LoadingState, MendingOutlook, MendingProgress, PageHead, ProblemNotice, SetChanged, StepForm, StepList],
+  imports: [
+    LoadingState,
+    MendingOutlook,
+    MendingProgress,
+    PageHead,
+    ProblemNotice,
+    RouterLink,
+    SetChanged,
+    StepForm,
+    StepList,
+  ],
   providers: [DraftKeeper, Trials],
   templateUrl: './mending-board.html',
   styleUrl: './mending-board.scss',

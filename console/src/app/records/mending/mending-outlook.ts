@@ -54,7 +54,7 @@ export class MendingOutlook {
 
   private markOf(column: TrialColumn): string {
     const before = this.revision().columns.find(({ name }) => name === column.name);
-    if (!before) return 'new name';
+    if (!before) return 'new';
     const same =
       before.kind === column.kind && before.unit === column.unit && before.missingCount === column.missingCount;
     return same ? '' : 'changed';

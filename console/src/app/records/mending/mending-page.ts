@@ -1,4 +1,4 @@
-import { Component, computed, inject, input, linkedSignal } from '@angular/core';
+import { Component, computed, effect, inject, input, linkedSignal, untracked } from '@angular/core';
 import { ActivatedRoute, Router } from '@angular/router';
 import { MendingClient } from '../../api/mending-client';
 import { RecordsClient } from '../../api/records-client';
@@ -63,18 +63,23 @@ export class MendingPage {
     return revision && { label: `Revision ${revision.number}`, link: `/records/revisions/${revision.id}` };
   });
 
+  constructor() {
+    // It was answered: reading the page again must neither ask nor take over again.
+    effect(() => {
+      const begin = this.beginning();
+      if (begin && begin.with !== 'question' && this.from() !== undefined) untracked(() => this.forgetFrom());
+    });
+  }
+
   protected keepDraft(): void {
     this.beginning.set({ with: 'draft', steps: this.opening.value()?.draft.steps ?? [] });
-    this.forgetFrom();
   }
 
   protected takeOther(): void {
     const begin = this.beginning();
     if (begin?.with === 'question') this.beginning.set(takenOver(begin.number, begin.other));
-    this.forgetFrom();
   }
 
-  /** It was asked and answered; reading the page again must not ask again. */
   private forgetFrom(): void {
     void this.router.navigate([], { relativeTo: this.route, queryParams: {}, replaceUrl: true });
   }

@@ -42,6 +42,17 @@ const FORMULA_FIELD: Readonly<Partial<Record<StepKind, StepField>>> = {
     RowChoice,
   ],
   templateUrl: './step-fields.html',
+  styles: `
+    .explanation,
+    .refusal {
+      margin: 0;
+    }
+
+    .refusal {
+      color: var(--tb-madder);
+      font: var(--tb-type-small-strong);
+    }
+  `,
 })
 export class StepFields {
   private readonly trials = inject(Trials);
