@@ -208,11 +208,14 @@ describe('keeping records', () => {
     it('cancels a fit that runs, so that its thread never works on records that are gone', async () => {
       const set = await bringIn();
       const fitId = await startFit(set.revision.id);
-      const read = jest.spyOn(FitQueueStore.prototype, 'finish');
+      const stateOf = async (): Promise<string> => (await service.services.fits.progress(fitId)).state;
+      while ((await stateOf()) === 'queued') await new Promise((resolve) => setTimeout(resolve, 5));
+      expect(await stateOf()).toBe('running');
+      const kept = jest.spyOn(FitQueueStore.prototype, 'finish');
       await analyst.delete(`/api/record-revisions/${set.revision.id}`).expect(204);
       expect(await left(set.revision.id)).toEqual(nothing);
-      expect(read).not.toHaveBeenCalled();
-      read.mockRestore();
+      expect(kept).not.toHaveBeenCalled();
+      kept.mockRestore();
       const about = await service.services.knex('journal').where({ subjectId: fitId }).orderBy('id').pluck('action');
       expect(about).toEqual(['fit-started', 'fit-cancelled']);
     });

@@ -1,4 +1,4 @@
-import type { RecordTable } from '../../regression/records';
+import type { NumericRecordColumn, RecordTable } from '../../regression/records';
 import { applySteps, StepProblem } from './apply-steps';
 import type { MendStep } from './step-change';
 
@@ -94,6 +94,51 @@ describe('a mending step', () => {
     });
   });
 
+  /**
+   * Published: National Bureau of Standards, "Refinement of Values for the Yard and the Pound", Federal Register
+   * 24 FR 5348 (1 July 1959): 1 yard is 0.9144 metre and 1 pound 0.45359237 kilogram, exactly. A foot is a third of
+   * a yard, an inch a twelfth of a foot.
+   */
+  it.each([
+    ['feet to metres', 0.3048, 3, 0.9144],
+    ['inches to metres', 0.0254, 36, 0.9144],
+    ['pounds to kilograms', 0.45359237, 1, 0.45359237],
+    ['pounds to tonnes', 0.00045359237, 1000, 0.45359237],
+  ])('takes readings from %s by the exact factor', (_what, factor, reading, expected) => {
+    const given: RecordTable = {
+      rowCount: 1,
+      columns: [{ name: 'a', kind: 'numeric', values: Float64Array.of(reading) }],
+    };
+    const { table: mended } = applySteps(given, [{ kind: 'convert-unit', column: 'a', factor, unit: 'SI' }]);
+    const [{ values, unit }] = mended.columns as [NumericRecordColumn];
+    expect(Math.abs(values[0] - expected)).toBeLessThanOrEqual(expected * Number.EPSILON);
+    expect(unit).toBe('SI');
+  });
+
+  it('tells how many rows each step is about, and nothing of rows where it is about a column', () => {
+    const { effects } = after(
+      { kind: 'convert-unit', column: 'length', factor: 0.5, where: 'length > 8' },
+      { kind: 'map-levels', column: 'hull', levels: { oak: 'wood', larch: 'wood' } },
+      { kind: 'join-rare-levels', column: 'hull', fewerThan: 3, into: 'any' },
+      { kind: 'set-missing', column: 'remark', rows: [1, 4] },
+      { kind: 'drop-repeated-rows' },
+      { kind: 'set-kind', column: 'length', to: 'text' },
+      { kind: 'set-aside', column: 'remark' },
+    );
+    expect(effects.map(({ rowsConcerned }) => rowsConcerned)).toEqual([2, 2, 4, 2, 0, null, null]);
+  });
+
+  it('says after each step how many are done', () => {
+    const told: number[] = [];
+    const twice: MendStep[] = [
+      { kind: 'drop-rows', rows: [1] },
+      { kind: 'drop-rows', rows: [1] },
+    ];
+    applySteps(table(), twice, (done) => told.push(done));
+    expect(told).toEqual([1, 2]);
+    expect(after(...twice).table.columns[0]).toMatchObject({ values: Float64Array.of(30, NaN) });
+  });
+
   it.each<[string, MendStep]>([
     ['a column that is not there', { kind: 'set-aside', column: 'beam' }],
     ['a name that is in use', { kind: 'rename', column: 'length', to: 'hull' }],
@@ -103,6 +148,10 @@ describe('a mending step', () => {
     ['no choice of rows', { kind: 'drop-rows' }],
     ['rows beyond the end', { kind: 'drop-rows', rows: [5] }],
     ['every row', { kind: 'drop-rows', where: 'hull is not missing' }],
+    ['a factor that wipes out every reading', { kind: 'convert-unit', column: 'length', factor: 0 }],
+    ['a factor beyond what a number can hold', { kind: 'convert-unit', column: 'length', factor: 1e308 }],
+    ['a blank name', { kind: 'rename', column: 'length', to: '  ' }],
+    ['a kind that nothing in the column has', { kind: 'set-kind', column: 'hull', to: 'date' }],
     ['a formula that does not fit', { kind: 'derive', name: 'x', formula: 'hull + 1' }],
   ])('refuses %s and says which step it is', (_what, step) => {
     expect(() => after({ kind: 'set-aside', column: 'remark' }, step)).toThrow(expect.objectContaining({ step: 1 }));

@@ -34,6 +34,9 @@ const kindWords: Readonly<Record<RecordColumn['kind'], string>> = {
   text: 'text',
 };
 
+const holdsSomething = (column: RecordColumn): boolean =>
+  column.kind === 'numeric' || column.kind === 'date' ? column.values.some((value) => value === value) : true;
+
 function requireFewLevels(column: RecordColumn): void {
   if (column.kind !== 'category') return;
   if (column.levels.length > maximumLevels)
@@ -45,7 +48,10 @@ function requireFewLevels(column: RecordColumn): void {
 }
 
 export function setKind(table: RecordTable, step: StepOf<'set-kind'>): Change {
-  const { column, unreadable } = changeKind(columnOf(table, step.column), step.to, step.dateOrder);
+  const before = columnOf(table, step.column);
+  const { column, unreadable } = changeKind(before, step.to, step.dateOrder);
+  if (unreadable > 0 && !holdsSomething(column))
+    throw new Refusal(`Nothing in ${step.column} can be read as ${kindWords[step.to]}.`);
   requireFewLevels(column);
   const lost = unreadable === 0 ? '' : `; ${rowsText(unreadable)} could not be read so and became missing`;
   const told = `Made ${step.column} ${kindWords[step.to]}${lost}.`;
