@@ -51,7 +51,9 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   const keptFiles = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
   const cells = new CellStorage({ databasePath, threadArguments });
   const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
-  const importer = new RevisionImporter({ database, records: store, files: keptFiles, cells, clock, threadArguments });
+  const importer = new RevisionImporter({
+    ...{ database, records: store, files: keptFiles, cells, clock, log, threadArguments },
+  });
   const bringingIn = new BringingIn({ records: store, importer, journal, clock });
   const records = new RecordsService({
     ...{ records: store, files: keptFiles, bringingIn, tasks: recordTasks, maximumFileBytes },

@@ -14,8 +14,11 @@ import { createPartnerPage } from './partner-page/partner-page';
 import { enterFirstAdministrator } from './people/first-administrator';
 import { welcome } from './welcome';
 
+/** A body of 2 GB over 2.5 Mbit/s; Node's own five minutes would break such uploads off. */
+const requestTimeoutMs = 2 * 60 * 60 * 1000;
+
 async function listen(app: Express, port: number, variable: string): Promise<Server> {
-  const server = createServer(app);
+  const server = createServer({ requestTimeout: requestTimeoutMs }, app);
   return new Promise((resolve, reject) => {
     server.once('error', (error: NodeJS.ErrnoException) =>
       reject(

@@ -24,6 +24,9 @@ function openForm(request: Request): busboy.Busboy {
   }
 }
 
+/** An upload from which nothing has come for so long is broken off, so that it holds neither disk nor connection. */
+const silentMs = 60_000;
+
 /** The name alone: no folders, no control characters. */
 export function plainFileName(name: string | undefined): string {
   const base = (name ?? '').split(/[\\/]/).pop() ?? '';
@@ -63,8 +66,11 @@ export async function receiveUpload(request: Request, files: KeptFiles, maximumB
     });
     request.pipe(form);
   });
+  request.setTimeout(silentMs, () => request.destroy());
   try {
     await ended;
+    // What is done with the file may take longer, and the line is silent then.
+    request.setTimeout(0);
   } catch (error) {
     request.unpipe(form);
     request.resume();

@@ -1,3 +1,4 @@
+import type { Logger } from 'pino';
 import { timeText, type Clock } from '../clock';
 import type { Database } from '../database/database';
 import { readTableInThread } from './import-thread';
@@ -40,6 +41,7 @@ export interface ImporterParts {
   readonly files: KeptFiles;
   readonly cells: CellStorage;
   readonly clock: Clock;
+  readonly log: Logger;
   /** Node's own arguments for the threads; none when compiled. */
   readonly threadArguments: readonly string[];
 }
@@ -60,23 +62,47 @@ export class RevisionImporter {
    * of work is through. The file gets its lasting name, unless columns of it were set aside: then it is deleted.
    */
   async bringIn(given: Import, context: TaskContext, around: Around): Promise<void> {
-    const { files, cells } = this.parts;
-    const { revisionId, signal, progress } = context;
+    const { files } = this.parts;
     const spillPath = files.spillPathOf(given.file);
-    let originalKept = true;
+    let read: ReadImport | null = null;
     try {
-      const read = await this.read(given, spillPath, context);
-      originalKept = read.reading.setAside.length === 0;
-      const keep = (): Promise<void> => this.keep(given, read, context, around);
-      await cells.storeFor({ revisionId, table: read.table, spillPath }, keep, { signal, onProgress: progress });
+      read = await this.read(given, spillPath, context);
+      await this.keepWithCells(given, { ...read, spillPath }, context, around);
     } catch (error) {
-      // The unit of work was undone, so the name that the file was given is undone too.
-      await files.takeBack(given.file, revisionId);
+      await this.undo(given.file, { revisionId: context.revisionId, spillPath, wasRead: read !== null });
       throw translateFullDisk(error);
-    } finally {
-      await files.remove(spillPath);
     }
-    if (!originalKept) await files.remove(given.file.path);
+    await files.remove(spillPath);
+    if (read.reading.setAside.length > 0) await files.remove(given.file.path);
+  }
+
+  private async keepWithCells(
+    given: Import,
+    read: ReadImport & { readonly spillPath: string },
+    context: TaskContext,
+    around: Around,
+  ): Promise<void> {
+    const { revisionId, signal, progress } = context;
+    await this.parts.cells.storeAhead(revisionId, read.table, read.spillPath, { signal, onProgress: progress });
+    signal.throwIfAborted();
+    await this.keep(given, read, context, around);
+  }
+
+  /**
+   * The unit of work was undone, so the name that the file was given is undone too. The spill file goes first: on a
+   * full disk, cells can only be cleared in the room that it leaves. What cannot be cleared is swept later.
+   */
+  private async undo(
+    file: ReceivedFile,
+    { revisionId, spillPath, wasRead }: { revisionId: string; spillPath: string; wasRead: boolean },
+  ): Promise<void> {
+    const { files, cells, log } = this.parts;
+    await files.remove(spillPath);
+    await files.takeBack(file, revisionId);
+    if (!wasRead) return;
+    await cells
+      .clear(revisionId)
+      .catch((error: unknown) => log.error({ err: error, revisionId }, 'cells could not be cleared'));
   }
 
   private async read(given: Import, spillPath: string, { signal, progress }: TaskContext): Promise<ReadImport> {
