@@ -80,6 +80,7 @@ export function boundsAround(name: string, values: Float64Array, positions: read
   const chosen = new Uint8Array(values.length);
   for (const position of positions) chosen[position] = 1;
   const found = neighboursOf(values, chosen);
+  if (found.otherLeast > found.otherGreatest) return `${column} is not missing`;
   const parts: string[] = [];
   if (!found.between) {
     if (found.lowest > -Infinity) parts.push(`${column} < ${shortestBetween(found.lowest, found.otherLeast, false)}`);

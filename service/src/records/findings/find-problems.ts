@@ -16,6 +16,9 @@ function findInColumn(column: RecordColumn, mixUps: readonly UnitMixUp[]): Findi
   return [...(column.kind === 'category' ? findLevelsAlike(column) : []), ...findNearlyNumeric(column)];
 }
 
+const rightColumn = (column: RecordColumn, mixUps: readonly UnitMixUp[]): RecordColumn =>
+  column.kind === 'numeric' ? withoutMixUps(column, mixUps) : column;
+
 /**
  * Everything in a table that a person should look at before fitting; leakage only once a target is named. Steps that
  * name rows by number come before the one that drops rows, so that they can be applied in the order of the findings.
@@ -28,14 +31,16 @@ export function findProblems(table: RecordTable, targetName?: string): Finding[]
     const constant = findConstant(column, canBeSetAside(column));
     return constant.length > 0 ? constant : findInColumn(column, mixUps);
   });
-  const compared = comparedColumnsOf(table);
+  // A few readings in another unit would hide that columns go together.
+  const putRight = { ...table, columns: table.columns.map((column) => rightColumn(column, mixUps)) };
+  const compared = comparedColumnsOf(putRight);
   const alike = findColumnsAlike(compared, targetName);
   return [
     ...findUnitMixUps(mixUps),
     ...inColumns,
     ...alike,
     ...findCombinations(compared, alike, targetName),
-    ...(targetName === undefined ? [] : findLeakage(table, targetName)),
+    ...(targetName === undefined ? [] : findLeakage(putRight, targetName)),
     ...findRepeatedRows(table),
   ];
 }
