@@ -1,4 +1,4 @@
-import { Component, OnInit, computed, inject, input, linkedSignal, signal } from '@angular/core';
+import { Component, OnInit, computed, effect, inject, input, linkedSignal, signal, untracked } from '@angular/core';
 import { Router, RouterLink } from '@angular/router';
 import { map, switchMap, timer } from 'rxjs';
 import type { MendStep } from '../../api/contract';
@@ -82,6 +82,13 @@ export class MendingBoard implements OnInit {
   protected readonly kept = computed(() => keepingWords(this.keeper.keeping()));
   protected readonly notKept = computed(() => this.keeper.keeping().state === 'failed');
   protected readonly setChanged = computed(() => this.run.problem()?.code === 'record-set-changed');
+
+  constructor() {
+    // The notice says that the steps are kept: so they are, even where this person has mended elsewhere meanwhile.
+    effect(() => {
+      if (this.setChanged()) untracked(() => this.keep());
+    });
+  }
 
   ngOnInit(): void {
     const { steps, with: source } = this.beginning();

@@ -30,17 +30,22 @@ const COUNTED: Readonly<Partial<Record<Progress['stage'], string>>> = { mending:
   styleUrl: './mending-progress.scss',
 })
 export class MendingProgress {
-  readonly progress = input.required<Progress>();
+  readonly progress = input.required<Progress | undefined>();
   readonly cancelling = input(false);
   readonly cancelled = output();
 
-  protected readonly stage = computed(() => STAGES[this.progress().stage]);
+  protected readonly stage = computed(() => {
+    const progress = this.progress();
+    return progress ? STAGES[progress.stage] : 'Beginning';
+  });
   protected readonly count = computed(() => {
-    const { stage, done, total } = this.progress();
+    const progress = this.progress();
+    if (!progress) return '';
+    const { stage, done, total } = progress;
     const noun = COUNTED[stage];
     return noun && total > 0 ? `${formatCount(done)} of ${formatCount(total)} ${noun}` : '';
   });
   /** Without a total the bar only shows that something goes on. */
-  protected readonly max = computed(() => this.progress().total || null);
-  protected readonly value = computed(() => (this.progress().total > 0 ? this.progress().done : null));
+  protected readonly max = computed(() => this.progress()?.total || null);
+  protected readonly value = computed(() => (this.max() === null ? null : this.progress()?.done));
 }

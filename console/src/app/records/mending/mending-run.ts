@@ -19,7 +19,7 @@ export class MendingRun {
   readonly problem = this.failure.asReadonly();
   readonly underWay = this.begun.asReadonly();
   readonly cancelling = this.stopping.asReadonly();
-  readonly progress = computed(() => this.current()?.progress ?? { stage: 'waiting' as const, done: 0, total: 0 });
+  readonly progress = computed(() => this.current()?.progress);
 
   constructor() {
     inject(DestroyRef).onDestroy(() => this.subscription?.unsubscribe());
