@@ -1,9 +1,9 @@
 import type { RecordColumn, RecordTable } from '../../regression/records';
 import { blockRowsFor, codesToCells, numbersToCells, textsToCells } from '../cell-blocks';
 import { statisticsOf, statisticsOfLevels } from '../reading/column-statistics';
-import { DistinctCounter } from '../reading/distinct-counter';
 import type { FinishedColumn } from '../reading/finished-column';
 import { maximumDistinct } from '../reading/limits';
+import { ReadingSorter } from '../reading/reading-sorter';
 import type { SpillFile } from '../reading/spill-file';
 
 export interface FinishedTable {
@@ -16,14 +16,14 @@ export interface FinishedTable {
 export function finishTable(table: RecordTable, spill: SpillFile): FinishedTable {
   const blockRows = blockRowsFor(table.columns.length);
   const starts = Array.from({ length: Math.ceil(table.rowCount / blockRows) }, (_, block) => block * blockRows);
-  const distinct = new DistinctCounter(table.rowCount, maximumDistinct);
+  const sorter = new ReadingSorter(table.rowCount);
   const finish = (column: RecordColumn, position: number): FinishedColumn => ({
     name: column.name,
     position,
     kind: column.kind,
     unit: column.kind === 'numeric' ? (column.unit ?? null) : null,
     blocks: starts.map((start) => spill.append(cellsOf(column, start, start + blockRows))),
-    ...figuresOf(column, distinct),
+    ...figuresOf(column, sorter),
   });
   return {
     rowCount: table.rowCount,
@@ -39,14 +39,14 @@ function cellsOf(column: RecordColumn, start: number, end: number): Uint8Array {
     : numbersToCells(column.values.subarray(start, end));
 }
 
-function figuresOf(column: RecordColumn, distinct: DistinctCounter): Pick<FinishedColumn, 'statistics' | 'levels'> {
+function figuresOf(column: RecordColumn, sorter: ReadingSorter): Pick<FinishedColumn, 'statistics' | 'levels'> {
   if (column.kind === 'text') {
     const present = column.values.filter((text) => text !== null);
     const different = new Set(present).size;
     const missing = column.values.length - present.length;
     return { statistics: statisticsOfLevels(missing, different > maximumDistinct ? null : different), levels: [] };
   }
-  if (column.kind !== 'category') return { statistics: statisticsOf(column.values, distinct), levels: [] };
+  if (column.kind !== 'category') return { statistics: statisticsOf(column.kind, column.values, sorter), levels: [] };
   const levels = column.levels.map((value) => ({ value, count: 0 }));
   let missing = 0;
   for (const code of column.codes) {

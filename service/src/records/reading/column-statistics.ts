@@ -1,4 +1,6 @@
-import type { DistinctCounter } from './distinct-counter';
+import { maximumDistinct } from './limits';
+import type { ReadingSorter } from './reading-sorter';
+import { distinctOf, outlyingOf, quantilesOf } from './sorted-figures';
 
 /** What `record_columns` holds about a column beside its name and kind. */
 export interface ColumnStatistics {
@@ -57,7 +59,8 @@ export function histogramOf(values: Float64Array, minimum: number, maximum: numb
   const bins = maximum > minimum && Number.isFinite(maximum - minimum) ? histogramBins : 1;
   const width = (maximum - minimum) / bins;
   const counts = new Array<number>(bins).fill(0);
-  for (const value of values) {
+  for (let row = 0; row < values.length; row++) {
+    const value = values[row];
     if (value === value) counts[bins === 1 ? 0 : Math.min(bins - 1, Math.floor((value - minimum) / width))]++;
   }
   const edges = Array.from({ length: bins + 1 }, (_, edge) => (edge === bins ? maximum : minimum + edge * width));
@@ -67,42 +70,57 @@ export function histogramOf(values: Float64Array, minimum: number, maximum: numb
 /** Sums of the very largest numbers overflow; then there is no figure to give. */
 const finite = (value: number): number | null => (Number.isFinite(value) ? value : null);
 
+/** What sums of a column give; NaN is missing. */
+interface Moments {
+  readonly count: number;
+  readonly minimum: number;
+  readonly maximum: number;
+  readonly mean: number | null;
+  readonly standardDeviation: number | null;
+}
+
 /**
- * Of n readings (NaN is missing): mean = Σx / n and standard deviation = √(Σ(x − mean)² / n), in two passes, the
- * second corrected by the sum of the deviations (Chan, Golub, LeVeque 1983, "Algorithms for computing the sample
- * variance", eq. 1.7). Cost: a few passes.
+ * Of n readings: mean = Σx / n and standard deviation = √(Σ(x − mean)² / n), in two passes, the second corrected by
+ * the sum of the deviations (Chan, Golub, LeVeque 1983, "Algorithms for computing the sample variance", eq. 1.7).
  */
-export function statisticsOf(values: Float64Array, distinct: DistinctCounter): ColumnStatistics {
-  let count = 0;
-  let sum = 0;
-  let minimum = Infinity;
-  let maximum = -Infinity;
-  for (const value of values) {
+function momentsOf(values: Float64Array): Moments {
+  let [count, sum, minimum, maximum] = [0, 0, Infinity, -Infinity];
+  for (let row = 0; row < values.length; row++) {
+    const value = values[row];
     if (value !== value) continue;
     count++;
     sum += value;
     if (value < minimum) minimum = value;
     if (value > maximum) maximum = value;
   }
-  const missingCount = values.length - count;
-  if (count === 0) return { ...nothing, missingCount };
   const mean = sum / count;
-  let squares = 0;
-  let deviations = 0;
-  for (const value of values) {
+  let [squares, deviations] = [0, 0];
+  for (let row = 0; row < values.length; row++) {
+    const value = values[row];
     if (value !== value) continue;
     squares += (value - mean) * (value - mean);
     deviations += value - mean;
   }
+  const standardDeviation = Math.sqrt(Math.max(0, squares - (deviations * deviations) / count) / count);
+  return {
+    ...{ count, minimum, maximum },
+    mean: finite(mean + deviations / count),
+    standardDeviation: finite(standardDeviation),
+  };
+}
+
+/** Of a numeric or date column; NaN is missing. Cost: a few passes and one linear sort. */
+export function statisticsOf(kind: 'numeric' | 'date', values: Float64Array, sorter: ReadingSorter): ColumnStatistics {
+  const { count, ...moments } = momentsOf(values);
+  const missingCount = values.length - count;
+  if (count === 0) return { ...nothing, missingCount };
+  const sorted = sorter.sort(values);
   return {
     missingCount,
-    distinctCount: distinct.count(values),
-    minimum,
-    maximum,
-    mean: finite(mean + deviations / count),
-    standardDeviation: finite(Math.sqrt(Math.max(0, squares - (deviations * deviations) / count) / count)),
-    quantiles: null,
-    outlying: null,
-    histogram: histogramOf(values, minimum, maximum),
+    distinctCount: distinctOf(sorted, maximumDistinct),
+    ...moments,
+    quantiles: quantilesOf(sorted),
+    outlying: kind === 'numeric' ? outlyingOf(sorted) : null,
+    histogram: histogramOf(values, moments.minimum, moments.maximum),
   };
 }

@@ -9,9 +9,9 @@ import {
 import { decodeWords } from './cell-stores';
 import type { BuiltBlock, ColumnBuilder } from './column-builder';
 import { statisticsOf, statisticsOfLevels, type ColumnStatistics } from './column-statistics';
-import { DistinctCounter } from './distinct-counter';
 import { unitOf } from './header';
 import { maximumDistinct, maximumLevelLength, maximumLevels } from './limits';
+import { ReadingSorter } from './reading-sorter';
 import type { SpilledCells, SpillFile } from './spill-file';
 
 export interface Level {
@@ -35,13 +35,13 @@ export interface FinishedColumn {
 const certainLevels = 50;
 
 export function finishColumns(builders: readonly ColumnBuilder[], rowCount: number): FinishedColumn[] {
-  const distinct = new DistinctCounter(rowCount, maximumDistinct);
-  return builders.map((builder) => finishColumn(builder, distinct));
+  const sorter = new ReadingSorter(rowCount);
+  return builders.map((builder) => finishColumn(builder, sorter));
 }
 
-function finishColumn(builder: ColumnBuilder, distinct: DistinctCounter): FinishedColumn {
+function finishColumn(builder: ColumnBuilder, sorter: ReadingSorter): FinishedColumn {
   const { form } = builder;
-  if (form.kind === 'numeric' || form.kind === 'date') return finishNumbers(builder, form.kind, distinct);
+  if (form.kind === 'numeric' || form.kind === 'date') return finishNumbers(builder, form.kind, sorter);
   return form.kind === 'nothing' ? finishTexts(builder) : finishWords(builder);
 }
 
@@ -52,7 +52,7 @@ function placeBlocks(builder: ColumnBuilder, missing: (rowCount: number) => Uint
   );
 }
 
-function finishNumbers(builder: ColumnBuilder, kind: 'numeric' | 'date', distinct: DistinctCounter): FinishedColumn {
+function finishNumbers(builder: ColumnBuilder, kind: 'numeric' | 'date', sorter: ReadingSorter): FinishedColumn {
   const { name, position, spill } = builder.options;
   const blocks = placeBlocks(builder, (rowCount) => numbersToCells(new Float64Array(rowCount).fill(NaN)));
   const values = new Float64Array(builder.blocks.reduce((total, block) => total + block.rowCount, 0));
@@ -63,10 +63,21 @@ function finishNumbers(builder: ColumnBuilder, kind: 'numeric' | 'date', distinc
     at += place.length;
   }
   const unit = kind === 'numeric' ? unitOf(name) : null;
-  return { name, position, kind, unit, statistics: statisticsOf(values, distinct), levels: [], blocks };
+  return {
+    name,
+    position,
+    kind,
+    unit,
+    statistics: statisticsOf(kind, values, sorter),
+    levels: [],
+    blocks,
+  };
 }
 
-function countCodes(builder: ColumnBuilder): { readonly counts: number[]; readonly missing: number } {
+function countCodes(builder: ColumnBuilder): {
+  readonly counts: number[];
+  readonly missing: number;
+} {
   const counts = new Array<number>(builder.levels.length).fill(0);
   let missing = 0;
   for (const block of builder.blocks) {
@@ -98,7 +109,10 @@ function finishWords(builder: ColumnBuilder): FinishedColumn {
   if (!areLevels(builder.levels, present)) return finishTexts(builder);
   const { name, position } = builder.options;
   const blocks = placeBlocks(builder, (rowCount) => codesToCells(new Int32Array(rowCount).fill(-1)));
-  const levels = builder.levels.map((value, code) => ({ value, count: counts[code] }));
+  const levels = builder.levels.map((value, code) => ({
+    value,
+    count: counts[code],
+  }));
   return {
     name,
     position,

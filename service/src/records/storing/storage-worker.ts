@@ -7,13 +7,12 @@ import type { StorageMessage, StorageTask } from './storage-task';
 const say = (message: StorageMessage): void => parentPort?.postMessage(message);
 
 /**
- * Foreign keys are off: a revision's row comes only after its cells, in the unit of work that makes the revision
- * whole, so cells must lie there before what they refer to. `synchronous = NORMAL` loses no kept revision in a power
- * cut: the commit of its row, with `FULL`, makes the whole WAL durable up to itself.
+ * Cells have no foreign key to their revision, whose row comes only after them, in the unit of work that makes the
+ * revision whole. `synchronous = NORMAL` loses no kept revision in a power cut: the commit of its row, with `FULL`,
+ * makes the whole WAL durable up to itself.
  */
 function openConnection(databasePath: string): BetterSqlite3.Database {
   const connection = new BetterSqlite3(databasePath, { fileMustExist: true });
-  connection.pragma('foreign_keys = OFF');
   connection.pragma('synchronous = NORMAL');
   connection.pragma('busy_timeout = 30000');
   connection.pragma('wal_autocheckpoint = 0');
