@@ -70,9 +70,9 @@ export class FindingsList {
 
   protected addEvery(): void {
     const findings = this.open();
-    const steps = findings.flatMap((finding) => finding.steps);
-    const consequences = steps.map((step) => `${wordsOfStep(step)}.`);
-    const heading = `Add ${countOf(steps.length, 'step')} to the mending?`;
+    // Two findings may propose the same, which is then done once.
+    const consequences = [...new Set(findings.flatMap(({ steps }) => steps).map((step) => `${wordsOfStep(step)}.`))];
+    const heading = `Add ${countOf(consequences.length, 'step')} to the mending?`;
     this.confirm.ask({ heading, consequences, verb: 'Add them' }).subscribe((yes) => {
       if (yes) this.waiting.add(findings);
     });
