@@ -1,32 +1,16 @@
-import { parentPort, workerData } from 'node:worker_threads';
-import type { ImportOutcome, ImportTask } from './import-task';
+import { workerData } from 'node:worker_threads';
+import type { ImportTask } from './import-task';
 import { readTable } from './reading/read-table';
 import { SpillFile } from './reading/spill-file';
-import { TableProblem } from './reading/table-problem';
+import { answerFromThread } from './table-worker';
 
-async function read({ path, spillPath }: ImportTask): Promise<ImportOutcome> {
+const { path, spillPath, choices, base } = workerData as ImportTask;
+
+answerFromThread(async (onProgress) => {
   const spill = new SpillFile(spillPath, 'wx+');
   try {
-    return { kind: 'read', reading: await readTable(path, spill) };
+    return await readTable(path, spill, { choices, base, onProgress });
   } finally {
     spill.close();
   }
-}
-
-/** Runs in a worker thread: one file, then it ends. What is wrong with the file is an answer; anything else ends the thread. */
-read(workerData as ImportTask)
-  .catch((error: unknown): ImportOutcome => {
-    if (!(error instanceof TableProblem)) throw error;
-    return {
-      kind: 'problem',
-      code: error.code,
-      detail: error.detail,
-      ...(error.line !== undefined && { line: error.line }),
-    };
-  })
-  .then((outcome) => parentPort?.postMessage(outcome))
-  .catch((error: unknown) => {
-    setImmediate(() => {
-      throw error;
-    });
-  });
+});

@@ -1,7 +1,7 @@
 import { codesToCells, numbersToCells, textsToCells } from '../cell-blocks';
 import type { CellReaders, ColumnEvidence } from './column-evidence';
 import { maximumCellLength, maximumLevels } from './limits';
-import { isMissing } from './missing-marks';
+import type { MissingMarks } from './missing-marks';
 import { NumberClass, type DecimalMark } from './number-cell';
 import { TableProblem } from './table-problem';
 
@@ -19,9 +19,13 @@ export interface CellStore {
   add(rows: TextRows, place: BatchPlace): void;
   /** Closes the block: its cells as they are stored. */
   takeBlock(rowCount: number): Uint8Array;
+  /** Cells so far that are neither missing nor fit the form. */
+  readonly unreadableCount: number;
 }
 
+/** Plain numbers: no unit, and no mark that is a number. What turns up beside them shows in the evidence. */
 export class NumberStore implements CellStore {
+  readonly unreadableCount = 0;
   private readonly block: Float64Array;
 
   constructor(
@@ -41,7 +45,7 @@ export class NumberStore implements CellStore {
       const text = rows[row][position];
       const numberClass = numbers.read(text);
       if (numberClass === NumberClass.none) {
-        if (!isMissing(text)) evidence.addText(text, this.readers);
+        evidence.addText(text, this.readers);
         block[start + row] = NaN;
       } else {
         evidence.addNumber(numberClass);
@@ -59,11 +63,12 @@ export class NumberStore implements CellStore {
 const rememberedDates = 50_000;
 
 export class DateStore implements CellStore {
+  unreadableCount = 0;
   private readonly block: Float64Array;
   private readonly known = new Map<string, number>();
 
   constructor(
-    private readonly form: number,
+    private readonly forms: number,
     private readonly evidence: ColumnEvidence,
     private readonly readers: CellReaders,
     blockRows: number,
@@ -74,7 +79,9 @@ export class DateStore implements CellStore {
   add(rows: TextRows, { position, start }: BatchPlace): void {
     for (let row = 0; row < rows.length; row++) {
       const text = rows[row][position];
-      this.block[start + row] = this.known.get(text) ?? this.readNew(text);
+      const days = this.known.get(text) ?? this.readNew(text);
+      if (days === Infinity) this.unreadableCount++;
+      this.block[start + row] = days === Infinity ? NaN : days;
     }
   }
 
@@ -82,12 +89,13 @@ export class DateStore implements CellStore {
     return numbersToCells(this.block.subarray(0, rowCount));
   }
 
+  /** NaN for a missing cell, infinity for one that does not fit. */
   private readNew(text: string): number {
-    if (isMissing(text)) return NaN;
+    if (this.evidence.plan.marks.isMissing(text)) return NaN;
     const { dates } = this.readers;
-    const forms = dates.read(text);
-    this.evidence.addDate(forms);
-    const days = dates.valueOf(this.form);
+    this.evidence.addDate(dates.read(text));
+    const read = dates.valueOf(this.forms);
+    const days = Number.isNaN(read) ? Infinity : read;
     if (this.known.size < rememberedDates) this.known.set(text, days);
     return days;
   }
@@ -103,12 +111,14 @@ export function requireCellLength(text: string, name: string): void {
 
 /** Words as numbers of a dictionary, as long as there are not too many different ones. */
 export class CodeStore implements CellStore {
+  readonly unreadableCount = 0;
   private readonly block: Int32Array;
   private readonly codes = new Map<string, number>();
   readonly levels: string[] = [];
 
   constructor(
     private readonly name: string,
+    private readonly marks: MissingMarks,
     blockRows: number,
   ) {
     this.block = new Int32Array(blockRows).fill(-1);
@@ -132,7 +142,7 @@ export class CodeStore implements CellStore {
 
   private codeNew(text: string): number {
     requireCellLength(text, this.name);
-    const code = isMissing(text) ? -1 : this.levels.push(text) - 1;
+    const code = this.marks.isMissing(text) ? -1 : this.levels.push(text) - 1;
     this.codes.set(text, code);
     return code;
   }
@@ -142,10 +152,12 @@ export const decodeWords = (codes: Int32Array, levels: readonly string[]): (stri
   Array.from(codes, (code) => (code < 0 ? null : levels[code]));
 
 export class TextStore implements CellStore {
+  readonly unreadableCount = 0;
   private readonly block: (string | null)[];
 
   constructor(
     private readonly name: string,
+    private readonly marks: MissingMarks,
     begun: readonly (string | null)[],
   ) {
     this.block = [...begun];
@@ -155,7 +167,7 @@ export class TextStore implements CellStore {
     for (let row = 0; row < rows.length; row++) {
       const text = rows[row][position];
       requireCellLength(text, this.name);
-      this.block[start + row] = isMissing(text) ? null : text;
+      this.block[start + row] = this.marks.isMissing(text) ? null : text;
     }
   }
 

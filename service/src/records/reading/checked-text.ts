@@ -1,5 +1,5 @@
 import { isUtf8 } from 'node:buffer';
-import type { FileFormat } from './file-format';
+import type { TextFormat } from './file-format';
 import { TableProblem } from './table-problem';
 
 const lineFeed = 10;
@@ -115,7 +115,7 @@ async function* decodedUtf16(chunks: AsyncIterable<Buffer>, encoding: string): A
 /** The file as UTF-8 text without a byte order mark, or the problem with the line it stands on. */
 export function checkedText(
   chunks: AsyncIterable<Buffer>,
-  format: Pick<FileFormat, 'encoding'>,
+  format: Pick<TextFormat, 'encoding'>,
 ): AsyncGenerator<Buffer> {
   return format.encoding === 'utf-8' ? checkedUtf8(chunks) : decodedUtf16(chunks, format.encoding);
 }

@@ -9,7 +9,10 @@ import {
   type CellStore,
   type TextRows,
 } from './cell-stores';
-import { ColumnEvidence, likelyFormOf, newCellReaders, type CellForm } from './column-evidence';
+import { likelyFormOf, type CellForm } from './cell-form';
+import { ColumnEvidence, newCellReaders, type CellReaders } from './column-evidence';
+import type { ColumnPlan } from './column-plan';
+import { MixedNumberStore, needsMixedStore } from './mixed-number-store';
 import type { DecimalMark } from './number-cell';
 import type { SpilledCells, SpillFile } from './spill-file';
 
@@ -25,25 +28,44 @@ export interface BuiltBlock {
 export interface ColumnBuilderOptions {
   readonly name: string;
   readonly position: number;
+  readonly plan: ColumnPlan;
   readonly blockRows: number;
   readonly spill: SpillFile;
 }
 
 const nowhere: SpilledCells = { offset: 0, length: 0 };
 
+/** A store for cells of this form; null while nothing but missing cells came. */
+export function newCellStore(
+  form: CellForm,
+  evidence: ColumnEvidence,
+  readers: CellReaders,
+  blockRows: number,
+): CellStore | null {
+  const { name, marks } = evidence.plan;
+  if (form.kind === 'nothing') return null;
+  if (form.kind === 'words') return new CodeStore(name, marks, blockRows);
+  if (form.kind === 'date') return new DateStore(form.forms, evidence, readers, blockRows);
+  return needsMixedStore(form, evidence.plan)
+    ? new MixedNumberStore(form, evidence, readers, blockRows)
+    : new NumberStore(form.mark, evidence, readers, blockRows);
+}
+
 /**
  * Keeps one column's cells in the form guessed from its first rows, block by block in the spill file, and gathers
  * the evidence that shows at the end whether the guess was right.
  */
 export class ColumnBuilder {
-  readonly evidence = new ColumnEvidence();
+  readonly evidence: ColumnEvidence;
   readonly blocks: BuiltBlock[] = [];
   private readonly readers = newCellReaders();
   private store: CellStore | null = null;
   private kept: CellForm = { kind: 'nothing' };
   private codes: CodeStore | null = null;
 
-  constructor(readonly options: ColumnBuilderOptions) {}
+  constructor(readonly options: ColumnBuilderOptions) {
+    this.evidence = new ColumnEvidence(options.plan);
+  }
 
   get form(): CellForm {
     return this.kept;
@@ -54,16 +76,27 @@ export class ColumnBuilder {
     return this.codes?.levels ?? [];
   }
 
+  get unreadableCount(): number {
+    return this.store?.unreadableCount ?? 0;
+  }
+
+  /** The column's unit: the one that was chosen or that the header names, else that of the cells. */
+  get unit(): string | null {
+    const { plan } = this.options;
+    if (this.kept.kind !== 'numeric') return null;
+    return plan.unitSettled ? plan.unit : (plan.unit ?? this.kept.unit?.symbol ?? null);
+  }
+
   gatherEvidence(rows: TextRows): void {
     for (const row of rows) this.evidence.addText(row[this.options.position], this.readers);
   }
 
+  /** The rows that the form rests on are added again afterwards, so their units are not counted twice. */
   keepAs(form: CellForm): void {
-    const { name, blockRows } = this.options;
     this.kept = form;
-    if (form.kind === 'numeric') this.store = new NumberStore(form.mark, this.evidence, this.readers, blockRows);
-    else if (form.kind === 'date') this.store = new DateStore(form.form, this.evidence, this.readers, blockRows);
-    else if (form.kind === 'words') this.store = this.codes = new CodeStore(name, blockRows);
+    this.evidence.units.clear();
+    this.store = newCellStore(form, this.evidence, this.readers, this.options.blockRows);
+    if (this.store instanceof CodeStore) this.codes = this.store;
   }
 
   add(rows: TextRows, start: number, fileMark: DecimalMark): void {
@@ -92,6 +125,6 @@ export class ColumnBuilder {
 
   private continueAsText(rowCount: number): void {
     const codes = cellsToCodes(this.codes?.takeBlock(rowCount) ?? new Uint8Array());
-    this.store = new TextStore(this.options.name, decodeWords(codes, this.levels));
+    this.store = new TextStore(this.options.name, this.options.plan.marks, decodeWords(codes, this.levels));
   }
 }

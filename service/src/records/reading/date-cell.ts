@@ -50,7 +50,7 @@ const monthNamed = (name: string): number => {
   );
 };
 
-/** Reads cells one after another: `read` answers the forms that the cell has; `valueOf` the days under one of them. */
+/** Reads cells one after another: `read` answers the forms that the cell has; `valueOf` the days. */
 export class DateReader {
   private iso = NaN;
   private dayFirst = NaN;
@@ -58,7 +58,25 @@ export class DateReader {
   private isoMonth = NaN;
   private named = NaN;
 
+  /** The forms that the cell read last has. */
+  forms: number = DateForm.none;
+
   read(given: string): number {
+    this.forms = this.formsOf(given);
+    return this.forms;
+  }
+
+  /** Under the one of these forms that the cell has; NaN when it has none of them. */
+  valueOf(forms: number): number {
+    const form = forms & this.forms;
+    if (form & DateForm.iso) return this.iso;
+    if (form & DateForm.dayFirst) return this.dayFirst;
+    if (form & DateForm.monthFirst) return this.monthFirst;
+    if (form & DateForm.isoMonth) return this.isoMonth;
+    return form & DateForm.named ? this.named : NaN;
+  }
+
+  private formsOf(given: string): number {
     const text = given.trim();
     this.iso = this.dayFirst = this.monthFirst = this.isoMonth = this.named = NaN;
     if (text.length < 7 || text.length > 40) return DateForm.none;
@@ -70,13 +88,6 @@ export class DateReader {
       (this.isoMonth === this.isoMonth ? DateForm.isoMonth : 0) |
       (this.named === this.named ? DateForm.named : 0)
     );
-  }
-
-  valueOf(form: number): number {
-    if (form === DateForm.iso) return this.iso;
-    if (form === DateForm.dayFirst) return this.dayFirst;
-    if (form === DateForm.monthFirst) return this.monthFirst;
-    return form === DateForm.isoMonth ? this.isoMonth : this.named;
   }
 
   private readForms(text: string): void {

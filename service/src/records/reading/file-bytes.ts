@@ -1,4 +1,4 @@
-import { createReadStream } from 'node:fs';
+import { createReadStream, type ReadStream } from 'node:fs';
 import { open } from 'node:fs/promises';
 import { pipeline } from 'node:stream';
 import { createGunzip } from 'node:zlib';
@@ -19,10 +19,19 @@ async function isGzip(path: string): Promise<boolean> {
   }
 }
 
-async function* unpacked(path: string): AsyncGenerator<Buffer> {
+/** Told after every chunk how many bytes of the file, as it lies on disk, have been read. */
+export type OnBytes = (bytes: number) => void;
+
+function counted(path: string, onBytes: OnBytes): ReadStream {
+  const stream = createReadStream(path, { highWaterMark: chunkBytes });
+  stream.on('data', () => onBytes(stream.bytesRead));
+  return stream;
+}
+
+async function* unpacked(path: string, onBytes?: OnBytes): AsyncGenerator<Buffer> {
   // Errors of either stream come out of the iteration.
   const stream = pipeline(
-    createReadStream(path, { highWaterMark: chunkBytes }),
+    onBytes ? counted(path, onBytes) : createReadStream(path, { highWaterMark: chunkBytes }),
     createGunzip({ chunkSize: chunkBytes }),
     () => undefined,
   );
@@ -48,9 +57,17 @@ async function* unpacked(path: string): AsyncGenerator<Buffer> {
 }
 
 /** A file's bytes, unpacked when it is gzip. */
-export async function* fileBytes(path: string): AsyncGenerator<Buffer> {
-  if (await isGzip(path)) yield* unpacked(path);
-  else yield* createReadStream(path, { highWaterMark: chunkBytes }) as AsyncIterable<Buffer>;
+export async function* fileBytes(path: string, onBytes?: OnBytes): AsyncGenerator<Buffer> {
+  if (await isGzip(path)) {
+    yield* unpacked(path, onBytes);
+    return;
+  }
+  let read = 0;
+  for await (const chunk of createReadStream(path, { highWaterMark: chunkBytes }) as AsyncIterable<Buffer>) {
+    read += chunk.length;
+    onBytes?.(read);
+    yield chunk;
+  }
 }
 
 export interface FileSample {

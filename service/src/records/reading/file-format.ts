@@ -1,16 +1,24 @@
 import { isUtf8 } from 'node:buffer';
 import { detectDelimiter, splitSample, type Delimiter } from './delimiter';
+import { findHeaderLine } from './header-line';
+import type { ReadingChoices } from './reading-choices';
 import { TableProblem } from './table-problem';
 
 export type TextEncoding = 'utf-8' | 'utf-16le' | 'utf-16be';
 
+/** How a file is written; a workbook has neither encoding nor delimiter. */
 export interface FileFormat {
+  readonly encoding: TextEncoding | '';
+  readonly delimiter: Delimiter | '';
+  /** The line, or the sheet's row, that names the columns; what stands above it is passed over. */
+  readonly headerLine: number;
+}
+
+export interface TextFormat extends FileFormat {
   readonly encoding: TextEncoding;
   readonly delimiter: Delimiter;
   /** Whether spaces around cells are padding. */
   readonly padded: boolean;
-  /** Line of the header: blank lines above it do not count as records. */
-  readonly headerLine: number;
 }
 
 interface KnownFile {
@@ -82,22 +90,22 @@ function sampleText(sample: Buffer, encoding: TextEncoding): string {
 
 const isPadded = (text: string, delimiter: Delimiter): boolean => {
   if (delimiter === '\t') return false;
-  const inner = splitSample(text, delimiter).flatMap((cells) => cells.slice(1));
+  const inner = splitSample(text, delimiter).flatMap(({ cells }) => cells.slice(1));
   return inner.length > 0 && inner.filter((cell) => cell.startsWith(' ')).length > inner.length * 0.8;
 };
 
-/** Finds out how the file is written from its beginning, or says why it is not a table. */
-export function detectFormat(sample: Buffer, complete: boolean): FileFormat {
+/** Finds out how a file of text is written from its beginning and from what was chosen, or says why it is not a table. */
+export function detectFormat(sample: Buffer, complete: boolean, choices: ReadingChoices = {}): TextFormat {
   refuseKnownFiles(sample);
   const encoding = encodingOf(sample);
   if (encoding === 'utf-8' && sample.includes(0)) refuseNul(sample);
   const text = sampleText(sample, encoding);
   refuseMarkup(text);
-  const blank = /^\s*/.exec(text)?.[0] ?? '';
   if (text.trim() === '' && complete)
     throw new TableProblem('file-empty', 'The file is empty. Send a table with a header line and at least one row.', 1);
-  const delimiter = detectDelimiter(text, complete);
-  return { encoding, delimiter, padded: isPadded(text, delimiter), headerLine: blank.split(/\r\n|\n|\r/).length };
+  const delimiter = choices.delimiter ?? detectDelimiter(text, complete);
+  const headerLine = choices.headerLine ?? findHeaderLine(splitSample(text, delimiter));
+  return { encoding, delimiter, padded: isPadded(text, delimiter), headerLine };
 }
 
 /** Text in two-byte characters has a NUL in every other byte. */

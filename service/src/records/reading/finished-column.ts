@@ -8,8 +8,8 @@ import {
 } from '../cell-blocks';
 import { decodeWords } from './cell-stores';
 import type { BuiltBlock, ColumnBuilder } from './column-builder';
+import type { ColumnPlan } from './column-plan';
 import { statisticsOf, statisticsOfLevels, type ColumnStatistics } from './column-statistics';
-import { unitOf } from './header';
 import { maximumDistinct, maximumLevelLength, maximumLevels } from './limits';
 import { ReadingSorter } from './reading-sorter';
 import type { SpilledCells, SpillFile } from './spill-file';
@@ -34,15 +34,23 @@ export interface FinishedColumn {
 /** With no more levels than this a column of words is a category however few rows there are. */
 const certainLevels = 50;
 
-export function finishColumns(builders: readonly ColumnBuilder[], rowCount: number): FinishedColumn[] {
+export function finishColumns(
+  builders: readonly ColumnBuilder[],
+  rowCount: number,
+  onMeasured: (columns: number) => void,
+): FinishedColumn[] {
   const sorter = new ReadingSorter(rowCount);
-  return builders.map((builder) => finishColumn(builder, sorter));
+  return builders.map((builder, at) => {
+    const column = finishColumn(builder, sorter);
+    onMeasured(at + 1);
+    return column;
+  });
 }
 
 function finishColumn(builder: ColumnBuilder, sorter: ReadingSorter): FinishedColumn {
   const { form } = builder;
   if (form.kind === 'numeric' || form.kind === 'date') return finishNumbers(builder, form.kind, sorter);
-  return form.kind === 'nothing' ? finishTexts(builder) : finishWords(builder);
+  return form.kind === 'nothing' || builder.options.plan.kind === 'text' ? finishTexts(builder) : finishWords(builder);
 }
 
 /** Every block in the column's own form: those that were missing throughout are written out now. */
@@ -62,22 +70,18 @@ function finishNumbers(builder: ColumnBuilder, kind: 'numeric' | 'date', sorter:
     spill.readInto(bytes.subarray(at), place);
     at += place.length;
   }
-  const unit = kind === 'numeric' ? unitOf(name) : null;
   return {
     name,
     position,
     kind,
-    unit,
+    unit: builder.unit,
     statistics: statisticsOf(kind, values, sorter),
     levels: [],
     blocks,
   };
 }
 
-function countCodes(builder: ColumnBuilder): {
-  readonly counts: number[];
-  readonly missing: number;
-} {
+function countCodes(builder: ColumnBuilder): { readonly counts: number[]; readonly missing: number } {
   const counts = new Array<number>(builder.levels.length).fill(0);
   let missing = 0;
   for (const block of builder.blocks) {
@@ -97,22 +101,19 @@ function countCodes(builder: ColumnBuilder): {
  * Words that come back are a category; words that are mostly different, or long, are text: names, remarks, numbers
  * of records. The limits are ours (common practice, no source).
  */
-function areLevels(levels: readonly string[], present: number): boolean {
+export function areLevels(levels: readonly string[], present: number, plan: ColumnPlan): boolean {
   if (levels.length > maximumLevels || levels.some((level) => level.length > maximumLevelLength)) return false;
-  return levels.length <= certainLevels || levels.length <= present / 2;
+  return plan.kind === 'category' || levels.length <= certainLevels || levels.length <= present / 2;
 }
 
 function finishWords(builder: ColumnBuilder): FinishedColumn {
   if (builder.blocks.some((block) => block.layout === 'texts')) return finishTexts(builder);
   const { counts, missing } = countCodes(builder);
   const present = counts.reduce((total, count) => total + count, 0);
-  if (!areLevels(builder.levels, present)) return finishTexts(builder);
+  if (!areLevels(builder.levels, present, builder.options.plan)) return finishTexts(builder);
   const { name, position } = builder.options;
   const blocks = placeBlocks(builder, (rowCount) => codesToCells(new Int32Array(rowCount).fill(-1)));
-  const levels = builder.levels.map((value, code) => ({
-    value,
-    count: counts[code],
-  }));
+  const levels = builder.levels.map((value, code) => ({ value, count: counts[code] }));
   return {
     name,
     position,

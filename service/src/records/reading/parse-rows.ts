@@ -1,17 +1,18 @@
 import { pipeline } from 'node:stream/promises';
 import { parse, type CsvError, type Info, type Parser } from 'csv-parse';
 import { checkedText } from './checked-text';
-import { fileBytes } from './file-bytes';
-import type { FileFormat } from './file-format';
+import { fileBytes, type OnBytes } from './file-bytes';
+import type { TextFormat } from './file-format';
 import { maximumRowBytes } from './limits';
 import { TableProblem } from './table-problem';
 
 const isCsvError = (error: unknown): error is CsvError & Info =>
   error instanceof Error && /^(CSV_|INVALID_)/.test(String((error as { code?: unknown }).code));
 
-function newParser(format: FileFormat, withLines: boolean): Parser {
+function newParser(format: TextFormat, withLines: boolean): Parser {
   return parse({
     delimiter: format.delimiter,
+    from_line: format.headerLine,
     relax_quotes: true,
     skip_empty_lines: true,
     skip_records_with_empty_values: true,
@@ -35,7 +36,14 @@ async function* guardRowLength(chunks: AsyncIterable<Buffer>, rowsSoFar: () => n
 
 class OpenQuote extends Error {}
 
-async function run(path: string, format: FileFormat, parser: Parser, onRow: (row: unknown) => void): Promise<void> {
+interface Run {
+  readonly path: string;
+  readonly format: TextFormat;
+  readonly parser: Parser;
+  readonly onBytes?: OnBytes;
+}
+
+async function run({ path, format, parser, onBytes }: Run, onRow: (row: unknown) => void): Promise<void> {
   let rows = 0;
   parser.on('data', (row: unknown) => {
     try {
@@ -45,7 +53,7 @@ async function run(path: string, format: FileFormat, parser: Parser, onRow: (row
       parser.destroy(error instanceof Error ? error : new Error(String(error)));
     }
   });
-  const text = checkedText(fileBytes(path), format);
+  const text = checkedText(fileBytes(path, onBytes), format);
   await pipeline(
     guardRowLength(text, () => rows),
     parser,
@@ -53,14 +61,14 @@ async function run(path: string, format: FileFormat, parser: Parser, onRow: (row
 }
 
 /** The line on which the row after the last whole one begins: where an open quotation mark must stand. */
-async function lineAfterLastRow(path: string, format: FileFormat): Promise<number> {
+async function lineAfterLastRow(path: string, format: TextFormat): Promise<number> {
   let line = format.headerLine - 1;
   const remember = (row: unknown): void => void (line = (row as { info: Info }).info.lines);
-  await run(path, format, newParser(format, true), remember).catch(() => undefined);
+  await run({ path, format, parser: newParser(format, true) }, remember).catch(() => undefined);
   return line + 1;
 }
 
-async function translate(error: unknown, path: string, format: FileFormat): Promise<unknown> {
+async function translate(error: unknown, path: string, format: TextFormat): Promise<unknown> {
   if (error instanceof OpenQuote || (isCsvError(error) && error.code === 'CSV_QUOTE_NOT_CLOSED')) {
     const line = await lineAfterLastRow(path, format);
     return new TableProblem(
@@ -83,7 +91,7 @@ function raggedProblem(error: CsvError & Info): TableProblem {
   const few = Number(found) < Number(expected);
   const remedy = few
     ? 'Fill it up, or put text that holds a line break in quotation marks.'
-    : 'Put text that holds the delimiter in quotation marks; lines above the header must go.';
+    : 'Put text that holds the delimiter in quotation marks; choose another header line if titles stand above the names.';
   return new TableProblem(
     'file-ragged',
     `Line ${error.lines} has ${found} ${found === '1' ? 'cell' : 'cells'} where the header has ${expected}. ${remedy}`,
@@ -94,11 +102,13 @@ function raggedProblem(error: CsvError & Info): TableProblem {
 /** Parses the file, handing over one row of text after another, the header first. Blank rows are passed over. */
 export async function parseRows(
   path: string,
-  format: FileFormat,
+  format: TextFormat,
   onRow: (cells: readonly string[]) => void,
+  onBytes?: OnBytes,
 ): Promise<void> {
   try {
-    await run(path, format, newParser(format, false), (row) => onRow(row as readonly string[]));
+    const parser = newParser(format, false);
+    await run({ path, format, parser, onBytes }, (row) => onRow(row as readonly string[]));
   } catch (error) {
     throw await translate(error, path, format);
   }
