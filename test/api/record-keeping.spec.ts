@@ -1,6 +1,8 @@
 import { existsSync, readdirSync } from 'node:fs';
 import { join } from 'node:path';
 import type { components } from '../../openapi/types/desk';
+import { migrationsFolder } from '../../service/src/database/migrations-folder';
+import { migrate } from '../../service/src/database/migrator';
 import { FitQueueStore } from '../../service/src/fits/fit-queue-store';
 import { eraseRetainedRecords } from '../../service/src/jobs/erase-retained-records';
 import { refitLabour } from '../support/published-estimator';
@@ -48,7 +50,9 @@ describe('keeping records', () => {
       .post(`/api/record-revisions/${revisionId}/mended-revisions`)
       .send({ steps })
       .expect(202);
-    return (await endOfTask(analyst, begun.body.id)).revisionId as string;
+    const task = await endOfTask(analyst, begun.body.id);
+    expect(task).toMatchObject({ state: 'done', problem: null });
+    return task.revisionId as string;
   }
   async function startFit(revisionId: string): Promise<string> {
     const begun = await analyst
@@ -218,6 +222,19 @@ describe('keeping records', () => {
       kept.mockRestore();
       const about = await service.services.knex('journal').where({ subjectId: fitId }).orderBy('id').pluck('action');
       expect(about).toEqual(['fit-started', 'fit-cancelled']);
+    });
+
+    it('leaves only cells that nobody speaks of when it is cut short, which hinder no start and are swept', async () => {
+      const set = await bringIn();
+      const { cellStorage, knex } = service.services;
+      const clear = jest.spyOn(cellStorage, 'clear').mockRejectedValueOnce(new Error('killed'));
+      await analyst.delete(`/api/record-revisions/${set.revision.id}`).expect(204);
+      expect(clear).toHaveBeenCalledTimes(1);
+      clear.mockRestore();
+      expect(await left(set.revision.id)).toEqual({ ...nothing, blocks: 3 });
+      expect(await migrate(knex, migrationsFolder)).toEqual([]);
+      await cellStorage.sweep(service.clock.now());
+      expect(await left(set.revision.id)).toEqual(nothing);
     });
 
     it('is for analysts', async () => {
