@@ -1,4 +1,4 @@
-import { existsSync, readdirSync } from 'node:fs';
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import type { components } from '../../openapi/types/desk';
 import { migrationsFolder } from '../../service/src/database/migrations-folder';
@@ -36,16 +36,16 @@ describe('keeping records', () => {
   afterAll(() => service.close());
 
   let made = 0;
-  async function bringIn(): Promise<RecordSet> {
+  async function bringIn(text = boats): Promise<RecordSet> {
     const answer = await analyst
       .post('/api/record-sets')
       .field('name', `Boats ${++made}`)
-      .attach('file', Buffer.from(boats), 'boats.csv')
+      .attach('file', Buffer.from(text), 'boats.csv')
       .expect(201);
     return answer.body as RecordSet;
   }
-  async function mend(revisionId: string): Promise<string> {
-    const steps = [{ kind: 'map-levels', column: 'hull', levels: { oak: 'wood' } }];
+  const oakToWood = [{ kind: 'map-levels', column: 'hull', levels: { oak: 'wood' } }];
+  async function mend(revisionId: string, steps: readonly object[] = oakToWood): Promise<string> {
     const begun = await analyst
       .post(`/api/record-revisions/${revisionId}/mended-revisions`)
       .send({ steps })
@@ -291,6 +291,31 @@ describe('keeping records', () => {
         ...{ action: 'records-erased', actorId: null },
         summary: `The rows of 2 revisions of ${set.name} were erased, which were to be kept until ${today}`,
       });
+    });
+
+    it('leaves nothing of the rows in any file of the desk', async () => {
+      const lines = Array.from(
+        { length: 300 },
+        (_, row) => `teal-${row}-${'q'.repeat(60)},${row % 2 ? 'widgeon' : 'pochard'},${row}`,
+      );
+      const set = await bringIn(`note,bird,hours\n${lines.join('\n')}\n`);
+      const words: Record<string, string> = { widgeon: 'garganey' };
+      const steps = [{ kind: 'map-levels', column: 'bird', levels: words }];
+      await analyst.put(`/api/record-revisions/${set.revision.id}/mending-draft`).send({ steps }).expect(200);
+      await mend(set.revision.id, steps);
+      const found = () => {
+        const files = readdirSync(service.services.config.dataFolder, { recursive: true, withFileTypes: true });
+        const bytes = Buffer.concat(
+          files.filter((file) => file.isFile()).map((file) => readFileSync(join(file.parentPath, file.name))),
+        );
+        return ['teal-7-', 'widgeon', 'pochard', 'garganey'].filter((word) => bytes.includes(word));
+      };
+      expect(found()).toHaveLength(4);
+      const retainUntil = service.clock.now().toISOString().slice(0, 10);
+      await analyst.patch(`/api/record-sets/${set.id}`).send({ retainUntil }).expect(200);
+      service.clock.advance(dayMs);
+      await runJob();
+      expect(found()).toEqual([]);
     });
 
     it('answers whoever reads erased rows that they are gone, whichever way they ask', async () => {

@@ -23,6 +23,8 @@ function setPragmas(connection: BetterSqlite3.Database): void {
   connection.pragma('foreign_keys = ON');
   connection.pragma('busy_timeout = 10000');
   connection.pragma('temp_store = MEMORY');
+  // What is removed is overwritten: levels and steps of erased records must not be readable in the file any more.
+  connection.pragma('secure_delete = ON');
 }
 
 /** Opens the SQLite file (made if absent). One connection; a transaction takes the write lock when it begins. */

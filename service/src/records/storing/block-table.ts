@@ -55,8 +55,10 @@ export class BlockTable {
     return true;
   }
 
+  /** Also empties the WAL, where the cells stand once more. */
   clear(revisionId: string): void {
     this.removeWhile(revisionId, '');
+    this.emptyLog();
   }
 
   /**
@@ -83,6 +85,14 @@ export class BlockTable {
        (SELECT rowid FROM record_blocks WHERE revision_id = ? ${condition} LIMIT ${removedAtOnce})`,
     );
     while (this.inShortTransaction(() => remove.run(revisionId).changes) > 0);
+  }
+
+  /** Not while somebody is reading: the checkpoint would wait for them under the write lock, and hold up the rest. */
+  private emptyLog(): void {
+    const patience = this.connection.pragma('busy_timeout', { simple: true }) as number;
+    this.connection.pragma('busy_timeout = 0');
+    this.connection.pragma('wal_checkpoint(TRUNCATE)');
+    this.connection.pragma(`busy_timeout = ${patience}`);
   }
 
   private inShortTransaction<Result>(work: () => Result): Result {

@@ -16,6 +16,8 @@ function openConnection(databasePath: string): BetterSqlite3.Database {
   connection.pragma('synchronous = NORMAL');
   connection.pragma('busy_timeout = 30000');
   connection.pragma('wal_autocheckpoint = 0');
+  // What is removed is overwritten: erased records must not be readable in the file any more.
+  connection.pragma('secure_delete = ON');
   return connection;
 }
 
