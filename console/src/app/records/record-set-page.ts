@@ -11,6 +11,8 @@ import { ProblemNotice } from '../ui/problem-notice';
 import { Sheet } from '../ui/sheet/sheet';
 import { SheetSection } from '../ui/sheet/sheet-section';
 import { NewerFile } from './bring-in/newer-file';
+import { RecordSetForm } from './keeping/record-set-form';
+import { retentionDayOf } from './keeping/revision-words';
 import { RevisionsTable } from './revisions-table';
 
 @Component({
@@ -22,6 +24,7 @@ import { RevisionsTable } from './revisions-table';
     NewerFile,
     PageHead,
     ProblemNotice,
+    RecordSetForm,
     RevisionsTable,
     RouterLink,
     Sheet,
@@ -36,7 +39,8 @@ export class RecordSetPage {
   readonly id = input.required<string>();
 
   protected readonly set = load(() => this.client.read(this.id()));
-  protected readonly newestFirst = computed(() =>
-    [...(this.set.value()?.revisions ?? [])].sort((a, b) => b.number - a.number),
-  );
+  protected readonly retentionDay = computed(() => {
+    const recordSet = this.set.value();
+    return recordSet && retentionDayOf(recordSet);
+  });
 }

@@ -16,6 +16,11 @@ export const recordsRoutes: Routes = [
     loadComponent: () => import('./mending/mending-page').then((m) => m.MendingPage),
   },
   {
+    path: 'revisions/:id/compare',
+    title: 'Compare revisions',
+    loadComponent: () => import('./comparison/comparison-page').then((m) => m.ComparisonPage),
+  },
+  {
     path: 'revisions/:id',
     title: 'Revision',
     loadComponent: () => import('./revision/revision-page').then((m) => m.RevisionPage),

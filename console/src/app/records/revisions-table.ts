@@ -1,50 +1,41 @@
-import { Component, input } from '@angular/core';
+import { Component, computed, inject, input, output } from '@angular/core';
 import { RouterLink } from '@angular/router';
-import type { RevisionSummary } from '../api/contract';
+import type { RecordSetDetail } from '../api/contract';
 import { BytesPipe, CountPipe } from '../ui/figure-pipes';
 import { MomentPipe } from '../ui/moment-pipes';
+import { SheetMenu } from '../ui/sheet/sheet-menu';
 import { TableBox } from '../ui/table-box';
+import { RevisionActions } from './keeping/revision-actions';
+import { lackingOf, originOf } from './keeping/revision-words';
 
+/** A set's revisions, newest first: where each came from and what can be done with it. */
 @Component({
   selector: 'tb-revisions-table',
-  imports: [BytesPipe, CountPipe, MomentPipe, RouterLink, TableBox],
-  template: `
-    <tb-table-box label="Revisions">
-      <table class="tb-table tb-wide">
-        <thead>
-          <tr>
-            <th scope="col">Revision</th>
-            <th scope="col">File</th>
-            <th scope="col" class="tb-figure">Rows</th>
-            <th scope="col" class="tb-figure">Columns</th>
-            <th scope="col" class="tb-figure">Size</th>
-            <th scope="col">Brought in</th>
-            <th scope="col">SHA-256 begins</th>
-          </tr>
-        </thead>
-        <tbody>
-          @for (revision of revisions(); track revision.id) {
-            <tr>
-              <th scope="row">
-                <a [routerLink]="['/records/revisions', revision.id]">Revision {{ revision.number }}</a>
-              </th>
-              <td>{{ revision.fileName }}</td>
-              <td class="tb-figure">{{ revision.rowCount | count }}</td>
-              <td class="tb-figure">{{ revision.columnCount | count }}</td>
-              <td class="tb-figure">{{ revision.byteCount | bytes }}</td>
-              <td>
-                {{ revision.createdBy.name }}<br /><span class="tb-muted">{{ revision.createdAt | moment }}</span>
-              </td>
-              <td>
-                <code>{{ revision.sha256.slice(0, 12) }}</code>
-              </td>
-            </tr>
-          }
-        </tbody>
-      </table>
-    </tb-table-box>
-  `,
+  imports: [BytesPipe, CountPipe, MomentPipe, RouterLink, SheetMenu, TableBox],
+  templateUrl: './revisions-table.html',
+  styleUrl: './revisions-table.scss',
 })
 export class RevisionsTable {
-  readonly revisions = input.required<readonly RevisionSummary[]>();
+  private readonly actions = inject(RevisionActions);
+
+  readonly recordSet = input.required<RecordSetDetail>();
+  /** A revision has been deleted, so the set is not what it was. */
+  readonly changed = output();
+
+  protected readonly rows = computed(() => {
+    const { id, name, revisions } = this.recordSet();
+    return [...revisions]
+      .sort((a, b) => b.number - a.number)
+      .map((revision) => ({
+        revision,
+        origin: originOf(revision),
+        lacking: lackingOf(revision),
+        menu: this.actions.menuOf({
+          revision,
+          recordSetId: id,
+          recordSetName: name,
+          gone: () => this.changed.emit(),
+        }),
+      }));
+  });
 }

@@ -1,60 +1,54 @@
 import { Component, computed, input } from '@angular/core';
-import { withUnit } from '@widget/format/number-format';
+import { RouterLink } from '@angular/router';
 import type { RecordColumn } from '../../api/contract';
-import { NO_FIGURE, formatCount, formatShare } from '../../ui/figure';
 import { FigureFrame, PlotTableTemplate, PlotTemplate } from '../../ui/plots/figure-frame';
-import { Histogram } from '../../ui/plots/histogram';
-import { KIND_WORDS, cellOf, distinctOf, meanOf, missingOf, rangeOf, spreadOf } from './column-words';
+import { ColumnFact, binsOf, factsOf, levelsOf, outlyingRowsOf, quantilesOf } from './column-facts';
+import { ColumnShape } from './column-shape';
+import { outlyingWords, unreadableWords } from './column-words';
 
-/** Levels beyond these are summed into one line. */
-const LEVELS_SHOWN = 12;
-
-/** One column's figures in full: facts, and its histogram or its levels. */
+/** One column's figures in full, each leading to the rows behind it. */
 @Component({
   selector: 'tb-column-detail',
-  imports: [FigureFrame, Histogram, PlotTableTemplate, PlotTemplate],
+  imports: [ColumnShape, FigureFrame, PlotTableTemplate, PlotTemplate, RouterLink],
   templateUrl: './column-detail.html',
   styleUrl: './column-detail.scss',
 })
 export class ColumnDetail {
   readonly column = input.required<RecordColumn>();
   readonly rowCount = input.required<number>();
+  /** Cells of the file that did not fit the column's kind. */
+  readonly unreadable = input(0);
+  /** Whether there are rows that figures can lead to. */
+  readonly linked = input(true);
 
-  protected readonly facts = computed(() => {
-    const column = this.column();
-    const inUnit = (figure: string): string => (figure === NO_FIGURE ? figure : withUnit(figure, column.unit));
-    const facts = [
-      { name: 'Kind', value: KIND_WORDS[column.kind] },
-      { name: 'Missing', value: missingOf(column, this.rowCount()) },
-      { name: 'Distinct values', value: distinctOf(column) },
-      { name: 'Range', value: inUnit(rangeOf(column)) },
-      { name: 'Mean', value: inUnit(meanOf(column)) },
-      { name: 'Standard deviation', value: inUnit(spreadOf(column)) },
-    ];
-    return facts.filter(({ value }) => value !== NO_FIGURE);
+  protected readonly facts = computed(() => this.asLinked(this.knownFacts()));
+  protected readonly unreadableTold = computed(() =>
+    this.unreadable() > 0 ? unreadableWords(this.unreadable(), this.column().kind) : undefined,
+  );
+  protected readonly outlying = computed(() => {
+    const { outlying } = this.column();
+    return (
+      outlying && {
+        words: outlyingWords(outlying, this.column()),
+        where: this.linked() ? outlyingRowsOf(this.column()) : undefined,
+      }
+    );
   });
-  protected readonly bins = computed(() => {
-    const { histogram, kind } = this.column();
-    const edge = (index: number): string => cellOf(histogram?.edges[index] ?? null, kind);
-    return (histogram?.counts ?? []).map((count, index) => ({
-      from: edge(index),
-      to: edge(index + 1),
-      count: formatCount(count),
-    }));
-  });
-  protected readonly levels = computed(() => this.levelRows());
+  protected readonly quantiles = computed(() => this.asLinked(quantilesOf(this.column())));
+  protected readonly caption = computed(() =>
+    this.column().quantiles?.some(({ share }) => share === 0.01)
+      ? 'Rows in each stretch of the range; the area of a bar is its share. The line above runs from 1% to 99% of the readings, the box holds the middle half, and the thick mark is the median.'
+      : 'Rows in each stretch of the range; the area of a bar is its share.',
+  );
+  protected readonly bins = computed(() => this.asLinked(binsOf(this.column())));
+  protected readonly levels = computed(() => this.asLinked(levelsOf(this.column(), this.rowCount())));
 
-  private levelRows(): readonly { name: string; count: string; share: string; percent: number }[] {
-    const { levels, missingCount } = this.column();
-    const present = Math.max(1, this.rowCount() - missingCount);
-    const shown = levels.slice(0, LEVELS_SHOWN);
-    const others = present - shown.reduce((sum, { count }) => sum + count, 0);
-    const rows = others > 0 && levels.length > 0 ? [...shown, { value: 'All others', count: others }] : shown;
-    return rows.map(({ value, count }) => ({
-      name: value,
-      count: formatCount(count),
-      share: formatShare(count / present),
-      percent: (100 * count) / present,
-    }));
+  private knownFacts(): readonly ColumnFact[] {
+    const facts = factsOf(this.column(), this.rowCount());
+    return this.linked() ? facts : facts.filter(({ name }) => name !== 'Distinct values');
+  }
+
+  private asLinked<Fact extends { readonly where?: string }>(facts: readonly Fact[]): readonly Fact[] {
+    return this.linked() ? facts : facts.map((fact) => ({ ...fact, where: undefined }));
   }
 }

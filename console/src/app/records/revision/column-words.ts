@@ -1,8 +1,10 @@
-import { formatReading } from '@widget/format/number-format';
+import { formatReading, withUnit } from '@widget/format/number-format';
 import { precisionFor, roundTo } from '@widget/format/precision';
 import type { ColumnKind, RecordColumn } from '../../api/contract';
 import { NO_FIGURE, formatCount, formatShare } from '../../ui/figure';
 import { formatRecordedDay } from '../../ui/moment';
+
+type Outlying = NonNullable<RecordColumn['outlying']>;
 
 const LOCALE = 'en-GB';
 
@@ -37,6 +39,38 @@ function rounded(value: number, spread: number | null): string {
   return formatReading(roundTo(value, step), LOCALE);
 }
 
+/** Digits of a figure taken from between readings: more would come from the arithmetic and not from the records. */
+const DIGITS_BETWEEN_READINGS = 4;
+
+/** A quantile or the end of a bar, which need not be a reading. */
+export function betweenReadings(value: number, kind: ColumnKind): string {
+  return kind === 'date'
+    ? formatRecordedDay(Math.floor(value))
+    : formatReading(Number(value.toPrecision(DIGITS_BETWEEN_READINGS)), LOCALE);
+}
+
+const SHARE_WORDS: Readonly<Record<number, string>> = { 0.25: 'Lower quartile', 0.5: 'Median', 0.75: 'Upper quartile' };
+
+/** `Median`, `1%`, `99%`. */
+export function shareWords(share: number): string {
+  return SHARE_WORDS[share] ?? `${Number((100 * share).toPrecision(3))}%`;
+}
+
+/** What counts as outlying, and how many readings do. */
+export function outlyingWords(outlying: Outlying, { kind, unit }: Pick<RecordColumn, 'kind' | 'unit'>): string {
+  const end = (value: number): string => withUnit(betweenReadings(value, kind), unit);
+  const further = 'further than 5 scaled median absolute deviations from the median';
+  const ends = `below ${end(outlying.low)} or above ${end(outlying.high)}`;
+  if (outlying.count === 0) return `No reading lies ${further}: ${ends}.`;
+  const readings = outlying.count === 1 ? '1 reading lies' : `${formatCount(outlying.count)} readings lie`;
+  return `${readings} ${further}: ${ends}.`;
+}
+
+export function unreadableWords(count: number, kind: ColumnKind): string {
+  const cells = count === 1 ? '1 cell of the file was' : `${formatCount(count)} cells of the file were`;
+  return `${cells} not readable as a ${KIND_WORDS[kind].toLowerCase()} and ${count === 1 ? 'counts' : 'count'} as missing.`;
+}
+
 export function missingOf({ missingCount }: RecordColumn, rowCount: number): string {
   if (missingCount === 0) return 'none';
   return `${formatCount(missingCount)} (${formatShare(missingCount / rowCount)})`;
@@ -48,10 +82,16 @@ export function distinctOf({ distinctCount }: RecordColumn): string {
 
 type Cell = string | number | null;
 
-/** One value of a row as it was recorded. */
+const CALENDAR_DAY = /^\d{4}-\d{2}-\d{2}$/;
+const MILLISECONDS_A_DAY = 86_400_000;
+
+/** One value of a row as it was recorded; a day comes as year-month-day or counted from 1970-01-01. */
 export function cellOf(value: Cell, kind: ColumnKind | undefined): string {
   if (value === null) return '';
-  if (typeof value === 'string') return value;
+  if (typeof value === 'string')
+    return kind === 'date' && CALENDAR_DAY.test(value)
+      ? formatRecordedDay(Date.parse(value) / MILLISECONDS_A_DAY)
+      : value;
   return kind === 'date' ? formatRecordedDay(value) : formatReading(value, LOCALE);
 }
 

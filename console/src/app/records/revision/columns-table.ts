@@ -1,6 +1,7 @@
 import { Component, computed, input, signal } from '@angular/core';
 import { MatSortModule } from '@angular/material/sort';
-import type { RecordColumn } from '../../api/contract';
+import type { RecordColumn, RecordRevision } from '../../api/contract';
+import { NO_FIGURE } from '../../ui/figure';
 import { listView } from '../../ui/list-view';
 import { Pager } from '../../ui/pager';
 import { Histogram } from '../../ui/plots/histogram';
@@ -19,6 +20,10 @@ import { KIND_WORDS, distinctOf, meanOf, missingOf, rangeOf } from './column-wor
 export class ColumnsTable {
   readonly columns = input.required<readonly RecordColumn[]>();
   readonly rowCount = input.required<number>();
+  /** Columns with cells that did not fit their kind. */
+  readonly unreadable = input<RecordRevision['reading']['unreadable']>([]);
+  /** Whether there are rows that figures can lead to; erased rows leave no figures either. */
+  readonly linked = input(true);
 
   protected readonly view = listView(() => this.columns(), {
     sortKeys: {
@@ -36,9 +41,10 @@ export class ColumnsTable {
       column,
       kind: KIND_WORDS[column.kind],
       missing: missingOf(column, this.rowCount()),
-      distinct: distinctOf(column),
+      distinct: this.linked() ? distinctOf(column) : NO_FIGURE,
       range: rangeOf(column),
       mean: meanOf(column),
+      unreadable: this.unreadable().find((each) => each.column === column.name)?.count ?? 0,
     })),
   );
 

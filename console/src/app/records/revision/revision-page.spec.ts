@@ -50,10 +50,77 @@ describe('RevisionPage', () => {
     const screen = await openReady('viewer');
     await screen.press('Length overall');
     expect(screen.button('Length overall').getAttribute('aria-expanded')).toBe('true');
-    expect(screen.text).toContain('5.2 to 24.6 m');
+    expect(screen.text).toContain('Lower quartileRows up to 9.4 m');
+    expect(screen.text).toContain(
+      '3 readings lie further than 5 scaled median absolute deviations from the median: below 2.1 m or above 21.1 m.',
+    );
     await screen.press('Show as table');
     const firstBin = screen.page.querySelector('figure tbody tr');
-    expect([...(firstBin?.children ?? [])].map((cell) => cell.textContent)).toEqual(['5', '10', '900']);
+    expect([...(firstBin?.children ?? [])].map((cell) => cell.textContent?.trim())).toEqual(['5', '10', '900']);
+  });
+
+  it('leads from every figure of a column to the rows behind it', async () => {
+    const screen = await openReady('viewer');
+    await screen.press('Length overall');
+    const conditions = [...screen.page.querySelectorAll('tb-column-detail a')].map((link) =>
+      new URL(link.getAttribute('href') ?? '', 'http://desk.example').searchParams.get('where'),
+    );
+    expect(conditions).toEqual([
+      '[Length overall] is missing',
+      '[Length overall] = 5.2',
+      '[Length overall] = 24.6',
+      '[Length overall] < 2.1 or [Length overall] > 21.1',
+      '[Length overall] <= 9.4',
+      '[Length overall] <= 11.6',
+      '[Length overall] <= 14.1',
+      '[Length overall] >= 5 and [Length overall] < 10',
+      '[Length overall] >= 10 and [Length overall] <= 25',
+    ]);
+  });
+
+  it('leads from a level to its rows', async () => {
+    const screen = await openReady('viewer');
+    await screen.press('Hull material');
+    const hrefs = [...screen.page.querySelectorAll('tb-column-detail table a')].map((link) =>
+      decodeURIComponent(link.getAttribute('href') ?? ''),
+    );
+    expect(hrefs[1]).toBe('/records/revisions/revision2?where=[Hull material] = "wood"#rows');
+  });
+
+  it('says how many cells were not readable as the kind of their column', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
+    const reading = { ...REVISION.reading, unreadable: [{ column: 'Length overall', count: 4 }] };
+    await screen.answer(PATH, { ...REVISION, reading });
+    await screen.press('Length overall');
+    expect(screen.text).toContain('4 cells of the file were not readable as a number and count as missing.');
+    screen.call(ROWS_PATH);
+  });
+
+  it('says where the revision came from', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
+    await screen.answer(PATH, { ...REVISION, origin: 'appended', basedOn: { id: 'revision1', number: 1 } });
+    expect(screen.text).toContain('refits-2.csv appended to revision 1 by Ines Caldwell');
+    screen.call(ROWS_PATH);
+  });
+
+  it('says what is left once the rows were erased, and asks for none', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'analyst');
+    await screen.answer(PATH, { ...REVISION, erasedAt: '2026-11-02T03:00:00Z' });
+    expect(screen.text).toContain('The rows were erased on 2 November 2026');
+    expect(screen.page.querySelector('tb-rows-table, tb-pairs-section, tb-findings-list, tb-start-fit')).toBeNull();
+    expect(screen.page.querySelector('a[download]')).toBeNull();
+    await screen.press('Length overall');
+    expect(screen.page.querySelector('tb-column-detail a')).toBeNull();
+  });
+
+  it('says why there is no original file to download', async () => {
+    const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
+    const reading = { ...REVISION.reading, setAside: ['Owner'] };
+    await screen.answer(PATH, { ...REVISION, originalKept: false, reading });
+    expect(screen.page.querySelector('a[download]')).toBeNull();
+    expect(screen.text).toContain('Not kept, because columns of it were set aside before anything was stored.');
+    expect(screen.text).toContain('Never storedOwner');
+    screen.call(ROWS_PATH);
   });
 
   it('shows rows with the gaps named and the figures lined up', async () => {
@@ -71,7 +138,13 @@ describe('RevisionPage', () => {
     const screen = await RecordsScreen.open('/records/revisions/revision2', 'viewer');
     const named = { ...LENGTH, name: 'draught (m)' };
     await screen.answer(PATH, { ...REVISION, columns: [LENGTH, named] });
-    await screen.answer(ROWS_PATH, { total: 1, offset: 0, columns: [LENGTH.name, named.name], rows: [[12, 2]] });
+    await screen.answer(ROWS_PATH, {
+      total: 1,
+      offset: 0,
+      columns: [LENGTH.name, named.name],
+      numbers: [1],
+      rows: [[12, 2]],
+    });
     const heads = [...screen.page.querySelectorAll('tb-rows-table th[scope="col"]')].map((head) =>
       head.textContent?.trim().replace(/\s+/g, ' '),
     );

@@ -4,7 +4,7 @@ import type { Histogram as HistogramCounts } from '../../api/contract';
 import { countOf, formatFigure } from '../figure';
 import { formatRecordedDay } from '../moment';
 
-interface Bar {
+export interface Bar {
   readonly x: number;
   readonly y: number;
   readonly width: number;
@@ -36,7 +36,7 @@ export class Histogram {
   protected readonly width = WIDTH;
   protected readonly floor = HEIGHT - FOOT;
   protected readonly viewBox = computed(() => `0 0 ${WIDTH} ${this.small() ? HEIGHT - FOOT : HEIGHT}`);
-  protected readonly bars = computed(() => barsOf(this.counts()));
+  protected readonly bars = computed(() => histogramBars(this.counts(), { width: WIDTH, height: HEIGHT - FOOT }));
   protected readonly ends = computed(() => {
     const { edges } = this.counts();
     return { low: this.edgeText(edges[0]), high: this.edgeText(edges[edges.length - 1]) };
@@ -58,14 +58,19 @@ export class Histogram {
   }
 }
 
+interface BarRoom {
+  readonly width: number;
+  readonly height: number;
+}
+
 /** Area is share, so that bars of unequal width do not mislead: height is count over width. */
-function barsOf({ counts, edges }: HistogramCounts): readonly Bar[] {
-  const x = scaleLinear([edges[0] ?? 0, edges[edges.length - 1] ?? 1], [0, WIDTH]);
+export function histogramBars({ counts, edges }: HistogramCounts, { width, height }: BarRoom): readonly Bar[] {
+  const x = scaleLinear([edges[0] ?? 0, edges[edges.length - 1] ?? 1], [0, width]);
   const densities = counts.map((count, index) => count / (edges[index + 1] - edges[index] || 1));
-  const y = scaleLinear([0, Math.max(...densities)], [0, HEIGHT - FOOT]);
+  const y = scaleLinear([0, Math.max(...densities)], [0, height]);
   return counts.map((count, index) => {
     const left = x(edges[index]);
-    const height = count === 0 ? 0 : Math.max(LEAST_VISIBLE, y(densities[index]));
-    return { x: left, y: HEIGHT - FOOT - height, width: Math.max(LEAST_VISIBLE, x(edges[index + 1]) - left), height };
+    const tall = count === 0 ? 0 : Math.max(LEAST_VISIBLE, y(densities[index]));
+    return { x: left, y: height - tall, width: Math.max(LEAST_VISIBLE, x(edges[index + 1]) - left), height: tall };
   });
 }
