@@ -12,24 +12,41 @@ export interface FinishedTable {
   readonly columns: readonly FinishedColumn[];
 }
 
-/** Writes a table's cells to the spill file in the form in which they are stored, and takes its figures. */
-export function finishTable(table: RecordTable, spill: SpillFile): FinishedTable {
-  const blockRows = blockRowsFor(table.columns.length);
-  const starts = Array.from({ length: Math.ceil(table.rowCount / blockRows) }, (_, block) => block * blockRows);
-  const sorter = new ReadingSorter(table.rowCount);
-  const finish = (column: RecordColumn, position: number): FinishedColumn => ({
-    name: column.name,
-    position,
-    kind: column.kind,
-    unit: column.kind === 'numeric' ? (column.unit ?? null) : null,
-    blocks: starts.map((start) => spill.append(cellsOf(column, start, start + blockRows))),
-    ...figuresOf(column, sorter),
-  });
-  return {
-    rowCount: table.rowCount,
-    blockRowCounts: starts.map((start) => Math.min(blockRows, table.rowCount - start)),
-    columns: table.columns.map(finish),
-  };
+/** Finishes the columns of one table, one after another, so that no more than one need be in memory. */
+export class TableFinisher {
+  readonly blockRowCounts: readonly number[];
+  private readonly starts: readonly number[];
+  private readonly blockRows: number;
+  private readonly sorter: ReadingSorter;
+
+  constructor(
+    { rowCount, columnCount }: { readonly rowCount: number; readonly columnCount: number },
+    private readonly spill: SpillFile,
+  ) {
+    const blockRows = blockRowsFor(columnCount);
+    this.blockRows = blockRows;
+    this.starts = Array.from({ length: Math.ceil(rowCount / blockRows) }, (_, block) => block * blockRows);
+    this.blockRowCounts = this.starts.map((start) => Math.min(blockRows, rowCount - start));
+    this.sorter = new ReadingSorter(rowCount);
+  }
+
+  /** Writes the cells to the spill file in the form in which they are stored, and takes the column's figures. */
+  finish(column: RecordColumn, position: number): FinishedColumn {
+    return {
+      name: column.name,
+      position,
+      kind: column.kind,
+      unit: column.kind === 'numeric' ? (column.unit ?? null) : null,
+      blocks: this.starts.map((start) => this.spill.append(cellsOf(column, start, start + this.blockRows))),
+      ...figuresOf(column, this.sorter),
+    };
+  }
+}
+
+export function finishTable({ rowCount, columns }: RecordTable, spill: SpillFile): FinishedTable {
+  const finisher = new TableFinisher({ rowCount, columnCount: columns.length }, spill);
+  const finished = columns.map((column, position) => finisher.finish(column, position));
+  return { rowCount, blockRowCounts: finisher.blockRowCounts, columns: finished };
 }
 
 function cellsOf(column: RecordColumn, start: number, end: number): Uint8Array {
