@@ -1,4 +1,5 @@
 import type { ColumnEvidence } from './column-evidence';
+import type { ColumnPlan } from './column-plan';
 import { DateForm } from './date-cell';
 import type { DecimalMark } from './number-cell';
 import type { DateOrder } from './reading-choices';
@@ -40,6 +41,12 @@ export function mostFrequentUnit(units: ReadonlyMap<Unit, number>): Unit | null 
 export function targetUnitOf({ plan, units }: ColumnEvidence): Unit | null {
   if (units.size === 0) return null;
   return plan.unit === null ? mostFrequentUnit(units) : unitNamed(plan.unit);
+}
+
+/** A column's unit: the one that was chosen or that the header names, else that of the cells. */
+export function columnUnitOf(plan: ColumnPlan, form: CellForm): string | null {
+  if (form.kind !== 'numeric') return null;
+  return plan.unitSettled ? plan.unit : (plan.unit ?? form.unit?.symbol ?? null);
 }
 
 const allConvert = ({ units }: ColumnEvidence, target: Unit | null): boolean =>

@@ -9,7 +9,7 @@ import {
   type CellStore,
   type TextRows,
 } from './cell-stores';
-import { likelyFormOf, type CellForm } from './cell-form';
+import { columnUnitOf, likelyFormOf, type CellForm } from './cell-form';
 import { ColumnEvidence, newCellReaders, type CellReaders } from './column-evidence';
 import type { ColumnPlan } from './column-plan';
 import { MixedNumberStore, needsMixedStore } from './mixed-number-store';
@@ -80,11 +80,8 @@ export class ColumnBuilder {
     return this.store?.unreadableCount ?? 0;
   }
 
-  /** The column's unit: the one that was chosen or that the header names, else that of the cells. */
   get unit(): string | null {
-    const { plan } = this.options;
-    if (this.kept.kind !== 'numeric') return null;
-    return plan.unitSettled ? plan.unit : (plan.unit ?? this.kept.unit?.symbol ?? null);
+    return columnUnitOf(this.options.plan, this.kept);
   }
 
   gatherEvidence(rows: TextRows): void {

@@ -36,7 +36,8 @@ function requireNamed(names: readonly string[], choices: readonly ColumnChoice[]
   );
 }
 
-function requireColumnsLeft(plans: readonly ColumnPlan[], base: readonly BaseColumn[] | undefined): void {
+/** Reading a file of which nothing would be stored is a mistake; looking at one is not. */
+export function requireColumnsLeft(plans: readonly ColumnPlan[], base?: readonly BaseColumn[]): void {
   if (plans.some((plan) => !plan.setAside)) return;
   throw misfit(
     base
@@ -55,7 +56,7 @@ export function planColumns(
   requireNamed(names, columnChoices);
   const chosen = new Map(columnChoices.map((choice) => [choice.name.trim(), choice]));
   const bases = base && new Map(base.map((column) => [column.name, column]));
-  const plans = names.map((name, position): ColumnPlan => {
+  return names.map((name, position): ColumnPlan => {
     const choice = chosen.get(name);
     const held = bases?.get(name);
     if (held && choice?.setAside)
@@ -73,6 +74,4 @@ export function planColumns(
       marks: extra.length > 0 ? new MissingMarks(extra) : usualMarks,
     };
   });
-  requireColumnsLeft(plans, base);
-  return plans;
 }

@@ -1,7 +1,7 @@
 import { blockRowsFor } from '../cell-blocks';
 import { fileMarkOf, likelyFormOf, type CellForm } from './cell-form';
 import { ColumnBuilder } from './column-builder';
-import { planColumns, type ColumnPlan } from './column-plan';
+import { planColumns, requireColumnsLeft, type ColumnPlan } from './column-plan';
 import type { FileFormat } from './file-format';
 import { readHeader } from './header';
 import { guessRows } from './limits';
@@ -66,6 +66,7 @@ export class TablePass {
     this.names = names;
     this.blockRows = blockRowsFor(names.length);
     this.plans = planColumns(names, choices, base);
+    requireColumnsLeft(this.plans, base);
     this.builders = this.plans.filter((plan) => this.isRead(plan)).map((plan) => this.newBuilder(plan));
     this.batchRows = this.guessing
       ? Math.max(50, Math.min(guessRows, Math.floor(guessCells / names.length)))
