@@ -5,6 +5,7 @@ import type { Page } from '../http/page';
 import type { BringingIn, Destination } from './incoming/bringing-in';
 import { nameTaken, readWords, type SetWords } from './incoming/record-set-words';
 import type { KeptFiles, ReceivedFile } from './kept-files';
+import type { ReadingChoices } from './reading/reading-choices';
 import { plainFileName, receiveUpload, type Upload } from './receive-upload';
 import { toRevisionAnswer, toSetDetail, toSetSummary } from './record-answers';
 import type { RecordSetRecord, RecordsStore, RevisionRecord } from './records-store';
@@ -27,6 +28,8 @@ export interface FileToImport {
   readonly name: string;
   readonly description: string;
   readonly personId: string;
+  /** How to read it; what is absent is found out from the file. */
+  readonly choices?: ReadingChoices;
 }
 
 export interface RevisionToImport extends Omit<FileToImport, 'name' | 'description'> {
@@ -37,6 +40,7 @@ interface FileToFinish {
   readonly file: ReceivedFile;
   readonly fileName: string;
   readonly personId: string;
+  readonly choices?: ReadingChoices;
 }
 
 export class RecordsService {
@@ -109,12 +113,12 @@ export class RecordsService {
 
   /** A further revision of a set from a file on this machine, which is copied. */
   async importRevision(given: RevisionToImport): Promise<Schemas['RecordRevision']> {
-    const { path, recordSetId, personId } = given;
+    const { path, recordSetId, personId, choices } = given;
     await this.requireSet(recordSetId);
     const file = await this.parts.files.receiveCopy(path);
     const fileName = plainFileName(given.fileName);
     return this.discardingOnFailure(file, () =>
-      this.addRevision({ kind: 'revision', recordSetId }, { file, fileName, personId }),
+      this.addRevision({ kind: 'revision', recordSetId }, { file, fileName, personId, choices }),
     );
   }
 
@@ -141,8 +145,12 @@ export class RecordsService {
   }
 
   /** The same way in as a file that was looked at before, to its end. */
-  private async finish(destination: Destination, given: FileToFinish, signal?: AbortSignal): Promise<RevisionRecord> {
-    const work = await this.parts.bringingIn.workOf(given, destination);
+  private async finish(
+    destination: Destination,
+    { choices = {}, ...given }: FileToFinish,
+    signal?: AbortSignal,
+  ): Promise<RevisionRecord> {
+    const work = await this.parts.bringingIn.workOf({ ...given, choices }, destination);
     return this.requireRevision(await this.parts.tasks.finish(work, signal));
   }
 

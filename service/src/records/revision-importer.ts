@@ -3,6 +3,7 @@ import { timeText, type Clock } from '../clock';
 import type { Database } from '../database/database';
 import { readTableInThread } from './import-thread';
 import type { KeptFiles, ReceivedFile } from './kept-files';
+import type { ReadingChoices } from './reading/reading-choices';
 import type { TableReading } from './reading/read-table';
 import type { Reading, RecordsStore, RevisionRecord } from './records-store';
 import { translateFullDisk } from './storage-full';
@@ -15,6 +16,7 @@ export interface Import {
   readonly file: ReceivedFile;
   readonly fileName: string;
   readonly personId: string;
+  readonly choices: ReadingChoices;
   /** The revision whose rows come first; null when the file stands alone. */
   readonly base: RevisionRecord | null;
 }
@@ -107,9 +109,10 @@ export class RevisionImporter {
 
   private async read(given: Import, spillPath: string, { signal, progress }: TaskContext): Promise<ReadImport> {
     const { threadArguments } = this.parts;
-    const task = { path: given.file.path, spillPath };
-    progress({ stage: 'reading', done: 0, total: given.file.byteCount });
-    const table = await readTableInThread(task, { nodeArguments: threadArguments, signal });
+    const { file, choices } = given;
+    progress({ stage: 'reading', done: 0, total: file.byteCount });
+    const task = { path: file.path, spillPath, choices };
+    const table = await readTableInThread(task, { nodeArguments: threadArguments, signal, onProgress: progress });
     return { table, reading: readingOf(table) };
   }
 
@@ -146,7 +149,7 @@ export class RevisionImporter {
   }
 }
 
-const readingOf = ({ format, decimal }: TableReading): Reading => ({
+const readingOf = ({ format, decimal, sheet, missingMarks, setAside, unreadable }: TableReading): Reading => ({
   ...{ encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
-  ...{ sheet: null, headerLine: format.headerLine, missingMarks: [], setAside: [], unreadable: [] },
+  ...{ sheet, headerLine: format.headerLine, missingMarks, setAside, unreadable },
 });
