@@ -79,7 +79,7 @@ function wordDoubts({ plan, form, evidence }: LookedColumn, { census }: DoubtCon
   const example = census.word === null ? '' : `, such as ${shown(census.word)}`;
   if (numbers >= others)
     return [
-      `${cells(others)} among ${cells(numbers)} with numbers are words${example}, so the column is taken as words. Name them as marks for “no reading”, or choose numeric.`,
+      `${others.toLocaleString('en-GB')} of ${cells(numbers + others)} ${others === 1 ? 'is not a number' : 'are not numbers'}${example}, so the column is taken as words. Name such words as marks for “no reading”, or choose numeric.`,
     ];
   return numbers * 10 <= others
     ? [`${cells(numbers)} among words ${numbers === 1 ? 'is a number' : 'are numbers'}.`]

@@ -87,6 +87,10 @@ export async function readTable(path: string, spill: SpillFile, options: ReadOpt
   };
 }
 
+/** A second pass goes on from where the first one ended, so that progress never goes back. */
+const secondHalf = (onProgress?: OnProgress): OnProgress | undefined =>
+  onProgress && (({ stage, done, total }) => onProgress({ stage, done: total + done, total: 2 * total }));
+
 async function readAgainWhereWrong(
   reading: Reading,
   builders: readonly ColumnBuilder[],
@@ -99,7 +103,7 @@ async function readAgainWhereWrong(
   }
   if (wrong.size === 0) return builders;
   const pass = new TablePass(reading.parts, wrong);
-  await runPass(reading, pass);
+  await runPass({ ...reading, onProgress: secondHalf(reading.onProgress) }, pass);
   const mended = new Map(pass.builders.map((builder) => [builder.options.position, builder]));
   return builders.map((builder) => mended.get(builder.options.position) ?? builder);
 }
