@@ -176,6 +176,15 @@ describe('comparing two tables by order', () => {
     });
   });
 
+  it('finds rows that changed beside rows that went, even when every row changed', () => {
+    const rows = Array.from({ length: 50 }, (_, at): Row => [at, hulls[at % 3], at]);
+    const after = rows.flatMap((row): Row[] => (row[0] % 10 === 4 ? [] : [[row[0], row[1], row[2] + 0.5]]));
+    const found = compared(boats(rows), boats(after), '');
+    expect(found.rows).toEqual({ added: 0, removed: 5, changed: 45, unchanged: 0 });
+    expect(found.columns.map((column) => column.changedCount)).toEqual([0, 0, 45]);
+    expect(found.removed).toEqual([5, 15, 25, 35, 45]);
+  });
+
   it('puts rows side by side when all of them changed', () => {
     const rows = Array.from({ length: 30 }, (_, at): Row => [at, 'oak', 5]);
     const after = rows.map(([id, hull]): Row => [id, hull, 6]);

@@ -4,7 +4,7 @@ import { comparableCells, sharedNames, shownCells, type ComparedColumn, type Com
 import { findKey, matchByKey, possibleKeys } from './keys';
 import { OrderMatcher } from './match-by-order';
 import { addedRows, removedRows, type RowMatching } from './row-matching';
-import { rowNames } from './row-names';
+import { nameRows } from './row-names';
 
 export interface CellChange {
   readonly column: string;
@@ -98,7 +98,7 @@ function match(
 ): { readonly key: string | null; readonly matching: RowMatching } {
   if (asked !== null && asked !== '') return { key: asked, matching: matchByKey(from, to, asked) };
   const found = asked === null ? findKey(from, to, keys) : null;
-  return found ?? { key: null, matching: new OrderMatcher(rowNames(from, to)).match() };
+  return found ?? { key: null, matching: new OrderMatcher(nameRows(from, to)).match() };
 }
 
 function compareColumn(from: ComparedTable, to: ComparedTable, name: string, changed: ChangedCells): ComparedNames {
@@ -128,7 +128,7 @@ const numbersOf = (positions: Uint32Array): number[] =>
 /**
  * What became of the rows of `from` in `to`. Rows are matched by the key asked for, by one that is found (null), or
  * by their order (an empty key); a matched row has changed when a cell of a column that both have has. Cost: a few
- * passes over the columns, one of each side in memory at a time, and some 60 bytes a row.
+ * passes over the columns, one of each side in memory at a time, and up to 150 bytes a row.
  */
 export function compareTables(
   from: ComparedTable,

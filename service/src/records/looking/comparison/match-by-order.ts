@@ -1,4 +1,4 @@
-import type { RowNames } from './row-names';
+import type { NamedTables, RowNames } from './row-names';
 import type { RowMatching } from './row-matching';
 
 /** A stretch of each side that is still to be matched; ends are past the last row. */
@@ -32,10 +32,12 @@ export function longestRising(values: ArrayLike<number>): number[] {
 }
 
 /**
- * Matches rows by their order, in the way known from comparing texts as "patience" (common practice, no published source): equal rows at
- * the two ends of a stretch belong together; so do rows that stand just once in each side's stretch, as far as their
- * order agrees. They part the stretch into shorter ones, which are treated alike. Where nothing equal is left, rows
- * are matched from the top, and the surplus was added or removed. Cost: about n log n.
+ * Matches rows by their order, in the way known from comparing texts as "patience" (common practice, no published
+ * source): equal rows at the two ends of a stretch belong together; so do rows that stand just once in each side's
+ * stretch, as far as their order agrees. They part the stretch into shorter ones, which are treated alike. Where no
+ * equal rows are left, rows that agree in a third of the columns do the same, so that a row that changed is found
+ * beside one that went. What is left is matched from the top, and the surplus was added or removed. Cost: about
+ * n log n.
  */
 export class OrderMatcher {
   private readonly matching: RowMatching;
@@ -44,12 +46,14 @@ export class OrderMatcher {
   private readonly rowInFrom: Int32Array;
   private readonly open: Stretch[];
 
-  constructor(private readonly names: RowNames) {
-    this.matching = new Int32Array(names.to.length).fill(-1);
-    this.countFrom = new Int32Array(names.different);
-    this.countTo = new Int32Array(names.different);
-    this.rowInFrom = new Int32Array(names.different);
-    this.open = [{ fromStart: 0, fromEnd: names.from.length, toStart: 0, toEnd: names.to.length }];
+  constructor(private readonly named: NamedTables) {
+    const { whole, parts } = named;
+    const different = Math.max(whole.different, ...parts.map((part) => part.different));
+    this.matching = new Int32Array(whole.to.length).fill(-1);
+    this.countFrom = new Int32Array(different);
+    this.countTo = new Int32Array(different);
+    this.rowInFrom = new Int32Array(different);
+    this.open = [{ fromStart: 0, fromEnd: whole.from.length, toStart: 0, toEnd: whole.to.length }];
   }
 
   match(): RowMatching {
@@ -59,7 +63,7 @@ export class OrderMatcher {
 
   /** Matches equal rows at the beginning and at the end, and gives what lies between. */
   private trim({ fromStart, fromEnd, toStart, toEnd }: Stretch): Stretch {
-    const { from, to } = this.names;
+    const { from, to } = this.named.whole;
     while (fromStart < fromEnd && toStart < toEnd && from[fromStart] === to[toStart])
       this.matching[toStart++] = fromStart++;
     while (fromStart < fromEnd && toStart < toEnd && from[fromEnd - 1] === to[toEnd - 1])
@@ -70,24 +74,30 @@ export class OrderMatcher {
   private matchStretch(stretch: Stretch): void {
     const { fromStart, fromEnd, toStart, toEnd } = stretch;
     if (fromStart === fromEnd || toStart === toEnd) return;
-    const anchors = this.anchorsOf(stretch);
-    if (anchors.length === 0) {
-      const paired = Math.min(fromEnd - fromStart, toEnd - toStart);
-      for (let at = 0; at < paired; at++) this.matching[toStart + at] = fromStart + at;
+    for (const names of [this.named.whole, ...this.named.parts]) {
+      const anchors = this.anchorsOf(stretch, names);
+      if (anchors.length === 0) continue;
+      this.partAt(anchors, stretch);
       return;
     }
-    let [from, to] = [fromStart, toStart];
+    const paired = Math.min(fromEnd - fromStart, toEnd - toStart);
+    for (let at = 0; at < paired; at++) this.matching[toStart + at] = fromStart + at;
+  }
+
+  private partAt(anchors: readonly number[], { fromStart, fromEnd, toStart, toEnd }: Stretch): void {
+    let from = fromStart;
+    let to = toStart;
     for (const row of anchors) {
       const twin = this.matching[row];
       this.open.push({ fromStart: from, fromEnd: twin, toStart: to, toEnd: row });
-      [from, to] = [twin + 1, row + 1];
+      from = twin + 1;
+      to = row + 1;
     }
     this.open.push({ fromStart: from, fromEnd, toStart: to, toEnd });
   }
 
   /** Rows of `to` that stand just once in either side's stretch and keep their order; they are matched. */
-  private anchorsOf({ fromStart, fromEnd, toStart, toEnd }: Stretch): number[] {
-    const { from, to } = this.names;
+  private anchorsOf({ fromStart, fromEnd, toStart, toEnd }: Stretch, { from, to }: RowNames): number[] {
     for (let row = fromStart; row < fromEnd; row++) {
       this.countFrom[from[row]]++;
       this.rowInFrom[from[row]] = row;
