@@ -56,6 +56,11 @@ export class DraftKeeper {
     this.drafts.next(this.unsent);
   }
 
+  /** Whether there is a change that the service does not have yet. */
+  waits(): boolean {
+    return this.unsent !== undefined;
+  }
+
   /** Keeps at once what waits; completes even where that fails, which it says. */
   flush(): Observable<unknown> {
     const { unsent } = this;

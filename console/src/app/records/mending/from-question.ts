@@ -12,7 +12,7 @@ type Question = Extract<Beginning, { with: 'question' }>;
   template: `
     <p>
       You have steps waiting for this revision already, and you asked for those that made revision
-      {{ question().number }}. Taking these puts them in the place of yours.
+      {{ question().other.number }}. Taking these puts them in the place of yours.
     </p>
     <div class="lists">
       <section aria-labelledby="tb-own-steps">
@@ -26,13 +26,16 @@ type Question = Extract<Beginning, { with: 'question' }>;
       </section>
       <section aria-labelledby="tb-other-steps">
         <h2 id="tb-other-steps">
-          The {{ question().other.length | count: 'step' }} of revision {{ question().number }}
+          The {{ question().other.steps.length | count: 'step' }} of revision {{ question().other.number }}
         </h2>
         <ol>
           @for (words of otherWords(); track $index) {
             <li>{{ words }}</li>
           }
         </ol>
+        @if (question().other.caution; as caution) {
+          <p>{{ caution }}</p>
+        }
         <button type="button" class="tb-plain-button" (click)="otherTaken.emit()">Take these instead</button>
       </section>
     </div>
@@ -67,5 +70,5 @@ export class FromQuestion {
   readonly otherTaken = output();
 
   protected readonly draftWords = computed(() => this.question().draft.map(wordsOfStep));
-  protected readonly otherWords = computed(() => this.question().other.map(wordsOfStep));
+  protected readonly otherWords = computed(() => this.question().other.steps.map(wordsOfStep));
 }

@@ -1,4 +1,18 @@
-import { Component, OnInit, computed, effect, inject, input, linkedSignal, signal, untracked } from '@angular/core';
+import {
+  Component,
+  ElementRef,
+  Injector,
+  OnInit,
+  afterNextRender,
+  computed,
+  effect,
+  inject,
+  input,
+  linkedSignal,
+  signal,
+  untracked,
+  viewChild,
+} from '@angular/core';
 import { Router, RouterLink } from '@angular/router';
 import { map, switchMap, timer } from 'rxjs';
 import type { MendStep } from '../../api/contract';
@@ -41,7 +55,7 @@ import { Trials } from './trials';
   providers: [DraftKeeper, Trials],
   templateUrl: './mending-board.html',
   styleUrl: './mending-board.scss',
-  host: { '(document:keydown)': 'onKey($event)' },
+  host: { '(document:keydown)': 'onKey($event)', '(window:beforeunload)': 'onUnload($event)' },
 })
 export class MendingBoard implements OnInit {
   private readonly mending = inject(MendingClient);
@@ -51,9 +65,12 @@ export class MendingBoard implements OnInit {
   private readonly confirm = inject(Confirm);
   private readonly announcer = inject(Announcer);
   private readonly router = inject(Router);
+  private readonly injector = inject(Injector);
 
   readonly opening = input.required<MendingOpening>();
   readonly beginning = input.required<Exclude<Beginning, { with: 'question' }>>();
+
+  private readonly addButton = viewChild<ElementRef<HTMLElement>>('addButton');
 
   protected readonly history = new StepsHistory();
   protected readonly run = new MendingRun();
@@ -79,6 +96,10 @@ export class MendingBoard implements OnInit {
   });
   protected readonly refused = computed(() => this.tried.value()?.outlook.refused);
   protected readonly mayMake = computed(() => this.steps().length > 0 && !this.run.underWay() && !this.refused());
+  protected readonly caution = computed(() => {
+    const beginning = this.beginning();
+    return beginning.with === 'other' ? beginning.caution : undefined;
+  });
   protected readonly kept = computed(() => keepingWords(this.keeper.keeping()));
   protected readonly notKept = computed(() => this.keeper.keeping().state === 'failed');
   protected readonly setChanged = computed(() => this.run.problem()?.code === 'record-set-changed');
@@ -104,8 +125,14 @@ export class MendingBoard implements OnInit {
 
   protected add(step: MendStep): void {
     this.change([...this.steps(), step]);
-    this.adding.set(false);
+    this.stopAdding();
     this.announcer.say(`${nameOfStep(step)} was added as step ${this.steps().length}.`);
+  }
+
+  /** The focus goes back to where the form was asked for. */
+  protected stopAdding(): void {
+    this.adding.set(false);
+    afterNextRender({ read: () => this.addButton()?.nativeElement.focus() }, { injector: this.injector });
   }
 
   protected undo(): void {
@@ -150,6 +177,11 @@ export class MendingBoard implements OnInit {
     event.preventDefault();
     if (event.shiftKey) this.redo();
     else this.undo();
+  }
+
+  /** The browser asks before it leaves while the list is not kept yet. */
+  protected onUnload(event: Event): void {
+    if (this.keeper.waits()) event.preventDefault();
   }
 
   private told(done: string): void {

@@ -183,6 +183,16 @@ describe('changing the list', () => {
     expect(room.page.querySelector('.not-kept')).toBeNull();
   });
 
+  it('lets the browser ask before it leaves while a change is not kept', async () => {
+    const leaving = (): boolean => !window.dispatchEvent(new Event('beforeunload', { cancelable: true }));
+    const room = await openTwo();
+    expect(leaving()).toBe(false);
+    await room.press('Remove step 1');
+    expect(leaving()).toBe(true);
+    await stepsKept(room);
+    expect(leaving()).toBe(false);
+  });
+
   it('starts afresh once that is confirmed', async () => {
     const room = await openTwo();
     await room.press('Start afresh');
@@ -219,6 +229,28 @@ describe('steps of another revision', () => {
     expect(room.text).toContain('These are the steps that made revision 3.');
     expect(await stepsKept(room)).toEqual([FEET, RENAME]);
     expect(room.address).toBe('/records/revisions/revision2/mend');
+  });
+
+  it('are said to name rows by number where these may be others here', async () => {
+    const steps: MendStep[] = [{ kind: 'set-missing', column: 'Length overall', rows: [3] }, REPEATED];
+    const from = {
+      ...MENDED,
+      basedOn: { id: 'revision1', number: 1 },
+      mending: { from: 'revision1', steps, changes: [] },
+    };
+    const room = await openFrom(draftOfSteps(), from);
+    expect(room.text).toContain('1 of them names rows by number, counted in revision 1.');
+    expect(room.link('Look at the rows of step 1').getAttribute('href')).toBe(
+      '/records/revisions/revision2?numbers=3#rows',
+    );
+    await stepsKept(room);
+  });
+
+  it('are not cautioned against on the revision that they were made on', async () => {
+    const steps: MendStep[] = [{ kind: 'set-missing', column: 'Length overall', rows: [3] }];
+    const room = await openFrom(draftOfSteps(), { ...MENDED, mending: { from: 'revision2', steps, changes: [] } });
+    expect(room.page.querySelector('.caution')).toBeNull();
+    await stepsKept(room);
   });
 
   it('wait for an answer where there are steps already, and can take their place', async () => {

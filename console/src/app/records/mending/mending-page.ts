@@ -60,7 +60,12 @@ export class MendingPage {
   });
   protected readonly parent = computed(() => {
     const revision = this.opening.value()?.revision;
-    return revision && { label: `Revision ${revision.number}`, link: `/records/revisions/${revision.id}` };
+    return (
+      revision && {
+        label: `${revision.recordSetName}, revision ${revision.number}`,
+        link: `/records/revisions/${revision.id}`,
+      }
+    );
   });
 
   constructor() {
@@ -77,7 +82,7 @@ export class MendingPage {
 
   protected takeOther(): void {
     const begin = this.beginning();
-    if (begin?.with === 'question') this.beginning.set(takenOver(begin.number, begin.other));
+    if (begin?.with === 'question') this.beginning.set(takenOver(begin.other));
   }
 
   private forgetFrom(): void {

@@ -1,4 +1,4 @@
-import { Component, computed, inject, input, output, signal } from '@angular/core';
+import { Component, ElementRef, afterNextRender, computed, inject, input, output, signal } from '@angular/core';
 import type { ColumnKind, MendStep, RecordRevision } from '../../api/contract';
 import { EntryForm } from '../../ui/entry-form';
 import { Field, FieldInput } from '../../ui/field';
@@ -95,6 +95,13 @@ export class StepFields {
   );
   protected readonly kinds = KINDS.map((value) => ({ value, name: KIND_WORDS[value] }));
   protected readonly dateOrders = DATE_ORDERS;
+
+  constructor() {
+    // A new step has the focus on what to do already.
+    const element = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;
+    const first = (): HTMLElement | null => element.querySelector<HTMLElement>('select, input, textarea');
+    afterNextRender({ read: () => this.step() && first()?.focus() });
+  }
 
   protected change(change: Partial<StepDraft>): void {
     this.changes.set({ ...this.draft(), ...change });

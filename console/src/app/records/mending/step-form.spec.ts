@@ -48,6 +48,7 @@ describe('a step being filled in', () => {
     const call = await room.answer(TRIAL, trialOf(RENAME_EFFECT), 'POST');
     expect(call.request.body).toEqual({ steps: [RENAME] });
     expect(words(room)).toEqual([RENAME_EFFECT.told]);
+    expect(wordsOf(document.activeElement as HTMLElement)).toBe('Add a step');
     const kept = await room.answer(`${PATH}/mending-draft`, draftOfSteps(RENAME), 'PUT');
     expect(kept.request.body).toEqual({ steps: [RENAME] });
     room.expectNoCall(TRIAL);

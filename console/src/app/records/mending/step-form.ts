@@ -1,6 +1,7 @@
 import { Component, inject, input, linkedSignal, output } from '@angular/core';
 import type { MendStep, RecordRevision } from '../../api/contract';
 import { Field, FieldInput } from '../../ui/field';
+import { FocusHere } from '../../ui/focus-here';
 import { load } from '../../ui/load';
 import { LoadingState } from '../../ui/loading-state';
 import { ProblemNotice } from '../../ui/problem-notice';
@@ -12,11 +13,11 @@ import { Trials } from './trials';
 /** A new step, or one to change: what to do, then its fields. */
 @Component({
   selector: 'tb-step-form',
-  imports: [Field, FieldInput, LoadingState, ProblemNotice, StepFields],
+  imports: [Field, FieldInput, FocusHere, LoadingState, ProblemNotice, StepFields],
   template: `
     @if (!step()) {
       <tb-field class="what" label="What to do">
-        <select tbInput #chooser (change)="choose(chooser.value)">
+        <select tbInput #chooser tbFocusHere (change)="choose(chooser.value)">
           <option value="" [selected]="kind() === undefined">Choose</option>
           @for (choice of choices; track choice.kind) {
             <option [value]="choice.kind" [selected]="choice.kind === kind()">{{ choice.name }}</option>

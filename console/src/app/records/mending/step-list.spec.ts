@@ -2,6 +2,7 @@ import { CdkDropList } from '@angular/cdk/drag-drop';
 import { TestBed } from '@angular/core/testing';
 import { provideHttpClient } from '@angular/common/http';
 import { By } from '@angular/platform-browser';
+import { provideRouter } from '@angular/router';
 import { FEET, RENAME, REPEATED } from '../testing/mending';
 import { REVISION } from '../testing/refits';
 import { StepList } from './step-list';
@@ -10,7 +11,7 @@ import { Trials } from './trials';
 
 describe('dragging a step', () => {
   async function dropped(previousIndex: number, currentIndex: number): Promise<readonly Steps[]> {
-    TestBed.configureTestingModule({ providers: [provideHttpClient(), Trials] });
+    TestBed.configureTestingModule({ providers: [provideHttpClient(), provideRouter([]), Trials] });
     const fixture = TestBed.createComponent(StepList);
     fixture.componentRef.setInput('revision', REVISION);
     fixture.componentRef.setInput('steps', [FEET, RENAME, REPEATED]);

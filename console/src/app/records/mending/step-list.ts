@@ -10,6 +10,7 @@ import {
   model,
   output,
 } from '@angular/core';
+import { RouterLink } from '@angular/router';
 import type { MendStep, RecordRevision } from '../../api/contract';
 import { Announcer } from '../../ui/announcer';
 import { StepForm } from './step-form';
@@ -21,7 +22,7 @@ import type { Outlook } from './trials';
 /** The steps in order, each with what it does; moved by dragging or by buttons, changed in place, or removed. */
 @Component({
   selector: 'tb-step-list',
-  imports: [CdkDrag, CdkDragHandle, CdkDropList, StepForm],
+  imports: [CdkDrag, CdkDragHandle, CdkDropList, RouterLink, StepForm],
   templateUrl: './step-list.html',
   styleUrl: './step-list.scss',
 })

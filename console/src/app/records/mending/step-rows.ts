@@ -19,6 +19,8 @@ export interface StepRow {
   readonly waits: boolean;
   /** Its row numbers count what earlier steps left. */
   readonly renumbered: boolean;
+  /** The rows that it names, as the rows of the revision are asked for. */
+  readonly numbers?: string;
 }
 
 interface Tried {
@@ -32,6 +34,7 @@ export function rowsOfSteps(steps: Steps, tried: Tried | undefined): readonly St
   const refused = tried?.steps === steps ? tried.outlook.refused : undefined;
   return steps.map((step, index) => {
     const effect = effects.get(step);
+    const renumbered = namesRows(step) && steps.slice(0, index).some(dropsRows);
     return {
       step,
       name: nameOfStep(step),
@@ -40,7 +43,8 @@ export function rowsOfSteps(steps: Steps, tried: Tried | undefined): readonly St
       idle: effect?.rowsConcerned === 0,
       reason: refused?.index === index ? refused.reason : undefined,
       waits: refused !== undefined && index > refused.index,
-      renumbered: namesRows(step) && steps.slice(0, index).some(dropsRows),
+      renumbered,
+      numbers: renumbered ? undefined : numbersOf(step),
     };
   });
 }
@@ -56,6 +60,13 @@ export function dropsRows({ kind }: MendStep): boolean {
 
 export function namesRows(step: MendStep): boolean {
   return 'rows' in step && step.rows !== undefined;
+}
+
+/** Rows that can be asked for at once. */
+const MOST_ROWS = 200;
+
+function numbersOf(step: MendStep): string | undefined {
+  return 'rows' in step ? step.rows?.slice(0, MOST_ROWS).join(',') : undefined;
 }
 
 function effectWords(step: MendStep, { rowsConcerned }: StepEffect): string | undefined {

@@ -1,13 +1,14 @@
-import { Component, computed, input, linkedSignal, output } from '@angular/core';
+import { Component, computed, input, linkedSignal, output, signal } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import type { Finding } from '../../api/contract';
+import { FocusHere } from '../../ui/focus-here';
 import { wordsOfStep } from '../mending/step-words';
 import { FINDING_WORDS, listedOf, rowsAddressOf, rowsHidden, rowsOf } from './finding-words';
 
 /** One finding: what was found, where, and what may be done about it. */
 @Component({
   selector: 'tb-finding-entry',
-  imports: [RouterLink],
+  imports: [FocusHere, RouterLink],
   templateUrl: './finding-entry.html',
   styleUrl: './finding-entry.scss',
 })
@@ -28,6 +29,14 @@ export class FindingEntry {
   protected readonly hidden = computed(() => rowsHidden(this.finding()));
   protected readonly rowsAddress = computed(() => rowsAddressOf(this.finding()));
   protected readonly steps = computed(() => this.finding().steps.map(wordsOfStep));
+
+  /** Whether the words that take the button's place take its focus too. */
+  protected readonly pressed = signal(false);
+
+  protected press(): void {
+    this.pressed.set(true);
+    this.add.emit();
+  }
 
   protected toggle(): void {
     this.all.update((all) => !all);

@@ -89,6 +89,7 @@ describe('a finding’s remedy', () => {
     expect(await kept(room, FEET, REPEATED)).toEqual({ steps: [FEET, REPEATED] });
     expect(wordsOf(section(room))).toContain('2 steps wait in the mending.');
     expect(wordsOf(section(room).querySelector('li') as HTMLElement)).toContain('In the mending.');
+    expect(document.activeElement?.textContent).toBe('In the mending.');
     expect(room.link('the mending').getAttribute('href')).toBe('/records/revisions/revision2/mend');
   });
 
