@@ -38,19 +38,25 @@ export class IncomingFilesStore {
 
   /** Removes those whose time has passed, and answers the names of their files. */
   async removeKeptUntil(time: string): Promise<string[]> {
-    const rows = (await this.database
-      .connection('incomingFiles')
-      .where('keptUntil', '<', time)
-      .delete()
-      .returning('path')) as { readonly path: string }[];
-    return rows.map((row) => row.path);
+    const { connection } = this.database;
+    const past = (await connection('incomingFiles').where('keptUntil', '<', time).select('id', 'path')) as {
+      id: string;
+      path: string;
+    }[];
+    const names: string[] = [];
+    for (const { id, path } of past) {
+      // Asked again: its time may have been put off a moment ago.
+      if ((await connection('incomingFiles').where({ id }).where('keptUntil', '<', time).delete()) > 0)
+        names.push(path);
+    }
+    return names;
   }
 
   /** Names of the files in the folder of uploads that the database knows of: those on their way and the originals. */
   async namedFiles(): Promise<ReadonlySet<string>> {
     const { connection } = this.database;
-    const incoming = (await connection('incomingFiles').pluck('path')) as string[];
-    const originals = (await connection('recordRevisions').distinct().pluck('originalPath')) as string[];
-    return new Set([...incoming, ...originals]);
+    const incoming = (await connection('incomingFiles').select('path as name')) as { name: string }[];
+    const originals = (await connection('recordRevisions').select('originalPath as name')) as { name: string }[];
+    return new Set([...incoming, ...originals].map((file) => file.name));
   }
 }
