@@ -7,6 +7,7 @@ import type { Journal } from '../../journal/journal';
 import type { JournalStore } from '../../journal/journal-store';
 import type { RecordSetRecord, RecordsStore } from '../records-store';
 import type { KeepingStore } from './keeping-store';
+import { requireNotPast } from './retention-date';
 
 type Change = components['schemas']['RecordSetChange'];
 
@@ -41,7 +42,8 @@ export class SetChanges {
     const told = changesOf(set, { name, description, retainUntil });
     if (told.length === 0) return;
     const changedAt = timeText(clock);
-    if (retainUntil !== null && retainUntil !== set.retainUntil) requireNotPast(retainUntil, changedAt.slice(0, 10));
+    if (retainUntil !== null && retainUntil !== set.retainUntil)
+      requireNotPast(retainUntil, changedAt.slice(0, 10), '#/retainUntil');
     await translateUnique(
       () => keeping.changeSet(set.id, { name, description, retainUntil, changedAt }),
       'record_sets.name_key',
@@ -84,17 +86,6 @@ function changesOf(before: Words, after: Words): string[] {
       after.retainUntil === null ? 'its rows are kept for good' : `its rows are kept until ${after.retainUntil}`,
     );
   return told;
-}
-
-function requireNotPast(retainUntil: string, today: string): void {
-  if (retainUntil >= today) return;
-  throw new DeskError(
-    'request-invalid',
-    `Choose today (${today}) or a later day as the last on which the rows are kept.`,
-    {
-      errors: [{ pointer: '#/retainUntil', detail: 'lies in the past' }],
-    },
-  );
 }
 
 const nameTaken = (name: string): DeskError =>
