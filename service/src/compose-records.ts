@@ -13,7 +13,9 @@ import { MendingThread } from './records/mending/mending-thread';
 import { CellStorage } from './records/storing/cell-storage';
 import { BringingIn } from './records/incoming/bringing-in';
 import { IncomingFilesStore } from './records/incoming/incoming-files-store';
+import { IncomingFilesService } from './records/incoming/incoming-files-service';
 import { IncomingSweep } from './records/incoming/incoming-sweep';
+import { ReadingProposals } from './records/incoming/reading-proposals';
 import { KeptFiles } from './records/kept-files';
 import { RecordsService } from './records/records-service';
 import { RecordsStore } from './records/records-store';
@@ -40,6 +42,7 @@ export interface RecordsRoom {
   readonly recordMending: MendingService;
   readonly mendingDrafts: MendingDrafts;
   readonly recordTasks: RecordTasks;
+  readonly incomingFiles: IncomingFilesService;
   readonly incomingSweep: IncomingSweep;
   readonly keptFiles: KeptFiles;
   readonly cellStorage: CellStorage;
@@ -52,7 +55,7 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   const cells = new CellStorage({ databasePath, threadArguments });
   const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
   const importer = new RevisionImporter({
-    ...{ database, records: store, files: keptFiles, cells, clock, log, threadArguments },
+    ...{ database, records: store, files: keptFiles, cells, clock, log, databasePath, threadArguments },
   });
   const bringingIn = new BringingIn({ records: store, importer, journal, clock });
   const records = new RecordsService({
@@ -67,6 +70,10 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   });
   const mendingDrafts = new MendingDrafts({ database, records: store, drafts, clock });
   const incoming = new IncomingFilesStore(database);
+  const proposals = new ReadingProposals({ records: store, threadArguments });
+  const incomingFiles = new IncomingFilesService({
+    ...{ incoming, files: keptFiles, proposals, bringingIn, tasks: recordTasks, clock, maximumFileBytes },
+  });
   return {
     records,
     recordFindings,
@@ -74,6 +81,7 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
     recordMending,
     mendingDrafts,
     recordTasks,
+    incomingFiles,
     incomingSweep: new IncomingSweep({ incoming, files: keptFiles, clock }),
     keptFiles,
     cellStorage: cells,

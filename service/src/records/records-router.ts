@@ -6,12 +6,14 @@ import type { ContractRoutes } from '../http/contract-routes';
 import { goneAway } from '../http/gone-away';
 import { pageOf } from '../http/page';
 import { personOf } from '../people/session-passport';
+import { mountIncoming } from './incoming/incoming-router';
 import { mountLooking } from './looking/looking-router';
 import { mountMending } from './mending/mending-router';
 import { mountTasks } from './tasks/tasks-router';
 
 export function mountRecords(routes: ContractRoutes<operations>, room: RecordsRoom): void {
   const { records } = room;
+  mountIncoming(routes, room);
   mountLooking(routes, room);
   mountMending(routes, room);
   mountTasks(routes, room);

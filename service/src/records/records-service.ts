@@ -34,6 +34,8 @@ export interface FileToImport {
 
 export interface RevisionToImport extends Omit<FileToImport, 'name' | 'description'> {
   readonly recordSetId: string;
+  /** The revision whose rows come first. */
+  readonly appendTo?: string;
 }
 
 interface FileToFinish {
@@ -113,13 +115,15 @@ export class RecordsService {
 
   /** A further revision of a set from a file on this machine, which is copied. */
   async importRevision(given: RevisionToImport): Promise<Schemas['RecordRevision']> {
-    const { path, recordSetId, personId, choices } = given;
+    const { path, recordSetId, appendTo, personId, choices } = given;
     await this.requireSet(recordSetId);
+    if (appendTo !== undefined && (await this.requireRevision(appendTo)).recordSetId !== recordSetId)
+      throw notFound('revision of that record set');
     const file = await this.parts.files.receiveCopy(path);
     const fileName = plainFileName(given.fileName);
-    return this.discardingOnFailure(file, () =>
-      this.addRevision({ kind: 'revision', recordSetId }, { file, fileName, personId, choices }),
-    );
+    const destination: Destination =
+      appendTo === undefined ? { kind: 'revision', recordSetId } : { kind: 'appended', revisionId: appendTo };
+    return this.discardingOnFailure(file, () => this.addRevision(destination, { file, fileName, personId, choices }));
   }
 
   private receive(request: Request): Promise<Upload> {

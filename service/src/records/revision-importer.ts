@@ -1,13 +1,15 @@
 import type { Logger } from 'pino';
 import { timeText, type Clock } from '../clock';
 import type { Database } from '../database/database';
+import { DeskError } from '../errors';
 import { readTableInThread } from './import-thread';
 import type { KeptFiles, ReceivedFile } from './kept-files';
-import type { ReadingChoices } from './reading/reading-choices';
+import type { BaseColumn, ReadingChoices } from './reading/reading-choices';
 import type { TableReading } from './reading/read-table';
-import type { Reading, RecordsStore, RevisionRecord } from './records-store';
+import type { ColumnRecord, Reading, RecordsStore, RevisionRecord } from './records-store';
 import { translateFullDisk } from './storage-full';
 import { storeColumns, type SpilledTable } from './store-columns';
+import { appendInThread } from './storing/append-thread';
 import type { CellStorage } from './storing/cell-storage';
 import type { TaskContext } from './tasks/record-tasks';
 
@@ -44,14 +46,21 @@ export interface ImporterParts {
   readonly cells: CellStorage;
   readonly clock: Clock;
   readonly log: Logger;
+  readonly databasePath: string;
   /** Node's own arguments for the threads; none when compiled. */
   readonly threadArguments: readonly string[];
 }
 
-interface ReadImport {
+interface Spills {
+  /** Of the file's own cells, and of them with those of the base before them. */
+  readonly read: string;
+  readonly whole: string;
+}
+
+interface MadeTable {
   readonly reading: Reading;
-  /** The reading's own, or with the rows of the base before it. */
   readonly table: SpilledTable & { readonly rowCount: number };
+  readonly spillPath: string;
 }
 
 /** Turns a received file into a stored revision, wholly or not at all: when it fails, the file lies where it lay. */
@@ -65,71 +74,70 @@ export class RevisionImporter {
    */
   async bringIn(given: Import, context: TaskContext, around: Around): Promise<void> {
     const { files } = this.parts;
-    const spillPath = files.spillPathOf(given.file);
-    let read: ReadImport | null = null;
+    const spills = { read: files.spillPathOf(given.file), whole: files.newSpillPath() };
+    let made: MadeTable | null = null;
     try {
-      read = await this.read(given, spillPath, context);
-      await this.keepWithCells(given, { ...read, spillPath }, context, around);
+      made = await this.make(given, spills, context);
+      await this.keepWithCells(given, made, context, around);
     } catch (error) {
-      await this.undo(given.file, { revisionId: context.revisionId, spillPath, wasRead: read !== null });
+      // The spill files go first: on a full disk, cells can only be cleared in the room that they leave.
+      await files.remove(spills.read, spills.whole);
+      await this.undo(given.file, context.revisionId, made !== null);
       throw translateFullDisk(error);
     }
-    await files.remove(spillPath);
-    if (read.reading.setAside.length > 0) await files.remove(given.file.path);
+    await files.remove(spills.read, spills.whole);
+    if (made.reading.setAside.length > 0) await files.remove(given.file.path);
   }
 
-  private async keepWithCells(
-    given: Import,
-    read: ReadImport & { readonly spillPath: string },
-    context: TaskContext,
-    around: Around,
-  ): Promise<void> {
+  private async keepWithCells(given: Import, made: MadeTable, context: TaskContext, around: Around): Promise<void> {
     const { revisionId, signal, progress } = context;
-    await this.parts.cells.storeAhead(revisionId, read.table, read.spillPath, { signal, onProgress: progress });
+    await this.parts.cells.storeAhead(revisionId, made.table, made.spillPath, { signal, onProgress: progress });
     signal.throwIfAborted();
-    await this.keep(given, read, context, around);
+    await this.keep(given, made, context, around);
   }
 
-  /**
-   * The unit of work was undone, so the name that the file was given is undone too. The spill file goes first: on a
-   * full disk, cells can only be cleared in the room that it leaves. What cannot be cleared is swept later.
-   */
-  private async undo(
-    file: ReceivedFile,
-    { revisionId, spillPath, wasRead }: { revisionId: string; spillPath: string; wasRead: boolean },
-  ): Promise<void> {
+  /** The unit of work was undone, so the name that the file was given is undone too. What cannot be cleared is swept. */
+  private async undo(file: ReceivedFile, revisionId: string, mayHaveCells: boolean): Promise<void> {
     const { files, cells, log } = this.parts;
-    await files.remove(spillPath);
     await files.takeBack(file, revisionId);
-    if (!wasRead) return;
+    if (!mayHaveCells) return;
     await cells
       .clear(revisionId)
       .catch((error: unknown) => log.error({ err: error, revisionId }, 'cells could not be cleared'));
   }
 
-  private async read(given: Import, spillPath: string, { signal, progress }: TaskContext): Promise<ReadImport> {
-    const { threadArguments } = this.parts;
-    const { file, choices } = given;
+  private async make({ file, choices, base }: Import, spills: Spills, context: TaskContext): Promise<MadeTable> {
+    const { signal, progress } = context;
+    const watch = { nodeArguments: this.parts.threadArguments, signal, onProgress: progress };
     progress({ stage: 'reading', done: 0, total: file.byteCount });
-    const task = { path: file.path, spillPath, choices };
-    const table = await readTableInThread(task, { nodeArguments: threadArguments, signal, onProgress: progress });
-    return { table, reading: readingOf(table) };
+    const task = { path: file.path, spillPath: spills.read, choices };
+    if (!base) {
+      const table = await readTableInThread(task, watch);
+      return { table, reading: readingOf(table), spillPath: spills.read };
+    }
+    const columns = await this.parts.records.columnsOf(base.id);
+    const added = await readTableInThread({ ...task, base: columns.map(toBaseColumn) }, watch);
+    requireSameColumns(columns, added, base);
+    const { databasePath } = this.parts;
+    const places = { addedSpillPath: spills.read, spillPath: spills.whole };
+    const table = await appendInThread({ databasePath, baseRevisionId: base.id, added, ...places }, watch);
+    return { table, reading: readingOf(added), spillPath: spills.whole };
   }
 
-  private async keep(given: Import, read: ReadImport, context: TaskContext, around: Around): Promise<void> {
+  private async keep(given: Import, made: MadeTable, context: TaskContext, around: Around): Promise<void> {
     const { database, files } = this.parts;
     const { revisionId, signal } = context;
     await database.unitOfWork(async () => {
-      await around((place) => this.store(revisionId, place, read, given));
+      await around((place) => this.store(revisionId, place, made, given));
       signal.throwIfAborted();
-      if (read.reading.setAside.length === 0) await files.keep(given.file, revisionId);
+      if (made.reading.setAside.length === 0) await files.keep(given.file, revisionId);
     });
   }
 
-  private async store(id: string, place: RevisionPlace, read: ReadImport, given: Import): Promise<StoredRevision> {
+  private async store(id: string, place: RevisionPlace, made: MadeTable, given: Import): Promise<StoredRevision> {
     const { records, clock } = this.parts;
     const { file, fileName, base, personId } = given;
-    const { table, reading } = read;
+    const { table, reading } = made;
     const appendedRowCount = base && table.rowCount - base.rowCount;
     const { sha256, byteCount } = file;
     await records.insertRevision({
@@ -153,3 +161,18 @@ const readingOf = ({ format, decimal, sheet, missingMarks, setAside, unreadable 
   ...{ encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
   ...{ sheet, headerLine: format.headerLine, missingMarks, setAside, unreadable },
 });
+
+const toBaseColumn = ({ name, kind, unit }: ColumnRecord): BaseColumn => ({ name, kind, unit });
+
+/** Columns that only the file has were set aside by then. */
+function requireSameColumns(wanted: readonly ColumnRecord[], { columns }: TableReading, base: RevisionRecord): void {
+  const present = new Set(columns.map((column) => column.name));
+  const lacking = wanted.map((column) => column.name).filter((name) => !present.has(name));
+  if (lacking.length === 0) return;
+  const listed = lacking.slice(0, 20).map((name) => `“${name}”`);
+  const more = lacking.length > 20 ? ` and ${lacking.length - 20} more` : '';
+  throw new DeskError(
+    'columns-differ',
+    `The file lacks ${lacking.length === 1 ? 'the column' : 'columns'} ${listed.join(', ')}${more} of revision ${base.number} of ${base.recordSetName}. Add what is missing, name the columns as the revision does, or bring the file in by itself.`,
+  );
+}

@@ -4,16 +4,19 @@ import { translateUnique } from '../../database/constraint-errors';
 import { newId } from '../../database/new-id';
 import { DeskError, notFound } from '../../errors';
 import type { Journal } from '../../journal/journal';
+import { requireNotPast } from '../keeping/retention-date';
 import { requireExpectedNewest } from '../newest-guard';
 import type { RecordsStore, RevisionRecord } from '../records-store';
+import { requireRows } from '../required-rows';
 import type { Import, RevisionImporter, StoredRevision } from '../revision-importer';
 import type { TaskContext, TaskWork } from '../tasks/record-tasks';
 import { nameTaken } from './record-set-words';
 
-/** As what a file is brought in: a new set, or a set's next revision. */
-export type Destination = Exclude<components['schemas']['BringInRequest']['as'], { kind: 'appended' }>;
+/** As what a file is brought in: a new set, a set's next revision, or more rows below those of a revision. */
+export type Destination = components['schemas']['BringInRequest']['as'];
 type NewSet = Extract<Destination, { kind: 'record-set' }>;
 type Revision = Extract<Destination, { kind: 'revision' }>;
+type Appended = Extract<Destination, { kind: 'appended' }>;
 
 export interface FileToBringIn extends Omit<Import, 'base'> {
   /** Done within the unit of work that makes the revision, so that either both are or none. */
@@ -44,13 +47,14 @@ export class BringingIn {
   }
 
   private runOf(given: FileToBringIn, destination: Destination): Promise<TaskWork['run']> {
-    return destination.kind === 'record-set' ? this.newSet(given, destination) : this.nextRevision(given, destination);
+    if (destination.kind === 'record-set') return this.newSet(given, destination);
+    return destination.kind === 'revision' ? this.nextRevision(given, destination) : this.appended(given, destination);
   }
 
   private async newSet(given: FileToBringIn, { name: asSent, description = '', retainUntil = null }: NewSet) {
     const { records, clock } = this.parts;
     const name = asSent.trim();
-    if (retainUntil !== null) requireNotPast(retainUntil, timeText(clock).slice(0, 10));
+    if (retainUntil !== null) requireNotPast(retainUntil, timeText(clock).slice(0, 10), '#/as/retainUntil');
     if (await records.nameIsTaken(name)) throw nameTaken(name, '#/as/name');
     return async (context: TaskContext) => {
       const id = newId();
@@ -84,11 +88,40 @@ export class BringingIn {
     };
   }
 
+  private async appended(given: FileToBringIn, { revisionId, expectedNewest }: Appended) {
+    const { recordSetId } = await this.requireBase(revisionId);
+    await this.requireOpenSet(recordSetId, expectedNewest);
+    return async (context: TaskContext) => {
+      const base = await this.requireBase(revisionId);
+      const appending = this.parts.importer.bringIn({ ...given, base }, context, async (store) => {
+        await this.requireBase(revisionId);
+        const newest = await this.requireOpenSet(recordSetId, expectedNewest);
+        const number = newest.number + 1;
+        const stored = await store({ recordSetId, number });
+        const summary = `Revision ${number} of ${base.recordSetName} is revision ${base.number} with ${given.fileName} appended: ${rowsOf(stored)}`;
+        await this.finish(given, { action: 'record-revision-appended', recordSetId, summary });
+      });
+      await appending.catch(async (error: unknown) => {
+        // A thread that lost the base's rows on the way fails in its own words; whoever asked is told what became of them.
+        if (!(error instanceof DeskError)) await this.requireBase(revisionId);
+        throw error;
+      });
+      return { recordSetId };
+    };
+  }
+
   private async finish(given: FileToBringIn, { action, recordSetId, summary }: Note): Promise<void> {
     await this.parts.records.markSetChanged(recordSetId, timeText(this.parts.clock));
     await given.alongside?.();
     const subject = { subjectKind: 'record-set', subjectId: recordSetId };
     await this.parts.journal.write({ actorId: given.personId, action, ...subject, summary });
+  }
+
+  private async requireBase(id: string): Promise<RevisionRecord> {
+    const base = await this.parts.records.findRevision(id);
+    if (!base) throw notFound('revision');
+    requireRows(base);
+    return base;
   }
 
   /** The set's newest revision. A set whose last day has passed takes no more rows: they would be erased at once. */
@@ -110,13 +143,4 @@ function rowsOf({ rowCount, appendedRowCount, setAsideCount }: StoredRevision): 
   if (setAsideCount === 0) return rows;
   const columns = setAsideCount === 1 ? '1 column was' : `${setAsideCount} columns were`;
   return `${rows}; ${columns} set aside, so the file itself was not kept`;
-}
-
-function requireNotPast(retainUntil: string, today: string): void {
-  if (retainUntil >= today) return;
-  throw new DeskError(
-    'request-invalid',
-    `Choose today (${today}) or a later day as the last on which the rows are kept.`,
-    { errors: [{ pointer: '#/as/retainUntil', detail: 'lies in the past' }] },
-  );
 }
