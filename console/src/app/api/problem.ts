@@ -81,7 +81,7 @@ function secondsOf(header: string | null): number | undefined {
 }
 
 /** JSON Pointer as a URI fragment (RFC 6901, section 6) to a plain path: `#/cautions/0` to `cautions/0`. */
-function fieldOf(pointer: string): string {
+export function fieldOf(pointer: string): string {
   return decodeURIComponent(pointer)
     .replace(/^#?\/?/, '')
     .replaceAll('~1', '/')

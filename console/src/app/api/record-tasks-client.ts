@@ -2,7 +2,7 @@ import { HttpClient } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
 import { Observable, exhaustMap, retry, takeWhile, throwError, timer } from 'rxjs';
 import type { RecordTask } from './contract';
-import { problemOf } from './problem';
+import { Problem, fieldOf, problemOf } from './problem';
 
 export type RecordTaskState = RecordTask['state'];
 export type RecordTaskProgress = RecordTask['progress'];
@@ -16,6 +16,14 @@ const MOST_SILENCES = 15;
 /** Whether a task will not change any more. */
 export function taskEnded(state: RecordTaskState): boolean {
   return ENDED.includes(state);
+}
+
+/** Why the work failed, under a title of the screen's own; the status is that of no call. */
+export function taskProblem({ problem }: RecordTask, title: string): Problem {
+  if (!problem) return { code: 'internal', status: 0, title, detail: 'Nothing was kept. Try again.', errors: [] };
+  const { code, detail, line, errors = [] } = problem;
+  const fields = errors.map((error) => ({ detail: error.detail, field: fieldOf(error.pointer) }));
+  return { code, status: 0, title, detail, line, errors: fields };
 }
 
 @Injectable({ providedIn: 'root' })

@@ -10,6 +10,12 @@ export const recordsRoutes: Routes = [
     loadComponent: () => import('./bring-in/bring-in-page').then((m) => m.BringInPage),
   },
   {
+    path: 'bring-in/:incomingId',
+    title: 'How the file would be read',
+    canActivate: [withRole('analyst')],
+    loadComponent: () => import('./bring-in/proposal-page').then((m) => m.ProposalPage),
+  },
+  {
     path: 'revisions/:id/mend',
     title: 'Mending',
     canActivate: [withRole('analyst')],

@@ -1,8 +1,8 @@
 import { HttpEventType } from '@angular/common/http';
 import { RecordsScreen } from '../testing/records-screen';
-import { RECORD_SET, REVISION } from '../testing/refits';
+import { INCOMING } from './testing/incoming';
 
-const PATH = '/api/record-sets';
+const PATH = '/api/incoming-files';
 const FILE = new File(['length;hours\n12,2;300\n'], 'refits_nine-yards.csv');
 
 describe('BringInPage', () => {
@@ -14,40 +14,42 @@ describe('BringInPage', () => {
 
   afterEach(() => screen.http.verify());
 
-  it('takes a dropped file, suggests a name from it, and shows the revision that came of it', async () => {
+  it('sends a dropped file and goes on to how it would be read', async () => {
     await screen.drop(FILE);
-    expect(screen.control('Name').value).toBe('refits nine yards');
+    expect(screen.text).toContain('refits_nine-yards.csv');
     await screen.submit();
     const call = screen.call(PATH);
-    expect((call.request.body as FormData).get('name')).toBe('refits nine yards');
-    call.flush(RECORD_SET);
+    expect((call.request.body as FormData).get('file')).toBe(FILE);
+    call.flush(INCOMING);
     await screen.stable();
-    expect(screen.address).toBe(`/records/revisions/${REVISION.id}`);
-    screen.call(`/api/record-revisions/${REVISION.id}`);
+    expect(screen.address).toBe('/records/bring-in/incoming1');
+    screen.call(`${PATH}/incoming1`);
   });
 
-  it('keeps the name that was typed when another file is chosen', async () => {
-    await screen.type('Name', 'Refits');
-    await screen.drop(FILE);
-    expect(screen.control('Name').value).toBe('Refits');
-  });
-
-  it('asks for the file and the name before it sends anything', async () => {
+  it('asks for the file before it sends anything', async () => {
     await screen.submit();
     expect(screen.text).toContain('Choose the file that holds the records');
-    expect(screen.text).toContain('Enter a name for the record set');
+    expect(document.activeElement?.getAttribute('type')).toBe('file');
   });
 
   it.each([
     [new File([], 'empty.csv'), 'This file is empty'],
-    [new File(['PK'], 'refits.xlsx'), 'save it as CSV'],
+    [new File(['x'], 'refits.xls'), 'save it as .xlsx or as CSV'],
+    [new File(['x'], 'refits.ods'), 'save it as .xlsx or as CSV'],
+    [new File(['x'], 'refits.numbers'), 'save it as .xlsx or as CSV'],
   ])('says at once what is wrong with a file that cannot work', async (file, complaint) => {
     await screen.drop(file);
     await screen.submit();
     expect(screen.text).toContain(complaint);
   });
 
-  it('counts the bytes that are away, then says that the rows are being read', async () => {
+  it.each(['refits.xlsx', 'refits.csv.gz', 'refits'])('sends %s', async (name) => {
+    await screen.drop(new File(['x'], name));
+    await screen.submit();
+    screen.call(PATH);
+  });
+
+  it('counts the bytes that are away, then says that the desk is looking at the file', async () => {
     await screen.drop(FILE);
     await screen.submit();
     const call = screen.call(PATH);
@@ -56,40 +58,25 @@ describe('BringInPage', () => {
     expect(screen.text).toContain('500 kB of 2 MB, 25%');
     call.event({ type: HttpEventType.UploadProgress, loaded: 2_000_000, total: 2_000_000 });
     await screen.stable();
-    expect(screen.page.querySelector('[role="status"]')?.textContent).toContain('reading the rows');
+    expect(screen.page.querySelector('[role="status"]')?.textContent).toContain('looking at the first rows');
   });
 
-  it('stops when the person cancels, and keeps what was entered', async () => {
+  it('stops when the person cancels, and keeps the file at hand', async () => {
     await screen.drop(FILE);
     await screen.submit();
     const call = screen.call(PATH);
     await screen.press('Cancel the upload');
     expect(call.cancelled).toBe(true);
     expect(screen.text).toContain('refits_nine-yards.csv');
-    expect(screen.control('Name').value).toBe('refits nine yards');
   });
 
-  it('names the line of the file and what to do about it', async () => {
+  it('says what the service found wrong with the file and what to do about it', async () => {
     await screen.drop(FILE);
     await screen.submit();
-    await screen.refuse(PATH, 422, {
-      code: 'file-ragged',
-      detail: 'Put values that hold a comma into quotes.',
-      line: 48,
-    });
+    const detail = 'Save the workbook without its password, then send it again.';
+    await screen.refuse(PATH, 422, { code: 'file-protected', title: 'The file is protected by a password', detail });
     const notice = screen.page.querySelector('[role="alert"]')?.textContent;
-    expect(notice).toContain('Line 48 of the file');
-    expect(notice).toContain('Put values that hold a comma into quotes.');
-  });
-
-  it('puts the complaint about a taken name beside the name', async () => {
-    await screen.drop(FILE);
-    await screen.submit();
-    const errors = [{ detail: 'Another record set has this name', pointer: '#/name' }];
-    await screen.refuse(PATH, 409, { code: 'name-taken', detail: 'Choose another name.', errors });
-    const control = screen.control('Name');
-    expect(screen.page.querySelector(`#${control.id}-error`)?.textContent).toContain(
-      'Another record set has this name',
-    );
+    expect(notice).toContain('The file is protected by a password');
+    expect(notice).toContain(detail);
   });
 });

@@ -1,6 +1,21 @@
 import { Component, input, model, signal } from '@angular/core';
 import { BytesPipe } from '../../ui/figure-pipes';
 
+const ACCEPTED = [
+  ...[
+    '.csv',
+    '.tsv',
+    '.txt',
+    '.gz',
+    '.xlsx',
+    'text/csv',
+    'text/tab-separated-values',
+    'text/plain',
+    'application/gzip',
+  ],
+  'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
+].join(',');
+
 let chooserCount = 0;
 
 /** Takes one file, by the browser's own dialogue or dropped here. */
@@ -16,6 +31,7 @@ export class FileChooser {
   readonly file = model<File>();
 
   protected readonly id = `tb-file-chooser-${++chooserCount}`;
+  protected readonly accepted = ACCEPTED;
   protected readonly hovering = signal(false);
 
   protected take(files: FileList | null | undefined): void {

@@ -15,10 +15,12 @@ export class UploadProgress {
 
   protected readonly words = computed(() => {
     const { sent, total } = this.progress();
-    if (this.beingRead()) return 'All of it has arrived. The desk is reading the rows.';
+    if (this.beingRead()) return 'All of it has arrived. The desk is looking at the first rows.';
     if (total === 0) return 'Starting';
     return `${formatBytes(sent)} of ${formatBytes(total)}, ${formatShare(sent / total)}`;
   });
   /** Said once a stage, not once a packet. */
-  protected readonly stage = computed(() => (this.beingRead() ? 'The desk is reading the rows' : 'Sending the file'));
+  protected readonly stage = computed(() =>
+    this.beingRead() ? 'The desk is looking at the first rows' : 'Sending the file',
+  );
 }
