@@ -1,8 +1,10 @@
 import { codesToCells, numbersToCells, textsToCells } from '../cell-blocks';
 import type { CellReaders, ColumnEvidence } from './column-evidence';
+import { DateForm } from './date-cell';
 import { maximumCellLength, maximumLevels } from './limits';
-import type { MissingMarks } from './missing-marks';
+import { usualMarks, type MissingMarks } from './missing-marks';
 import { NumberClass, type DecimalMark } from './number-cell';
+import { plainDays } from './plain-date';
 import { TableProblem } from './table-problem';
 
 /** Rows of text as the parser gives them. */
@@ -66,6 +68,8 @@ export class DateStore implements CellStore {
   unreadableCount = 0;
   private readonly block: Float64Array;
   private readonly known = new Map<string, number>();
+  /** Whether a plainly written date can mean nothing else here: no mark that was told may look like one. */
+  private readonly plain: boolean;
 
   constructor(
     private readonly forms: number,
@@ -74,15 +78,24 @@ export class DateStore implements CellStore {
     blockRows: number,
   ) {
     this.block = new Float64Array(blockRows).fill(NaN);
+    this.plain = forms === DateForm.iso && evidence.plan.marks === usualMarks;
   }
 
   add(rows: TextRows, { position, start }: BatchPlace): void {
+    let someArePlain = false;
     for (let row = 0; row < rows.length; row++) {
       const text = rows[row][position];
+      const plain = this.plain ? plainDays(text) : NaN;
+      if (plain === plain) {
+        someArePlain = true;
+        this.block[start + row] = plain;
+        continue;
+      }
       const days = this.known.get(text) ?? this.readNew(text);
       if (days === Infinity) this.unreadableCount++;
       this.block[start + row] = days === Infinity ? NaN : days;
     }
+    if (someArePlain) this.evidence.addDate(DateForm.iso);
   }
 
   takeBlock(rowCount: number): Uint8Array {
