@@ -90,14 +90,19 @@ export async function readPacked(path: string, entry: ZipEntry): Promise<Buffer>
 /** More came out of an entry than may. */
 export class ZipTooLarge extends Error {}
 
+function inflated(packed: Buffer): AsyncIterable<Buffer> {
+  const inflating = createInflateRaw({ chunkSize: pieceBytes });
+  inflating.end(packed);
+  return inflating;
+}
+
 /** Unpacks an entry piece by piece; what it says of its size is not trusted. */
 export async function* unpacked(packed: Buffer, { method }: ZipEntry, mostBytes: number): AsyncGenerator<Buffer> {
   if (method !== zipMethod.stored && method !== zipMethod.deflated) throw new ZipDamaged();
-  const inflating = createInflateRaw({ chunkSize: pieceBytes });
-  inflating.end(packed);
+  const pieces = method === zipMethod.stored ? [packed] : inflated(packed);
   let length = 0;
   try {
-    for await (const piece of method === zipMethod.stored ? [packed] : (inflating as AsyncIterable<Buffer>)) {
+    for await (const piece of pieces) {
       length += piece.length;
       if (length > mostBytes) throw new ZipTooLarge();
       yield piece;
