@@ -1,15 +1,8 @@
 import { HttpClient } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
 import { Observable } from 'rxjs';
-import type { RecordFindings, RecordRevision, RecordRows, RecordSet, RecordSetDetail, RecordSetList } from './contract';
+import type { RecordFindings, RecordRevision, RecordRows, RecordSetDetail, RecordSetList } from './contract';
 import { Page, queryOf } from './page';
-import { Upload, upload } from './upload';
-
-export interface RecordSetNew {
-  readonly name: string;
-  readonly description: string;
-  readonly file: File;
-}
 
 @Injectable({ providedIn: 'root' })
 export class RecordsClient {
@@ -35,22 +28,6 @@ export class RecordsClient {
   readFindings(revisionId: string, target?: string): Observable<RecordFindings> {
     const params = queryOf({ target });
     return this.http.get<RecordFindings>(`/api/record-revisions/${revisionId}/findings`, { params });
-  }
-
-  /** Unsubscribe to cancel. The service reads the fields before the file, so they go first. */
-  bringIn(recordSet: RecordSetNew): Observable<Upload<RecordSet>> {
-    const form = new FormData();
-    form.append('name', recordSet.name);
-    if (recordSet.description !== '') form.append('description', recordSet.description);
-    form.append('file', recordSet.file);
-    return upload<RecordSet>(this.http, '/api/record-sets', form);
-  }
-
-  /** Unsubscribe to cancel. */
-  bringInRevision(recordSetId: string, file: File): Observable<Upload<RecordRevision>> {
-    const form = new FormData();
-    form.append('file', file);
-    return upload<RecordRevision>(this.http, `/api/record-sets/${recordSetId}/revisions`, form);
   }
 
   /** Where the browser can fetch the uploaded file, byte for byte. */
