@@ -11,7 +11,7 @@ const largestShare = 0.1;
  * Equal rows are told when chance would bring about no more than this share of them; nearly equal ones when still
  * less, since columns that go together agree more often than the reckoning says (both limits ours).
  */
-const largestChance = { whole: 0.1, nearly: 0.01 };
+const largestChance = { whole: 0.5, nearly: 0.01 };
 
 /** Rows that repeat an earlier one in every column; positions counted from 0. */
 export const repeatedRows = (table: RecordTable): number[] => new RowHashes(table).repeats(table.columns);
