@@ -18,7 +18,6 @@ export const ACTIONS: readonly string[] = [
   'record-set-changed',
   'record-revision-added',
   'record-revision-appended',
-  'record-revision-appended',
   'record-revision-mended',
   'record-revision-deleted',
   'records-erased',
