@@ -1,4 +1,5 @@
 import type { BaseColumn, ReadingChoices, ReadingProgress } from './reading/reading-choices';
+import type { AheadOfReading } from './storing/storing-companion';
 import type { TableProblemCode } from './reading/table-problem';
 
 /** What the thread that finds out how a file would be read is told. */
@@ -12,6 +13,8 @@ export interface ProposalTask {
 /** What the reading thread is told. */
 export interface ImportTask extends ProposalTask {
   readonly spillPath: string;
+  /** Where cells may be stored while the file is still being read; without it none are. */
+  readonly ahead?: AheadOfReading;
 }
 
 /** What a thread that reads a file says; all but progress is its last word. */

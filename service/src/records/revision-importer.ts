@@ -68,21 +68,21 @@ export class RevisionImporter {
   constructor(private readonly parts: ImporterParts) {}
 
   /**
-   * Reads the file in a thread and stores its cells ahead in another, then stores revision and columns in one unit
+   * Reads the file in a thread while another stores its cells ahead, then stores revision and columns in one unit
    * of work together with what `around` adds; it gets a function that stores them. Cancelling counts until the unit
    * of work is through. The file gets its lasting name, unless columns of it were set aside: then it is deleted.
    */
   async bringIn(given: Import, context: TaskContext, around: Around): Promise<void> {
     const { files } = this.parts;
     const spills = { read: files.spillPathOf(given.file), whole: files.newSpillPath() };
-    let made: MadeTable | null = null;
+    let made: MadeTable;
     try {
       made = await this.make(given, spills, context);
       await this.keepWithCells(given, made, context, around);
     } catch (error) {
       // The spill files go first: on a full disk, cells can only be cleared in the room that they leave.
       await files.remove(spills.read, spills.whole);
-      await this.undo(given.file, context.revisionId, made !== null);
+      await this.undo(given.file, context.revisionId);
       throw translateFullDisk(error);
     }
     await files.remove(spills.read, spills.whole);
@@ -97,28 +97,27 @@ export class RevisionImporter {
   }
 
   /** The unit of work was undone, so the name that the file was given is undone too. What cannot be cleared is swept. */
-  private async undo(file: ReceivedFile, revisionId: string, mayHaveCells: boolean): Promise<void> {
+  private async undo(file: ReceivedFile, revisionId: string): Promise<void> {
     const { files, cells, log } = this.parts;
     await files.takeBack(file, revisionId);
-    if (!mayHaveCells) return;
     await cells
       .clear(revisionId)
       .catch((error: unknown) => log.error({ err: error, revisionId }, 'cells could not be cleared'));
   }
 
   private async make({ file, choices, base }: Import, spills: Spills, context: TaskContext): Promise<MadeTable> {
-    const { signal, progress } = context;
+    const { revisionId, signal, progress } = context;
+    const { databasePath } = this.parts;
     const watch = { nodeArguments: this.parts.threadArguments, signal, onProgress: progress };
     progress({ stage: 'reading', done: 0, total: file.byteCount });
     const task = { path: file.path, spillPath: spills.read, choices };
     if (!base) {
-      const table = await readTableInThread(task, watch);
+      const table = await readTableInThread({ ...task, ahead: { databasePath, revisionId } }, watch);
       return { table, reading: readingOf(table), spillPath: spills.read };
     }
     const columns = await this.parts.records.columnsOf(base.id);
     const added = await readTableInThread({ ...task, base: columns.map(toBaseColumn) }, watch);
     requireSameColumns(columns, added, base);
-    const { databasePath } = this.parts;
     const places = { addedSpillPath: spills.read, spillPath: spills.whole };
     const table = await appendInThread({ databasePath, baseRevisionId: base.id, added, ...places }, watch);
     return { table, reading: readingOf(added), spillPath: spills.whole };

@@ -1,10 +1,20 @@
 import type { FinishedColumn } from './reading/finished-column';
 import type { RecordsStore } from './records-store';
 
+/** Cells that were stored out of the spill file while it was still being written. */
+export interface StoredBlock {
+  readonly position: number;
+  readonly block: number;
+  /** In the spill file. */
+  readonly offset: number;
+}
+
 export interface SpilledTable {
   readonly columns: readonly FinishedColumn[];
   /** Rows of each block, the same for every column. */
   readonly blockRowCounts: readonly number[];
+  /** What is stored already, whether or not it is what the table holds in the end. */
+  readonly stored?: readonly StoredBlock[];
 }
 
 /**

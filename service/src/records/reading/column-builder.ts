@@ -110,8 +110,14 @@ export class ColumnBuilder {
 
   endBlock(rowCount: number): void {
     const layout = this.layout;
-    const place = this.store ? this.options.spill.append(this.store.takeBlock(rowCount)) : nowhere;
+    const place = this.store ? this.spillBlock(this.store.takeBlock(rowCount), layout, rowCount) : nowhere;
     this.blocks.push({ layout, place, rowCount });
+  }
+
+  private spillBlock(cells: Uint8Array, layout: BlockLayout, rowCount: number): SpilledCells {
+    const { spill, position } = this.options;
+    if (layout !== 'numbers') return spill.append(cells);
+    return spill.appendBlock(cells, { position, block: this.blocks.length, rowCount });
   }
 
   private get layout(): BlockLayout {

@@ -6,13 +6,24 @@ export interface SpilledCells {
   readonly length: number;
 }
 
+/** A block of numbers that has been written, under its column's position in the file. */
+export interface SpilledBlock extends SpilledCells {
+  readonly position: number;
+  readonly block: number;
+  readonly rowCount: number;
+}
+
 /** Cells wait here between being read and being stored, so that memory does not grow with the table. */
 export class SpillFile {
   private readonly descriptor: number;
   private end = 0;
 
-  /** `wx+` makes the file and refuses one that is there. */
-  constructor(path: string, flags: 'wx+' | 'r') {
+  /** `wx+` makes the file and refuses one that is there. `onBlock` is told of what `appendBlock` wrote. */
+  constructor(
+    path: string,
+    flags: 'wx+' | 'r',
+    private readonly onBlock?: (block: SpilledBlock) => void,
+  ) {
     this.descriptor = openSync(path, flags);
   }
 
@@ -21,6 +32,13 @@ export class SpillFile {
     for (let at = 0; at < cells.byteLength;)
       at += writeSync(this.descriptor, cells, at, cells.byteLength - at, this.end + at);
     this.end += cells.byteLength;
+    return place;
+  }
+
+  /** As `append`, for cells in the form in which they are stored unless the column's kind turns out to be another. */
+  appendBlock(cells: Uint8Array, key: Omit<SpilledBlock, keyof SpilledCells>): SpilledCells {
+    const place = this.append(cells);
+    this.onBlock?.({ ...key, ...place });
     return place;
   }
 

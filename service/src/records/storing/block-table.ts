@@ -1,5 +1,6 @@
 import type BetterSqlite3 from 'better-sqlite3';
-import type { SpillFile } from '../reading/spill-file';
+import type { SpilledBlock, SpillFile } from '../reading/spill-file';
+import type { StoredBlock } from '../store-columns';
 import type { BlockPlaces } from './storage-task';
 
 /**
@@ -7,7 +8,7 @@ import type { BlockPlaces } from './storage-task';
  * event loop, so a transaction must end within milliseconds; and it must stay under the thousand pages of WAL at
  * which the main thread's own connection would begin to copy them into the database.
  */
-const transactionBytes = 2 * 1024 * 1024;
+export const transactionBytes = 2 * 1024 * 1024;
 
 /** Blocks that one transaction removes. */
 const removedAtOnce = 8;
@@ -16,13 +17,6 @@ export interface StoringWatch {
   /** Asked between transactions; true ends the work there. */
   stopped(): boolean;
   stored(done: number, total: number): void;
-}
-
-interface PlacedBlock {
-  readonly position: number;
-  readonly block: number;
-  readonly offset: number;
-  readonly length: number;
 }
 
 /**
@@ -34,25 +28,34 @@ export class BlockTable {
 
   constructor(private readonly connection: BetterSqlite3.Database) {}
 
-  /** False when it was stopped before the end. */
+  /** Stores what is not stored yet. False when it was stopped before the end. */
   store(revisionId: string, table: BlockPlaces, spill: SpillFile, watch: StoringWatch): boolean {
-    const insert = this.connection.prepare(
-      'INSERT INTO record_blocks (revision_id, position, block, row_count, cells) VALUES (?, ?, ?, ?, ?)',
-    );
     const placed = placedBlocks(table);
-    for (let at = 0; at < placed.length;) {
+    const stored = new Map(table.stored?.map((one) => [keyOf(one), one]));
+    const left = placed.filter((one) => stored.get(keyOf(one))?.offset !== one.offset);
+    this.removeStrangers(revisionId, placed, table.stored ?? []);
+    const before = placed.length - left.length;
+    for (let at = 0; at < left.length;) {
       if (watch.stopped()) return false;
-      const end = endOfBatch(placed, at);
-      this.inShortTransaction(() => {
-        for (const one of placed.slice(at, end)) {
-          const { position, block } = one;
-          insert.run(revisionId, position, block, table.blockRowCounts[block], this.cellsAt(one, spill));
-        }
-      });
+      const end = endOfBatch(left, at);
+      this.put(revisionId, left.slice(at, end), spill);
       at = end;
-      watch.stored(at, placed.length);
+      watch.stored(before + at, placed.length);
     }
     return true;
+  }
+
+  /** Stores blocks in one transaction, in place of what was stored under the same number. */
+  put(revisionId: string, blocks: readonly SpilledBlock[], spill: SpillFile): void {
+    const insert = this.connection.prepare(
+      'INSERT OR REPLACE INTO record_blocks (revision_id, position, block, row_count, cells) VALUES (?, ?, ?, ?, ?)',
+    );
+    this.inShortTransaction(() => {
+      for (const one of blocks) {
+        const { position, block, rowCount } = one;
+        insert.run(revisionId, position, block, rowCount, this.cellsAt(one, spill));
+      }
+    });
   }
 
   /** Also empties the WAL, where the cells stand once more. */
@@ -79,6 +82,21 @@ export class BlockTable {
       this.removeWhile(revisionId, 'AND revision_id NOT IN (SELECT id FROM record_revisions)');
   }
 
+  /** Blocks of columns that were set aside or turned out to be others were stored under numbers that no column has. */
+  private removeStrangers(revisionId: string, placed: readonly SpilledBlock[], stored: readonly StoredBlock[]): void {
+    const wanted = new Set(placed.map(keyOf));
+    const strangers = stored.filter((one) => !wanted.has(keyOf(one)));
+    const remove = this.connection.prepare(
+      'DELETE FROM record_blocks WHERE revision_id = ? AND position = ? AND block = ?',
+    );
+    for (let at = 0; at < strangers.length; at += removedAtOnce) {
+      this.inShortTransaction(() => {
+        for (const { position, block } of strangers.slice(at, at + removedAtOnce))
+          remove.run(revisionId, position, block);
+      });
+    }
+  }
+
   private removeWhile(revisionId: string, condition: string): void {
     const remove = this.connection.prepare(
       `DELETE FROM record_blocks WHERE rowid IN
@@ -102,20 +120,22 @@ export class BlockTable {
   }
 
   /** In a buffer that serves every block, since the statement copies what it is given. */
-  private cellsAt(place: PlacedBlock, spill: SpillFile): Buffer {
+  private cellsAt(place: SpilledBlock, spill: SpillFile): Buffer {
     if (this.cells.byteLength < place.length) this.cells = Buffer.allocUnsafeSlow(place.length);
     spill.readInto(this.cells, place);
     return this.cells.subarray(0, place.length);
   }
 }
 
-const placedBlocks = ({ columns }: BlockPlaces): PlacedBlock[] =>
+const keyOf = ({ position, block }: Pick<SpilledBlock, 'position' | 'block'>): string => `${position} ${block}`;
+
+const placedBlocks = ({ columns, blockRowCounts }: BlockPlaces): SpilledBlock[] =>
   columns.flatMap(({ position, blocks }) =>
-    blocks.map(({ offset, length }, block) => ({ position, block, offset, length })),
+    blocks.map(({ offset, length }, block) => ({ position, block, rowCount: blockRowCounts[block], offset, length })),
   );
 
 /** At least one block, and further ones as long as they fit. */
-function endOfBatch(placed: readonly PlacedBlock[], start: number): number {
+export function endOfBatch(placed: readonly SpilledBlock[], start: number): number {
   let end = start + 1;
   let bytes = placed[start].length;
   while (end < placed.length && bytes + placed[end].length <= transactionBytes) bytes += placed[end++].length;

@@ -42,12 +42,15 @@ export class CellStorage {
    */
   async storeAhead(
     revisionId: string,
-    { columns, blockRowCounts }: SpilledTable,
+    { columns, blockRowCounts, stored }: SpilledTable,
     spillPath: string,
     options: StoringOptions = {},
   ): Promise<void> {
     const places = columns.map(({ position, blocks }) => ({ position, blocks }));
-    await this.run({ kind: 'store', revisionId, table: { columns: places, blockRowCounts }, spillPath }, options);
+    await this.run(
+      { kind: 'store', revisionId, table: { columns: places, blockRowCounts, stored }, spillPath },
+      options,
+    );
   }
 
   /** Stores the cells ahead, then does the unit of work that needs them; when either fails, the cells are cleared. */

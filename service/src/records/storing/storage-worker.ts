@@ -2,7 +2,7 @@ import { parentPort, workerData } from 'node:worker_threads';
 import BetterSqlite3 from 'better-sqlite3';
 import { SpillFile } from '../reading/spill-file';
 import { BlockTable } from './block-table';
-import type { StorageMessage, StorageTask } from './storage-task';
+import type { FollowMessage, StorageMessage, StorageTask } from './storage-task';
 
 const say = (message: StorageMessage): void => parentPort?.postMessage(message);
 
@@ -38,9 +38,29 @@ function carryOut({ work, stop }: StorageTask, blocks: BlockTable): boolean {
   }
 }
 
+/** Stores what it is told of until it is told the end. */
+function follow(revisionId: string, spillPath: string, connection: BetterSqlite3.Database): void {
+  const blocks = new BlockTable(connection);
+  const spill = new SpillFile(spillPath, 'r');
+  parentPort?.on('message', (message: FollowMessage) => {
+    if (message.kind === 'blocks') {
+      blocks.put(revisionId, message.blocks, spill);
+      return;
+    }
+    spill.close();
+    connection.close();
+    say({ kind: 'done' });
+    parentPort?.close();
+  });
+}
+
 /** Runs in a worker thread: one piece of work, then it ends. */
 function run(task: StorageTask): void {
   const connection = openConnection(task.databasePath);
+  if (task.work.kind === 'follow') {
+    follow(task.work.revisionId, task.work.spillPath, connection);
+    return;
+  }
   try {
     say({ kind: carryOut(task, new BlockTable(connection)) ? 'done' : 'stopped' });
   } finally {
