@@ -2,6 +2,7 @@ import { extname, join } from 'node:path';
 import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
 import { DeskError, notFound } from '../../errors';
+import { Remembered } from '../looking/remembered';
 import type { RecordsStore } from '../records-store';
 import { requireRows } from '../required-rows';
 import { answerOfThread } from '../worker-answer';
@@ -17,12 +18,17 @@ export interface FindingsParts {
 /** Compiled beside this file, or its TypeScript source where this file is one. */
 const workerPath = join(__dirname, `findings-worker${extname(__filename)}`);
 
-/** Searches whose outcome is remembered: a revision never changes, so neither does what is found in it. */
-const remembered = 50;
+/** Row numbers that remembered findings may list in their steps, over all revisions. */
+const rememberedRows = 3_000_000;
+
+function weightOf(findings: FindingsOutcome): number {
+  const steps = findings.flatMap((finding) => finding.steps ?? []);
+  return steps.reduce((total, step) => total + ('rows' in step ? (step.rows?.length ?? 0) : 0), 10_000);
+}
 
 export class FindingsService {
   private readonly queue = pLimit(1);
-  private readonly known = new Map<string, Promise<FindingsOutcome>>();
+  private readonly known = new Remembered<FindingsOutcome>(rememberedRows, weightOf);
 
   constructor(private readonly parts: FindingsParts) {}
 
@@ -47,17 +53,9 @@ export class FindingsService {
   }
 
   private search(revisionId: string, target: string | null): Promise<FindingsOutcome> {
-    const key = JSON.stringify([revisionId, target]);
-    const known = this.known.get(key);
-    if (known) return known;
-    const searched = this.queue(() =>
-      this.searchInThread({ databasePath: this.parts.databasePath, revisionId, target }),
+    return this.known.get([revisionId, target], () =>
+      this.queue(() => this.searchInThread({ databasePath: this.parts.databasePath, revisionId, target })),
     );
-    this.known.set(key, searched);
-    searched.catch(() => this.known.delete(key));
-    const [oldest] = this.known.keys();
-    if (this.known.size > remembered) this.known.delete(oldest);
-    return searched;
   }
 
   private searchInThread(task: FindingsTask): Promise<FindingsOutcome> {
