@@ -1,7 +1,16 @@
 import { posix } from 'node:path';
+import { crc32 } from 'node:zlib';
 import { TableProblem } from '../table-problem';
 import { damagedWorkbook, requireOpen, workbookPart } from './workbook-file';
-import { readPacked, readZipDirectory, unpacked, ZipDamaged, ZipTooLarge, type ZipEntry } from './zip-directory';
+import {
+  readPacked,
+  readZipDirectory,
+  unpacked,
+  ZipDamaged,
+  zipMethod,
+  ZipTooLarge,
+  type ZipEntry,
+} from './zip-directory';
 import type { PackedPart } from './zip-excerpt';
 
 export interface Sheet {
@@ -16,6 +25,19 @@ const maximumUnpackedBytes = 250_000_000;
 /** The workbook's list of sheets and their relations. */
 const maximumListBytes = 5_000_000;
 const relationsPart = 'xl/_rels/workbook.xml.rels';
+
+const stylesPart = 'xl/styles.xml';
+const noStylesXml = Buffer.from('<styleSheet/>');
+
+/** The reader of workbooks fails on one that has neither styles nor shared words, which need not be there. */
+const noStyles: PackedPart = {
+  entry: {
+    ...{ name: stylesPart, method: zipMethod.stored, encrypted: false, headerOffset: 0 },
+    ...{ crc: crc32(noStylesXml), packedBytes: noStylesXml.length, unpackedBytes: noStylesXml.length },
+  },
+  packed: noStylesXml,
+  unpackedBytes: noStylesXml.length,
+};
 
 const tooLarge = (): TableProblem =>
   new TableProblem(
@@ -75,7 +97,7 @@ export class WorkbookParts {
     const shared = relations.flatMap((relation) =>
       /\/(styles|sharedStrings)$/.test((relation as Record<string, string>)['Type'] ?? '') ? [relation.part] : [],
     );
-    return new WorkbookParts(path, entries, sheets, [...shared, 'xl/styles.xml', 'xl/sharedStrings.xml']);
+    return new WorkbookParts(path, entries, sheets, [...shared, stylesPart, 'xl/sharedStrings.xml']);
   }
 
   /** The parts that a sheet's cells need, packed, their unpacked size checked. */
@@ -92,7 +114,9 @@ export class WorkbookParts {
       left -= unpackedBytes;
       parts.push({ entry, packed, unpackedBytes });
     }
-    return parts;
+    return this.entries.has(stylesPart) || parts.some(({ entry }) => /styles\.xml$/.test(entry.name))
+      ? parts
+      : [...parts, noStyles];
   }
 }
 

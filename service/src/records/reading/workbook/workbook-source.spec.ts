@@ -130,6 +130,12 @@ describe('reading a workbook', () => {
     ]);
   });
 
+  it('needs neither styles nor shared words', async () => {
+    const parts = workbookParts([{ name: 'S', rows: row(1, words('A1', 'a')) + row(2, '<c r="A2"><v>7</v></c>') }]);
+    delete parts['xl/styles.xml'];
+    expect((await tables.read(zipSync(parts))).cells).toEqual([[7]]);
+  });
+
   it('takes the sheet chosen, or says which ones there are', async () => {
     const yards = { name: 'Yards', rows: row(1, words('A1', 'yard')) + row(2, words('A2', 'North')) };
     const both = workbookOf(refits, yards);
