@@ -39,6 +39,14 @@ describe('RecordsPage', () => {
     expect(screen.column(0)).toEqual(['Set 1']);
   });
 
+  it('says how long rows are kept where a day is set', async () => {
+    const screen = await RecordsScreen.open('/records', 'viewer');
+    const kept = { ...recordSetSummary('records1', 'Set 1', 10), retainUntil: '2031-03-31' };
+    await screen.answer(PATH, { items: [kept, recordSetSummary('records2', 'Set 2', 10)], total: 2 });
+    const told = [...screen.page.querySelectorAll('.description')].map((each) => each.textContent);
+    expect(told).toEqual(['Rows kept until 31 Mar 2031']);
+  });
+
   it('sorts by the column that is pressed', async () => {
     const screen = await RecordsScreen.open('/records', 'viewer');
     await screen.answer(PATH, listOf(3));

@@ -3,13 +3,14 @@ import type { ColumnComparison, RevisionComparison } from '../../api/contract';
 import { formatCount, formatShare } from '../../ui/figure';
 import { FigureFrame, PlotTableTemplate, PlotTemplate } from '../../ui/plots/figure-frame';
 import { PairedHistogram } from '../../ui/plots/paired-histogram';
+import { TableBox } from '../../ui/table-box';
 import { betweenReadings } from '../revision/column-words';
 import { figurePairs } from './comparison-words';
 
 /** One column in both revisions: figures beside each other and the two distributions over the same stretches. */
 @Component({
   selector: 'tb-compared-column',
-  imports: [FigureFrame, PairedHistogram, PlotTableTemplate, PlotTemplate],
+  imports: [FigureFrame, PairedHistogram, PlotTableTemplate, PlotTemplate, TableBox],
   templateUrl: './compared-column.html',
   styleUrl: './compared-column.scss',
 })

@@ -1,5 +1,5 @@
 import { Component, computed, input, linkedSignal } from '@angular/core';
-import type { RevisionComparison } from '../../api/contract';
+import type { ColumnComparison, RevisionComparison } from '../../api/contract';
 import { NO_FIGURE, formatCount } from '../../ui/figure';
 import { listView } from '../../ui/list-view';
 import { Pager } from '../../ui/pager';
@@ -8,6 +8,11 @@ import { TableBox } from '../../ui/table-box';
 import { KIND_WORDS } from '../revision/column-words';
 import { ComparedColumn } from './compared-column';
 import { COLUMN_STATES, differingFirst } from './comparison-words';
+
+interface LevelParts {
+  readonly from: readonly number[];
+  readonly to: readonly number[];
+}
 
 /** Every column of the two, those that differ first; a name opens both distributions and their figures. */
 @Component({
@@ -40,6 +45,7 @@ export class ComparedColumns {
         unit: unitsOf(column.from?.unit, column.to?.unit),
         changed: column.changedCount === null ? NO_FIGURE : formatCount(column.changedCount),
         dates: column.to?.kind === 'date',
+        levels: levelParts(column),
       };
     }),
   );
@@ -47,6 +53,16 @@ export class ComparedColumns {
   protected toggle(name: string): void {
     this.openName.update((open) => (open === name ? undefined : name));
   }
+}
+
+/** The levels of both sides in the same order, as shares of the readings that are listed. */
+function levelParts({ shape }: ColumnComparison): LevelParts | undefined {
+  if (!shape || shape.levels.length === 0) return undefined;
+  const shares = (counts: readonly number[]): readonly number[] => {
+    const total = counts.reduce((sum, count) => sum + count, 0) || 1;
+    return counts.map((count) => (100 * count) / total);
+  };
+  return { from: shares(shape.from), to: shares(shape.to) };
 }
 
 function unitsOf(from: string | null | undefined, to: string | null | undefined): string {

@@ -46,11 +46,11 @@ const FOUND: RevisionComparison = {
   ],
 };
 
-async function openReady(address = ADDRESS): Promise<RecordsScreen> {
-  const screen = await RecordsScreen.open(address, 'viewer');
+async function openReady(found = FOUND): Promise<RecordsScreen> {
+  const screen = await RecordsScreen.open(ADDRESS, 'viewer');
   await screen.answer(PATH, REVISION);
   await screen.answer('/api/record-sets/records1', RECORD_SET);
-  await screen.answer(COMPARISON, FOUND);
+  await screen.answer(COMPARISON, found);
   return screen;
 }
 
@@ -115,7 +115,12 @@ describe('ComparisonPage', () => {
     await choose(screen, 'Match rows by', '');
     const byOrder = await screen.answer(COMPARISON, { ...FOUND, key: null });
     expect(byOrder.request.params.get('key')).toBe('');
-    expect(screen.text).toContain('Rows were matched by their order');
+    expect(screen.text).toContain('Rows were matched by their order, as you asked.');
+  });
+
+  it('says so when no column names the rows', async () => {
+    const screen = await openReady({ ...FOUND, key: null, keys: [] });
+    expect(screen.text).toContain('no column names them in both revisions without gaps and repetitions');
   });
 
   it('counts the rows in words', async () => {

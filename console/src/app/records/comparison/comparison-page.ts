@@ -86,7 +86,7 @@ export class ComparisonPage {
   });
   protected readonly matchedTold = computed(() => {
     const comparison = this.comparison.value();
-    return comparison && matchedTold(comparison);
+    return comparison && matchedTold(comparison, this.key());
   });
 
   /** Another revision finds its own key. */

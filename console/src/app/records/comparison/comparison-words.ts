@@ -15,10 +15,12 @@ export function rowsTold({ added, removed, changed, unchanged }: RevisionCompari
   return `${countOf(added, 'row')} added, ${countOf(removed, 'row')} removed, ${countOf(changed, 'row')} changed and ${countOf(unchanged, 'row')} unchanged.`;
 }
 
-export function matchedTold({ key }: RevisionComparison): string {
-  return key === null
-    ? 'Rows were matched by their order, since no column names them in both revisions or you asked for it.'
-    : `Rows were matched by ${key}: it is never missing and never repeated in either revision.`;
+export function matchedTold({ key, keys }: RevisionComparison, asked: string | undefined): string {
+  if (key !== null) return `Rows were matched by ${key}: it is never missing and never repeated in either revision.`;
+  if (asked === '') return 'Rows were matched by their order, as you asked.';
+  return keys.length === 0
+    ? 'Rows were matched by their order: no column names them in both revisions without gaps and repetitions.'
+    : 'Rows were matched by their order: no column clearly names them in both revisions. You can choose one.';
 }
 
 /** Columns that differ come first, then as they stand in the revision. */

@@ -10,6 +10,9 @@ import { retentionDayOf } from './revision-words';
 
 type Words = Pick<RecordSetDetail, 'name' | 'description' | 'retainUntil'>;
 
+const RETENTION_MEANING =
+  'After this day the rows of every revision are erased, and the original files with them. Editions made from them keep answering. Without a day, rows are kept until somebody deletes them.';
+
 /** A set's name, description and retention date. What is typed outlives a colleague's change. */
 @Component({
   selector: 'tb-record-set-form',
@@ -31,13 +34,17 @@ export class RecordSetForm {
   protected readonly retainUntil = this.draftOf((set) => set.retainUntil ?? '');
   /** A colleague's change was met, so the fields say what is kept now. */
   private readonly overtaken = signal(false);
-  protected readonly keptName = computed(() => this.keptBeside(this.name(), this.recordSet().name));
-  protected readonly keptDescription = computed(() =>
-    this.keptBeside(this.description(), this.recordSet().description),
+  protected readonly keptName = computed(() =>
+    this.keptNow(this.name() !== this.recordSet().name, this.recordSet().name),
   );
+  protected readonly keptDescription = computed(() => {
+    const { description } = this.recordSet();
+    return this.keptNow(this.description() !== description, description);
+  });
   protected readonly retentionHint = computed(() => {
-    const kept = this.keptBeside(this.retainUntil(), retentionDayOf(this.recordSet()) ?? '');
-    return `After this day the rows of every revision are erased, and the original files with them. Editions made from them keep answering. Without a day, rows are kept until somebody deletes them.${kept ? ` ${kept}` : ''}`;
+    const { retainUntil } = this.recordSet();
+    const kept = this.keptNow(this.retainUntil() !== (retainUntil ?? ''), retentionDayOf(this.recordSet()) ?? '');
+    return kept === undefined ? RETENTION_MEANING : `${RETENTION_MEANING} ${kept}`;
   });
 
   protected submit(): void {
@@ -79,8 +86,8 @@ export class RecordSetForm {
     });
   }
 
-  private keptBeside(typed: string, kept: string): string | undefined {
-    if (!this.overtaken() || typed === kept) return undefined;
+  private keptNow(differs: boolean, kept: string): string | undefined {
+    if (!this.overtaken() || !differs) return undefined;
     return kept === '' ? 'Kept now: nothing.' : `Kept now: ${kept}`;
   }
 }

@@ -27,7 +27,7 @@ import { PairRow, correlationWords } from './pair-words';
             <th scope="col" mat-sort-header="y">With</th>
             <th scope="col" class="tb-figure" mat-sort-header="strength" start="desc">Correlation</th>
             <th scope="col" class="tb-figure" mat-sort-header="count" start="desc">Rows with both</th>
-            <td></td>
+            <th scope="col"><span class="tb-only-read">Scatter</span></th>
           </tr>
         </thead>
         <tbody>

@@ -60,7 +60,11 @@ describe('Rows of a revision', () => {
   });
 
   it('keep what was typed and show the place where a condition is wrong', async () => {
-    const screen = await openWith(where('[Lenght] > 20'));
+    const screen = await openWith(where(LONG));
+    await screen.answer(ROWS_PATH, { ...ROWS, total: 2 });
+    await screen.type('Rows where', '[Lenght] > 20');
+    screen.page.querySelector('tb-rows-filter form')?.dispatchEvent(new Event('submit', { cancelable: true }));
+    await screen.stable();
     await screen.refuse(ROWS_PATH, 422, {
       code: 'request-invalid',
       errors: [{ pointer: '#/where', detail: 'There is no column Lenght (at character 1)' }],
@@ -68,6 +72,7 @@ describe('Rows of a revision', () => {
     expect(screen.control('Rows where').value).toBe('[Lenght] > 20');
     expect(screen.control('Rows where').getAttribute('aria-invalid')).toBe('true');
     expect(screen.text).toContain('There is no column Lenght');
+    expect(screen.page.querySelector('.shown')?.textContent).not.toContain('2 rows');
     expect(screen.page.querySelector('tb-rows-filter mark')?.textContent).toBe('[');
     expect(screen.page.querySelector('tb-rows-table [role="alert"]')).toBeNull();
     expect(TestBed.inject(Announcer).text()).toContain('There is no column Lenght');

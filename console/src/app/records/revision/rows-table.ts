@@ -41,7 +41,9 @@ export class RowsTable {
   );
   protected readonly filtered = computed(() => Boolean(this.where() || this.numbers()));
   /** While other rows are on their way, what stands here is not what was asked for. */
-  protected readonly total = computed(() => (this.page.reloading() ? undefined : this.page.value()?.total));
+  protected readonly total = computed(() =>
+    this.page.state() === 'ready' && !this.page.reloading() ? this.page.value()?.total : undefined,
+  );
   protected readonly refusedCondition = computed(() => conditionComplaint(this.page.problem()) !== undefined);
   protected readonly heads = computed(() => {
     const known = new Map(this.columns().map((column) => [column.name, column]));

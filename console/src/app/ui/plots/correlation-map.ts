@@ -19,9 +19,9 @@ interface Cell {
   readonly column: number;
   readonly x: number;
   readonly y: number;
-  readonly correlation: number | null;
-  /** How strong the ink is: |correlation|. */
-  readonly strength: number;
+  readonly opposite: boolean;
+  /** How strong the ink is, in proportion to |correlation|. */
+  readonly ink: number;
   readonly figure: string;
 }
 
@@ -29,6 +29,10 @@ interface Cell {
 const COLUMNS_WITH_FIGURES = 30;
 const CELL_WITH_FIGURE = 38;
 const CELL_ALONE = 18;
+/** From here on the figure has its minus sign. */
+const LEAST_OPPOSITE = -0.005;
+const STRONGEST_SAME = 0.65;
+const STRONGEST_OPPOSITE = 0.45;
 const HEADROOM = 150;
 const LONGEST_NAME = 22;
 let mapCount = 0;
@@ -94,12 +98,18 @@ function cellsOf({ columns, correlations }: CorrelationGrid, size: number): read
         column,
         x: HEADROOM + column * size,
         y: HEADROOM + row * size,
-        correlation,
-        strength: Math.abs(correlation ?? 0),
+        opposite: (correlation ?? 0) <= LEAST_OPPOSITE,
+        ink: inkOf(correlation),
         figure: figureOf(correlation),
       };
     }),
   );
+}
+
+/** Held back at its strongest, so that the figure on it stays readable by day and by night. */
+function inkOf(correlation: number | null): number {
+  if (correlation === null) return 0;
+  return Math.abs(correlation) * (correlation < 0 ? STRONGEST_OPPOSITE : STRONGEST_SAME);
 }
 
 /** Two decimals without the nought before them: `.87`, `−.32`, `1`. */
