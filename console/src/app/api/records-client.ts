@@ -1,7 +1,7 @@
 import { HttpClient } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
 import { Observable } from 'rxjs';
-import type { RecordFindings, RecordRevision, RecordRows, RecordSetDetail, RecordSetList } from './contract';
+import type { RecordFindings, RecordRevision, RecordSetDetail, RecordSetList } from './contract';
 import { Page, queryOf } from './page';
 
 @Injectable({ providedIn: 'root' })
@@ -18,10 +18,6 @@ export class RecordsClient {
 
   readRevision(id: string): Observable<RecordRevision> {
     return this.http.get<RecordRevision>(`/api/record-revisions/${id}`);
-  }
-
-  readRows(revisionId: string, page: Page): Observable<RecordRows> {
-    return this.http.get<RecordRows>(`/api/record-revisions/${revisionId}/rows`, { params: queryOf(page) });
   }
 
   /** Name a numeric column as the target to have columns sought that may be known too late to estimate it. */
