@@ -16,12 +16,13 @@ jest.setTimeout(180_000);
 
 const log = pino({ level: 'silent' });
 const told: string[] = [];
+const threadArguments = ['-r', join(__dirname, '..', 'support', 'typescript-hook.js')];
 const optionsOf = (config: Config): DemonstrationOptions => ({
   config,
   log,
   now: new Date(),
   tell: (line) => void told.push(line),
-  threadArguments: ['-r', join(__dirname, '..', 'support', 'typescript-hook.js')],
+  threadArguments,
 });
 
 describe('the demonstration', () => {
@@ -38,7 +39,13 @@ describe('the demonstration', () => {
     const made = await ensureDemonstration(optionsOf(config));
     if (!made) throw new Error('The demonstration was not made.');
     note = made;
-    services = compose({ config, log, validateAnswers: true, sessionCleanupMs: 0 });
+    services = compose({
+      config,
+      log,
+      validateAnswers: true,
+      sessionCleanupMs: 0,
+      fitThreadArguments: threadArguments,
+    });
   });
   afterAll(async () => {
     await services?.close();
@@ -131,11 +138,31 @@ describe('the demonstration', () => {
 
   it('kept the files that were brought in, byte for byte', async () => {
     const revisions = await services.knex('recordRevisions');
-    expect(revisions).toHaveLength(8);
+    expect(revisions).toHaveLength(9);
     for (const { id, sha256 } of revisions) {
       const { path } = await services.records.original(id);
       expect(createHash('sha256').update(readFileSync(path)).digest('hex')).toBe(sha256);
     }
+  });
+
+  it('has records that came with faults, their mending beside them, and a newest file with faults still to find', async () => {
+    const [{ id }] = await services.knex('recordSets').where({ name: 'Refits' });
+    const { revisions } = await services.records.readSet(id);
+    const found: Record<number, string[]> = {};
+    for (const revision of revisions) {
+      const { items } = await services.recordFindings.list(revision.id, undefined);
+      const mendable = ['unit-mix-up', 'levels-alike', 'repeated-rows'];
+      found[revision.number] = mendable.filter((kind) => items.some((item) => item.kind === kind));
+    }
+    const all = ['unit-mix-up', 'levels-alike', 'repeated-rows'];
+    expect(found).toEqual({ 1: all, 2: [], 3: all, 4: [], 5: all });
+    expect(revisions.map(({ origin, basedOn }) => [origin, basedOn?.number])).toEqual([
+      ['appended', 3],
+      ['mended', 3],
+      ['appended', 1],
+      ['mended', 1],
+      ['file', undefined],
+    ]);
   });
 
   it('has a call ready that returns an estimate', async () => {

@@ -1,14 +1,19 @@
 import { rm, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
+import type { components } from '../../../openapi/types/desk';
 import type { SignedInPerson } from '../people/person';
 import { required, type Stage } from './stage';
 import { toCsv, type TableRow } from './table';
+
+type ReadingChoices = components['schemas']['ReadingChoices'];
 
 export interface FileScene {
   /** What later steps call the revision by. */
   readonly revision: string;
   readonly fileName: string;
   readonly rows: readonly TableRow[];
+  /** What the analyst changed in the proposal. */
+  readonly choices?: ReadingChoices;
 }
 
 export interface SetScene extends FileScene {
@@ -19,6 +24,8 @@ export interface SetScene extends FileScene {
 export interface RevisionScene extends FileScene {
   /** Name of the record set. */
   readonly set: string;
+  /** The revision that the file's rows are appended to; without it they stand alone. */
+  readonly appendTo?: string;
 }
 
 async function withFile<Result>(
@@ -36,9 +43,9 @@ async function withFile<Result>(
 }
 
 export async function bringInSet(stage: Stage, by: SignedInPerson, scene: SetScene): Promise<void> {
-  const { name, description, fileName } = scene;
+  const { name, description, fileName, choices } = scene;
   const set = await withFile(stage, scene, (path) =>
-    stage.services.records.importFile({ path, fileName, name, description, personId: by.id }),
+    stage.services.records.importFile({ path, fileName, name, description, choices, personId: by.id }),
   );
   stage.recordSets.set(name, set.id);
   stage.revisions.set(scene.revision, set.revision.id);
@@ -46,9 +53,10 @@ export async function bringInSet(stage: Stage, by: SignedInPerson, scene: SetSce
 
 export async function bringInRevision(stage: Stage, by: SignedInPerson, scene: RevisionScene): Promise<void> {
   const recordSetId = required(stage.recordSets, scene.set);
-  const { fileName } = scene;
+  const { fileName, choices } = scene;
+  const appendTo = scene.appendTo === undefined ? undefined : required(stage.revisions, scene.appendTo);
   const revision = await withFile(stage, scene, (path) =>
-    stage.services.records.importRevision({ path, fileName, recordSetId, personId: by.id }),
+    stage.services.records.importRevision({ path, fileName, recordSetId, choices, appendTo, personId: by.id }),
   );
   stage.revisions.set(scene.revision, revision.id);
 }

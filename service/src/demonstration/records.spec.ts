@@ -1,6 +1,7 @@
 import { antifoulingRows } from './antifouling-records';
 import { craneRows, newCraneDay } from './crane-records';
-import { asReceived, refitRows } from './refit-records';
+import { asReceived, notTaken } from './refit-faults';
+import { refitRows } from './refit-records';
 import { toCsv, type TableRow } from './table';
 
 const numbers = (rows: readonly TableRow[], column: string): number[] =>
@@ -47,14 +48,17 @@ describe('the demonstration’s records', () => {
     }
   });
 
-  it('as received hide feet among metres, kilograms among tonnes and rows entered twice', () => {
-    const received = asReceived(refits, { inFeet: 6, inKilograms: 4, duplicates: 12 });
+  it('as received hide other units, other spellings, a mark for what was not taken, and rows entered twice', () => {
+    const received = asReceived(refits, { inFeet: 6, inKilograms: 4, spelledOtherwise: 60, duplicates: 12 });
     expect(received).toHaveLength(2412);
     const single = new Map(received.map((row) => [row['reference'], row]));
     expect(single.size).toBe(2400);
     const changed = (column: string): number =>
       refits.filter((row) => single.get(row['reference'])?.[column] !== row[column]).length;
     expect([changed('length overall (m)'), changed('displacement (t)'), changed('labour (h)')]).toEqual([6, 4, 0]);
+    expect(changed('hull material')).toBeGreaterThan(20);
+    expect(changed('draught (m)')).toBe(refits.filter((row) => row['draught (m)'] === null).length);
+    expect(received.filter((row) => row['draught (m)'] === notTaken).length).toBeGreaterThan(40);
   });
 
   it('show a crane that became slower for light boats and quicker for heavy ones', () => {

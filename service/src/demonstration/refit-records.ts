@@ -1,7 +1,7 @@
 import { drawBoat, type Boat, type HullMaterial, type Rig } from './boats';
 import { drawDay, isWinter } from './days';
 import { Draws, roundTo } from './draws';
-import { numberedByDay, withDuplicates, withGaps, withOtherUnit, type TableRow } from './table';
+import { numberedByDay, withGaps, type TableRow } from './table';
 import { yards, yardShares } from './yards';
 
 const scopes = {
@@ -87,19 +87,8 @@ export function refitRows(count: number): TableRow[] {
   return numberedByDay(gaps, 'finished', 'R');
 }
 
-export interface FaultCounts {
-  readonly inFeet: number;
-  readonly inKilograms: number;
-  readonly duplicates: number;
-}
-
-/** The same rows as they reach a desk: some lengths in feet, kilograms for tonnes, rows entered twice. */
-export function asReceived(rows: readonly TableRow[], faults: FaultCounts): TableRow[] {
-  const draws = new Draws(77);
-  const feet = { column: 'length overall (m)', count: faults.inFeet, factor: 1 / 0.3048, digits: 1 };
-  const kilograms = { column: 'displacement (t)', count: faults.inKilograms, factor: 1000, digits: 0 };
-  return withDuplicates(withOtherUnit(withOtherUnit(rows, feet, draws), kilograms, draws), faults.duplicates, draws);
-}
-
 export const finishedBefore = (rows: readonly TableRow[], day: string): TableRow[] =>
   rows.filter((row) => String(row['finished']) < day);
+
+export const finishedFrom = (rows: readonly TableRow[], day: string): TableRow[] =>
+  rows.filter((row) => String(row['finished']) >= day);

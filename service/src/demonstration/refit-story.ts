@@ -1,11 +1,14 @@
 import { bringInRevision, bringInSet } from './bring-in';
+import { mendFindings } from './mend';
+import { asReceived, notTaken } from './refit-faults';
 import { refitLabourWords } from './estimator-words';
-import { asReceived, finishedBefore, refitRows } from './refit-records';
+import { finishedBefore, finishedFrom, refitRows } from './refit-records';
 import * as specifications from './specifications';
 import { on, type Stage, type Step } from './stage';
 import type { TableRow } from './table';
 
 const slug = 'refit-labour';
+const choices = { columns: [{ name: 'draught (m)', missingMarks: [String(notTaken)] }] };
 
 /** Records come with faults, are mended, and the formula is drawn up three times; a fourth edition waits for review. */
 export function refitSteps(stage: Stage): Step[] {
@@ -25,9 +28,9 @@ function arrival(stage: Stage, rows: readonly TableRow[]): Step[] {
   const received = {
     revision: 'refits 1',
     fileName: 'refits-2020-2025.csv',
-    rows: asReceived(rows, { inFeet: 7, inKilograms: 4, duplicates: 9 }),
+    rows: asReceived(rows, { inFeet: 7, inKilograms: 4, spelledOtherwise: 40, duplicates: 9 }),
+    choices,
   };
-  const mended = { set: set.name, revision: 'refits 2', fileName: 'refits-2020-2025-mended.csv', rows };
   return [
     on(418, '09:12', () => bringInSet(stage, ines, { ...set, ...received })),
     on(417, '10:02', () => stage.nameEstimator(ines, refitLabourWords)),
@@ -39,7 +42,7 @@ function arrival(stage: Stage, rows: readonly TableRow[]): Step[] {
         specification: specifications.refitLeastSquares,
       }),
     ),
-    on(412, '13:41', () => bringInRevision(stage, ines, mended)),
+    on(412, '13:41', () => mendFindings(stage, ines, { from: 'refits 1', revision: 'refits 2' })),
   ];
 }
 
@@ -76,17 +79,21 @@ function secondEdition(stage: Stage): Step[] {
 
 function thirdEdition(stage: Stage, rows: readonly TableRow[]): Step[] {
   const { firstAnalyst: ines, reviewer } = stage.cast;
+  const sinceEdition2 = finishedBefore(finishedFrom(rows, '2025-09-01'), '2026-06-01');
   const records = {
     set: 'Refits',
-    revision: 'refits 3',
-    fileName: 'refits-2020-2026-spring.csv',
-    rows: finishedBefore(rows, '2026-06-01'),
+    appendTo: 'refits 1',
+    revision: 'refits spring',
+    fileName: 'refits-2025-2026-spring.csv',
+    rows: asReceived(sinceEdition2, { inFeet: 3, inKilograms: 2, spelledOtherwise: 12, duplicates: 4 }),
+    choices,
   };
   const changeNote = 'Records until spring 2026; error now counted on yards that the fit has not seen.';
   const objection =
     'The interval is wider than in edition 2. Ask two yards whether that is true of their jobs, then submit it again.';
   return [
     on(171, '08:55', () => bringInRevision(stage, ines, records)),
+    on(171, '09:31', () => mendFindings(stage, ines, { from: 'refits spring', revision: 'refits 3' })),
     on(168, '10:11', () =>
       stage.fit(ines, { slug, name: 'refit lasso', revision: 'refits 3', specification: specifications.refitLasso }),
     ),
@@ -104,8 +111,15 @@ function thirdEdition(stage: Stage, rows: readonly TableRow[]): Step[] {
 /** The newest file has faults to find; the newest edition waits for somebody to read it. */
 function sinceThen(stage: Stage, rows: readonly TableRow[]): Step[] {
   const tomas = stage.cast.secondAnalyst;
-  const received = asReceived(rows, { inFeet: 5, inKilograms: 3, duplicates: 12 });
-  const records = { set: 'Refits', revision: 'refits 4', fileName: 'refits-2020-2026-summer.csv', rows: received };
+  const summer = finishedFrom(rows, '2026-06-01');
+  const records = {
+    set: 'Refits',
+    appendTo: 'refits spring',
+    revision: 'refits 4',
+    fileName: 'refits-2026-summer.csv',
+    rows: asReceived(summer, { inFeet: 5, inKilograms: 3, spelledOtherwise: 9, duplicates: 6 }),
+    choices,
+  };
   const changeNote = 'Year built as a curve: the oldest boats take less than the straight line said.';
   return [
     on(60, '13:10', () => bringInRevision(stage, tomas, records)),

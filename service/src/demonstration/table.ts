@@ -49,3 +49,22 @@ export function withOtherUnit(rows: readonly TableRow[], fault: UnitFault, draws
     return { ...row, [fault.column]: Number((value * fault.factor).toFixed(fault.digits)) };
   });
 }
+
+export interface SpellingFault {
+  readonly column: string;
+  readonly otherwise: Readonly<Record<string, string>>;
+  readonly count: number;
+}
+
+/** The rows with some words of one column spelled otherwise. */
+export function withSpellings(rows: readonly TableRow[], fault: SpellingFault, draws: Draws): TableRow[] {
+  const { column, otherwise, count } = fault;
+  const spelled = new Set(draws.positions(count, rows.length));
+  return rows.map((row, position) =>
+    spelled.has(position) ? { ...row, [column]: otherwise[String(row[column])] ?? row[column] } : row,
+  );
+}
+
+/** The rows with a number where one column's cell is empty. */
+export const withMarks = (rows: readonly TableRow[], column: string, mark: number): TableRow[] =>
+  rows.map((row) => (row[column] === null ? { ...row, [column]: mark } : row));
