@@ -21,6 +21,12 @@ describe('adding a remedy to the list', () => {
     expect(withRemedy([POUNDS, step], [FEET])).toEqual([POUNDS, FEET, step]);
   });
 
+  it('sets columns aside last and in the order of the findings, while none has another name', () => {
+    const aside = (column: string): MendStep => ({ kind: 'set-aside', column });
+    expect(withRemedy([aside('Yard')], [aside('Beam'), FEET])).toEqual([FEET, aside('Yard'), aside('Beam')]);
+    expect(withRemedy([RENAME], [aside('Beam')])).toEqual([aside('Beam'), RENAME]);
+  });
+
   it('adds nothing twice, whichever order the fields stand in', () => {
     const turned: MendStep = { rows: [3, 14], factor: 0.3048, column: 'Beam', kind: 'convert-unit' };
     expect(withRemedy([FEET], [turned])).toEqual([FEET]);

@@ -19,6 +19,8 @@ export function holdsRemedy(list: Steps, remedy: Steps): boolean {
 
 function withStep(list: Steps, step: MendStep): Steps | undefined {
   if (holds(list, step)) return list;
+  // What is set aside is set aside last, unless its name would be another one by then.
+  if (step.kind === 'set-aside' && !list.some(({ kind }) => kind === 'rename')) return [...list, step];
   const place = firstUnsettling(list);
   if (!dropsRows(step)) return inserted(list, place, step);
   const first = list[place];
