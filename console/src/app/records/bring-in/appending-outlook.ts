@@ -1,5 +1,6 @@
 import { Component, computed, input } from '@angular/core';
 import type { ReadingProposal } from '../../api/contract';
+import { namesInShort } from './names-in-short';
 
 type Outlook = NonNullable<ReadingProposal['appending']>;
 
@@ -58,18 +59,10 @@ type Outlook = NonNullable<ReadingProposal['appending']>;
 export class AppendingOutlook {
   readonly outlook = input.required<Outlook>();
 
+  protected readonly named = namesInShort;
   protected readonly number = computed(() => this.outlook().revision.number);
   protected readonly isAlike = computed(() => {
     const { lacking, additional, differing } = this.outlook();
     return lacking.length + additional.length + differing.length === 0;
   });
-
-  /** A file of two thousand columns does not fill the page with names. */
-  protected named(names: readonly string[]): string {
-    const shown = names.slice(0, MOST_NAMES).map((name) => `“${name}”`);
-    const rest = names.length - shown.length;
-    return rest > 0 ? `${shown.join(', ')} and ${rest} more` : shown.join(', ');
-  }
 }
-
-const MOST_NAMES = 12;

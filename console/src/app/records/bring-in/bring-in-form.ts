@@ -8,6 +8,7 @@ import { CountPipe } from '../../ui/figure-pipes';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { nameComplaint } from '../../ui/text-rules';
 import { AppendingOutlook } from './appending-outlook';
+import { namesInShort } from './names-in-short';
 import { Destination, asRecordSet, bringInAs, nextNumber } from './destination';
 import type { RecordSetWords } from './kept-bring-in';
 import { ProposedReading } from './proposed-reading';
@@ -57,6 +58,7 @@ export class BringInForm {
     const chosen = new Map((choices().columns ?? []).map((column) => [column.name, column.setAside]));
     return this.proposal().columns.filter((column) => chosen.get(column.name) ?? column.setAside);
   });
+  protected readonly setAsideNames = computed(() => namesInShort(this.setAside().map(({ name }) => name)));
   protected readonly wasChanged = computed(() => this.form.problem()?.code === 'record-set-changed');
   /** What stands beside the name already is not said twice. */
   protected readonly problem = computed(() => {

@@ -1,5 +1,5 @@
 import type { ProposedColumn, ReadingProposal } from '../../api/contract';
-import { cellsOf } from '../revision/column-words';
+import { cellOf, cellsOf } from '../revision/column-words';
 
 export type Showing = 'read' | 'written';
 
@@ -16,14 +16,25 @@ export function previewCells(
   showing: Showing,
 ): readonly (readonly PreviewCell[])[] {
   return columns.map((column) => {
-    const { position, kind } = column;
+    const { position, setAside } = column;
     const unreadable = new Set(column.unreadableRows);
     const asWritten = written.map((row) => row[position] ?? '');
     const values = read.map((row) => row[position] ?? null);
-    const texts = showing === 'read' ? cellsOf(values, kind) : asWritten;
+    // What is set aside counts as nothing; what goes is shown as it is.
+    if (setAside) return asWritten.map((text): PreviewCell => ({ text, state: 'value' }));
+    const texts = showing === 'read' ? readTexts(values, column) : asWritten;
     return texts.map((text, row): PreviewCell => {
       if (unreadable.has(row + 1)) return { text: asWritten[row], state: 'unreadable' };
       return values[row] === null && text.trim() === '' ? { text: '', state: 'missing' } : { text, state: 'value' };
     });
   });
+}
+
+/** Figures line up by their decimals, unless conversion gave some of them more than were ever written. */
+function readTexts(
+  values: readonly (string | number | null)[],
+  { kind, unitsInCells }: ProposedColumn,
+): readonly string[] {
+  const isConverted = unitsInCells.some(({ factor }) => factor !== null && factor !== 1);
+  return isConverted ? values.map((value) => cellOf(value, kind)) : cellsOf(values, kind);
 }

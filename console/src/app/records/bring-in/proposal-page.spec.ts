@@ -66,7 +66,12 @@ describe('ProposalPage, before it can show how the file would be read', () => {
 describe('ProposalPage, what was found', () => {
   it('tells of each column what was seen in its cells', async () => {
     const room = await readyProposal();
-    expect(room.cells(0, 'Columns of the file')).toEqual(['length', 'crew', 'finished', 'owner']);
+    expect(room.cells(0, 'Columns of the file')).toEqual([
+      'length',
+      'crew ?, wants a look',
+      'finished ?, wants a look',
+      'owner',
+    ]);
     const seen = room.cells(5, 'Columns of the file');
     expect(seen[0]).toContain('“ft” stands behind 3 numbers: multiplied by 0.3048 to give m.');
     expect(seen[1]).toContain('4 missing. 1 cell cannot be read as a number and would be missing.');
@@ -76,7 +81,7 @@ describe('ProposalPage, what was found', () => {
 
   it('marks in the preview what cannot be read, by words as well, and what is missing', async () => {
     const room = await readyProposal();
-    expect(room.cells(1, 'Preview')).toEqual(['12.5000', '12.4968', 'missing']);
+    expect(room.cells(1, 'Preview')).toEqual(['12.5', '12.4968', 'missing']);
     expect(room.cells(2, 'Preview')[1]).toMatch(/cannot be read: ✕ see plan/);
     await room.tick('as they are written');
     expect(room.cells(1, 'Preview')).toEqual(['12,5 m', '41 ft', 'empty']);
@@ -121,7 +126,7 @@ describe('ProposalPage, changing how the file is read', () => {
       ...PROPOSAL,
       columns: PROPOSAL.columns.map((c) => ({ ...c, setAside: c.name === 'owner' })),
     });
-    expect(room.text).toContain('1 column set aside: owner');
+    expect(room.text).toContain('1 column set aside: “owner”');
     expect(room.text).toContain('never stored, and the original file is not kept either, because it holds it');
     expect(room.page.querySelector('tb-reading-preview th s')?.textContent).toBe('owner');
   });
@@ -130,15 +135,15 @@ describe('ProposalPage, changing how the file is read', () => {
     const room = await readyProposal();
     await room.press('Take 999 as missing');
     await propose(room, PROPOSAL);
-    await enter(room, 'Line that names the columns', '4');
+    await enter(room, 'Header line', '4');
     expect((await propose(room, PROPOSAL)).body).toEqual({ headerLine: 4 });
     const crew = [{ name: 'crew', missingMarks: ['999'] }];
     expect((await propose(room, PROPOSAL)).body).toEqual({ headerLine: 4, columns: crew });
-    await enter(room, 'Line that names the columns', '1');
+    await enter(room, 'Header line', '1');
     const others = { ...PROPOSAL, columns: [proposedColumn('Marl Point Yard', 0)] };
     expect((await propose(room, others)).body).toEqual({ headerLine: 1 });
     room.expectNoCall(PROPOSAL_PATH);
-    await enter(room, 'Line that names the columns', '4');
+    await enter(room, 'Header line', '4');
     await propose(room, PROPOSAL);
     expect((await propose(room, PROPOSAL)).body).toEqual({ headerLine: 4, columns: crew });
   });
@@ -154,10 +159,10 @@ describe('ProposalPage, changing how the file is read', () => {
 
   it('puts a refusal beside the choice that caused it, and leaves the last good preview', async () => {
     const room = await readyProposal();
-    await enter(room, 'Line that names the columns', '700');
+    await enter(room, 'Header line', '700');
     await room.refuse(PROPOSAL_PATH, { code: 'file-header', detail: 'The file ends before line 700.' }, 'POST');
-    expect(room.complaintOf('Line that names the columns')).toContain('The file ends before line 700.');
-    expect(room.cells(1, 'Preview')[0]).toBe('12.5000');
+    expect(room.complaintOf('Header line')).toContain('The file ends before line 700.');
+    expect(room.cells(1, 'Preview')[0]).toBe('12.5');
     await room.press('Bring in');
     expect(room.text).toContain('The file cannot be read with these choices (The file ends before line 700): change');
     expect((document.activeElement as HTMLInputElement).value).toBe('700');
@@ -174,8 +179,8 @@ describe('ProposalPage, changing how the file is read', () => {
 
   it('says itself what no line number can be', async () => {
     const room = await readyProposal();
-    await enter(room, 'Line that names the columns', '0');
-    expect(room.complaintOf('Line that names the columns')).toContain('Enter a whole number from 1 to 1000');
+    await enter(room, 'Header line', '0');
+    expect(room.complaintOf('Header line')).toContain('Enter a whole number from 1 to 1000');
     room.expectNoCall(PROPOSAL_PATH);
   });
 

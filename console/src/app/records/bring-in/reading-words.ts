@@ -18,7 +18,7 @@ export const DECIMAL_MARKS: readonly Option<NonNullable<ReadingChoices['decimal'
 ];
 
 export const DATE_ORDERS: readonly Option<DateOrder>[] = [
-  { value: 'year-first', words: 'Year first: 2026-03-04' },
-  { value: 'day-first', words: 'Day first: 4.3.2026' },
-  { value: 'month-first', words: 'Month first: 3/4/2026' },
+  { value: 'year-first', words: 'Year first, 2026-03-04' },
+  { value: 'day-first', words: 'Day first, 4.3.2026' },
+  { value: 'month-first', words: 'Month first, 3/4/2026' },
 ];

@@ -6,16 +6,19 @@ const LOCALE = 'en-GB';
 
 type UnitInCells = ProposedColumn['unitsInCells'][number];
 
-/** What was seen in a column's cells, a sentence each. */
+/** What was seen in a column's cells, a sentence each. What the doubts say already is not said twice. */
 export function seenWords(column: ProposedColumn): readonly string[] {
-  const { missingCount, unreadableCount, unitsInCells, kind } = column;
+  const { missingCount, unreadableCount, unitsInCells, unit, doubts } = column;
+  const converted = unitsInCells.length > 1 ? unitsInCells.filter(({ factor }) => factor !== 1) : unitsInCells;
   return [
     missingCount > 0 ? `${formatCount(missingCount)} missing.` : '',
-    unreadableCount > 0
-      ? `${countOf(unreadableCount, 'cell')} cannot be read as ${KIND_NOUNS[kind]} and would be missing.`
-      : '',
-    ...unitsInCells.map((seen) => unitWords(seen, column.unit)),
+    unreadableCount > 0 && doubts.length === 0 ? unreadableWords(column) : '',
+    ...converted.map((seen) => unitWords(seen, unit)),
   ].filter((words) => words !== '');
+}
+
+function unreadableWords({ unreadableCount, kind }: ProposedColumn): string {
+  return `${countOf(unreadableCount, 'cell')} cannot be read as ${KIND_NOUNS[kind]} and would be missing.`;
 }
 
 const KIND_NOUNS: Readonly<Record<ProposedColumn['kind'], string>> = {
@@ -41,5 +44,7 @@ export function wantsALook({ unreadableCount, suspectMarks, doubts, unitsInCells
 /** What the counts rest on. */
 export function basisWords({ rowsLookedAt, complete }: ReadingProposal): string {
   const rows = countOf(rowsLookedAt, 'row');
-  return complete ? `${rows}, all that the file has` : `the first ${rows}; where you choose no kind, the whole file decides`;
+  return complete
+    ? `${rows}, all that the file has`
+    : `the first ${rows}; where you choose no kind, the whole file decides`;
 }
