@@ -1,13 +1,10 @@
-import { readdirSync, type ReadStream } from 'node:fs';
+import { readdirSync } from 'node:fs';
 import { createHash } from 'node:crypto';
-import { request as httpRequest } from 'node:http';
-import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
-import { Readable } from 'node:stream';
 import { databasePathOf } from '../../service/src/compose';
 import { readRecordTable } from '../../service/src/records/record-table-reader';
 import { endOfTask } from '../support/record-task';
-import { startTestService, testPassword, type TestAgent, type TestService } from '../support/test-service';
+import { startTestService, type TestAgent, type TestService } from '../support/test-service';
 
 const boats = [
   'length (m),hull,launched,remark',
@@ -225,87 +222,3 @@ describe('bringing in records', () => {
     expect(json.body.code).toBe('media-type-unsupported');
   });
 });
-
-describe('an upload that does not come through', () => {
-  let service: TestService;
-  let analyst: TestAgent;
-  beforeAll(async () => {
-    service = await startTestService({ maximumFileBytes: 200_000 });
-    analyst = await service.as('analyst');
-  });
-  afterAll(() => service.close());
-
-  const keptFiles = () => readdirSync(join(service.services.config.dataFolder, 'uploads'));
-  const rows = 'a,b\n' + '1,2\n'.repeat(49_000);
-
-  it('is refused when the file is too large, and nothing of it stays', async () => {
-    const refused = await analyst
-      .post('/api/record-sets')
-      .field('name', 'Large')
-      .attach('file', Buffer.from(`${rows}${rows}`), 'large.csv');
-    expect(refused.status).toBe(413);
-    expect(refused.body.code).toBe('file-too-large');
-    expect(keptFiles()).toEqual([]);
-  });
-
-  it('is refused while it streams when its length was not told beforehand', async () => {
-    const file = Readable.from([Buffer.from(rows), Buffer.from(rows)]);
-    const refused = await analyst
-      .post('/api/record-sets')
-      .field('name', 'Streamed')
-      .attach('file', file as ReadStream, { filename: 'large.csv' });
-    expect(refused.body.code).toBe('file-too-large');
-    expect(keptFiles()).toEqual([]);
-  });
-
-  it('leaves nothing when the client goes away half-way', async () => {
-    const server = service.app.listen(0);
-    const { port } = server.address() as AddressInfo;
-    const boundary = 'edge-of-part';
-    const session = await signedInHeaders(port, service);
-    const request = httpRequest({
-      port,
-      path: '/api/record-sets',
-      method: 'POST',
-      headers: { ...session, 'Content-Type': `multipart/form-data; boundary=${boundary}` },
-    });
-    request.on('error', () => undefined);
-    request.write(
-      `--${boundary}\r\nContent-Disposition: form-data; name="file"; filename="half.csv"\r\n\r\n${rows.slice(0, 100_000)}`,
-    );
-    await until(() => keptFiles().length === 1);
-    request.destroy();
-    await until(() => keptFiles().length === 0);
-    await new Promise((resolve) => server.close(resolve));
-  });
-
-  it('is refused to those who may only read', async () => {
-    const viewer = await service.as('viewer');
-    const refused = await viewer
-      .post('/api/record-sets')
-      .field('name', 'Viewer')
-      .attach('file', Buffer.from('a,b\n1,2\n'), 'small.csv');
-    expect(refused.body.code).toBe('not-permitted');
-    expect(keptFiles()).toEqual([]);
-  });
-});
-
-async function until(isTrue: () => boolean): Promise<void> {
-  for (let round = 0; round < 500 && !isTrue(); round++) await new Promise((resolve) => setTimeout(resolve, 10));
-  expect(isTrue()).toBe(true);
-}
-
-async function signedInHeaders(port: number, service: TestService): Promise<Record<string, string>> {
-  const { email } = await service.addPerson(['analyst']);
-  const answer = await fetch(`http://localhost:${port}/api/session`, {
-    method: 'POST',
-    headers: { 'Content-Type': 'application/json' },
-    body: JSON.stringify({ email, password: testPassword }),
-  });
-  const { csrfToken } = (await answer.json()) as { csrfToken: string };
-  const cookie = answer.headers
-    .getSetCookie()
-    .map((line) => line.split(';')[0])
-    .join('; ');
-  return { Cookie: cookie, 'X-XSRF-TOKEN': csrfToken };
-}
