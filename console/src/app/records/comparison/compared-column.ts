@@ -7,6 +7,13 @@ import { TableBox } from '../../ui/table-box';
 import { betweenReadings } from '../revision/column-words';
 import { figurePairs } from './comparison-words';
 
+interface LevelSide {
+  readonly count: string;
+  readonly share: string;
+  /** Of the fullest bar on either side. */
+  readonly percent: number;
+}
+
 /** One column in both revisions: figures beside each other and the two distributions over the same stretches. */
 @Component({
   selector: 'tb-compared-column',
@@ -40,10 +47,16 @@ export class ComparedColumn {
     const shape = this.column().shape;
     if (!shape || shape.levels.length === 0) return [];
     const [from, to] = [this.presentIn('from'), this.presentIn('to')];
+    const greatest = Math.max(...shape.from.map((count) => count / from), ...shape.to.map((count) => count / to));
+    const side = (count: number, present: number): LevelSide => ({
+      count: formatCount(count),
+      share: formatShare(count / present),
+      percent: (100 * count) / present / (greatest || 1),
+    });
     return shape.levels.map((name, index) => ({
       name,
-      from: levelSide(shape.from[index], from),
-      to: levelSide(shape.to[index], to),
+      from: side(shape.from[index], from),
+      to: side(shape.to[index], to),
     }));
   });
 
@@ -51,11 +64,4 @@ export class ComparedColumn {
     const missing = this.column()[side]?.missingCount ?? 0;
     return Math.max(1, this.comparison()[side].rowCount - missing);
   }
-}
-
-function levelSide(
-  count: number,
-  present: number,
-): { readonly count: string; readonly share: string; readonly percent: number } {
-  return { count: formatCount(count), share: formatShare(count / present), percent: (100 * count) / present };
 }

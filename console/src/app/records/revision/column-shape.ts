@@ -12,6 +12,8 @@ const WIDTH = 320;
 const HEIGHT = 100;
 /** Room above the bars for the line of quantiles. */
 const HEAD = 24;
+/** Between bars; the narrowest bar is wider. */
+const GAP = 0.8;
 let shapeCount = 0;
 
 /** A column's histogram, each bar leading to its rows, under a line that marks median, quartiles, 1% and 99%. */
@@ -28,6 +30,7 @@ export class ColumnShape {
   protected readonly id = `tb-column-shape-${++shapeCount}`;
   protected readonly box = `0 ${-HEAD} ${WIDTH} ${HEAD + HEIGHT + 1}`;
   protected readonly width = WIDTH;
+  protected readonly gap = GAP;
   protected readonly floor = HEIGHT;
   protected readonly line = -HEAD / 2;
   protected readonly bars = computed(() => {
