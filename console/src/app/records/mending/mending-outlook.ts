@@ -5,7 +5,9 @@ import { listView } from '../../ui/list-view';
 import { Pager } from '../../ui/pager';
 import { TableBox } from '../../ui/table-box';
 import { KIND_WORDS } from '../revision/column-words';
-import type { Outlook, TrialColumn } from './trials';
+import { columnMarks } from './column-marks';
+import type { Steps } from './steps-history';
+import type { Outlook } from './trials';
 
 /** What would come out of the steps: how many rows, and the columns as they would be. */
 @Component({
@@ -16,6 +18,8 @@ import type { Outlook, TrialColumn } from './trials';
 })
 export class MendingOutlook {
   readonly revision = input.required<RecordRevision>();
+  /** The steps that were tried. */
+  readonly steps = input.required<Steps>();
   readonly outlook = input.required<Outlook>();
 
   protected readonly view = listView(() => this.outlook().columns, {
@@ -42,21 +46,14 @@ export class MendingOutlook {
     if (refused.index === 0) return 'The first step cannot be done, so this is the revision as it is.';
     return `After the first ${countOf(refused.index, 'step')}; step ${refused.index + 1} cannot be done.`;
   });
+  private readonly marks = computed(() => columnMarks(this.steps(), this.outlook().effects));
   protected readonly rows = computed(() =>
     this.view.rows().map((column) => ({
       column,
       kind: KIND_WORDS[column.kind],
       unit: column.unit ?? NO_FIGURE,
       missing: column.missingCount === 0 ? 'none' : formatCount(column.missingCount),
-      mark: this.markOf(column),
+      mark: this.marks().get(column.name),
     })),
   );
-
-  private markOf(column: TrialColumn): string {
-    const before = this.revision().columns.find(({ name }) => name === column.name);
-    if (!before) return 'new';
-    const same =
-      before.kind === column.kind && before.unit === column.unit && before.missingCount === column.missingCount;
-    return same ? '' : 'changed';
-  }
 }
