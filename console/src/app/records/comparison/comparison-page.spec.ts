@@ -99,10 +99,11 @@ describe('ComparisonPage', () => {
     expect(screen.call('/api/record-revisions/revision3/comparison').request.params.get('with')).toBe('revision1');
   });
 
-  it('has nothing to compare an only revision with', async () => {
+  it('has nothing to compare with where no other revision has rows', async () => {
     const screen = await RecordsScreen.open(ADDRESS, 'viewer');
     await screen.answer(PATH, REVISION);
-    await screen.answer('/api/record-sets/records1', { ...RECORD_SET, revisions: [revisionSummary(2)] });
+    const erased = { ...revisionSummary(1), erasedAt: '2026-11-02T03:00:00Z' };
+    await screen.answer('/api/record-sets/records1', { ...RECORD_SET, revisions: [erased, revisionSummary(2)] });
     expect(screen.text).toContain('Nothing to compare with');
     screen.http.expectNone((request) => request.url === COMPARISON);
   });

@@ -11,7 +11,7 @@ import { PageHead } from '../../ui/page-head';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
 import { SheetSection } from '../../ui/sheet/sheet-section';
-import { originOf, usualOther } from '../keeping/revision-words';
+import { comparable, originOf, usualOther } from '../keeping/revision-words';
 import { ChangedCells } from './changed-cells';
 import { ComparedColumns } from './compared-columns';
 import { matchedTold, rowsTold } from './comparison-words';
@@ -57,10 +57,10 @@ export class ComparisonPage {
     );
   });
   protected readonly others = computed(() =>
-    (this.context.value()?.recordSet.revisions ?? [])
-      .filter(({ id }) => id !== this.id())
-      .sort((a, b) => b.number - a.number)
-      .map((revision) => ({ id: revision.id, words: `Revision ${revision.number}: ${originOf(revision)}` })),
+    comparable(this.id(), this.context.value()?.recordSet.revisions ?? []).map((revision) => ({
+      id: revision.id,
+      words: `Revision ${revision.number}: ${originOf(revision)}`,
+    })),
   );
   protected readonly chosenOther = computed(() => {
     const { recordSet, revision } = this.context.value() ?? {};

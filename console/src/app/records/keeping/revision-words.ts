@@ -29,12 +29,19 @@ export function retentionDayOf({ retainUntil }: Pick<RecordSet, 'retainUntil'>):
   return retainUntil === null ? undefined : formatRecordedDay(Date.parse(retainUntil) / MILLISECONDS_A_DAY);
 }
 
+/** Revisions that this one can be compared with, newest first: those of its set whose rows are there. */
+export function comparable(id: string, revisions: readonly RevisionSummary[]): readonly RevisionSummary[] {
+  return revisions
+    .filter((revision) => revision.id !== id && revision.erasedAt === null)
+    .sort((a, b) => b.number - a.number);
+}
+
 /** The revision that another one is compared with unless somebody chooses: what it is based on, else its forerunner. */
 export function usualOther(
   revision: RevisionSummary,
   revisions: readonly RevisionSummary[],
 ): RevisionSummary | undefined {
-  const others = revisions.filter(({ id }) => id !== revision.id).sort((a, b) => b.number - a.number);
+  const others = comparable(revision.id, revisions);
   return (
     others.find(({ id }) => id === revision.basedOn?.id) ??
     others.find(({ number }) => number < revision.number) ??

@@ -1,5 +1,6 @@
 import { Component, computed, input, signal } from '@angular/core';
 import { MatSortModule } from '@angular/material/sort';
+import { RouterLink } from '@angular/router';
 import type { RecordColumn, RecordRevision } from '../../api/contract';
 import { NO_FIGURE } from '../../ui/figure';
 import { listView } from '../../ui/list-view';
@@ -9,11 +10,12 @@ import { LevelBars } from '../../ui/plots/level-bars';
 import { TableBox } from '../../ui/table-box';
 import { ColumnDetail } from './column-detail';
 import { KIND_WORDS, distinctOf, meanOf, missingOf, rangeOf } from './column-words';
+import { missingIn } from './rows-condition';
 
 /** Every column of a revision, with its shape; a column's name opens its figures. */
 @Component({
   selector: 'tb-columns-table',
-  imports: [ColumnDetail, Histogram, LevelBars, MatSortModule, Pager, TableBox],
+  imports: [ColumnDetail, Histogram, LevelBars, MatSortModule, Pager, RouterLink, TableBox],
   templateUrl: './columns-table.html',
   styleUrl: './columns-table.scss',
 })
@@ -41,6 +43,7 @@ export class ColumnsTable {
       column,
       kind: KIND_WORDS[column.kind],
       missing: missingOf(column, this.rowCount()),
+      missingRows: this.linked() && column.missingCount > 0 ? missingIn(column) : undefined,
       distinct: this.linked() ? distinctOf(column) : NO_FIGURE,
       range: rangeOf(column),
       mean: meanOf(column),

@@ -5,7 +5,7 @@ import { Problem, errorOf } from '../../api/problem';
 import { countOf } from '../../ui/figure';
 import { Field, FieldInput } from '../../ui/field';
 import { columnInFormula, formulaComplaint } from '../mending/formula-complaint';
-import { conditionWords } from './rows-condition';
+import { conditionWords, levelIn } from './rows-condition';
 
 /** Which rows are shown, in words, and a field for a condition of one's own. Both live in the page's address. */
 @Component({
@@ -66,7 +66,7 @@ function exampleFor(columns: readonly RecordColumn[]): string {
   const category = columns.find(({ kind, levels }) => kind === 'category' && levels.length > 0);
   const parts = [
     figure && `${columnInFormula(figure.name)} > ${Math.round(figure.mean ?? 0)}`,
-    category && `${columnInFormula(category.name)} = "${category.levels[0].value}"`,
+    category && levelIn(category, category.levels[0].value),
   ].filter((part) => part !== undefined);
   return parts.length > 0 ? parts.join(' and ') : `${columnInFormula(columns[0]?.name ?? 'column')} is missing`;
 }
