@@ -36,7 +36,8 @@ export async function bringIn(page: Page, service: string, file: string, name: s
   await page.goto(`${service}/records`);
   await page.getByRole('link', { name: 'Bring in' }).first().click();
   await page.getByLabel('Choose a file').setInputFiles(file);
-  await page.getByLabel('Name').fill(name);
+  await page.getByRole('button', { name: 'Send the file' }).click();
+  await page.getByLabel('Name', { exact: true }).fill(name);
   await page.getByRole('button', { name: 'Bring in', exact: true }).click();
   await page.getByRole('heading', { level: 1, name }).waitFor();
 }

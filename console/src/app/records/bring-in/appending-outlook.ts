@@ -15,15 +15,17 @@ type Outlook = NonNullable<ReadingProposal['appending']>;
           have: {{ named(outlook().lacking) }}.
         </p>
         <p>
-          Look whether the right line names the columns. If the file calls them otherwise, give them the revision’s
-          names in the file and send it again; or bring it in as a revision of its own.
+          Look whether the right header line is chosen, and the right sheet of a workbook. If the file calls them
+          otherwise, give them the revision’s names in the file and send it again; or bring it in as a revision of its
+          own.
         </p>
       </div>
     }
     @if (outlook().additional.length > 0) {
       <p>
         Only the file has {{ named(outlook().additional) }}:
-        {{ outlook().additional.length === 1 ? 'this column is' : 'these columns are' }} set aside and never stored.
+        {{ outlook().additional.length === 1 ? 'this column is' : 'these columns are' }} set aside and never stored, nor
+        is the original file kept, because it holds {{ outlook().additional.length === 1 ? 'it' : 'them' }}.
       </p>
     }
     @if (outlook().differing.length > 0) {

@@ -13,6 +13,8 @@ export interface ColumnRow {
   readonly position: number;
   readonly kind: ColumnKind;
   readonly unit: string;
+  /** Also where a chosen unit made words of the column, so that it can be chosen otherwise. */
+  readonly asksUnit: boolean;
   readonly dateOrder: DateOrder | null;
   readonly marks: string;
   readonly setAside: boolean;
@@ -37,9 +39,11 @@ export function columnRow(
   const { name, position, suspectMarks, doubts } = column;
   const choice = columnChoice(choices, name);
   const setAside = choice?.setAside ?? column.setAside;
+  const kind = choice?.kind ?? column.kind;
   return {
     ...{ name, position, suspectMarks, doubts, setAside },
-    kind: choice?.kind ?? column.kind,
+    kind,
+    asksUnit: kind === 'numeric' || (Boolean(choice?.unit) && choice?.kind === undefined),
     unit: (choice?.unit === undefined ? column.unit : choice.unit) ?? '',
     dateOrder: choice?.dateOrder ?? column.dateOrder,
     marks: marksText(choice?.missingMarks ?? column.missingMarks),

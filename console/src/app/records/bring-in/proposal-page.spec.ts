@@ -177,6 +177,15 @@ describe('ProposalPage, changing how the file is read', () => {
     expect(room.cells(5, 'Columns of the file')[0]).toContain('This unit is not known');
   });
 
+  it('leaves a unit to be changed when it made words of the column', async () => {
+    const room = await readyProposal();
+    await enter(room, 'Unit of length', 'kg');
+    const columns = [proposedColumn('length', 0, { kind: 'text' })];
+    await propose(room, { ...PROPOSAL, columns });
+    expect(controlNamed(room, 'Kind of length').value).toBe('text');
+    expect(controlNamed(room, 'Unit of length').value).toBe('kg');
+  });
+
   it('says itself what no line number can be', async () => {
     const room = await readyProposal();
     await enter(room, 'Header line', '0');
@@ -245,6 +254,7 @@ describe('ProposalPage, bringing in', () => {
     const progress = { stage: 'reading', done: 120e6, total: 250e6 } as const;
     await room.answer(TASK_PATH, bringInTask({ progress }));
     expect(room.text).toMatch(/Reading, 120 of 250\sMB/);
+    expect(document.activeElement?.textContent).toContain('Reading');
     await room.press('Cancel');
     await room.answer(`${TASK_PATH}/cancel`, bringInTask({ progress }), 'POST');
     expect(room.text).toContain('Cancelling');
