@@ -12,7 +12,7 @@ import { Sheet } from '../ui/sheet/sheet';
 import { SheetSection } from '../ui/sheet/sheet-section';
 import { NewerFile } from './bring-in/newer-file';
 import { RecordSetForm } from './keeping/record-set-form';
-import { retentionDayOf } from './keeping/revision-words';
+import { retentionTold } from './keeping/revision-words';
 import { RevisionsTable } from './revisions-table';
 
 @Component({
@@ -39,8 +39,8 @@ export class RecordSetPage {
   readonly id = input.required<string>();
 
   protected readonly set = load(() => this.client.read(this.id()));
-  protected readonly retentionDay = computed(() => {
+  protected readonly retentionTold = computed(() => {
     const recordSet = this.set.value();
-    return recordSet && retentionDayOf(recordSet);
+    return recordSet && retentionTold(recordSet);
   });
 }

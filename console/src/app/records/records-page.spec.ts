@@ -39,12 +39,14 @@ describe('RecordsPage', () => {
     expect(screen.column(0)).toEqual(['Set 1']);
   });
 
-  it('says how long rows are kept where a day is set', async () => {
+  it('says how long rows are kept where a day is set, and when they were erased', async () => {
     const screen = await RecordsScreen.open('/records', 'viewer');
+    const plain = recordSetSummary('records2', 'Set 2', 10);
+    const erased = { ...plain, revision: { ...plain.revision, erasedAt: '2026-11-02T03:00:00Z' } };
     const kept = { ...recordSetSummary('records1', 'Set 1', 10), retainUntil: '2031-03-31' };
-    await screen.answer(PATH, { items: [kept, recordSetSummary('records2', 'Set 2', 10)], total: 2 });
+    await screen.answer(PATH, { items: [kept, erased, recordSetSummary('records3', 'Set 3', 10)], total: 3 });
     const told = [...screen.page.querySelectorAll('.description')].map((each) => each.textContent);
-    expect(told).toEqual(['Rows kept until 31 Mar 2031']);
+    expect(told).toEqual(['Rows kept until 31 Mar 2031, then erased', 'Rows erased on 2 November 2026']);
   });
 
   it('sorts by the column that is pressed', async () => {

@@ -16,7 +16,7 @@ import { PageHead } from '../ui/page-head';
 import { Pager } from '../ui/pager';
 import { ProblemNotice } from '../ui/problem-notice';
 import { TableBox } from '../ui/table-box';
-import { retentionDayOf } from './keeping/revision-words';
+import { retentionTold } from './keeping/revision-words';
 
 /** A filter helps from here on; below it is in the way. */
 const FILTER_FROM = 6;
@@ -43,7 +43,7 @@ const FILTER_FROM = 6;
 export class RecordsPage {
   private readonly client = inject(RecordsClient);
   protected readonly session = inject(SessionStore);
-  protected readonly retentionDayOf = retentionDayOf;
+  protected readonly retentionTold = retentionTold;
 
   protected readonly sets = load(() => everyItem((page) => this.client.list(page)));
   protected readonly view: ListView<RecordSetSummary> = listView(() => this.sets.value() ?? [], {

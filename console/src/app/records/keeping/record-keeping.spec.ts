@@ -165,7 +165,7 @@ describe('A record set’s words and retention day', () => {
     await room.press('Save changes');
     const call = await room.answer(SET, { ...RECORD_SET, retainUntil: '2031-03-31' }, 'PATCH');
     expect(call.request.body).toEqual({ retainUntil: '2031-03-31', changedAt: RECORD_SET.changedAt });
-    expect(room.text).toContain('Rows are kept until 31 Mar 2031 and erased after that day.');
+    expect(room.text).toContain('Rows kept until 31 Mar 2031, then erased.');
   });
 
   it('explain what the day does, and can do without one', async () => {

@@ -29,6 +29,16 @@ export function retentionDayOf({ retainUntil }: Pick<RecordSet, 'retainUntil'>):
   return retainUntil === null ? undefined : formatRecordedDay(Date.parse(retainUntil) / MILLISECONDS_A_DAY);
 }
 
+/** `Rows kept until 31 Mar 2031, then erased`; undefined while they are kept without a day. */
+export function retentionTold({
+  retainUntil,
+  revision,
+}: Pick<RecordSet, 'retainUntil'> & { readonly revision: RevisionSummary }): string | undefined {
+  if (revision.erasedAt !== null) return `Rows erased on ${formatDay(revision.erasedAt)}`;
+  const day = retentionDayOf({ retainUntil });
+  return day && `Rows kept until ${day}, then erased`;
+}
+
 /** Revisions that this one can be compared with, newest first: those of its set whose rows are there. */
 export function comparable(id: string, revisions: readonly RevisionSummary[]): readonly RevisionSummary[] {
   return revisions
