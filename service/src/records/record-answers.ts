@@ -64,9 +64,9 @@ export function toSetDetail(
   revisions: readonly RevisionRecord[],
   columns: readonly ColumnRecord[],
 ): Schemas['RecordSetDetail'] {
-  const { id, name, description, retainUntil, changedAt, createdAt, createdBy } = set;
+  const { id, name, description, retainUntil, lastNumber, changedAt, createdAt, createdBy } = set;
   return {
-    ...{ id, name, description, retainUntil, changedAt, createdAt },
+    ...{ id, name, description, retainUntil, lastNumber, changedAt, createdAt },
     createdBy: { ...createdBy },
     revision: toRevisionAnswer(revisions[0], columns),
     revisions: revisions.map(toRevisionSummary),

@@ -69,6 +69,8 @@ export interface NewRevision {
 }
 
 export interface RecordSetRecord extends Omit<NewRecordSet, 'createdBy'> {
+  /** The number last given to a revision. */
+  readonly lastNumber: number;
   readonly createdBy: PersonName;
   readonly revisionCount: number;
 }
@@ -98,7 +100,7 @@ export interface ColumnRecord {
   readonly levels: readonly Level[];
 }
 
-type SetRow = NewRecordSet & { createdByName: string; revisionCount: number };
+type SetRow = NewRecordSet & { lastNumber: number; createdByName: string; revisionCount: number };
 type RevisionRow = Omit<NewRevision, 'reading' | 'mending' | 'originalKept'> & {
   mending: string | null;
   reading: string;
@@ -129,6 +131,14 @@ export class RecordsStore {
   /** Its words, its retention date or its revisions have changed. */
   async markSetChanged(id: string, changedAt: string): Promise<void> {
     await this.database.connection('recordSets').where({ id }).update({ changedAt });
+  }
+
+  /** Takes the set's next number. Numbers are given once, that of a deleted revision too. */
+  async takeNumber(recordSetId: string): Promise<number> {
+    const sets = this.database.connection('recordSets').where({ id: recordSetId });
+    await sets.clone().increment('lastNumber', 1);
+    const { lastNumber } = (await sets.first('lastNumber')) as { lastNumber: number };
+    return lastNumber;
   }
 
   async insertRevision(revision: NewRevision): Promise<void> {
@@ -263,9 +273,9 @@ export class RecordsStore {
 }
 
 function toSet(row: SetRow): RecordSetRecord {
-  const { id, name, description, retainUntil, changedAt, createdAt } = row;
+  const { id, name, description, retainUntil, lastNumber, changedAt, createdAt } = row;
   return {
-    ...{ id, name, description, retainUntil, changedAt, createdAt },
+    ...{ id, name, description, retainUntil, lastNumber, changedAt, createdAt },
     createdBy: { id: row.createdBy, name: row.createdByName },
     revisionCount: Number(row.revisionCount),
   };

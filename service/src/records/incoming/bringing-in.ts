@@ -66,7 +66,7 @@ export class BringingIn {
           'record_sets.name_key',
           () => nameTaken(name, '#/as/name'),
         );
-        const stored = await store({ recordSetId: id, number: 1 });
+        const stored = await store({ recordSetId: id, number: await records.takeNumber(id) });
         const summary = `The record set ${name} was brought in from ${given.fileName}: ${rowsOf(stored)}`;
         await this.finish(given, { action: 'record-set-created', recordSetId: id, summary });
       });
@@ -79,7 +79,7 @@ export class BringingIn {
     return async (context: TaskContext) => {
       await this.parts.importer.bringIn({ ...given, base: null }, context, async (store) => {
         const newest = await this.requireOpenSet(recordSetId, expectedNewest);
-        const number = newest.number + 1;
+        const number = await this.parts.records.takeNumber(recordSetId);
         const stored = await store({ recordSetId, number });
         const summary = `Revision ${number} of ${newest.recordSetName} was brought in from ${given.fileName}: ${rowsOf(stored)}`;
         await this.finish(given, { action: 'record-revision-added', recordSetId, summary });
@@ -95,8 +95,8 @@ export class BringingIn {
       const base = await this.requireBase(revisionId);
       const appending = this.parts.importer.bringIn({ ...given, base }, context, async (store) => {
         await this.requireBase(revisionId);
-        const newest = await this.requireOpenSet(recordSetId, expectedNewest);
-        const number = newest.number + 1;
+        await this.requireOpenSet(recordSetId, expectedNewest);
+        const number = await this.parts.records.takeNumber(recordSetId);
         const stored = await store({ recordSetId, number });
         const summary = `Revision ${number} of ${base.recordSetName} is revision ${base.number} with ${given.fileName} appended: ${rowsOf(stored)}`;
         await this.finish(given, { action: 'record-revision-appended', recordSetId, summary });

@@ -97,8 +97,8 @@ export class MendingService {
     const { personId, steps } = wanted;
     const base = await this.requireBase(wanted.revisionId);
     const { recordSetId, sha256, byteCount, fileName, originalPath, originalKept, reading } = base;
-    const newest = await requireExpectedNewest(records, recordSetId, wanted.expectedNewest);
-    const number = newest.number + 1;
+    await requireExpectedNewest(records, recordSetId, wanted.expectedNewest);
+    const number = await records.takeNumber(recordSetId);
     const createdAt = timeText(clock);
     await records.insertRevision({
       ...{ id, recordSetId, number, sha256, byteCount, fileName, originalPath, originalKept, reading },

@@ -40,7 +40,7 @@ export function readDestination(
 }
 
 export function nextNumber({ set }: Destination): number {
-  return set.revision.number + 1;
+  return set.lastNumber + 1;
 }
 
 export function bringInAs(destination: Destination): BringInAs {

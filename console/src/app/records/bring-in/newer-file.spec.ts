@@ -11,7 +11,7 @@ describe('NewerFile', () => {
   async function open(revisions = RECORD_SET.revisions): Promise<RecordsScreen> {
     const screen = await RecordsScreen.open('/records/records1', 'analyst');
     const revision = { ...RECORD_SET.revision, number: revisions.length };
-    await screen.answer(SET_PATH, { ...RECORD_SET, revision, revisions });
+    await screen.answer(SET_PATH, { ...RECORD_SET, lastNumber: revision.number, revision, revisions });
     return screen;
   }
 

@@ -30,7 +30,7 @@ export class NewerFile {
   protected readonly form = new EntryForm<'file'>();
   protected readonly run = new UploadRun<IncomingFile>();
   protected readonly becomes = signal<Becomes>('revision');
-  protected readonly nextNumber = computed(() => this.recordSet().revision.number + 1);
+  protected readonly nextNumber = computed(() => this.recordSet().lastNumber + 1);
   /** Newest first; the rows of the others are no longer there. */
   protected readonly appendable = computed(() =>
     this.recordSet()

@@ -353,7 +353,7 @@ describe('ProposalPage, for a record set that is there', () => {
     await room.refuse(BRING_IN_PATH, { code: 'record-set-changed', status: 409, detail }, 'POST');
     expect(room.text).toContain(detail);
     await room.press('Read the record set again');
-    await room.answer(SET_PATH, { ...RECORD_SET, revision: { ...REVISION, number: 3 } });
+    await room.answer(SET_PATH, { ...RECORD_SET, lastNumber: 3, revision: { ...REVISION, number: 3 } });
     await room.press('Bring in as revision 4');
     const { request } = await room.answer(BRING_IN_PATH, bringInTask({}), 'POST');
     expect(request.body).toEqual({

@@ -79,9 +79,10 @@ export class MendingBoard implements OnInit {
 
   protected readonly revision = computed(() => this.opening().revision);
   protected readonly steps = this.history.steps;
-  /** The newest revision of the set as the person knows it. */
-  protected readonly newest = linkedSignal(() => this.opening().set.revision);
-  protected readonly nextNumber = computed(() => this.newest().number + 1);
+  /** The set as the person knows it. */
+  protected readonly set = linkedSignal(() => this.opening().set);
+  protected readonly newest = computed(() => this.set().revision);
+  protected readonly nextNumber = computed(() => this.set().lastNumber + 1);
   protected readonly parent = computed(() => ({
     label: `${this.revision().recordSetName}, revision ${this.revision().number}`,
     link: `/records/revisions/${this.revision().id}`,
@@ -165,8 +166,8 @@ export class MendingBoard implements OnInit {
   }
 
   /** Somebody has added to the set: the person now knows it and may go on. */
-  protected makeAllTheSame(newest: MendingOpening['set']['revision']): void {
-    this.newest.set(newest);
+  protected makeAllTheSame(set: MendingOpening['set']): void {
+    this.set.set(set);
     this.make();
   }
 

@@ -343,7 +343,7 @@ describe('making the revision', () => {
         await room.answer(TASK, mendTask('failed', { problem: refusal }));
       }
       const added = { ...MENDED, createdBy: { id: 'person02', name: 'Per Lund' } };
-      await room.answer(SET, { ...RECORD_SET, revision: added });
+      await room.answer(SET, { ...RECORD_SET, lastNumber: added.number, revision: added });
       expect(await stepsKept(room)).toEqual([FEET, RENAME]);
       expect(room.text).toContain('Per Lund added revision 3 on 21 Oct 2026');
       expect(room.link('Look at revision 3 first').getAttribute('href')).toBe('/records/revisions/revision3');

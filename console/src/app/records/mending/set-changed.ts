@@ -16,8 +16,8 @@ import { formatMoment } from '../../ui/moment';
       @if (set.value(); as set) {
         <p>{{ words() }} Your steps are kept, and nothing was made of them yet.</p>
         <div class="tb-actions">
-          <button type="button" class="tb-plain-button" (click)="goOn.emit(set.revision)">
-            Make it all the same, as revision {{ set.revision.number + 1 }}
+          <button type="button" class="tb-plain-button" (click)="goOn.emit(set)">
+            Make it all the same, as revision {{ set.lastNumber + 1 }}
           </button>
           <a [routerLink]="['/records/revisions', set.revision.id]">Look at revision {{ set.revision.number }} first</a>
         </div>
@@ -51,7 +51,7 @@ export class SetChanged {
   readonly recordSetId = input.required<string>();
   /** The newest revision that the person knew of. */
   readonly knownNumber = input.required<number>();
-  readonly goOn = output<RecordSetDetail['revision']>();
+  readonly goOn = output<RecordSetDetail>();
 
   protected readonly set = load(() => {
     this.problem(); // Another refusal is about another newest revision.

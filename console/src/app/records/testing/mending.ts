@@ -36,6 +36,7 @@ export const MENDED: RecordRevision = {
 
 export const SET_WITH_MENDED = {
   ...RECORD_SET,
+  lastNumber: MENDED.number,
   revision: MENDED,
   revisions: [...RECORD_SET.revisions, MENDED],
 };

@@ -115,6 +115,7 @@ export const RECORD_SET: RecordSetDetail = {
   name: 'Refits, nine yards',
   description: 'One row a finished job.',
   retainUntil: null,
+  lastNumber: 2,
   changedAt: '2026-10-21T09:14:00Z',
   createdAt: '2023-10-21T09:00:00Z',
   createdBy: INES,
