@@ -85,11 +85,22 @@ export class RevisionPage {
     return reading ? readingWordsOf(reading) : '';
   });
 
+  /** Rows were asked for and the page has yet to come to rest on them. */
+  private moving = false;
+
   constructor() {
     // The sheet moves when its fragment changes; rows asked for after others have the same one.
     effect(() => {
-      if (this.where() || this.numbers()) this.rowsSection()?.show();
+      if (!this.where() && !this.numbers()) return;
+      this.moving = true;
+      this.rowsSection()?.show();
     });
+  }
+
+  /** Sections above grow as their answers come, and a smooth movement that is under way would end short of the rows. */
+  protected settleOnRows(): void {
+    if (this.moving) this.rowsSection()?.element.scrollIntoView({ behavior: 'instant' });
+    this.moving = false;
   }
 }
 

@@ -28,6 +28,19 @@ describe('Rows of a revision', () => {
     expect(TestBed.inject(Announcer).text()).toBe('2 rows found.');
   });
 
+  it('are brought into view once they have come, and not again when a person pages through them', async () => {
+    const moved = jest.spyOn(Element.prototype, 'scrollIntoView');
+    const jumps = (): number => moved.mock.calls.filter(([how]) => typeof how === 'object').length;
+    const screen = await openWith(where(LONG));
+    expect(jumps()).toBe(0);
+    await screen.answer(ROWS_PATH, ROWS);
+    expect(jumps()).toBe(1);
+    await screen.press('Next');
+    await screen.answer(ROWS_PATH, { ...ROWS, offset: 25 });
+    expect(jumps()).toBe(1);
+    moved.mockRestore();
+  });
+
   it('are those of the numbers in the address', async () => {
     const screen = await openWith('?numbers=1,5,9#rows');
     const call = await screen.answer(ROWS_PATH, { ...ROWS, total: 3 });

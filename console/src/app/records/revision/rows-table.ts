@@ -1,4 +1,4 @@
-import { Component, computed, effect, inject, input, linkedSignal } from '@angular/core';
+import { Component, computed, effect, inject, input, linkedSignal, output } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import type { RecordColumn } from '../../api/contract';
 import { LookingClient } from '../../api/looking-client';
@@ -27,6 +27,8 @@ export class RowsTable {
   readonly columns = input.required<readonly RecordColumn[]>();
   readonly where = input<string>();
   readonly numbers = input<string>();
+  /** Rows that were asked for have come. */
+  readonly found = output();
 
   private readonly wanted = linkedSignal({
     source: () => [this.revisionId(), this.where(), this.numbers()],
@@ -71,7 +73,9 @@ export class RowsTable {
   constructor() {
     effect(() => {
       const total = this.total();
-      if (total !== undefined && this.filtered()) this.announcer.say(`${countOf(total, 'row')} found.`);
+      if (total === undefined || !this.filtered()) return;
+      this.announcer.say(`${countOf(total, 'row')} found.`);
+      this.found.emit();
     });
     effect(() => {
       const complaint = conditionComplaint(this.page.problem());
