@@ -45,6 +45,10 @@ export class BringInForm {
   readonly gone = output();
 
   protected readonly form = new EntryForm<'name' | 'description' | 'retainUntil' | 'reading'>();
+  /** Told from the try on which it stood in the way, until it no longer does. */
+  protected readonly toldOfReading = computed(() =>
+    this.form.errorOf('reading') === undefined ? undefined : this.readingComplaint(),
+  );
   protected readonly name = computed(() => this.words().name ?? this.suggestedName());
   protected readonly nameError = computed(
     () => this.form.errorOf('name') ?? nameTaken(this.form.problem()) ?? nameTaken(this.failure()),
