@@ -71,6 +71,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
   mountSettings(routes, services.settingsService);
   mountPartners(routes, { partners: services.partners, sites: services.sites });
   mountDesk(routes, services.desk);
+  routes.requireComplete();
   routes.refuseOtherMethods();
 
   const router = express.Router();
