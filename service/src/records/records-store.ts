@@ -2,7 +2,8 @@ import type { Database } from '../database/database';
 import type { Page } from '../http/page';
 import type { ColumnKind } from './cell-blocks';
 import type { MendStep } from './mending/step-change';
-import type { Histogram, Outlying, Quantile } from './reading/column-statistics';
+import type { Outlying, Quantile } from './reading/column-statistics';
+import type { Histogram } from './reading/histogram';
 import type { FinishedColumn, Level } from './reading/finished-column';
 
 export interface Reading {

@@ -1,4 +1,4 @@
-import { histogramOf, statisticsOf } from './column-statistics';
+import { statisticsOf } from './column-statistics';
 import { ReadingSorter } from './reading-sorter';
 import { distinctOf, outlyingOf, quantilesOf } from './sorted-figures';
 
@@ -74,17 +74,6 @@ describe('a column’s figures', () => {
     expect(figures(Float64Array.of(NaN, NaN))).toMatchObject({
       ...{ missingCount: 2, distinctCount: 0, mean: null, quantiles: null, outlying: null, histogram: null },
     });
-  });
-
-  it('give one bin to a column of one value', () => {
-    expect(histogramOf(Float64Array.of(3, 3, NaN), 3, 3)).toEqual({ edges: [3, 3], counts: [2] });
-  });
-
-  it('count every reading in exactly one of twenty bins', () => {
-    const values = Float64Array.from({ length: 5000 }, (_, row) => Math.sin(row) * 10);
-    const { edges, counts } = histogramOf(values, -10, 10);
-    expect(edges).toHaveLength(21);
-    expect(counts.reduce((total, count) => total + count, 0)).toBe(5000);
   });
 
   it('count different numbers as a set does, up to the limit', () => {

@@ -1,3 +1,4 @@
+import { histogramOf, type Histogram } from './histogram';
 import { maximumDistinct } from './limits';
 import type { ReadingSorter } from './reading-sorter';
 import { distinctOf, outlyingOf, quantilesOf } from './sorted-figures';
@@ -29,13 +30,6 @@ export interface Outlying {
   readonly deviation: number;
 }
 
-export interface Histogram {
-  readonly edges: readonly number[];
-  readonly counts: readonly number[];
-}
-
-export const histogramBins = 20;
-
 const nothing: ColumnStatistics = {
   missingCount: 0,
   distinctCount: 0,
@@ -53,19 +47,6 @@ export const statisticsOfLevels = (missingCount: number, distinctCount: number |
   missingCount,
   distinctCount,
 });
-
-/** Equal bins from minimum to maximum, the last one closed; one bin when all values are equal. */
-export function histogramOf(values: Float64Array, minimum: number, maximum: number): Histogram {
-  const bins = maximum > minimum && Number.isFinite(maximum - minimum) ? histogramBins : 1;
-  const width = (maximum - minimum) / bins;
-  const counts = new Array<number>(bins).fill(0);
-  for (let row = 0; row < values.length; row++) {
-    const value = values[row];
-    if (value === value) counts[bins === 1 ? 0 : Math.min(bins - 1, Math.floor((value - minimum) / width))]++;
-  }
-  const edges = Array.from({ length: bins + 1 }, (_, edge) => (edge === bins ? maximum : minimum + edge * width));
-  return { edges, counts };
-}
 
 /** Sums of the very largest numbers overflow; then there is no figure to give. */
 const finite = (value: number): number | null => (Number.isFinite(value) ? value : null);

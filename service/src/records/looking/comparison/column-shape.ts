@@ -1,5 +1,5 @@
 import type { CategoryRecordColumn, RecordColumn } from '../../../regression/records';
-import { histogramOf } from '../../reading/column-statistics';
+import { histogramOf } from '../../reading/histogram';
 
 /** Both sides counted over the same stretches, or over the same levels. */
 export interface ColumnShape {
