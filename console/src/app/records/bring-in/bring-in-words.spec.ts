@@ -1,7 +1,6 @@
 import { marksComplaint, marksOf, marksText } from './missing-marks';
 import { nameFromFile } from './file-complaint';
 import { basisWords, seenWords, wantsALook } from './seen-words';
-import { countWords } from './task-words';
 import { PROPOSAL, proposedColumn } from './testing/incoming';
 
 describe('words about a file that is brought in', () => {
@@ -38,13 +37,5 @@ describe('words about a file that is brought in', () => {
   it('say what the counts rest on', () => {
     expect(basisWords(PROPOSAL)).toBe('300 rows, all that the file has');
     expect(basisWords({ ...PROPOSAL, complete: false })).toContain('the first 300 rows');
-  });
-
-  it('count bytes in the unit of the whole, and columns and steps by number', () => {
-    expect(countWords({ stage: 'reading', done: 120e6, total: 250e6 })).toBe('120 of 250\u00a0MB');
-    expect(countWords({ stage: 'reading', done: 900e3, total: 250e6 })).toBe('900\u00a0kB of 250\u00a0MB');
-    expect(countWords({ stage: 'measuring', done: 12, total: 30 })).toBe('12 of 30 columns');
-    expect(countWords({ stage: 'storing', done: 3, total: 9 })).toBe('');
-    expect(countWords({ stage: 'reading', done: 3, total: 0 })).toBe('');
   });
 });

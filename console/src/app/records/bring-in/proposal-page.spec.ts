@@ -253,7 +253,7 @@ describe('ProposalPage, bringing in', () => {
     room.expectNoCall(FILE_PATH);
     const progress = { stage: 'reading', done: 120e6, total: 250e6 } as const;
     await room.answer(TASK_PATH, bringInTask({ progress }));
-    expect(room.text).toMatch(/Reading, 120 of 250\sMB/);
+    expect(room.text).toMatch(/Reading the file, 120 of 250\sMB/);
     expect(document.activeElement?.textContent).toContain('Reading');
     await room.press('Cancel');
     await room.answer(`${TASK_PATH}/cancel`, bringInTask({ progress }), 'POST');

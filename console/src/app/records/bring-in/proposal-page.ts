@@ -28,16 +28,16 @@ import { PageHead } from '../../ui/page-head';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { Sheet } from '../../ui/sheet/sheet';
 import { SheetSection } from '../../ui/sheet/sheet-section';
+import { FollowedTask } from '../task-progress/followed-task';
+import { TaskProgress } from '../task-progress/task-progress';
 import { BringInForm } from './bring-in-form';
 import { readDestination } from './destination';
 import { nameFromFile } from './file-complaint';
 import { FileReading } from './file-reading';
-import { FollowedTask } from './followed-task';
 import { KeptBringIn, NO_WORDS, RecordSetWords } from './kept-bring-in';
 import { ProposedColumns } from './proposed-columns';
 import { ProposedReading } from './proposed-reading';
 import { ReadingPreview } from './reading-preview';
-import { TaskProgress } from './task-progress';
 
 type PageState = 'loading' | 'working' | 'gone' | 'error' | 'ready';
 

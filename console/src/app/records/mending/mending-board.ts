@@ -20,16 +20,17 @@ import { MendingClient } from '../../api/mending-client';
 import { Announcer } from '../../ui/announcer';
 import { Confirm } from '../../ui/confirm';
 import { countOf } from '../../ui/figure';
+import { FocusHere } from '../../ui/focus-here';
 import { load } from '../../ui/load';
 import { LoadingState } from '../../ui/loading-state';
 import { PageHead } from '../../ui/page-head';
 import { ProblemNotice } from '../../ui/problem-notice';
+import { TaskProgress } from '../task-progress/task-progress';
 import { DraftKeeper } from './draft-keeper';
 import { keepingWords } from './keeping-words';
 import type { Beginning, MendingOpening } from './mending-opening';
 import { MendingOutlook } from './mending-outlook';
 import { MENDING_PAUSES } from './mending-pauses';
-import { MendingProgress } from './mending-progress';
 import { MendingRun } from './mending-run';
 import { SetChanged } from './set-changed';
 import { StepForm } from './step-form';
@@ -42,15 +43,16 @@ import { Trials } from './trials';
 @Component({
   selector: 'tb-mending-board',
   imports: [
+    FocusHere,
     LoadingState,
     MendingOutlook,
-    MendingProgress,
     PageHead,
     ProblemNotice,
     RouterLink,
     SetChanged,
     StepForm,
     StepList,
+    TaskProgress,
   ],
   providers: [DraftKeeper, Trials],
   templateUrl: './mending-board.html',

@@ -303,6 +303,16 @@ describe('making the revision', () => {
     expect(room.button('Cancelling').hasAttribute('disabled')).toBe(true);
   });
 
+  it('says when it cannot be watched, and looks again when asked', async () => {
+    const room = await openTwo();
+    await room.press('Make revision 3');
+    await room.answer(MAKING, mendTask('queued'), 'POST');
+    await room.refuse(TASK, { status: 500, code: 'internal', detail: 'Try again.' });
+    await room.press('Look again how far it is');
+    await room.answer(TASK, mendTask('done'));
+    expect(room.address).toBe('/records/revisions/revision3');
+  });
+
   it('says that nothing was made of a cancelled task, and leaves the list as it was', async () => {
     const room = await openTwo();
     await room.press('Make revision 3');

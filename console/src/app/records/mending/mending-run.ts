@@ -1,74 +1,46 @@
 import { DestroyRef, computed, inject, signal } from '@angular/core';
-import { Observable, Subscription, switchMap } from 'rxjs';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { Observable, finalize } from 'rxjs';
 import type { RecordTask } from '../../api/contract';
 import { problemOf, type Problem } from '../../api/problem';
-import { RecordTasksClient } from '../../api/record-tasks-client';
+import { taskProblem } from '../../api/record-tasks-client';
 import { Announcer } from '../../ui/announcer';
+import { FollowedTask } from '../task-progress/followed-task';
 
 /** The making of one revision: how far it is, why it failed, and the way to stop it. Make it in an injection context. */
 export class MendingRun {
-  private readonly tasks = inject(RecordTasksClient);
   private readonly announcer = inject(Announcer);
-  private readonly current = signal<RecordTask | undefined>(undefined);
+  private readonly destroyRef = inject(DestroyRef);
+  private readonly taskId = signal<string | undefined>(undefined);
+  private readonly sending = signal(false);
   private readonly failure = signal<Problem | undefined>(undefined);
-  private readonly begun = signal(false);
-  private readonly stopping = signal(false);
-  private subscription?: Subscription;
+  private done: (revisionId: string) => void = () => undefined;
 
-  readonly task = this.current.asReadonly();
+  /** How far it is, once it has begun. */
+  readonly work = new FollowedTask(this.taskId, (task) => this.end(task));
+  /** Why no revision was made. */
   readonly problem = this.failure.asReadonly();
-  readonly underWay = this.begun.asReadonly();
-  readonly cancelling = this.stopping.asReadonly();
-  readonly progress = computed(() => this.current()?.progress);
-
-  constructor() {
-    inject(DestroyRef).onDestroy(() => this.subscription?.unsubscribe());
-  }
+  readonly underWay = computed(() => this.sending() || this.taskId() !== undefined);
 
   start(request: Observable<RecordTask>, done: (revisionId: string) => void): void {
     this.failure.set(undefined);
-    this.current.set(undefined);
-    this.stopping.set(false);
-    this.begun.set(true);
-    this.subscription = request.pipe(switchMap(({ id }) => this.tasks.follow(id))).subscribe({
-      next: (task) => this.take(task, done),
-      error: (error: unknown) => this.fail(problemOf(error)),
-    });
+    this.done = done;
+    this.sending.set(true);
+    request
+      .pipe(
+        finalize(() => this.sending.set(false)),
+        takeUntilDestroyed(this.destroyRef),
+      )
+      .subscribe({
+        next: ({ id }) => this.taskId.set(id),
+        error: (error: unknown) => this.failure.set(problemOf(error)),
+      });
   }
 
-  /** The work goes on until the service has stopped it, which following it tells. */
-  cancel(): void {
-    const task = this.current();
-    if (!task) return;
-    this.stopping.set(true);
-    // Refused where the work has ended already; that is told by following it too.
-    this.tasks.cancel(task.id).subscribe({ error: () => this.stopping.set(false) });
+  private end(task: RecordTask): void {
+    if (task.state === 'done' && task.revisionId !== null) return this.done(task.revisionId);
+    this.taskId.set(undefined);
+    if (task.state === 'failed') this.failure.set(taskProblem(task, 'The revision could not be made'));
+    else this.announcer.show('The mending was cancelled. No revision was made; your steps are as they were.');
   }
-
-  private take(task: RecordTask, done: (revisionId: string) => void): void {
-    this.current.set(task);
-    if (task.state === 'done' && task.revisionId !== null) done(task.revisionId);
-    if (task.state === 'failed') this.fail(problemOfTask(task));
-    if (task.state === 'cancelled') this.stopped();
-  }
-
-  private stopped(): void {
-    this.begun.set(false);
-    this.announcer.show('The mending was cancelled. No revision was made; your steps are as they were.');
-  }
-
-  private fail(problem: Problem): void {
-    this.begun.set(false);
-    this.failure.set(problem);
-  }
-}
-
-function problemOfTask({ problem }: RecordTask): Problem {
-  return {
-    code: problem?.code ?? 'internal',
-    status: 422,
-    title: 'The revision could not be made',
-    detail: problem?.detail ?? 'Nothing was kept. Try again.',
-    errors: (problem?.errors ?? []).map(({ detail, pointer }) => ({ detail, field: pointer.replace(/^#?\/?/, '') })),
-  };
 }

@@ -6,10 +6,10 @@ type Stage = Progress['stage'];
 
 export const STAGE_WORDS: Readonly<Record<Stage, string>> = {
   waiting: 'Waiting for other work on records to end',
-  reading: 'Reading',
-  measuring: 'Measuring',
-  mending: 'Mending',
-  storing: 'Storing',
+  reading: 'Reading the file',
+  measuring: 'Measuring the columns',
+  mending: 'Carrying out the steps',
+  storing: 'Storing the rows',
 };
 
 /** `120 of 250 MB`, `12 of 30 columns`; nothing where only the desk knows what it counts. */

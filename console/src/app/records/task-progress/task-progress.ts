@@ -7,47 +7,23 @@ import { STAGE_WORDS, countWords } from './task-words';
   selector: 'tb-task-progress',
   template: `
     <div class="tb-panel tb-panel-body">
-      <p class="heading">{{ heading() }}</p>
+      @if (heading(); as heading) {
+        <p class="heading">{{ heading }}</p>
+      }
       <progress [attr.aria-label]="stage()" [attr.max]="total()" [attr.value]="done()"></progress>
       <p class="words tb-figures">{{ stage() }}{{ counted() ? ', ' + counted() : '' }}</p>
       <p class="tb-only-read" role="status">{{ stage() }}</p>
       <button type="button" class="tb-plain-button" [disabled]="cancelling()" (click)="cancelled.emit()">
-        {{ cancelling() ? 'Cancelling' : 'Cancel' }}
+        {{ cancelling() ? 'Cancelling…' : cancelLabel() }}
       </button>
     </div>
   `,
-  styles: `
-    :host {
-      display: block;
-      max-width: 32rem;
-    }
-
-    .heading {
-      font-weight: 500;
-      overflow-wrap: anywhere;
-    }
-
-    progress {
-      display: block;
-      width: 100%;
-      margin-bottom: var(--tb-space-2);
-
-      &:indeterminate {
-        background: repeating-linear-gradient(-45deg, var(--tb-brass) 0 0.5rem, var(--tb-brass-fill) 0.5rem 1rem);
-
-        &::-webkit-progress-bar {
-          background: none;
-        }
-      }
-    }
-
-    .words {
-      color: var(--tb-slate);
-    }
-  `,
+  styleUrl: './task-progress.scss',
 })
 export class TaskProgress {
-  readonly heading = input.required<string>();
+  /** What is worked on, where the screen does not say it. */
+  readonly heading = input<string>();
+  readonly cancelLabel = input('Cancel');
   /** Undefined until the first answer. */
   readonly task = input<RecordTask>();
   readonly cancelling = input(false);
