@@ -52,10 +52,10 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   const { database, databasePath, journal, clock, log, maximumFileBytes, threadArguments } = options;
   const store = new RecordsStore(database);
   const keptFiles = new KeptFiles(join(options.config.dataFolder, 'uploads'), maximumFileBytes);
-  const cells = new CellStorage({ databasePath, threadArguments });
+  const cells = new CellStorage({ databasePath, threadArguments, log });
   const recordTasks = new RecordTasks({ tasks: new RecordTasksStore(database), clock, log });
   const importer = new RevisionImporter({
-    ...{ database, records: store, files: keptFiles, cells, clock, log, databasePath, threadArguments },
+    ...{ database, records: store, files: keptFiles, cells, clock, databasePath, threadArguments },
   });
   const bringingIn = new BringingIn({ records: store, importer, journal, clock });
   const records = new RecordsService({

@@ -1,4 +1,3 @@
-import type { Logger } from 'pino';
 import { timeText, type Clock } from '../clock';
 import type { Database } from '../database/database';
 import { DeskError } from '../errors';
@@ -45,7 +44,6 @@ export interface ImporterParts {
   readonly files: KeptFiles;
   readonly cells: CellStorage;
   readonly clock: Clock;
-  readonly log: Logger;
   readonly databasePath: string;
   /** Node's own arguments for the threads; none when compiled. */
   readonly threadArguments: readonly string[];
@@ -96,13 +94,11 @@ export class RevisionImporter {
     await this.keep(given, made, context, around);
   }
 
-  /** The unit of work was undone, so the name that the file was given is undone too. What cannot be cleared is swept. */
+  /** The unit of work was undone, so the name that the file was given is undone too. */
   private async undo(file: ReceivedFile, revisionId: string): Promise<void> {
-    const { files, cells, log } = this.parts;
+    const { files, cells } = this.parts;
     await files.takeBack(file, revisionId);
-    await cells
-      .clear(revisionId)
-      .catch((error: unknown) => log.error({ err: error, revisionId }, 'cells could not be cleared'));
+    await cells.clearFailed(revisionId);
   }
 
   private async make({ file, choices, base }: Import, spills: Spills, context: TaskContext): Promise<MadeTable> {

@@ -8,7 +8,7 @@ export function translateFullDisk(error: unknown): unknown {
   if (!fullCodes.includes((error as { readonly code?: unknown } | null)?.code)) return error;
   return new DeskError(
     'storage-full',
-    'The service’s disk is full. Nothing was kept of the file. Ask whoever runs the service to make room, then send it again.',
+    'The service’s disk is full. Nothing was kept of this. Ask whoever runs the service to make room, then try again.',
     { cause: error },
   );
 }

@@ -7,6 +7,7 @@ import type { KeptFiles } from '../kept-files';
 import { requireExpectedNewest } from '../newest-guard';
 import type { RecordsStore, RevisionRecord } from '../records-store';
 import { requireRows } from '../required-rows';
+import { translateFullDisk } from '../storage-full';
 import { storeColumns } from '../store-columns';
 import type { CellStorage } from '../storing/cell-storage';
 import type { RecordTasks, TaskContext, TaskWork } from '../tasks/record-tasks';
@@ -73,6 +74,8 @@ export class MendingService {
       const stored = { revisionId: id, table: mended.table, spillPath };
       await cells.storeFor(stored, keep, { signal, onProgress: progress });
       return { recordSetId };
+    } catch (error) {
+      throw translateFullDisk(error);
     } finally {
       await files.remove(spillPath);
     }

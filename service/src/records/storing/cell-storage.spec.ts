@@ -1,4 +1,4 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import BetterSqlite3 from 'better-sqlite3';
@@ -20,6 +20,7 @@ describe('the storage of cells', () => {
   let storage: CellStorage;
   let table: SpilledTable;
   let connection: BetterSqlite3.Database;
+  const log = { error: jest.fn() };
 
   const stored = (revisionId: string): { position: number; block: number; rowCount: number; cells: Buffer }[] =>
     connection
@@ -52,7 +53,7 @@ describe('the storage of cells', () => {
     ] as const;
     table = finishTable({ rowCount, columns }, spill);
     spill.close();
-    storage = new CellStorage({ databasePath, threadArguments: ['-r', hook] });
+    storage = new CellStorage({ databasePath, threadArguments: ['-r', hook], log });
   });
 
   afterEach(() => {
@@ -99,6 +100,19 @@ describe('the storage of cells', () => {
     await expect(failing).rejects.toThrow('the name is taken');
     expect(stored('r1')).toEqual([]);
     expect(stored('r2')).toHaveLength(8);
+  });
+
+  it('tells what failed first, and logs that the cells could not be cleared after it', async () => {
+    const failing = storage.storeFor({ revisionId: 'r1', table, spillPath }, async () => {
+      connection.exec('ALTER TABLE record_blocks RENAME TO elsewhere');
+      throw new Error('the name is taken');
+    });
+    await expect(failing).rejects.toThrow('the name is taken');
+    expect(log.error).toHaveBeenCalledWith(
+      { err: expect.objectContaining({ code: 'SQLITE_ERROR' }), revisionId: 'r1' },
+      expect.any(String),
+    );
+    expect(existsSync(spillPath)).toBe(false);
   });
 
   it('sweeps cells without a revision, unless work that is alive is storing them', async () => {

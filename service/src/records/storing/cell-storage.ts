@@ -1,5 +1,7 @@
+import { rm } from 'node:fs/promises';
 import { extname, join } from 'node:path';
 import { Worker } from 'node:worker_threads';
+import type { Logger } from 'pino';
 import { DeskError } from '../../errors';
 import type { SpilledTable } from '../store-columns';
 import type { TaskProgress } from '../tasks/record-tasks-store';
@@ -9,6 +11,7 @@ export interface CellStorageParts {
   readonly databasePath: string;
   /** Node's own arguments for the storing thread; none when compiled. */
   readonly threadArguments: readonly string[];
+  readonly log: Pick<Logger, 'error'>;
 }
 
 export interface StoringOptions {
@@ -38,7 +41,7 @@ export class CellStorage {
 
   /**
    * Stores a revision's cells before its row exists: `storeColumns` then checks that they are all there, inside the
-   * unit of work that inserts the row. When that or this fails, call `clear`; `storeFor` does all of it.
+   * unit of work that inserts the row. When that or this fails, call `clearFailed`; `storeFor` does all of it.
    */
   async storeAhead(
     revisionId: string,
@@ -53,7 +56,10 @@ export class CellStorage {
     );
   }
 
-  /** Stores the cells ahead, then does the unit of work that needs them; when either fails, the cells are cleared. */
+  /**
+   * Stores the cells ahead, then does the unit of work that needs them; when either fails, the cells are cleared. The
+   * spill file goes before them: on a full disk, cells can only be cleared in the room that it leaves.
+   */
   async storeFor(
     { revisionId, table, spillPath }: CellsToStore,
     work: () => Promise<void>,
@@ -63,7 +69,8 @@ export class CellStorage {
       await this.storeAhead(revisionId, table, spillPath, options);
       await work();
     } catch (error) {
-      await this.clear(revisionId);
+      await rm(spillPath, { force: true });
+      await this.clearFailed(revisionId);
       throw error;
     }
   }
@@ -71,6 +78,15 @@ export class CellStorage {
   /** Removes every cell of a revision. */
   async clear(revisionId: string): Promise<void> {
     await this.run({ kind: 'clear', revisionId }, {});
+  }
+
+  /** As `clear`, after something has failed, which is what counts: what cannot be cleared now is swept. */
+  async clearFailed(revisionId: string): Promise<void> {
+    try {
+      await this.clear(revisionId);
+    } catch (error) {
+      this.parts.log.error({ err: error, revisionId }, 'cells could not be cleared');
+    }
   }
 
   /** Removes cells that a process left behind when it was killed. */

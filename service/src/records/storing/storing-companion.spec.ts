@@ -3,6 +3,7 @@ import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import BetterSqlite3 from 'better-sqlite3';
+import { pino } from 'pino';
 import { copyTemplateDatabase } from '../../../../test/support/template-database';
 import type { ReadingChoices } from '../reading/reading-choices';
 import { SpillFile } from '../reading/spill-file';
@@ -41,7 +42,11 @@ describe('storing while a file is still being read', () => {
     writeFileSync(path, `a,b,c,d,e\n${lines.join('\n')}\n`);
     const ahead = { databasePath, revisionId: 'r1' };
     const reading = await readTableInThread({ path, spillPath, choices, ahead }, { nodeArguments });
-    await new CellStorage({ databasePath, threadArguments: nodeArguments }).storeAhead('r1', reading, spillPath);
+    await new CellStorage({ databasePath, threadArguments: nodeArguments, log: pino({ level: 'silent' }) }).storeAhead(
+      'r1',
+      reading,
+      spillPath,
+    );
     const spill = new SpillFile(spillPath, 'r');
     const expected = reading.columns.flatMap((column) =>
       column.blocks.map((place, block) => ({
