@@ -1,6 +1,7 @@
-import BetterSqlite3 from 'better-sqlite3';
+import type { Database } from 'better-sqlite3';
 import type { RecordColumn, RecordTable } from '../regression/records';
 import { cellsToTexts, type ColumnKind } from './cell-blocks';
+import { withReadingConnection } from './reading-connection';
 
 interface ColumnRow {
   readonly position: number;
@@ -10,7 +11,7 @@ interface ColumnRow {
   readonly levels: string;
 }
 
-/** The revision, or a column of it, is not in the database. */
+/** The revision's rows, or a column of it, are not in the database. */
 export class RecordsMissingError extends Error {
   constructor(what: string) {
     super(`${what} is not in the database.`);
@@ -19,33 +20,36 @@ export class RecordsMissingError extends Error {
 }
 
 /**
+ * How many rows the revision has. Throws when it was deleted or its rows were erased. Both are said in its row before
+ * cells and levels go, so whoever asks once more after reading knows that what was read was whole.
+ */
+export function rowCountOf(connection: Database, revisionId: string): number {
+  const found = connection
+    .prepare('SELECT row_count FROM record_revisions WHERE id = ? AND erased_at IS NULL')
+    .pluck()
+    .get(revisionId) as number | undefined;
+  if (found === undefined) throw new RecordsMissingError(`Revision ${revisionId}`);
+  return found;
+}
+
+/**
  * Reads a revision's columns (all, or those named, in the order named) over a read-only connection of its own.
  * Synchronous: for worker threads. Cost: one copy of the cells asked for.
  */
-export function readRecordTable(
+export const readRecordTable = (
   databasePath: string,
   revisionId: string,
   columnNames?: readonly string[],
-): RecordTable {
-  const connection = new BetterSqlite3(databasePath, { readonly: true, fileMustExist: true });
-  try {
-    connection.pragma('busy_timeout = 10000');
-    return readRecordTableWith(connection, revisionId, columnNames);
-  } finally {
-    connection.close();
-  }
-}
+): RecordTable =>
+  withReadingConnection(databasePath, (connection) => readRecordTableWith(connection, revisionId, columnNames));
 
 /** As `readRecordTable`, over a connection that is open already. */
 export function readRecordTableWith(
-  connection: BetterSqlite3.Database,
+  connection: Database,
   revisionId: string,
   columnNames?: readonly string[],
 ): RecordTable {
-  const revision = connection
-    .prepare('SELECT row_count AS rowCount FROM record_revisions WHERE id = ?')
-    .get(revisionId) as { readonly rowCount: number } | undefined;
-  if (!revision) throw new RecordsMissingError(`Revision ${revisionId}`);
+  const rowCount = rowCountOf(connection, revisionId);
   const rows = connection
     .prepare('SELECT position, name, kind, unit, levels FROM record_columns WHERE revision_id = ? ORDER BY position')
     .all(revisionId) as ColumnRow[];
@@ -54,8 +58,10 @@ export function readRecordTableWith(
     .prepare('SELECT cells FROM record_blocks WHERE revision_id = ? AND position = ? ORDER BY block')
     .pluck();
   const read = (row: ColumnRow): RecordColumn =>
-    toRecordColumn(row, blocks.iterate(revisionId, row.position) as IterableIterator<Buffer>, revision.rowCount);
-  return { rowCount: revision.rowCount, columns: wanted.map(read) };
+    toRecordColumn(row, blocks.iterate(revisionId, row.position) as IterableIterator<Buffer>, rowCount);
+  const columns = wanted.map(read);
+  rowCountOf(connection, revisionId);
+  return { rowCount, columns };
 }
 
 function requireColumn(rows: readonly ColumnRow[], name: string): ColumnRow {
@@ -66,7 +72,7 @@ function requireColumn(rows: readonly ColumnRow[], name: string): ColumnRow {
 
 function toRecordColumn(row: ColumnRow, blocks: Iterable<Buffer>, rowCount: number): RecordColumn {
   const { name, kind } = row;
-  if (kind === 'text') return { name, kind, values: [...blocks].flatMap(cellsToTexts) };
+  if (kind === 'text') return { name, kind, values: textsOf(blocks, rowCount) };
   if (kind === 'category') {
     const codes = new Int32Array(rowCount);
     copyCells(codes, blocks);
@@ -77,6 +83,13 @@ function toRecordColumn(row: ColumnRow, blocks: Iterable<Buffer>, rowCount: numb
   return kind === 'date'
     ? { name, kind, values }
     : { name, kind, values, ...(row.unit !== null && { unit: row.unit }) };
+}
+
+function textsOf(blocks: Iterable<Buffer>, rowCount: number): readonly (string | null)[] {
+  const values: (string | null)[] = [];
+  for (const cells of blocks) for (const text of cellsToTexts(cells)) values.push(text);
+  if (values.length !== rowCount) throw new RecordsMissingError('A block of cells');
+  return values;
 }
 
 function copyCells(target: Float64Array | Int32Array, blocks: Iterable<Buffer>): void {

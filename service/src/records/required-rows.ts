@@ -1,5 +1,5 @@
-import { DeskError } from '../errors';
-import type { RevisionRecord } from './records-store';
+import { DeskError, notFound } from '../errors';
+import type { RecordsStore, RevisionRecord } from './records-store';
 
 /**
  * Refuses a revision whose rows are gone. Whatever reads cells, or what was taken from cells, calls this first; the
@@ -15,4 +15,31 @@ export function requireRows({
     'records-erased',
     `The rows of revision ${number} of ${recordSetName} were erased on ${erasedAt.slice(0, 10)}, because the record set’s retention date had passed. Bring the records in again if you still may keep them.`,
   );
+}
+
+type Revisions = Pick<RecordsStore, 'findRevision'>;
+
+/** The revision, when it is there with its rows. */
+export async function revisionWithRows(records: Revisions, id: string): Promise<RevisionRecord> {
+  const revision = await records.findRevision(id);
+  if (!revision) throw notFound('revision');
+  requireRows(revision);
+  return revision;
+}
+
+/**
+ * Does what needs the rows of these revisions. A thread that lost them on the way, because they were erased or deleted
+ * meanwhile, fails in its own words; whoever asked is told what became of them.
+ */
+export async function withRowsOf<Result>(
+  records: Revisions,
+  ids: readonly string[],
+  work: () => Promise<Result>,
+): Promise<Result> {
+  try {
+    return await work();
+  } catch (error) {
+    if (!(error instanceof DeskError)) for (const id of ids) await revisionWithRows(records, id);
+    throw error;
+  }
 }

@@ -1,10 +1,10 @@
 import { extname, join } from 'node:path';
 import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
-import { DeskError, notFound } from '../../errors';
+import { DeskError } from '../../errors';
 import { Remembered } from '../looking/remembered';
 import type { RecordsStore } from '../records-store';
-import { requireRows } from '../required-rows';
+import { revisionWithRows, withRowsOf } from '../required-rows';
 import { answerOfThread } from '../worker-answer';
 import type { FindingsOutcome, FindingsTask } from './findings-task';
 
@@ -33,9 +33,7 @@ export class FindingsService {
   constructor(private readonly parts: FindingsParts) {}
 
   async list(revisionId: string, target: string | undefined): Promise<components['schemas']['RecordFindings']> {
-    const revision = await this.parts.records.findRevision(revisionId);
-    if (!revision) throw notFound('revision');
-    requireRows(revision);
+    await revisionWithRows(this.parts.records, revisionId);
     if (target !== undefined) await this.requireNumeric(revisionId, target);
     const found = await this.search(revisionId, target ?? null);
     const items = found.map(({ where = null, steps = [], ...finding }) => ({
@@ -59,6 +57,7 @@ export class FindingsService {
   }
 
   private searchInThread(task: FindingsTask): Promise<FindingsOutcome> {
-    return answerOfThread(workerPath, task, this.parts.threadArguments);
+    const { records, threadArguments } = this.parts;
+    return withRowsOf(records, [task.revisionId], () => answerOfThread(workerPath, task, threadArguments));
   }
 }

@@ -7,8 +7,8 @@ import type { Journal } from '../../journal/journal';
 import { requireNotPast } from '../keeping/retention-date';
 import { requireExpectedNewest } from '../newest-guard';
 import type { RecordsStore, RevisionRecord } from '../records-store';
-import { requireRows } from '../required-rows';
-import type { Import, RevisionImporter, StoredRevision } from '../revision-importer';
+import { revisionWithRows, withRowsOf } from '../required-rows';
+import type { Around, Import, RevisionImporter, StoredRevision } from '../revision-importer';
 import type { TaskContext, TaskWork } from '../tasks/record-tasks';
 import { nameTaken } from './record-set-words';
 
@@ -93,19 +93,16 @@ export class BringingIn {
     await this.requireOpenSet(recordSetId, expectedNewest);
     return async (context: TaskContext) => {
       const base = await this.requireBase(revisionId);
-      const appending = this.parts.importer.bringIn({ ...given, base }, context, async (store) => {
+      const append: Around = async (store) => {
         await this.requireBase(revisionId);
         await this.requireOpenSet(recordSetId, expectedNewest);
         const number = await this.parts.records.takeNumber(recordSetId);
         const stored = await store({ recordSetId, number });
         const summary = `Revision ${number} of ${base.recordSetName} is revision ${base.number} with ${given.fileName} appended: ${rowsOf(stored)}`;
         await this.finish(given, { action: 'record-revision-appended', recordSetId, summary });
-      });
-      await appending.catch(async (error: unknown) => {
-        // A thread that lost the base's rows on the way fails in its own words; whoever asked is told what became of them.
-        if (!(error instanceof DeskError)) await this.requireBase(revisionId);
-        throw error;
-      });
+      };
+      const { records, importer } = this.parts;
+      await withRowsOf(records, [revisionId], () => importer.bringIn({ ...given, base }, context, append));
       return { recordSetId };
     };
   }
@@ -117,11 +114,8 @@ export class BringingIn {
     await this.parts.journal.write({ actorId: given.personId, action, ...subject, summary });
   }
 
-  private async requireBase(id: string): Promise<RevisionRecord> {
-    const base = await this.parts.records.findRevision(id);
-    if (!base) throw notFound('revision');
-    requireRows(base);
-    return base;
+  private requireBase(id: string): Promise<RevisionRecord> {
+    return revisionWithRows(this.parts.records, id);
   }
 
   /** The set's newest revision. A set whose last day has passed takes no more rows: they would be erased at once. */

@@ -1,10 +1,9 @@
 import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
-import { notFound } from '../../errors';
 import { proposeInThread } from '../proposal-thread';
 import type { ReadingChoices } from '../reading/reading-choices';
 import type { RecordsStore } from '../records-store';
-import { requireRows } from '../required-rows';
+import { revisionWithRows } from '../required-rows';
 
 type Proposal = components['schemas']['ReadingProposal'];
 
@@ -42,10 +41,7 @@ export class ReadingProposals {
 
   private async baseOf(id: string) {
     const { records } = this.parts;
-    const base = await records.findRevision(id);
-    if (!base) throw notFound('revision');
-    requireRows(base);
-    const { number, recordSetId, recordSetName } = base;
+    const { number, recordSetId, recordSetName } = await revisionWithRows(records, id);
     return { revision: { id, number, recordSetId, recordSetName }, base: await records.columnsOf(id) };
   }
 }

@@ -1,6 +1,6 @@
 import { parentPort, workerData } from 'node:worker_threads';
-import BetterSqlite3 from 'better-sqlite3';
 import { RevisionCells } from '../looking/revision-cells';
+import { openForReading } from '../reading-connection';
 import { byteOrderMark, csvText } from './csv-text';
 import type { ExportedPart, ExportTask } from './export-task';
 
@@ -9,9 +9,8 @@ const partRows = 4000;
 
 /** The header, then the rows; of the cells, one block of every column is in memory at a time. */
 function* partsOf({ databasePath, revisionId }: ExportTask): Generator<string> {
-  const connection = new BetterSqlite3(databasePath, { readonly: true, fileMustExist: true });
+  const connection = openForReading(databasePath);
   try {
-    connection.pragma('busy_timeout = 10000');
     const cells = new RevisionCells(connection, revisionId);
     yield byteOrderMark + csvText([cells.columns.map((column) => column.name)]);
     let begin = 0;

@@ -2,9 +2,8 @@ import { once } from 'node:events';
 import { extname, join } from 'node:path';
 import { Readable } from 'node:stream';
 import { Worker } from 'node:worker_threads';
-import { notFound } from '../../errors';
 import type { RecordsStore, RevisionRecord } from '../records-store';
-import { requireRows } from '../required-rows';
+import { revisionWithRows } from '../required-rows';
 import type { ExportedPart, ExportTask } from './export-task';
 
 export interface RevisionExportsParts {
@@ -28,9 +27,7 @@ export class RevisionExports {
   constructor(private readonly parts: RevisionExportsParts) {}
 
   async open(id: string): Promise<ExportedFile> {
-    const revision = await this.parts.records.findRevision(id);
-    if (!revision) throw notFound('revision');
-    requireRows(revision);
+    const revision = await revisionWithRows(this.parts.records, id);
     const task: ExportTask = { databasePath: this.parts.databasePath, revisionId: id };
     return {
       fileName: fileNameOf(revision),

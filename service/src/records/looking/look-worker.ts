@@ -1,6 +1,7 @@
 import { parentPort, workerData } from 'node:worker_threads';
 import type { Database } from 'better-sqlite3';
 import type { DateRecordColumn, NumericRecordColumn } from '../../regression/records';
+import { withReadingConnection } from '../reading-connection';
 import { readRecordTableWith, RecordsMissingError } from '../record-table-reader';
 import { clusteredOrder } from './clustered-order';
 import { compareTables } from './comparison/compare-tables';
@@ -8,7 +9,7 @@ import { storedTable } from './comparison/stored-table';
 import { correlationMap } from './correlation-map';
 import type { LookTask, LookTasks } from './look-task';
 import { matchingRows } from './matching-rows';
-import { RevisionCells, withReadingConnection } from './revision-cells';
+import { RevisionCells } from './revision-cells';
 import { scatterSample, type ScatterPoints } from './scatter-sample';
 
 function measure(connection: Database, revisionId: string, name: string): NumericRecordColumn | DateRecordColumn {

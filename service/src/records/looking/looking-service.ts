@@ -1,11 +1,11 @@
 import { extname, join } from 'node:path';
 import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
-import { DeskError, notFound } from '../../errors';
+import { DeskError } from '../../errors';
 import type { Page } from '../../http/page';
 import { toColumn, toRevisionSummary } from '../record-answers';
 import type { ColumnRecord, RecordsStore, RevisionRecord } from '../records-store';
-import { requireRows } from '../required-rows';
+import { revisionWithRows, withRowsOf } from '../required-rows';
 import { readRows } from '../revision-rows';
 import { answerOfThread } from '../worker-answer';
 import type { TableComparison } from './comparison/compare-tables';
@@ -137,17 +137,17 @@ export class LookingService {
     });
   }
 
-  private async readable(id: string): Promise<RevisionRecord> {
-    const revision = await this.parts.records.findRevision(id);
-    if (!revision) throw notFound('revision');
-    requireRows(revision);
-    return revision;
+  private readable(id: string): Promise<RevisionRecord> {
+    return revisionWithRows(this.parts.records, id);
   }
 
   private ask<Kind extends LookKind>(kind: Kind, asked: LookTasks[Kind]['asked']): Promise<LookTasks[Kind]['answer']> {
-    const { databasePath, threadArguments } = this.parts;
+    const { records, databasePath, threadArguments } = this.parts;
+    const ids = 'revisionId' in asked ? [asked.revisionId] : [asked.fromId, asked.toId];
     const queue = kind === 'correlations' || kind === 'comparison' ? this.long : this.quick;
-    return queue(() => answerOfThread(workerPath, { kind, databasePath, asked }, threadArguments));
+    return withRowsOf(records, ids, () =>
+      queue(() => answerOfThread(workerPath, { kind, databasePath, asked }, threadArguments)),
+    );
   }
 }
 

@@ -1,6 +1,6 @@
-import BetterSqlite3 from 'better-sqlite3';
+import type { Database } from 'better-sqlite3';
 import { cellsToNumbers, type ColumnKind } from '../cell-blocks';
-import { RecordsMissingError } from '../record-table-reader';
+import { RecordsMissingError, rowCountOf } from '../record-table-reader';
 import { cellsAsShown, type CellValue } from '../revision-rows';
 
 export interface StoredColumn {
@@ -10,20 +10,6 @@ export interface StoredColumn {
   readonly levels: readonly { readonly value: string }[];
 }
 
-/** Opens a connection of a thread's own, which can only read, for as long as the work takes. Synchronous. */
-export function withReadingConnection<Result>(
-  databasePath: string,
-  work: (connection: BetterSqlite3.Database) => Result,
-): Result {
-  const connection = new BetterSqlite3(databasePath, { readonly: true, fileMustExist: true });
-  try {
-    connection.pragma('busy_timeout = 10000');
-    return work(connection);
-  } finally {
-    connection.close();
-  }
-}
-
 /** A revision's cells, block by block, so that no more than a few blocks are in memory. For worker threads. */
 export class RevisionCells {
   readonly columns: readonly StoredColumn[];
@@ -31,7 +17,7 @@ export class RevisionCells {
   readonly blockRowCounts: readonly number[];
 
   constructor(
-    private readonly connection: BetterSqlite3.Database,
+    private readonly connection: Database,
     private readonly revisionId: string,
   ) {
     const columns = connection
@@ -45,6 +31,8 @@ export class RevisionCells {
       .prepare('SELECT row_count FROM record_blocks WHERE revision_id = ? AND position = 0 ORDER BY block')
       .pluck()
       .all(revisionId) as number[];
+    // Asked last: the levels go with the rows.
+    rowCountOf(connection, revisionId);
   }
 
   column(name: string): StoredColumn {

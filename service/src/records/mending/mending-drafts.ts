@@ -1,9 +1,8 @@
 import type { components } from '../../../../openapi/types/desk';
 import { timeText, type Clock } from '../../clock';
 import type { Database } from '../../database/database';
-import { notFound } from '../../errors';
 import type { RecordsStore } from '../records-store';
-import { requireRows } from '../required-rows';
+import { revisionWithRows } from '../required-rows';
 import type { MendingDraftsStore } from './mending-drafts-store';
 import type { MendStep } from './step-change';
 
@@ -21,25 +20,19 @@ export class MendingDrafts {
   constructor(private readonly parts: MendingDraftsParts) {}
 
   async read(personId: string, revisionId: string): Promise<Draft> {
-    await this.requireRevision(revisionId);
+    await revisionWithRows(this.parts.records, revisionId);
     const draft = await this.parts.drafts.find(revisionId, personId);
     return draft ? { steps: [...draft.steps], changedAt: draft.changedAt } : { steps: [], changedAt: null };
   }
 
   /** With no steps there is no draft any more. No journal: it is a person's own scratch paper. */
   async keep(personId: string, revisionId: string, steps: readonly MendStep[]): Promise<Draft> {
-    const { database, drafts, clock } = this.parts;
+    const { database, records, drafts, clock } = this.parts;
     await database.unitOfWork(async () => {
-      await this.requireRevision(revisionId);
+      await revisionWithRows(records, revisionId);
       if (steps.length === 0) await drafts.remove(revisionId, personId);
       else await drafts.keep(revisionId, personId, { steps, changedAt: timeText(clock) });
     });
     return this.read(personId, revisionId);
-  }
-
-  private async requireRevision(id: string): Promise<void> {
-    const revision = await this.parts.records.findRevision(id);
-    if (!revision) throw notFound('revision');
-    requireRows(revision);
   }
 }

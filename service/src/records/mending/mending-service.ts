@@ -1,12 +1,11 @@
 import type { components } from '../../../../openapi/types/desk';
 import { timeText, type Clock } from '../../clock';
 import type { Database } from '../../database/database';
-import { DeskError, notFound } from '../../errors';
 import type { Journal } from '../../journal/journal';
 import type { KeptFiles } from '../kept-files';
 import { requireExpectedNewest } from '../newest-guard';
 import type { RecordsStore, RevisionRecord } from '../records-store';
-import { requireRows } from '../required-rows';
+import { revisionWithRows, withRowsOf } from '../required-rows';
 import { translateFullDisk } from '../storage-full';
 import { storeColumns } from '../store-columns';
 import type { CellStorage } from '../storing/cell-storage';
@@ -53,8 +52,9 @@ export class MendingService {
 
   /** What the steps would do. */
   async tryOut(revisionId: string, steps: readonly MendStep[], signal?: AbortSignal): Promise<Schemas['MendingTrial']> {
+    const { records, thread } = this.parts;
     await this.requireBase(revisionId);
-    return this.parts.thread.tryOut({ revisionId, steps }, signal);
+    return withRowsOf(records, [revisionId], () => thread.tryOut({ revisionId, steps }, signal));
   }
 
   private async workOf(wanted: WantedMending): Promise<TaskWork> {
@@ -85,13 +85,9 @@ export class MendingService {
     const { revisionId, steps } = wanted;
     const told = (done: number): void => progress({ stage: 'mending', done, total: steps.length });
     told(0);
-    try {
-      return await this.parts.thread.mend({ revisionId, steps, spillPath }, { signal, onProgress: told });
-    } catch (error) {
-      // A thread that lost its records on the way fails in its own words; whoever asked is told what became of them.
-      if (!(error instanceof DeskError)) await this.requireBase(revisionId);
-      throw error;
-    }
+    return withRowsOf(this.parts.records, [revisionId], () =>
+      this.parts.thread.mend({ revisionId, steps, spillPath }, { signal, onProgress: told }),
+    );
   }
 
   /** Asked again inside the unit of work: the revision may have been deleted or erased while the thread was at it. */
@@ -130,10 +126,7 @@ export class MendingService {
     });
   }
 
-  private async requireBase(id: string): Promise<RevisionRecord> {
-    const base = await this.parts.records.findRevision(id);
-    if (!base) throw notFound('revision');
-    requireRows(base);
-    return base;
+  private requireBase(id: string): Promise<RevisionRecord> {
+    return revisionWithRows(this.parts.records, id);
   }
 }
