@@ -122,6 +122,24 @@ describe('the retention date', () => {
     expect(answers).toEqual(Object.fromEntries(Object.keys(asked).map((what) => [what, gone])));
   });
 
+  it('fails a fit whose rows are erased before it reads them, even while their cells still lie there', async () => {
+    const { knex, fitRunner, fits } = service.services;
+    const set = await desk.bringIn();
+    const held = jest.spyOn(fitRunner, 'wake').mockImplementation(() => undefined);
+    const id = await desk.startFit(set.revision.id);
+    await knex('recordRevisions')
+      .where({ id: set.revision.id })
+      .update({ erasedAt: service.clock.now().toISOString() });
+    held.mockRestore();
+    fitRunner.wake();
+    expect(await fits.waitFor(id)).toBe('failed');
+    const { body } = await analyst.get(`/api/fits/${id}`).expect(200);
+    expect(body.failure).toMatchObject({
+      code: 'records-erased',
+      message: expect.stringContaining('another revision'),
+    });
+  });
+
   it('finishes what a killed process left, and does nothing twice', async () => {
     const set = await desk.bringIn();
     const { id } = set.revision;

@@ -1,5 +1,5 @@
 import { parentPort, workerData } from 'node:worker_threads';
-import { readRecordTable } from '../records/record-table-reader';
+import { readRecordTable, RecordsMissingError } from '../records/record-table-reader';
 import { RegressionError } from '../regression/errors';
 import { fitRecords } from '../regression/fit';
 import { canonicalJson } from './canonical-json';
@@ -49,12 +49,19 @@ async function compute(task: FitTask): Promise<FitOutcome> {
   };
 }
 
-/** Runs in a worker thread: one fit, then it ends. A refusal of the engine is an answer; anything else ends the thread. */
-compute(workerData as FitTask)
-  .catch((error: unknown): FitOutcome => {
-    if (!(error instanceof RegressionError)) throw error;
+/** What went wrong as an answer: a refusal of the engine, or that the rows were erased while the fit waited or began. */
+function failureOf(error: unknown): FitOutcome {
+  if (error instanceof RegressionError)
     return { kind: 'failed', failure: { code: error.code, message: error.message, column: error.column } };
-  })
+  if (!(error instanceof RecordsMissingError)) throw error;
+  const message =
+    'The rows of this revision are not there any more: they were erased at their retention date, or the revision was deleted. Choose another revision, or bring the records in again if you still may keep them.';
+  return { kind: 'failed', failure: { code: 'records-erased', message, column: null } };
+}
+
+/** Runs in a worker thread: one fit, then it ends. Anything but an answer ends the thread. */
+compute(workerData as FitTask)
+  .catch(failureOf)
   .then(say)
   .catch((error: unknown) => {
     setImmediate(() => {
