@@ -1,7 +1,6 @@
 import type { Correlations, RecordColumn } from '../../api/contract';
-import { formatFigure } from '../../ui/figure';
 import type { PlotVariable } from '../../ui/plots/plot-axis';
-import type { Pair } from '../../ui/plots/correlation-map';
+import { correlationText, type Pair } from '../../ui/plots/correlation-map';
 
 /** Two columns and how they go together. */
 export interface PairRow extends Pair {
@@ -28,7 +27,7 @@ export function pairsOf({ columns, correlations, counts }: Correlations): readon
 
 /** Two decimals and the sign. */
 export function correlationWords(correlation: number | null): string {
-  return correlation === null ? 'none: one of them does not vary' : formatFigure(Number(correlation.toFixed(2)), {});
+  return correlation === null ? 'none: one of them does not vary' : correlationText(correlation);
 }
 
 export function strongestOf(pairs: readonly PairRow[]): PairRow | undefined {

@@ -83,10 +83,10 @@ describe('Pairs of columns', () => {
     );
     expect([...map.querySelectorAll('.figure')].map((figure) => figure.textContent?.trim())).toEqual([
       '.87',
-      '−.3',
+      '−.30',
       '.87',
       '–',
-      '−.3',
+      '−.30',
       '–',
     ]);
     expect(map.querySelectorAll('.opposite')).toHaveLength(2);
@@ -102,7 +102,11 @@ describe('Pairs of columns', () => {
     (screen.page.querySelector('tb-pairs-section tb-figure-frame button') as HTMLElement).click();
     await screen.stable();
     const rows = [...screen.page.querySelectorAll('tb-pairs-table tbody tr')];
-    expect(rows.map((row) => row.children[2].textContent)).toEqual(['0.87', '−0.3', 'none: one of them does not vary']);
+    expect(rows.map((row) => row.children[2].textContent)).toEqual([
+      '0.87',
+      '−0.30',
+      'none: one of them does not vary',
+    ]);
     rows[0].querySelector('button')?.click();
     await screen.stable();
     const call = screen.call(`${PATH}/scatter`);

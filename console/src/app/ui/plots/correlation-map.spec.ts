@@ -37,8 +37,9 @@ describe('CorrelationMap', () => {
   it.each([
     [0.874, '.87'],
     [-0.32, '\u2212.32'],
-    [1, '1'],
-    [0.001, '0'],
+    [-0.3, '\u2212.30'],
+    [1, '1.00'],
+    [-0.001, '.00'],
     [null, '–'],
   ])('writes a correlation of %s as %s', (correlation, figure) => {
     expect(figureOf(correlation)).toBe(figure);

@@ -1,5 +1,4 @@
 import { Component, ElementRef, computed, input, output, viewChild } from '@angular/core';
-import { formatFigure } from '../figure';
 
 /** Correlations between columns, both ways round. */
 export interface CorrelationGrid {
@@ -112,9 +111,12 @@ function inkOf(correlation: number | null): number {
   return Math.abs(correlation) * (correlation < 0 ? STRONGEST_OPPOSITE : STRONGEST_SAME);
 }
 
-/** Two decimals without the nought before them: `.87`, `−.32`, `1`. */
+/** Two decimals, however many of them are noughts, so that figures line up: `0.87`, `−0.30`. */
+export function correlationText(correlation: number): string {
+  return correlation.toFixed(2).replace(/^-/, correlation > LEAST_OPPOSITE ? '' : '\u2212');
+}
+
+/** Without the nought before the point: `.87`, `−.30`. */
 export function figureOf(correlation: number | null): string {
-  if (correlation === null) return '–';
-  const figure = formatFigure(Number(correlation.toFixed(2)), {});
-  return figure.replace(/^(\u2212?)0\./, '$1.');
+  return correlation === null ? '–' : correlationText(correlation).replace(/^(\u2212?)0\./, '$1.');
 }
