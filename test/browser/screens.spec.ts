@@ -3,6 +3,7 @@ import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import type { Browser, Page } from 'playwright-core';
 import { keepPictures, startChromium } from '../support/chromium';
+import { messyFile } from '../support/messy-file';
 import { startService, type RunningService } from '../support/running-service';
 
 interface DemonstrationNote {
@@ -12,9 +13,22 @@ interface Listed<Item> {
   readonly items: readonly Item[];
 }
 
+interface RevisionNote {
+  readonly id: string;
+  readonly number: number;
+}
+
 // WCAG 2.2 A and AA, by axe-core's own rules.
 const rules = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 const widths = [1280, 390];
+/**
+ * Hundreds of marks or more, which are one picture with a name, and rows of a preview that are like those above them:
+ * looking at each takes axe minutes.
+ */
+const leftOut = [
+  ...['tb-held-out-figure svg', 'tb-scatter-plot svg', 'tb-correlation-map svg'],
+  'tb-reading-preview tbody tr:nth-child(n + 10)',
+];
 
 jest.setTimeout(240_000);
 
@@ -41,23 +55,42 @@ describe('every screen of the demonstration', () => {
     return (await (await page.request.get(`${service.url}/api${path}`)).json()) as Answer;
   }
 
-  /** Opens a screen at both widths: it has a heading and a title and never scrolls sideways; axe finds nothing wrong. */
-  async function inspect(page: Page, path: string): Promise<void> {
+  /** As a script does: with the token that came in the cookie. */
+  async function send(page: Page, method: 'POST' | 'PUT' | 'DELETE', path: string, rest: object): Promise<unknown> {
+    const token = (await page.context().cookies()).find(({ name }) => name === 'XSRF-TOKEN')?.value ?? '';
+    const answer = await page.request.fetch(`${service.url}/api${path}`, {
+      ...{ method, headers: { 'X-XSRF-TOKEN': token }, failOnStatusCode: true },
+      ...rest,
+    });
+    return answer.status() === 204 ? undefined : answer.json();
+  }
+
+  type Prepare = (page: Page) => Promise<unknown>;
+
+  /**
+   * Opens a screen at both widths: it has a heading and a title and never scrolls sideways; axe finds nothing wrong.
+   * `prepare` does on it what brings it into the state that is looked at.
+   */
+  async function inspect(page: Page, path: string, prepare: Prepare = async () => undefined): Promise<void> {
     for (const width of widths) {
       await page.setViewportSize({ width, height: 900 });
       await page.goto(`${service.url}${path}`);
       await page.getByRole('heading', { level: 1 }).first().waitFor();
       await page.waitForLoadState('networkidle');
+      await prepare(page);
+      await page.waitForLoadState('networkidle');
       const sideways = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
       expect({ path, width, sideways: Math.max(0, sideways) }).toEqual({ path, width, sideways: 0 });
       expect(await page.title()).not.toBe('');
+      expect({ path, width, found: await violationsOf(page) }).toEqual({ path, width, found: [] });
     }
-    expect({ path, found: await violationsOf(page) }).toEqual({ path, found: [] });
   }
 
   async function violationsOf(page: Page): Promise<string[]> {
-    // A scatter has two thousand marks, which are one picture with a name; looking at each takes axe minutes.
-    const { violations } = await new AxeBuilder({ page }).exclude('tb-held-out-figure svg').withTags(rules).analyze();
+    const { violations } = await leftOut
+      .reduce((builder, part) => builder.exclude(part), new AxeBuilder({ page }))
+      .withTags(rules)
+      .analyze();
     return violations.map(
       (violation) => `${violation.id}: ${violation.nodes.map((node) => node.target.join(' ')).join(', ')}`,
     );
@@ -129,6 +162,98 @@ describe('every screen of the demonstration', () => {
         await keepPictures({ page });
         throw error;
       }
+    });
+  });
+
+  describe('of records on their way', () => {
+    let page: Page;
+    let set = '';
+    /** The oldest revision and the newest. */
+    let [old, newest] = ['', ''];
+    const address = (rest = ''): string => `/records/revisions/${old}${rest}`;
+
+    beforeAll(async () => {
+      page = await signedIn('ines.caldwell@marlbay.example');
+      [{ id: set }] = (await read<Listed<{ id: string }>>(page, '/record-sets')).items;
+      const { revisions } = await read<{ revisions: RevisionNote[] }>(page, `/record-sets/${set}`);
+      const inOrder = [...revisions].sort((a, b) => a.number - b.number);
+      [old, newest] = [inOrder[0].id, inOrder[inOrder.length - 1].id];
+    });
+
+    async function look(path: string, prepare?: Prepare): Promise<void> {
+      try {
+        await inspect(page, path, prepare);
+      } catch (error) {
+        await keepPictures({ page });
+        throw error;
+      }
+    }
+
+    it('shows how a file would be read, by itself and behind a revision', async () => {
+      const { fileName: name, text } = messyFile();
+      const file = { name, mimeType: 'text/csv', buffer: Buffer.from(text) };
+      const { id } = (await send(page, 'POST', '/incoming-files', { multipart: { file } })) as { id: string };
+      try {
+        await look(`/records/bring-in/${id}`, () => page.getByRole('heading', { name: 'Preview' }).waitFor());
+        await look(`/records/bring-in/${id}?appendTo=${old}`, () =>
+          page.getByRole('button', { name: /^Append as revision/ }).waitFor(),
+        );
+      } finally {
+        await send(page, 'DELETE', `/incoming-files/${id}`, {});
+      }
+    });
+
+    it('shows the rows that an address asks for', async () => {
+      const where = encodeURIComponent('[draught (m)] is missing');
+      await look(address(`?where=${where}`), () => page.getByText('Only rows where draught (m) is missing').waitFor());
+    });
+
+    it('shows a column in full', () =>
+      look(address(), async () => {
+        await page.locator('tb-columns-table').getByRole('button', { name: 'draught (m)' }).click();
+        await page.locator('tb-column-detail').waitFor();
+      }));
+
+    it('shows pairs, drawn and as tables', () =>
+      look(address(), async () => {
+        await page.getByRole('button', { name: 'Show how the columns go together' }).click();
+        await page.locator('tb-correlation-map').waitFor();
+        await page.getByLabel('Across').selectOption('beam (m)');
+        await page.getByLabel('Upward').selectOption('draught (m)');
+        await page.locator('tb-scatter-plot').waitFor();
+        expect(await violationsOf(page)).toEqual([]);
+        for (const each of ['tb-pairs-section tb-figure-frame', 'tb-scatter-figure'])
+          await page.locator(each).getByRole('button', { name: 'Show as table' }).first().click();
+        await page.getByRole('region', { name: 'Points' }).waitFor();
+      }));
+
+    it('shows mending with steps, one of which cannot be done, and the form of another', async () => {
+      const steps = [
+        { kind: 'convert-unit', column: 'length overall (m)', factor: 0.3048, where: '[length overall (m)] > 25' },
+        { kind: 'drop-repeated-rows' },
+        { kind: 'rename', column: 'no such column', to: 'another' },
+      ];
+      const draft = `/record-revisions/${old}/mending-draft`;
+      await send(page, 'PUT', draft, { data: { steps } });
+      try {
+        await look(address('/mend'), async () => {
+          await page.getByText('This step cannot be done.').waitFor();
+          await page.getByRole('button', { name: 'Add a step' }).click();
+          await page.getByRole('heading', { name: 'A new step' }).waitFor();
+        });
+      } finally {
+        await send(page, 'PUT', draft, { data: { steps: [] } });
+      }
+    });
+
+    it('shows two revisions beside each other', () =>
+      look(address(`/compare?with=${newest}`), () => page.getByRole('heading', { name: 'Columns' }).waitFor()));
+
+    it('shows what can be done with a revision', async () => {
+      await look(`/records/${set}`, async () => {
+        await page.locator('tb-revisions-table').getByRole('button', { name: 'More' }).first().click();
+        await page.getByRole('menu').waitFor();
+      });
     });
   });
 
