@@ -124,6 +124,8 @@ export class MendingBoard implements OnInit {
   protected change(steps: Steps): void {
     this.history.change(steps);
     this.keep();
+    // What was pressed went with the last step.
+    if (steps.length === 0) this.focusAdding();
   }
 
   protected add(step: MendStep): void {
@@ -135,7 +137,7 @@ export class MendingBoard implements OnInit {
   /** The focus goes back to where the form was asked for. */
   protected stopAdding(): void {
     this.adding.set(false);
-    afterNextRender({ read: () => this.addButton()?.nativeElement.focus() }, { injector: this.injector });
+    this.focusAdding();
   }
 
   protected undo(): void {
@@ -190,6 +192,10 @@ export class MendingBoard implements OnInit {
   private told(done: string): void {
     this.keep();
     this.announcer.say(`${done}. ${countOf(this.steps().length, 'step')} in the list.`);
+  }
+
+  private focusAdding(): void {
+    afterNextRender({ read: () => this.addButton()?.nativeElement.focus() }, { injector: this.injector });
   }
 
   private keep(): void {

@@ -202,6 +202,7 @@ describe('changing the list', () => {
     await room.settle();
     expect(await stepsKept(room)).toEqual([]);
     expect(room.text).toContain('No steps yet');
+    expect(document.activeElement).toBe(room.button('Add a step'));
   });
 
   it('keeps what was changed last when the page is left at once', async () => {
