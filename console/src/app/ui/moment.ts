@@ -26,6 +26,16 @@ export function formatRecordedDay(days: number): string {
   return CALENDAR_DAY.format(new Date(days * MILLISECONDS_A_DAY));
 }
 
+/** Days since 1970-01-01 of a day such as `2026-03-31`; NaN where there is no such day. */
+export function daysOf(isoDay: string): number {
+  return Date.parse(`${isoDay}T00:00:00Z`) / MILLISECONDS_A_DAY;
+}
+
+/** `2026-03-31`, of days since 1970-01-01. */
+export function isoDayOf(days: number): string {
+  return new Date(days * MILLISECONDS_A_DAY).toISOString().slice(0, 10);
+}
+
 /** `45 seconds`, `3 minutes`: rounded up, because coming back early is refused again. */
 export function formatWait(seconds: number): string {
   if (seconds <= 60) return seconds === 1 ? '1 second' : `${seconds} seconds`;

@@ -5,7 +5,7 @@ import { crossValidationFrame, type CrossValidationPlot, type PenaltyAxis } from
 @Component({
   selector: 'tb-cross-validation-curve',
   templateUrl: './cross-validation-curve.html',
-  styleUrl: './plot.scss',
+  styleUrl: '../../ui/plots/plot.scss',
 })
 export class CrossValidationCurve {
   readonly plot = input.required<CrossValidationPlot>();

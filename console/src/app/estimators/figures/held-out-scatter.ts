@@ -5,7 +5,7 @@ import { heldOutFrame, type HeldOutPlot } from './held-out-plot';
 @Component({
   selector: 'tb-held-out-scatter',
   templateUrl: './held-out-scatter.html',
-  styleUrl: './plot.scss',
+  styleUrl: '../../ui/plots/plot.scss',
 })
 export class HeldOutScatter {
   readonly plot = input.required<HeldOutPlot>();

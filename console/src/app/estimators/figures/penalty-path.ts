@@ -5,7 +5,7 @@ import { penaltyPathFrame, type PenaltyPathPlot } from './penalty-path-plot';
 @Component({
   selector: 'tb-penalty-path',
   templateUrl: './penalty-path.html',
-  styleUrl: './plot.scss',
+  styleUrl: '../../ui/plots/plot.scss',
 })
 export class PenaltyPath {
   readonly plot = input.required<PenaltyPathPlot>();

@@ -1,11 +1,10 @@
 import type { RecordRevision, Specification } from '../../api/contract';
+import { daysOf } from '../../ui/moment';
 import { typedNumber } from '../words/typed-number';
 import type { FitDraft } from './fit-draft';
 
 type RowFilter = NonNullable<Specification['rowFilter']>;
 export type FilterProblems = Readonly<Record<string, string>>;
-
-const MILLISECONDS_A_DAY = 86_400_000;
 
 /** The records asked for, or what is wrong with the asking; nothing when all are to be used. */
 export function readRowFilter(
@@ -53,6 +52,6 @@ function readBound(text: string): Bound {
 /** Dates are asked for as days since 1970-01-01. */
 function readDay(text: string): Bound {
   if (text === '') return { empty: true };
-  const days = Date.parse(`${text}T00:00:00Z`) / MILLISECONDS_A_DAY;
+  const days = daysOf(text);
   return Number.isFinite(days) ? { value: days } : { problem: 'Enter a day such as 2026-03-31.' };
 }

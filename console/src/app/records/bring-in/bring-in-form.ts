@@ -7,6 +7,7 @@ import { Field, FieldInput } from '../../ui/field';
 import { CountPipe } from '../../ui/figure-pipes';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { nameComplaint } from '../../ui/text-rules';
+import { retentionComplaint } from '../keeping/retention-complaint';
 import { AppendingOutlook } from './appending-outlook';
 import { namesInShort } from './names-in-short';
 import { Destination, asRecordSet, bringInAs, nextNumber } from './destination';
@@ -108,7 +109,7 @@ export class BringInForm {
         length > LONGEST_DESCRIPTION
           ? `Shorten the description to ${LONGEST_DESCRIPTION} characters; it has ${length}`
           : undefined,
-      retainUntil: retainUntil !== '' && retainUntil < today() ? 'This day has passed: enter a later one' : undefined,
+      retainUntil: retentionComplaint(retainUntil),
     };
   }
 
@@ -126,12 +127,6 @@ export class BringInForm {
     const because = complaint === undefined ? '' : ` (${complaint.replace(/\.$/, '')})`;
     return `The file cannot be read with these choices${because}: change them first`;
   }
-}
-
-function today(): string {
-  const now = new Date();
-  const two = (part: number): string => String(part).padStart(2, '0');
-  return `${now.getFullYear()}-${two(now.getMonth() + 1)}-${two(now.getDate())}`;
 }
 
 function nameTaken(problem: Problem | undefined): string | undefined {

@@ -300,7 +300,7 @@ describe('ProposalPage, bringing in', () => {
     await enter(room, 'Keep the rows until', '2020-01-01');
     await room.press('Bring in');
     expect(room.complaintOf('Name')).toContain('Enter a name for the record set');
-    expect(room.complaintOf('Keep the rows until')).toContain('This day has passed');
+    expect(room.complaintOf('Keep the rows until')).toContain('Choose today or a later day');
     room.expectNoCall(BRING_IN_PATH);
   });
 

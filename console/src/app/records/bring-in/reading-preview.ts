@@ -4,6 +4,7 @@ import { ChoiceGroup } from '../../ui/choice-group';
 import { CountPipe } from '../../ui/figure-pipes';
 import { Pager } from '../../ui/pager';
 import { TableBox } from '../../ui/table-box';
+import { unitBeside } from '../../ui/unit-beside';
 import { Showing, previewCells } from './preview-cells';
 
 /** Columns drawn at once: as many as can be taken in, and few enough for a file of two thousand. */
@@ -26,7 +27,9 @@ export class ReadingPreview {
   private readonly columnCount = computed(() => this.proposal().columns.length);
   protected readonly offset = linkedSignal<number, number>({ source: this.columnCount, computation: () => 0 });
   protected readonly heads = computed(() =>
-    this.proposal().columns.slice(this.offset(), this.offset() + COLUMNS_AT_ONCE),
+    this.proposal()
+      .columns.slice(this.offset(), this.offset() + COLUMNS_AT_ONCE)
+      .map((column) => ({ ...column, unit: unitBeside(column.name, column.unit) ?? null })),
   );
   protected readonly hasUnreadable = computed(() => this.heads().some((column) => column.unreadableRows.length > 0));
   protected readonly rows = computed(() => {

@@ -6,6 +6,7 @@ import { EntryForm } from '../../ui/entry-form';
 import { Field, FieldInput } from '../../ui/field';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { nameComplaint } from '../../ui/text-rules';
+import { retentionComplaint } from './retention-complaint';
 import { retentionDayOf } from './revision-words';
 
 type Words = Pick<RecordSetDetail, 'name' | 'description' | 'retainUntil'>;
@@ -100,10 +101,4 @@ function changeOf(kept: Words, typed: Words): RecordSetChange | undefined {
     ...(typed.retainUntil === kept.retainUntil ? {} : { retainUntil: typed.retainUntil }),
   };
   return Object.keys(change).length === 0 ? undefined : change;
-}
-
-/** The rows of a set whose day has passed are gone, so the day may stand as it is. */
-function retentionComplaint(day: string, kept: string | null): string | undefined {
-  const past = day !== '' && day !== kept && day < new Date().toISOString().slice(0, 10);
-  return past ? 'Choose today or a later day as the last on which the rows are kept' : undefined;
 }

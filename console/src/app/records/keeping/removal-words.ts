@@ -1,5 +1,6 @@
 import type { RevisionDeletion, RevisionSummary } from '../../api/contract';
 import { countOf, formatBytes } from '../../ui/figure';
+import { listed } from '../../ui/listed';
 
 /** What is to be deleted. */
 export interface Removal {
@@ -39,9 +40,4 @@ export function stayingOf(deletion: RevisionDeletion, { revision }: Removal): re
     ...(kept ? [`The original file ${revision.fileName}: another revision came from it too.`] : []),
     ...(basedOnIt.length > 0 ? [`${based} made from it.`] : []),
   ];
-}
-
-export function listed(parts: readonly (string | number)[]): string {
-  if (parts.length < 2) return parts.join('');
-  return `${parts.slice(0, -1).join(', ')} and ${parts.at(-1)}`;
 }

@@ -1,7 +1,5 @@
 import type { RecordSet, RevisionSummary } from '../../api/contract';
-import { formatDay, formatRecordedDay } from '../../ui/moment';
-
-const MILLISECONDS_A_DAY = 86_400_000;
+import { daysOf, formatDay, formatRecordedDay } from '../../ui/moment';
 
 /** Where a revision came from: `Brought in from refits.csv`. */
 export function originOf({ origin, basedOn, fileName }: RevisionSummary): string {
@@ -26,7 +24,7 @@ export function hasOriginal({ erasedAt, originalKept }: RevisionSummary): boolea
 
 /** The day after which a set's rows are erased, as people write it; a calendar day, so no time zone may shift it. */
 export function retentionDayOf({ retainUntil }: Pick<RecordSet, 'retainUntil'>): string | undefined {
-  return retainUntil === null ? undefined : formatRecordedDay(Date.parse(retainUntil) / MILLISECONDS_A_DAY);
+  return retainUntil === null ? undefined : formatRecordedDay(daysOf(retainUntil));
 }
 
 /** `Rows kept until 31 Mar 2031, then erased`; undefined while they are kept without a day. */

@@ -2,7 +2,7 @@ import { formatReading, withUnit } from '@widget/format/number-format';
 import { precisionFor, roundTo } from '@widget/format/precision';
 import type { ColumnKind, RecordColumn } from '../../api/contract';
 import { NO_FIGURE, formatCount, formatShare } from '../../ui/figure';
-import { formatRecordedDay } from '../../ui/moment';
+import { daysOf, formatRecordedDay } from '../../ui/moment';
 
 type Outlying = NonNullable<RecordColumn['outlying']>;
 
@@ -83,15 +83,12 @@ export function distinctOf({ distinctCount }: RecordColumn): string {
 type Cell = string | number | null;
 
 const CALENDAR_DAY = /^\d{4}-\d{2}-\d{2}$/;
-const MILLISECONDS_A_DAY = 86_400_000;
 
 /** One value of a row as it was recorded; a day comes as year-month-day or counted from 1970-01-01. */
 export function cellOf(value: Cell, kind: ColumnKind | undefined): string {
   if (value === null) return '';
   if (typeof value === 'string')
-    return kind === 'date' && CALENDAR_DAY.test(value)
-      ? formatRecordedDay(Date.parse(value) / MILLISECONDS_A_DAY)
-      : value;
+    return kind === 'date' && CALENDAR_DAY.test(value) ? formatRecordedDay(daysOf(value)) : value;
   return kind === 'date' ? formatRecordedDay(value) : formatReading(value, LOCALE);
 }
 

@@ -1,4 +1,13 @@
-import { conditionWords, equalIn, levelIn, missingIn, otherLevelsIn, outsideIn, stretchIn } from './rows-condition';
+import {
+  atMostIn,
+  conditionWords,
+  equalIn,
+  levelIn,
+  missingIn,
+  otherLevelsIn,
+  outsideIn,
+  stretchIn,
+} from './rows-condition';
 
 const LENGTH = { name: 'Length overall', kind: 'numeric' } as const;
 const FINISHED = { name: 'Finished', kind: 'date' } as const;
@@ -23,6 +32,15 @@ describe('conditions on rows', () => {
     expect(stretchIn(FINISHED, { from: 18_550.5, to: 18_552.25, closed: false })).toBe(
       '[Finished] >= "2020-10-16" and [Finished] < "2020-10-18"',
     );
+  });
+
+  it('holds exactly the whole days up to a bound, or beyond bounds, that fall inside a day', () => {
+    expect(atMostIn(FINISHED, 18_550.5)).toBe('[Finished] <= "2020-10-15"');
+    expect(outsideIn(FINISHED, 18_550.5, 18_552.25)).toBe('[Finished] < "2020-10-16" or [Finished] > "2020-10-17"');
+  });
+
+  it('keeps the spaces at the ends of a level, which tell it from another', () => {
+    expect(levelIn(HULL, ' STEEL ')).toBe('[Hull] = " STEEL "');
   });
 
   it('writes a reading with every digit', () => {

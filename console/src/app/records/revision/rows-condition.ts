@@ -1,4 +1,5 @@
 import type { ColumnKind, RecordColumn } from '../../api/contract';
+import { isoDayOf } from '../../ui/moment';
 import { columnInFormula } from '../mending/formula-complaint';
 
 /**
@@ -8,7 +9,6 @@ import { columnInFormula } from '../mending/formula-complaint';
 
 /** The service takes no longer condition. */
 const LONGEST_CONDITION = 500;
-const MILLISECONDS_A_DAY = 86_400_000;
 
 type Named = Pick<RecordColumn, 'name' | 'kind'>;
 
@@ -21,9 +21,12 @@ function whole(condition: string): string | undefined {
   return condition.length > LONGEST_CONDITION ? undefined : condition;
 }
 
-/** A reading, with every digit that tells it from its neighbours. */
+/**
+ * A reading, with every digit that tells it from its neighbours. Days are whole and bounds need not be: day ≤ bound
+ * exactly when day ≤ ⌊bound⌋, day ≥ bound exactly when day ≥ ⌈bound⌉, and likewise for > and <.
+ */
 function readingIn(value: number, kind: ColumnKind): string {
-  return kind === 'date' ? textIn(new Date(value * MILLISECONDS_A_DAY).toISOString().slice(0, 10)) : String(value);
+  return kind === 'date' ? textIn(isoDayOf(value)) : String(value);
 }
 
 export function missingIn({ name }: Named): string | undefined {
@@ -44,12 +47,21 @@ export function equalIn({ name, kind }: Named, value: number): string | undefine
 }
 
 export function atMostIn({ name, kind }: Named, value: number): string | undefined {
-  return whole(`${columnInFormula(name)} <= ${readingIn(kind === 'date' ? Math.floor(value) : value, kind)}`);
+  return whole(`${columnInFormula(name)} <= ${readingIn(lowered(value, kind), kind)}`);
 }
 
 export function outsideIn({ name, kind }: Named, low: number, high: number): string | undefined {
   const column = columnInFormula(name);
-  return whole(`${column} < ${readingIn(low, kind)} or ${column} > ${readingIn(high, kind)}`);
+  const [below, above] = [readingIn(raised(low, kind), kind), readingIn(lowered(high, kind), kind)];
+  return whole(`${column} < ${below} or ${column} > ${above}`);
+}
+
+function lowered(bound: number, kind: ColumnKind): number {
+  return kind === 'date' ? Math.floor(bound) : bound;
+}
+
+function raised(bound: number, kind: ColumnKind): number {
+  return kind === 'date' ? Math.ceil(bound) : bound;
 }
 
 export interface Stretch {
@@ -59,9 +71,8 @@ export interface Stretch {
   readonly closed: boolean;
 }
 
-/** Days are whole and edges need not be: day ≥ edge exactly when day ≥ ⌈edge⌉, and likewise for <. */
 export function stretchIn({ name, kind }: Named, { from, to, closed }: Stretch): string | undefined {
-  const edge = (value: number): string => readingIn(kind === 'date' ? Math.ceil(value) : value, kind);
+  const edge = (value: number): string => readingIn(raised(value, kind), kind);
   const column = columnInFormula(name);
   return whole(`${column} >= ${edge(from)} and ${column} ${closed ? '<=' : '<'} ${edge(to)}`);
 }

@@ -4,6 +4,7 @@ import type { RecordColumn } from '../../api/contract';
 import { Problem, errorOf } from '../../api/problem';
 import { countOf } from '../../ui/figure';
 import { Field, FieldInput } from '../../ui/field';
+import { listed } from '../../ui/listed';
 import { columnInFormula, formulaComplaint } from '../mending/formula-complaint';
 import { conditionWords, levelIn } from './rows-condition';
 
@@ -55,9 +56,8 @@ export function conditionComplaint(problem: Problem | undefined): string | undef
 function shownWords(where: string | undefined, numbers: string | undefined): string | undefined {
   const condition = where ? conditionWords(where) : undefined;
   if (!numbers) return condition && `Only rows where ${condition}`;
-  const listed = numbers.split(',');
-  const named =
-    listed.length === 1 ? `row ${listed[0]}` : `rows ${listed.slice(0, -1).join(', ')} and ${listed.at(-1)}`;
+  const rows = numbers.split(',');
+  const named = `${rows.length === 1 ? 'row' : 'rows'} ${listed(rows)}`;
   return condition ? `Only ${named}, where ${condition}` : `Only ${named}`;
 }
 

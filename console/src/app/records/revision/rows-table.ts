@@ -9,6 +9,7 @@ import { LoadingState } from '../../ui/loading-state';
 import { Pager, ROWS_A_PAGE } from '../../ui/pager';
 import { ProblemNotice } from '../../ui/problem-notice';
 import { TableBox } from '../../ui/table-box';
+import { unitBeside } from '../../ui/unit-beside';
 import { cellsOf } from './column-words';
 import { RowsFilter, conditionComplaint } from './rows-filter';
 
@@ -86,9 +87,4 @@ export class RowsTable {
   protected moveTo(offset: number): void {
     this.wanted.set(offset);
   }
-}
-
-/** Many headers carry their unit already, as in `draught (m)`. */
-function unitBeside(name: string, unit: string | null | undefined): string | undefined {
-  return unit && !name.endsWith(`(${unit})`) && !name.endsWith(`[${unit}]`) ? unit : undefined;
 }

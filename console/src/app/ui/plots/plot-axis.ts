@@ -1,5 +1,6 @@
 import { ScaleLinear, scaleLinear } from 'd3-scale';
 import { formatRecordedDay } from '../moment';
+import { unitBeside } from '../unit-beside';
 
 /** A column drawn along an axis. */
 export interface PlotVariable {
@@ -15,7 +16,8 @@ export interface AxisTick {
 }
 
 export function axisLabel({ name, unit }: PlotVariable): string {
-  return unit && !name.endsWith(`(${unit})`) && !name.endsWith(`[${unit}]`) ? `${name}, ${unit}` : name;
+  const beside = unitBeside(name, unit);
+  return beside ? `${name}, ${beside}` : name;
 }
 
 /** Maps what the values span onto the range; a single value stands in its middle. */

@@ -22,7 +22,7 @@ const TICKS_OF_FIGURES = 6;
 @Component({
   selector: 'tb-scatter-plot',
   templateUrl: './scatter-plot.html',
-  styleUrl: './scatter-plot.scss',
+  styleUrls: ['./plot.scss', './scatter-plot.scss'],
   host: { '(click)': 'press($event)' },
 })
 export class ScatterPlot {
