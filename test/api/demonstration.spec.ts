@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto';
 import { existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { buffer } from 'node:stream/consumers';
 import { pino } from 'pino';
 import supertest from 'supertest';
 import { createApp } from '../../service/src/app';
@@ -140,8 +141,12 @@ describe('the demonstration', () => {
     const revisions = await services.knex('recordRevisions');
     expect(revisions).toHaveLength(9);
     for (const { id, sha256 } of revisions) {
-      const { path } = await services.records.original(id);
-      expect(createHash('sha256').update(readFileSync(path)).digest('hex')).toBe(sha256);
+      const { bytes } = await services.records.original(id);
+      expect(
+        createHash('sha256')
+          .update(await buffer(bytes))
+          .digest('hex'),
+      ).toBe(sha256);
     }
   });
 

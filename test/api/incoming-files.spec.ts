@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
-import { type ReadStream } from 'node:fs';
+import { rmSync, truncateSync, type ReadStream } from 'node:fs';
+import { join } from 'node:path';
 import { Readable } from 'node:stream';
 import { gzipSync } from 'node:zlib';
 import { bringIn, keptOf, sendFile, uploadsOf } from '../support/incoming-file';
@@ -58,6 +59,34 @@ describe('a file that has arrived', () => {
     expect(answer.status).toBe(422);
     expect(answer.body.code).toBe('choices-invalid');
     await analyst.get(`/api/incoming-files/${id}`).expect(200);
+  });
+
+  it.each([
+    ['gone', (path: string) => rmSync(path)],
+    ['cut short', (path: string) => truncateSync(path, 5)],
+  ])('is said to be lost when a crash has left its bytes %s, and its row goes', async (_how, harm) => {
+    const as = { kind: 'record-set', name: 'Lost' };
+    const asked = [
+      (at: string) => analyst.get(at),
+      (at: string) => analyst.post(`${at}/proposal`).send({}),
+      (at: string) => analyst.post(`${at}/bring-in`).send({ choices: {}, as }),
+    ];
+    const before = await keptOf(service);
+    for (const ask of asked) {
+      const { id } = await sendFile(analyst, boats);
+      const { path } = await service.services.knex('incomingFiles').where({ id }).first('path');
+      harm(join(service.services.config.dataFolder, 'uploads', path));
+      const { status, body } = await ask(`/api/incoming-files/${id}`);
+      expect([status, body.code, body.detail]).toEqual([404, 'not-found', expect.stringContaining('Send it again')]);
+      expect(await keptOf(service)).toEqual(before);
+    }
+  });
+
+  it('can be let go although its bytes are gone', async () => {
+    const { id } = await sendFile(analyst, boats);
+    const { path } = await service.services.knex('incomingFiles').where({ id }).first('path');
+    rmSync(join(service.services.config.dataFolder, 'uploads', path));
+    await analyst.delete(`/api/incoming-files/${id}`).expect(204);
   });
 
   it('is its sender’s own: for everybody else there is none', async () => {

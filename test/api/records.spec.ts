@@ -1,4 +1,4 @@
-import { readdirSync } from 'node:fs';
+import { readdirSync, rmSync } from 'node:fs';
 import { createHash } from 'node:crypto';
 import { join } from 'node:path';
 import { databasePathOf } from '../../service/src/compose';
@@ -86,6 +86,15 @@ describe('bringing in records', () => {
       });
     expect(original.headers['content-disposition']).toBe('attachment; filename=boats.csv');
     expect((original.body as Buffer).toString()).toBe(boats);
+  });
+
+  it('says of an original that is missing from the disk that it is', async () => {
+    const { revision } = (await upload(boats, 'Missing original')).body;
+    rmSync(join(service.services.config.dataFolder, 'uploads', revision.id));
+    const answer = await analyst.get(`/api/record-revisions/${revision.id}/original`);
+    expect([answer.status, answer.body.code]).toEqual([404, 'not-found']);
+    expect(answer.body.detail).toContain('exported as CSV');
+    expect(answer.headers['content-disposition']).toBeUndefined();
   });
 
   it('reads a revision back as the engine’s table', async () => {

@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { createReadStream, createWriteStream, mkdirSync } from 'node:fs';
-import { readdir, rename, rm, stat, utimes } from 'node:fs/promises';
+import { open, readdir, rename, rm, stat, utimes } from 'node:fs/promises';
 import { basename, join } from 'node:path';
 import type { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
@@ -87,6 +87,17 @@ export class KeptFiles {
   /** Undoes `keep`, whether it came to that or not. */
   async takeBack(file: ReceivedFile, name: string): Promise<void> {
     await unlessMissing(rename(this.pathOf(name), file.path));
+  }
+
+  /** Its bytes; null when it is not there. */
+  async open(name: string): Promise<Readable | null> {
+    const file = await unlessMissing(open(this.pathOf(name), 'r'));
+    return file && file.createReadStream();
+  }
+
+  /** Whether the file is there, whole: after a crash of the machine it may be neither. */
+  async holds(name: string, byteCount: number): Promise<boolean> {
+    return (await unlessMissing(stat(this.pathOf(name))))?.size === byteCount;
   }
 
   pathOf(name: string): string {

@@ -1,10 +1,9 @@
-import { createReadStream } from 'node:fs';
-import { pipeline } from 'node:stream/promises';
 import type { operations } from '../../../openapi/types/desk';
 import type { RecordsRoom } from '../compose-records';
 import type { ContractRoutes } from '../http/contract-routes';
 import { goneAway } from '../http/gone-away';
 import { pageOf } from '../http/page';
+import { sendDownload } from '../http/send-download';
 import { personOf } from '../people/session-passport';
 import { mountIncoming } from './incoming/incoming-router';
 import { mountLooking } from './looking/looking-router';
@@ -27,10 +26,6 @@ export function mountRecords(routes: ContractRoutes<operations>, room: RecordsRo
   );
   routes.answer('readRevision', ({ path }) => records.readRevision(path.id));
   routes.handle('readRevisionOriginal', async ({ path, response }) => {
-    const { path: file, fileName, byteCount } = await records.original(path.id);
-    // Always a download of plain bytes: a file that somebody sent must never be shown as a page of ours.
-    response.attachment(fileName).type('application/octet-stream').setHeader('Content-Length', byteCount);
-    response.setHeader('X-Content-Type-Options', 'nosniff');
-    await pipeline(createReadStream(file), response);
+    await sendDownload(response, { ...(await records.original(path.id)), type: 'application/octet-stream' });
   });
 }

@@ -2,6 +2,7 @@ import type { Request } from 'express';
 import type { components } from '../../../openapi/types/desk';
 import { DeskError, notFound } from '../errors';
 import type { Page } from '../http/page';
+import type { Download } from '../http/send-download';
 import type { BringingIn, Destination } from './incoming/bringing-in';
 import { nameTaken, readWords, type SetWords } from './incoming/record-set-words';
 import type { KeptFiles, ReceivedFile } from './kept-files';
@@ -67,10 +68,8 @@ export class RecordsService {
     return toRevisionAnswer(revision, await this.parts.records.columnsOf(id));
   }
 
-  /** Where the uploaded file lies, and the name that it came with. */
-  async original(
-    id: string,
-  ): Promise<{ readonly path: string; readonly fileName: string; readonly byteCount: number }> {
+  /** The uploaded file, under the name that it came with. */
+  async original(id: string): Promise<Omit<Download, 'type'>> {
     const revision = await this.requireRevision(id);
     const { originalPath, originalKept, fileName, byteCount, reading } = revision;
     requireRows(revision);
@@ -81,7 +80,13 @@ export class RecordsService {
         `${fileName} was not kept, because ${columns} set aside before storing. Its SHA-256, name and size are; what was stored can be exported as CSV.`,
       );
     }
-    return { path: this.parts.files.pathOf(originalPath), fileName, byteCount };
+    const bytes = await this.parts.files.open(originalPath);
+    if (!bytes)
+      throw new DeskError(
+        'not-found',
+        `${fileName} is missing from the service’s disk, though it should be there. Tell whoever runs the service; what was stored can be exported as CSV.`,
+      );
+    return { bytes, fileName, byteCount };
   }
 
   /** A new record set from an uploaded form. */

@@ -62,12 +62,15 @@ export class IncomingFilesService {
   ): Promise<Schemas['ReadingProposal']> {
     const { files, proposals } = this.parts;
     const row = await this.require(personId, id);
-    return proposals.of(files.pathOf(row.path), wanted.choices, wanted);
+    return this.whileThere(
+      () => this.requireBytes(row),
+      () => proposals.of(files.pathOf(row.path), wanted.choices, wanted),
+    );
   }
 
   /** While it is being brought in, this ends that work: nothing of it is kept. */
   async discard(personId: string, id: string): Promise<void> {
-    const { path } = await this.require(personId, id);
+    const { path } = await this.find(personId, id);
     await this.parts.incoming.remove(id);
     await this.parts.files.remove(this.parts.files.pathOf(path));
   }
@@ -77,7 +80,7 @@ export class IncomingFilesService {
     const row = await this.require(personId, id);
     const work = await bringingIn.workOf(this.given(row, request.choices), request.as);
     await incoming.keepUntil(id, this.keptFromNow());
-    return tasks.start({ ...work, run: (context) => this.whileThere(row, work, context) });
+    return tasks.start({ ...work, run: (context) => this.run(row, work, context) });
   }
 
   private given(
@@ -91,19 +94,24 @@ export class IncomingFilesService {
     return { file: files.received(path, facts), fileName, personId: createdBy, choices, alongside };
   }
 
-  /** It may have been discarded, or brought in by a task before this one. */
-  private async whileThere(
-    { id, fileName }: IncomingFileRecord,
+  private async run(
+    row: IncomingFileRecord,
     work: TaskWork,
     context: Parameters<TaskWork['run']>[0],
   ): ReturnType<TaskWork['run']> {
-    const stillThere = (): Promise<boolean> => this.parts.incoming.keepUntil(id, this.keptFromNow());
-    if (!(await stillThere())) throw gone(fileName);
+    await this.requireStill(row);
+    return this.whileThere(
+      () => this.requireStill(row),
+      () => work.run(context),
+    );
+  }
+
+  /** Work that failed for want of the file, which was let go meanwhile, tells whoever asked so. */
+  private async whileThere<Result>(requireFile: () => Promise<void>, work: () => Promise<Result>): Promise<Result> {
     try {
-      return await work.run(context);
+      return await work();
     } catch (error) {
-      // Failed for want of the file: whoever asked is told so.
-      if (!(error instanceof DeskError) && !(await stillThere())) throw gone(fileName);
+      if (!(error instanceof DeskError)) await requireFile();
       throw error;
     }
   }
@@ -113,6 +121,12 @@ export class IncomingFilesService {
   }
 
   private async require(personId: string, id: string): Promise<IncomingFileRecord> {
+    const row = await this.find(personId, id);
+    await this.requireBytes(row);
+    return row;
+  }
+
+  private async find(personId: string, id: string): Promise<IncomingFileRecord> {
     const row = await this.parts.incoming.findOf(personId, id);
     if (!row)
       throw new DeskError(
@@ -121,10 +135,28 @@ export class IncomingFilesService {
       );
     return row;
   }
+
+  /** It may have been discarded, or brought in by a task before this one. */
+  private async requireStill(row: IncomingFileRecord): Promise<void> {
+    if (!(await this.parts.incoming.keepUntil(row.id, this.keptFromNow()))) throw gone(row.fileName);
+    await this.requireBytes(row);
+  }
+
+  /** A crash of the machine may take the file, or a part of it, and leave its row, which then goes as well. */
+  private async requireBytes({ id, path, byteCount, fileName }: IncomingFileRecord): Promise<void> {
+    const { incoming, files } = this.parts;
+    if (await files.holds(path, byteCount)) return;
+    const isLost = await incoming.remove(id);
+    await files.remove(files.pathOf(path));
+    throw isLost ? lost(fileName) : gone(fileName);
+  }
 }
 
 const gone = (fileName: string): DeskError =>
   new DeskError('not-found', `${fileName} is not there any more: it was brought in already, or let go.`);
+
+const lost = (fileName: string): DeskError =>
+  new DeskError('not-found', `The service has lost ${fileName}, which had not been brought in yet. Send it again.`);
 
 function toAnswer(row: IncomingFileRecord, proposal: Schemas['ReadingProposal']): Schemas['IncomingFile'] {
   const { id, fileName, byteCount, sha256, receivedAt, keptUntil } = row;

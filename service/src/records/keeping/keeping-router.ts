@@ -1,8 +1,8 @@
-import { pipeline } from 'node:stream/promises';
 import type { operations } from '../../../../openapi/types/desk';
 import type { KeepingRoom } from '../../compose-keeping';
 import type { RecordsRoom } from '../../compose-records';
 import type { ContractRoutes } from '../../http/contract-routes';
+import { sendDownload } from '../../http/send-download';
 import { personOf } from '../../people/session-passport';
 
 /** What changes a record set, lets a revision go, or carries it away as a file. */
@@ -21,13 +21,6 @@ export function mountKeeping(
     return undefined;
   });
   routes.handle('exportRevision', async ({ path, response }) => {
-    const { fileName, bytes } = await revisionExports.open(path.id);
-    response.attachment(fileName).type('text/csv').setHeader('X-Content-Type-Options', 'nosniff');
-    try {
-      await pipeline(bytes, response);
-    } catch (error) {
-      // Who asked has gone away: the thread has been ended, and there is nobody left to tell.
-      if ((error as NodeJS.ErrnoException).code !== 'ERR_STREAM_PREMATURE_CLOSE') throw error;
-    }
+    await sendDownload(response, { ...(await revisionExports.open(path.id)), type: 'text/csv' });
   });
 }
