@@ -25,6 +25,7 @@ import { createPartnerApi } from './partner-api';
 import { mountPeople } from './people/people-router';
 import { mountSession } from './people/session-router';
 import { mountKeeping } from './records/keeping/keeping-router';
+import { mendingAddresses, mendingBodies } from './records/mending/mending-bodies';
 import { mountRecords } from './records/records-router';
 import { sessionPassport } from './people/session-passport';
 
@@ -75,6 +76,7 @@ function deskApi(services: Services, secure: boolean): express.Router {
   routes.refuseOtherMethods();
 
   const router = express.Router();
+  router.use(mendingAddresses, mendingBodies);
   router.use(noStore, express.json({ limit: '1mb' }), cookieParser());
   router.use(
     ...sessions({

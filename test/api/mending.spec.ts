@@ -95,6 +95,41 @@ describe('mending', () => {
     });
   });
 
+  describe('steps that list many rows', () => {
+    const listing = (lists: number): Step[] =>
+      Array.from({ length: lists }, () => ({
+        kind: 'drop-rows',
+        rows: Array.from({ length: 100_000 }, (_, row) => 900_000 + row),
+      }));
+
+    it('are kept in a draft, and refused by what they are about, not for their length', async () => {
+      const { at } = await bringIn();
+      const steps = listing(3);
+      const kept = await analyst.put(`${at}/mending-draft`).send({ steps }).expect(200);
+      expect(kept.body.steps).toEqual(steps);
+      for (const where of ['mending-trial', 'mended-revisions']) {
+        const { status, body } = await analyst.post(`${at}/${where}`).send({ steps });
+        if (where === 'mending-trial')
+          expect([status, body.detail]).toEqual([400, expect.stringContaining('no row 900000')]);
+        else expect((await endOfTask(analyst, body.id)).problem?.detail).toContain('no row 900000');
+      }
+    });
+
+    it('are refused above eight megabytes, with what to do instead, and other bodies above one', async () => {
+      const { at, setId } = await bringIn();
+      for (const send of [
+        analyst.put(`${at}/mending-draft`).send({ steps: listing(13) }),
+        analyst.post(`${at}/mending-trial`).send({ steps: listing(13) }),
+      ]) {
+        const { status, body } = await send;
+        expect([status, body.code, body.detail]).toEqual([413, 'body-too-large', expect.stringContaining('condition')]);
+      }
+      const long = await analyst.patch(`/api/record-sets/${setId}`).send({ description: 'x'.repeat(1_100_000) });
+      expect([long.status, long.body.code]).toEqual([413, 'body-too-large']);
+      expect(long.body.detail).toContain('1 MB');
+    });
+  });
+
   describe('a draft', () => {
     const steps: Step[] = [{ kind: 'rename', column: 'hull', to: 'material' }];
 

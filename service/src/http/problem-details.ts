@@ -5,6 +5,8 @@ import { DeskError } from '../errors';
 interface HttpErrorLike {
   readonly status: number;
   readonly type?: string;
+  /** Bytes that the body parser takes. */
+  readonly limit?: number;
 }
 
 const isHttpError = (error: unknown): error is HttpErrorLike =>
@@ -18,7 +20,10 @@ function translate(error: unknown): DeskError | null {
     return new DeskError('request-forged', 'Send the header X-XSRF-TOKEN with the value of the cookie XSRF-TOKEN.');
   }
   if (error.status === 404) return new DeskError('not-found', 'There is nothing at this address.', { cause: error });
-  if (error.status === 413) return new DeskError('body-too-large', 'Send a smaller body.', { cause: error });
+  if (error.status === 413) {
+    const most = error.limit === undefined ? 'is taken' : `${Math.round(error.limit / 1024 / 1024)} MB`;
+    return new DeskError('body-too-large', `The body is larger than ${most}. Send less at once.`, { cause: error });
+  }
   if (error.type === 'entity.parse.failed') {
     return new DeskError('body-unreadable', 'The body is not valid JSON. Mend it and send it again.', { cause: error });
   }
