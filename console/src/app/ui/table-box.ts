@@ -14,6 +14,12 @@ import { Component, input } from '@angular/core';
       padding: 2px;
       margin: -2px;
     }
+
+    @media print {
+      :host {
+        overflow: visible;
+      }
+    }
   `,
   host: { role: 'region', tabindex: '0', '[attr.aria-label]': 'label()' },
 })

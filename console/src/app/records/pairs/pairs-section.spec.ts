@@ -58,6 +58,7 @@ describe('Pairs of columns', () => {
     screen.http.expectNone((request) => request.url === `${PATH}/correlations`);
     await screen.press(asked);
     expect(screen.text).toContain('Working out how the columns go together');
+    expect(document.activeElement?.textContent).toContain('Working out');
     screen.call(`${PATH}/correlations`);
   });
 

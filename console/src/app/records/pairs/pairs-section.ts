@@ -3,6 +3,7 @@ import type { RecordColumn } from '../../api/contract';
 import { LookingClient } from '../../api/looking-client';
 import { countOf } from '../../ui/figure';
 import { Field, FieldInput } from '../../ui/field';
+import { FocusHere } from '../../ui/focus-here';
 import { load } from '../../ui/load';
 import { LoadingState } from '../../ui/loading-state';
 import { CorrelationMap, Pair } from '../../ui/plots/correlation-map';
@@ -21,6 +22,7 @@ import { ScatterFigure } from './scatter-figure';
     Field,
     FieldInput,
     FigureFrame,
+    FocusHere,
     LoadingState,
     PairsTable,
     PlotTableTemplate,
