@@ -122,7 +122,7 @@ export function findNearlyNumeric(column: CategoryRecordColumn | TextRecordColum
       kind: 'nearly-numeric',
       columns: [name],
       message: `${name} holds numbers but for ${rowsText(words.rows.length)}, such as ${examples.join(', ')}.`,
-      remedy: 'Make the column numeric, by which these cells become missing, or write them as numbers first.',
+      remedy: 'Make the column’s kind Number, by which these cells become missing, or write them as numbers first.',
       ...listRows(words.rows),
       where: words.texts.length < 100 ? oneOfTexts(name, words.texts) : undefined,
       steps: losesWordsOnly ? [{ kind: 'set-kind', column: name, to: 'numeric' }] : [],

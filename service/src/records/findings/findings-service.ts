@@ -2,6 +2,7 @@ import { extname, join } from 'node:path';
 import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
 import { DeskError } from '../../errors';
+import { kindWords } from '../kind-words';
 import { Remembered } from '../looking/remembered';
 import type { RecordsStore } from '../records-store';
 import { revisionWithRows, withRowsOf } from '../required-rows';
@@ -46,8 +47,8 @@ export class FindingsService {
   private async requireNumeric(revisionId: string, target: string): Promise<void> {
     const column = (await this.parts.records.columnsOf(revisionId)).find(({ name }) => name === target);
     if (column?.kind === 'numeric') return;
-    const what = column ? `${target} is a column of kind ${column.kind}` : `There is no column ${target}`;
-    throw new DeskError('request-invalid', `${what}. Name a numeric column as the target.`);
+    const what = column ? `${target} is a column of kind ${kindWords[column.kind]}` : `There is no column ${target}`;
+    throw new DeskError('request-invalid', `${what}. Name one of kind Number as the target.`);
   }
 
   private search(revisionId: string, target: string | null): Promise<FindingsOutcome> {

@@ -3,6 +3,7 @@ import pLimit from 'p-limit';
 import type { components } from '../../../../openapi/types/desk';
 import { DeskError } from '../../errors';
 import type { Page } from '../../http/page';
+import { kindWords } from '../kind-words';
 import { toColumn, toRevisionSummary } from '../record-answers';
 import type { ColumnRecord, RecordsStore, RevisionRecord } from '../records-store';
 import { revisionWithRows, withRowsOf } from '../required-rows';
@@ -157,7 +158,10 @@ function requireMeasure(columns: readonly ColumnRecord[], parameter: 'x' | 'y', 
   const column = columns.find((one) => one.name === name);
   if (!column) throw invalid(`#/${parameter}`, `there is no column ${name}`);
   if (!isMeasure(column))
-    throw invalid(`#/${parameter}`, `${name} is a column of kind ${column.kind}; name a numeric or date column`);
+    throw invalid(
+      `#/${parameter}`,
+      `${name} is a column of kind ${kindWords[column.kind]}; name one of kind Number or Date`,
+    );
 }
 
 function toComparisonAnswer({ key, keys, rows, changes, added, removed }: TableComparison) {

@@ -1,5 +1,6 @@
 import type { components } from '../../../../openapi/types/desk';
 import type { CategoryRecordColumn, NumericRecordColumn, RecordColumn, RecordTable } from '../../regression/records';
+import { kindWords } from '../kind-words';
 
 export type MendStep = components['schemas']['MendStep'];
 export type StepOf<Kind extends MendStep['kind']> = Extract<MendStep, { kind: Kind }>;
@@ -29,14 +30,14 @@ export function columnOf(table: RecordTable, name: string): RecordColumn {
 export function numericOf(table: RecordTable, name: string): NumericRecordColumn {
   const column = columnOf(table, name);
   if (column.kind !== 'numeric')
-    throw new Refusal(`${name} is a column of kind ${column.kind}; this step takes a numeric one.`);
+    throw new Refusal(`${name} is a column of kind ${kindWords[column.kind]}; this step takes one of kind Number.`);
   return column;
 }
 
 export function categoryOf(table: RecordTable, name: string): CategoryRecordColumn {
   const column = columnOf(table, name);
   if (column.kind !== 'category')
-    throw new Refusal(`${name} is a column of kind ${column.kind}; this step takes a category.`);
+    throw new Refusal(`${name} is a column of kind ${kindWords[column.kind]}; this step takes one of kind Category.`);
   return column;
 }
 

@@ -27,7 +27,9 @@ function dateDoubts({ plan, evidence, form }: LookedColumn): string[] {
   if (evidence.dateForms !== bothOrders) return [];
   return form.kind === 'date'
     ? ['Every date could be read with the day or the month first; the day is taken to come first. Choose the order.']
-    : ['Every date could be read with the day or the month first, so they stay words. Choose the order.'];
+    : [
+        'Every date could be read with the day or the month first, so they stay words. Choose the kind Date and the order.',
+      ];
 }
 
 function markDoubts({ evidence, form }: LookedColumn, { census, decimal, decimalCertain }: DoubtContext): string[] {
@@ -79,7 +81,7 @@ function wordDoubts({ plan, form, evidence }: LookedColumn, { census }: DoubtCon
   const example = census.word === null ? '' : `, such as ${shown(census.word)}`;
   if (numbers >= others)
     return [
-      `${others.toLocaleString('en-GB')} of ${cells(numbers + others)} ${others === 1 ? 'is not a number' : 'are not numbers'}${example}, so the column is taken as words. Name such words as marks for “no reading”, or choose numeric.`,
+      `${others.toLocaleString('en-GB')} of ${cells(numbers + others)} ${others === 1 ? 'is not a number' : 'are not numbers'}${example}, so the column is taken as words. Name such words as marks for “no reading”, or choose the kind Number.`,
     ];
   return numbers * 10 <= others
     ? [`${cells(numbers)} among words ${numbers === 1 ? 'is a number' : 'are numbers'}.`]
@@ -88,7 +90,7 @@ function wordDoubts({ plan, form, evidence }: LookedColumn, { census }: DoubtCon
 
 function misfits({ unreadableCount, kind, plan }: LookedColumn): string[] {
   if (plan.kind === 'category' && kind === 'text')
-    return ['It has too many or too long words for a category and would be text.'];
+    return ['It has too many or too long words for the kind Category and would be Text.'];
   if (unreadableCount === 0) return [];
   const what = kind === 'date' ? 'dates' : 'numbers';
   return [`${cells(unreadableCount)} cannot be read as ${what} and would be missing.`];
