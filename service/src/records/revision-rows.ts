@@ -1,7 +1,8 @@
 import type { Page } from '../http/page';
-import { cellBytesOf, cellsToCodes, cellsToNumbers, cellsToTexts, type ColumnKind } from './cell-blocks';
+import { cellBytesOf, cellsToCodes, cellsToNumbers, type ColumnKind } from './cell-blocks';
 import { dateText } from './reading/date-cell';
 import type { ColumnRecord, RecordsStore } from './records-store';
+import { TextBlock } from './text-block';
 
 export type CellValue = number | string | null;
 
@@ -31,8 +32,8 @@ export function cellsAsShown(
   cells: Uint8Array,
 ): (at: number) => CellValue {
   if (kind === 'text') {
-    const texts = cellsToTexts(cells);
-    return (at) => texts[at];
+    const texts = new TextBlock(cells);
+    return (at) => texts.at(at);
   }
   if (kind === 'category') {
     const codes = cellsToCodes(cells);
