@@ -60,6 +60,9 @@ export function findLevelsAlike(column: CategoryRecordColumn): Finding[] {
     );
 }
 
+/** Ways of writing one level that are told. */
+const toldWays = 10;
+
 function levelsAlike({ name, codes, levels }: CategoryRecordColumn, alike: readonly number[]): Finding {
   const [usual, ...others] = alike.map((code) => levels[code]);
   const unusual = new Set(alike.slice(1));
@@ -67,10 +70,12 @@ function levelsAlike({ name, codes, levels }: CategoryRecordColumn, alike: reado
   codes.forEach((code, row) => {
     if (unusual.has(code)) rows.push(row);
   });
+  const ways = alike.slice(0, toldWays).map((code) => `“${levels[code]}”`);
+  const more = alike.length > toldWays ? ' and others' : '';
   return {
     kind: 'levels-alike',
     columns: [name],
-    message: `${name} writes one level in ${alike.length} ways: ${alike.map((code) => `“${levels[code]}”`).join(', ')}.`,
+    message: `${name} writes one level in ${alike.length} ways: ${ways.join(', ')}${more}.`,
     remedy: `Map them to “${usual}”, the most frequent.`,
     ...listRows(rows),
     where: oneOfTexts(name, others),

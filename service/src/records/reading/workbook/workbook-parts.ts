@@ -54,12 +54,16 @@ const decoded = (text: string): string =>
     return code <= 0x10ffff ? String.fromCodePoint(code) : whole;
   });
 
-/** The attributes of every element of a name, whatever their prefixes (ECMA-376 part 1, sections 18.2.19 and 18.2.20). */
+/**
+ * The attributes of every element of a name, whatever their prefixes (ECMA-376 part 1, sections 18.2.19 and 18.2.20).
+ * Both patterns look at a character a bounded number of times, whatever stands in the file: an element ends before the
+ * next one begins, and an attribute begins only after a space.
+ */
 function elements(xml: string, name: string): Readonly<Record<string, string>>[] {
-  const tags = xml.matchAll(new RegExp(`<(?:\\w+:)?${name}(\\s[^>]*)>`, 'g'));
+  const tags = xml.matchAll(new RegExp(`<(?:\\w+:)?${name}(\\s(?:[^<>"']|"[^<"]*"|'[^<']*')*)>`, 'g'));
   return [...tags].map(([, attributes]) =>
     Object.fromEntries(
-      [...attributes.matchAll(/(?:\w+:)?(\w+)\s*=\s*(?:"([^"]*)"|'([^']*)')/g)].map(([, key, double, single]) => [
+      [...attributes.matchAll(/\s(?:\w+:)?(\w+)\s*=\s*(?:"([^"]*)"|'([^']*)')/g)].map(([, key, double, single]) => [
         key,
         decoded(double ?? single ?? ''),
       ]),

@@ -212,6 +212,30 @@ describe('reading a workbook', () => {
     await expect(tables.read(workbookOf(notes))).rejects.toMatchObject({ code: 'file-empty' });
   });
 
+  it('is read with a sign in its sheets’ names that otherwise ends an element', async () => {
+    const parts = workbookParts([refits]);
+    const list = Buffer.from(parts['xl/workbook.xml'] as Uint8Array).toString('utf8');
+    parts['xl/workbook.xml'] = strToU8(list.replace('name="Refits"', 'name="a > b"'));
+    expect((await tables.read(zipSync(parts))).sheet).toBe('a > b');
+  });
+
+  it.each([
+    ['elements that never end', '<sheet '.repeat(600_000)],
+    ['one attribute without end', `<sheet ${'a'.repeat(4_000_000)}>`],
+    ['quotation marks without end', `<sheet ${'a="'.repeat(1_000_000)}`],
+  ])('comes to an end with a list of sheets of %s', async (_what, list) => {
+    const file = zipSync({ ...workbookParts([refits]), 'xl/workbook.xml': strToU8(list) });
+    await expect(tables.read(file)).rejects.toMatchObject({ code: expect.stringMatching(/^file-/) });
+  });
+
+  it('is refused when its directory is longer than any workbook’s', async () => {
+    const whole = Buffer.from(workbookOf(refits));
+    const end = whole.length - 22;
+    const padded = Buffer.concat([whole.subarray(0, end), Buffer.alloc(20_000_000), whole.subarray(end)]);
+    padded.writeUInt32LE(20_000_000, padded.length - 22 + 12);
+    await expect(tables.read(padded)).rejects.toMatchObject({ code: 'file-not-table' });
+  });
+
   it('is refused when a sheet unpacks to far more than it may, whatever it says of its size', async () => {
     const sheet = deflateRawSync(Buffer.alloc(260_000_000), { level: 1 });
     const bomb = await packed('xl/worksheets/sheet1.xml', sheet, 260_000_000);

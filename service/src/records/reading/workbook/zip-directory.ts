@@ -22,6 +22,8 @@ const endBytes = 22;
 const longestComment = 65_535;
 const most32 = 0xffffffff;
 const pieceBytes = 256 * 1024;
+/** A workbook of thousands of parts has a directory of some hundreds of kilobytes. */
+const longestDirectory = 16 * 1024 * 1024;
 export const zipMethod = { stored: 0, deflated: 8 } as const;
 
 async function readAt(file: FileHandle, offset: number, length: number): Promise<Buffer> {
@@ -65,7 +67,7 @@ export async function readZipDirectory(path: string): Promise<readonly ZipEntry[
     if (size < endBytes) throw new ZipDamaged();
     const end = await findEnd(file, size);
     const [length, offset] = [end.readUInt32LE(12), end.readUInt32LE(16)];
-    if (offset === most32 || offset + length > size) throw new ZipDamaged();
+    if (offset === most32 || length > longestDirectory || offset + length > size) throw new ZipDamaged();
     return entriesOf(await readAt(file, offset, length));
   } finally {
     await file.close();
