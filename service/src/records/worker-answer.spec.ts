@@ -37,6 +37,14 @@ describe('the answer of a thread', () => {
     ended.mockRestore();
   });
 
+  it('says that there was not enough memory when there was not', async () => {
+    const path = worker("throw Object.assign(new Error('heap'), { code: 'ERR_WORKER_OUT_OF_MEMORY' });");
+    await expect(answerOfThread(path, {}, [])).rejects.toMatchObject({
+      code: 'unavailable',
+      detail: expect.stringContaining('fewer rows or columns'),
+    });
+  });
+
   it('is never begun when the signal is aborted already', async () => {
     const reason = new Error('gone');
     await expect(answerOfThread(join(folder, 'none.js'), {}, [], { signal: AbortSignal.abort(reason) })).rejects.toBe(

@@ -1,4 +1,5 @@
 import { Worker } from 'node:worker_threads';
+import { DeskError } from '../errors';
 
 export interface ThreadWatch<Progress> {
   /** Aborted: the thread is ended, and with it whatever it was at. */
@@ -13,6 +14,14 @@ export interface ProgressMessage<Progress> {
 
 const isProgress = <Progress>(message: unknown): message is ProgressMessage<Progress> =>
   typeof message === 'object' && message !== null && Object.keys(message).join() === 'progress';
+
+/** A thread that runs out of memory ends alone: the table is too large for what was asked, and that is told. */
+function translate(error: unknown): unknown {
+  if ((error as { readonly code?: unknown }).code !== 'ERR_WORKER_OUT_OF_MEMORY') return error;
+  const detail =
+    'This needs more memory than the service has. Try it on a revision with fewer rows or columns, or ask whoever runs the service for more memory.';
+  return new DeskError('unavailable', detail, { cause: error });
+}
 
 /**
  * Runs a worker file with one task in a thread of its own and gives the answer that it posts, before which it may post
@@ -32,7 +41,7 @@ export async function answerOfThread<Answer, Progress = never>(
       worker.on('message', (message: Answer | ProgressMessage<Progress>) =>
         isProgress<Progress>(message) ? onProgress?.(message.progress) : resolve(message),
       );
-      worker.once('error', reject);
+      worker.once('error', (error) => reject(translate(error)));
       worker.once('exit', () => reject(new Error('The thread ended without an answer.')));
       signal?.addEventListener('abort', () => reject(signal.reason as Error), { signal: watch.signal });
     });
