@@ -1,5 +1,5 @@
 import type { components } from '../../../openapi/types/desk';
-import type { ColumnRecord, RecordSetRecord, RevisionRecord } from './records-store';
+import type { ColumnRecord, Mending, RecordSetRecord, RevisionRecord } from './records-store';
 
 type Schemas = components['schemas'];
 
@@ -28,9 +28,15 @@ function basedOnOf({ mendedFrom, appendedTo, basedOnNumber }: RevisionRecord): S
   return id === null || basedOnNumber === null ? null : { id, number: basedOnNumber };
 }
 
+/** What is told of a revision by itself only. */
+export interface RevisionContents {
+  readonly columns: readonly ColumnRecord[];
+  readonly mending: Mending | null;
+}
+
 export function toRevisionAnswer(
   revision: RevisionRecord,
-  columns: readonly ColumnRecord[],
+  { columns, mending }: RevisionContents,
 ): Schemas['RecordRevision'] {
   const { recordSetId, recordSetName, reading } = revision;
   return {
@@ -43,7 +49,7 @@ export function toRevisionAnswer(
       setAside: [...reading.setAside],
       unreadable: reading.unreadable.map((column) => ({ ...column })),
     },
-    mending: toMending(revision),
+    mending: toMending(revision.mendedFrom, mending),
     appendedRowCount: revision.appendedRowCount,
     columns: columns.map(toColumn),
   };
@@ -62,13 +68,13 @@ export function toSetSummary(set: RecordSetRecord, newest: RevisionRecord): Sche
 export function toSetDetail(
   set: RecordSetRecord,
   revisions: readonly RevisionRecord[],
-  columns: readonly ColumnRecord[],
+  newest: RevisionContents,
 ): Schemas['RecordSetDetail'] {
   const { id, name, description, retainUntil, lastNumber, changedAt, createdAt, createdBy } = set;
   return {
     ...{ id, name, description, retainUntil, lastNumber, changedAt, createdAt },
     createdBy: { ...createdBy },
-    revision: toRevisionAnswer(revisions[0], columns),
+    revision: toRevisionAnswer(revisions[0], newest),
     revisions: revisions.map(toRevisionSummary),
   };
 }
@@ -88,7 +94,7 @@ export function toColumn(column: ColumnRecord): Schemas['RecordColumn'] {
   };
 }
 
-function toMending({ mendedFrom, mending }: RevisionRecord): Schemas['RecordRevision']['mending'] {
+function toMending(mendedFrom: string | null, mending: Mending | null): Schemas['RecordRevision']['mending'] {
   if (mendedFrom === null || mending === null) return null;
   return { from: mendedFrom, steps: [...mending.steps], changes: [...mending.changes] };
 }

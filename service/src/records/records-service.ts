@@ -8,7 +8,7 @@ import { nameTaken, readWords, type SetWords } from './incoming/record-set-words
 import type { KeptFiles, ReceivedFile } from './kept-files';
 import type { ReadingChoices } from './reading/reading-choices';
 import { plainFileName, receiveUpload, type Upload } from './receive-upload';
-import { toRevisionAnswer, toSetDetail, toSetSummary } from './record-answers';
+import { toRevisionAnswer, toSetDetail, toSetSummary, type RevisionContents } from './record-answers';
 import type { RecordSetRecord, RecordsStore, RevisionRecord } from './records-store';
 import { requireRows } from './required-rows';
 import type { RecordTasks } from './tasks/record-tasks';
@@ -60,12 +60,12 @@ export class RecordsService {
   async readSet(id: string): Promise<Schemas['RecordSetDetail']> {
     const set = await this.requireSet(id);
     const revisions = await this.parts.records.revisionsOf([id]);
-    return toSetDetail(set, revisions, await this.parts.records.columnsOf(requireNewest(revisions).id));
+    return toSetDetail(set, revisions, await this.contentsOf(requireNewest(revisions).id));
   }
 
   async readRevision(id: string): Promise<Schemas['RecordRevision']> {
     const revision = await this.requireRevision(id);
-    return toRevisionAnswer(revision, await this.parts.records.columnsOf(id));
+    return toRevisionAnswer(revision, await this.contentsOf(id));
   }
 
   /** The uploaded file, under the name that it came with. */
@@ -129,6 +129,11 @@ export class RecordsService {
     const destination: Destination =
       appendTo === undefined ? { kind: 'revision', recordSetId } : { kind: 'appended', revisionId: appendTo };
     return this.discardingOnFailure(file, () => this.addRevision(destination, { file, fileName, personId, choices }));
+  }
+
+  private async contentsOf(id: string): Promise<RevisionContents> {
+    const { records } = this.parts;
+    return { columns: await records.columnsOf(id), mending: await records.mendingOf(id) };
   }
 
   private receive(request: Request): Promise<Upload> {

@@ -5,6 +5,16 @@ import type { MendStep } from './mending/step-change';
 import type { Outlying, Quantile } from './reading/column-statistics';
 import type { Histogram } from './reading/histogram';
 import type { FinishedColumn, Level } from './reading/finished-column';
+import {
+  parsed,
+  revisionColumns,
+  toColumn,
+  toRevision,
+  toSet,
+  type ColumnRow,
+  type RevisionRow,
+  type SetRow,
+} from './record-rows';
 
 export interface Reading {
   readonly encoding: string;
@@ -21,9 +31,6 @@ export interface Reading {
   /** Columns with cells that do not fit the kind chosen for them. */
   readonly unreadable: readonly { readonly column: string; readonly count: number }[];
 }
-
-/** What the readings of files said before they said more. */
-const plainReading = { sheet: null, headerLine: 1, missingMarks: [], setAside: [], unreadable: [] };
 
 export interface PersonName {
   readonly id: string;
@@ -76,7 +83,8 @@ export interface RecordSetRecord extends Omit<NewRecordSet, 'createdBy'> {
   readonly revisionCount: number;
 }
 
-export interface RevisionRecord extends Omit<NewRevision, 'createdBy'> {
+/** Without its mending, whose steps may list so many rows that only who asks for them should read them. */
+export interface RevisionRecord extends Omit<NewRevision, 'createdBy' | 'mending'> {
   readonly recordSetName: string;
   /** Number of the revision that was mended or appended to, while there is one. */
   readonly basedOnNumber: number | null;
@@ -100,25 +108,6 @@ export interface ColumnRecord {
   readonly histogram: Histogram | null;
   readonly levels: readonly Level[];
 }
-
-type SetRow = NewRecordSet & { lastNumber: number; createdByName: string; revisionCount: number };
-type RevisionRow = Omit<NewRevision, 'reading' | 'mending' | 'originalKept'> & {
-  mending: string | null;
-  reading: string;
-  originalKept: boolean | number;
-  basedOnNumber: number | null;
-  erasedAt: string | null;
-  createdByName: string;
-  recordSetName: string;
-};
-type ColumnRow = Omit<ColumnRecord, 'quantiles' | 'outlying' | 'histogram' | 'levels'> & {
-  quantiles: string | null;
-  outlying: string | null;
-  histogram: string | null;
-  levels: string;
-};
-
-const parsed = <Value>(json: string | null): Value | null => (json === null ? null : (JSON.parse(json) as Value));
 
 export const nameKeyOf = (name: string): string => name.trim().toLowerCase();
 
@@ -210,18 +199,19 @@ export class RecordsStore {
     return row ? toRevision(row) : null;
   }
 
+  /** How it was made from another one; null when it was not. */
+  async mendingOf(revisionId: string): Promise<Mending | null> {
+    const row = (await this.database.connection('recordRevisions').where({ id: revisionId }).first('mending')) as
+      { mending: string | null } | undefined;
+    return parsed<Mending>(row?.mending ?? null);
+  }
+
   async columnsOf(revisionId: string): Promise<ColumnRecord[]> {
     const rows = (await this.database
       .connection('recordColumns')
       .where({ revisionId })
       .orderBy('position')) as ColumnRow[];
-    return rows.map((row) => ({
-      ...row,
-      quantiles: parsed<Quantile[]>(row.quantiles),
-      outlying: parsed<Outlying>(row.outlying),
-      histogram: parsed<Histogram>(row.histogram),
-      levels: JSON.parse(row.levels) as Level[],
-    }));
+    return rows.map(toColumn);
   }
 
   /** Rows of each block; the same for every column. */
@@ -268,27 +258,7 @@ export class RecordsStore {
       .leftJoin('recordRevisions as base', (join) =>
         join.on('base.id', 'recordRevisions.mendedFrom').orOn('base.id', 'recordRevisions.appendedTo'),
       )
-      .select('recordRevisions.*', 'people.name as createdByName', 'recordSets.name as recordSetName')
+      .select(...revisionColumns, 'people.name as createdByName', 'recordSets.name as recordSetName')
       .select('base.number as basedOnNumber');
   }
-}
-
-function toSet(row: SetRow): RecordSetRecord {
-  const { id, name, description, retainUntil, lastNumber, changedAt, createdAt } = row;
-  return {
-    ...{ id, name, description, retainUntil, lastNumber, changedAt, createdAt },
-    createdBy: { id: row.createdBy, name: row.createdByName },
-    revisionCount: Number(row.revisionCount),
-  };
-}
-
-function toRevision({ createdByName, ...row }: RevisionRow): RevisionRecord {
-  return {
-    ...row,
-    byteCount: Number(row.byteCount),
-    originalKept: Boolean(row.originalKept),
-    reading: { ...plainReading, ...(JSON.parse(row.reading) as Reading) },
-    mending: row.mending === null ? null : (JSON.parse(row.mending) as Mending),
-    createdBy: { id: row.createdBy, name: createdByName },
-  };
 }
