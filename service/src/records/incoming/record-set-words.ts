@@ -4,7 +4,7 @@ export const nameTaken = (name: string, pointer = '#/name'): DeskError =>
   new DeskError(
     'name-taken',
     `A record set is called ${name} already. Choose another name, or bring the file in as its next revision.`,
-    { errors: [{ pointer, detail: 'is in use' }] },
+    { errors: [{ pointer, detail: 'is the name of another record set' }] },
   );
 
 export interface SetWords {

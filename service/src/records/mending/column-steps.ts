@@ -64,6 +64,8 @@ export function derive(table: RecordTable, step: StepOf<'derive'>): Change {
   const values = new Float64Array(table.rowCount);
   for (let row = 0; row < values.length; row++) values[row] = of(row);
   const column: NumericRecordColumn = { name, kind: 'numeric', values, unit: step.unit ?? undefined };
-  const told = `Added ${name} = ${step.formula}.`;
+  const missing = values.reduce((count, value) => (value === value ? count : count + 1), 0);
+  const lacking = missing === 0 ? '' : `; ${rowsText(missing)} ${missing === 1 ? 'has' : 'have'} no value`;
+  const told = `Added ${name} = ${step.formula}${lacking}.`;
   return { table: { ...table, columns: [...table.columns, column] }, told, rowsConcerned: null };
 }

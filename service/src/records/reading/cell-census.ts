@@ -13,29 +13,43 @@ export interface CellCensus {
   /** A word, and a number whose mark could be decimal or grouping, for the sentences. */
   readonly word: string | null;
   readonly doubtfulNumber: string | null;
+  /** Dates whose year has two digits. */
+  readonly shortYears: number;
+  /** Missing because a spreadsheet wrote an error there. */
+  readonly errors: number;
+  readonly error: string | null;
 }
 
+const shortYear = /^\s*\d{1,2}([./])\d{1,2}\1\d{2}(?!\d)/;
 const zerosInFront = /^\s*0\d+\s*$/;
 
 export function takeCensus(plan: ColumnPlan, rows: readonly (readonly string[])[]): CellCensus {
   const readers = newCellReaders();
-  const counts = { numbers: 0, withUnit: 0, dates: 0, words: 0, leadingZeros: 0 };
+  const counts = { numbers: 0, withUnit: 0, dates: 0, words: 0, leadingZeros: 0, shortYears: 0, errors: 0 };
   let word: string | null = null;
   let doubtfulNumber: string | null = null;
+  let error: string | null = null;
   for (const row of rows) {
     const text = row[plan.position];
-    if (plan.marks.isMissing(text)) continue;
+    if (plan.marks.isMissing(text)) {
+      if (!text.trimStart().startsWith('#')) continue;
+      counts.errors++;
+      error ??= text;
+      continue;
+    }
     const numberClass = readers.numbers.read(text);
     if (numberClass !== NumberClass.none) {
       counts.numbers++;
       if (numberClass === NumberClass.pointOrGroup || numberClass === NumberClass.commaOrGroup) doubtfulNumber ??= text;
-    } else if (readers.dates.read(text) !== 0) counts.dates++;
-    else if (readers.units.read(text) !== NumberClass.none) counts.withUnit++;
+    } else if (readers.dates.read(text) !== 0) {
+      counts.dates++;
+      if (shortYear.test(text)) counts.shortYears++;
+    } else if (readers.units.read(text) !== NumberClass.none) counts.withUnit++;
     else if (zerosInFront.test(text)) counts.leadingZeros++;
     else {
       counts.words++;
       word ??= text;
     }
   }
-  return { ...counts, word, doubtfulNumber };
+  return { ...counts, word, doubtfulNumber, error };
 }

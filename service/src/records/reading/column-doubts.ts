@@ -32,6 +32,19 @@ function dateDoubts({ plan, evidence, form }: LookedColumn): string[] {
       ];
 }
 
+function shortYears({ form }: LookedColumn, { census }: DoubtContext): string[] {
+  if (form.kind !== 'date' || census.shortYears === 0) return [];
+  return [
+    `${cells(census.shortYears)} ${census.shortYears === 1 ? 'writes' : 'write'} the year with two digits: 69 to 99 count as 1969 to 1999, 00 to 68 as 2000 to 2068.`,
+  ];
+}
+
+function spreadsheetErrors({ census }: DoubtContext): string[] {
+  if (census.errors === 0) return [];
+  const what = census.errors === 1 ? 'holds a spreadsheet’s error' : 'hold spreadsheet errors';
+  return [`${cells(census.errors)} ${what}, such as ${shown(census.error ?? '')}, and count as missing.`];
+}
+
 function markDoubts({ evidence, form }: LookedColumn, { census, decimal, decimalCertain }: DoubtContext): string[] {
   if (form.kind !== 'numeric' || !evidence.hasMarks) return [];
   if (form.mark !== decimal)
@@ -99,10 +112,12 @@ function misfits({ unreadableCount, kind, plan }: LookedColumn): string[] {
 /** What a person should look at before the column counts, in sentences. */
 export const doubtsOf = (column: LookedColumn, context: DoubtContext): string[] => [
   ...dateDoubts(column),
+  ...shortYears(column, context),
   ...markDoubts(column, context),
   ...mixedUnits(column),
   ...plainAmongUnits(column, context),
   ...headerUnit(column),
   ...wordDoubts(column, context),
   ...misfits(column),
+  ...spreadsheetErrors(context),
 ];

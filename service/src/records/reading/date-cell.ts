@@ -6,7 +6,7 @@ export const everyDateForm = 31;
 const millisecondsPerDay = 86_400_000;
 const timePart = '(?:[T ](\\d{1,2}):(\\d{2})(?::(\\d{2}(?:\\.\\d{1,9})?))?\\s?(Z|[+-]\\d{2}:?\\d{2})?)?';
 const isoPattern = new RegExp(`^(\\d{4})([-/])(\\d{1,2})\\2(\\d{1,2})${timePart}$`);
-const numberPattern = new RegExp(`^(\\d{1,2})([./-])(\\d{1,2})\\2(\\d{4})${timePart}$`);
+const numberPattern = new RegExp(`^(\\d{1,2})([./-])(\\d{1,2})\\2(\\d{4}|\\d{2})${timePart}$`);
 const monthPattern = /^(\d{4})-(\d{2})$/;
 const namedPattern = new RegExp(`^(\\d{1,2})[ -]([A-Za-z]{3,9})\\.?[ -](\\d{4})${timePart}$`);
 const months = [
@@ -30,6 +30,12 @@ function daysOf(year: number, month: number, day: number): number {
   const time = Date.UTC(year, month - 1, day);
   return new Date(time).getUTCDate() === day && year >= 1000 ? time / millisecondsPerDay : NaN;
 }
+
+/** Two digits stand for 1969 to 2068 (POSIX.1-2017, strptime, %y). */
+const fullYear = (digits: string): number => {
+  const year = Number(digits);
+  return digits.length === 4 ? year : year < 69 ? 2000 + year : 1900 + year;
+};
 
 /** The time of day as a part of a day; without a zone it is taken as written. */
 function partOfDay([hours, minutes, seconds, zone]: readonly (string | undefined)[]): number {
@@ -79,7 +85,7 @@ export class DateReader {
   private formsOf(given: string): number {
     const text = given.trim();
     this.iso = this.dayFirst = this.monthFirst = this.isoMonth = this.named = NaN;
-    if (text.length < 7 || text.length > 40) return DateForm.none;
+    if (text.length < 6 || text.length > 40) return DateForm.none;
     this.readForms(text);
     return (
       (this.iso === this.iso ? DateForm.iso : 0) |
@@ -94,8 +100,9 @@ export class DateReader {
     const iso = isoPattern.exec(text);
     if (iso) this.iso = daysOf(Number(iso[1]), Number(iso[3]), Number(iso[4])) + partOfDay(iso.slice(5));
     const numbers = iso ? null : numberPattern.exec(text);
-    if (numbers) {
-      const [first, second, year] = [Number(numbers[1]), Number(numbers[3]), Number(numbers[4])];
+    // With dashes and two digits the year might stand first: not a date that can be told.
+    if (numbers && (numbers[4].length === 4 || numbers[2] !== '-')) {
+      const [first, second, year] = [Number(numbers[1]), Number(numbers[3]), fullYear(numbers[4])];
       const part = partOfDay(numbers.slice(5));
       this.dayFirst = daysOf(year, second, first) + part;
       // With points the day always comes first.
