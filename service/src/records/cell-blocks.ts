@@ -3,7 +3,7 @@ import type { components } from '../../../openapi/types/desk';
 export type ColumnKind = components['schemas']['ColumnKind'];
 
 /** Rows in a block of a table of ordinary width. */
-export const ordinaryBlockRows = 65_536;
+const ordinaryBlockRows = 65_536;
 
 /** A block of every column is held in memory while a file is read; wide tables get shorter blocks. */
 const blockMemoryBytes = 64 * 1024 * 1024;

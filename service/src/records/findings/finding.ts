@@ -1,19 +1,7 @@
+import type { components } from '../../../../openapi/types/desk';
 import type { MendStep } from '../mending/step-change';
 
-export const findingKinds = [
-  'unit-mix-up',
-  'repeated-rows',
-  'nearly-repeated-rows',
-  'constant-column',
-  'levels-alike',
-  'nearly-numeric',
-  'outlying-values',
-  'columns-alike',
-  'column-combination',
-  'leakage-suspect',
-  'time-gap',
-] as const;
-export type FindingKind = (typeof findingKinds)[number];
+export type FindingKind = components['schemas']['Finding']['kind'];
 
 /** Something that a person should look at before a model hides it. */
 export interface Finding {

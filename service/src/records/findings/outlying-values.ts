@@ -1,7 +1,8 @@
 import type { NumericRecordColumn } from '../../regression/records';
 import { boundsAround } from './conditions';
 import { listRows, rowsText, stepForRows, type Finding } from './finding';
-import { quantile, sortedPresent } from './robust';
+import { medianDeviation, quantileOf } from '../reading/sorted-figures';
+import { sortedPresent } from './robust';
 
 const outlyingDeviations = 8;
 const fewestReadings = 20;
@@ -15,31 +16,10 @@ interface Inner {
   readonly onLogScale: boolean;
 }
 
-/**
- * Median of |v − c| for sorted values v: the deviations below c and those above it are two sorted lists, which are
- * walked side by side from c outwards. Cost: one pass.
- */
-function medianDeviation(sorted: Float64Array, centre: number): number {
-  let above = 0;
-  while (above < sorted.length && sorted[above] < centre) above++;
-  let below = above - 1;
-  const next = (): number => {
-    const up = above < sorted.length ? sorted[above] - centre : Infinity;
-    const down = below >= 0 ? centre - sorted[below] : Infinity;
-    if (down < up) below--;
-    else above++;
-    return Math.min(up, down);
-  };
-  const middle = (sorted.length - 1) / 2;
-  let deviation = 0;
-  for (let at = 0; at <= Math.floor(middle); at++) deviation = next();
-  return Number.isInteger(middle) ? deviation : (deviation + next()) / 2;
-}
-
 /** Of readings that are never negative and reach far to the right; readings of zero, which say "none", apart. */
 function reachesRight(sorted: Float64Array): boolean {
   if (!(sorted[0] >= 0)) return false;
-  const [low, middle, high] = [quantile(sorted, 0.05), quantile(sorted, 0.5), quantile(sorted, 0.95)];
+  const [low, middle, high] = [quantileOf(sorted, 0.05), quantileOf(sorted, 0.5), quantileOf(sorted, 0.95)];
   return high - middle > 2 * (middle - low);
 }
 
@@ -53,7 +33,7 @@ function lookOnce(sorted: Float64Array, { start, end }: Inner): Inner {
   const onLogScale = reachesRight(inner);
   const zeros = onLogScale ? inner.findIndex((value) => value > 0) : 0;
   const judged = onLogScale ? inner.subarray(Math.max(0, zeros)).map(Math.log) : inner;
-  const centre = quantile(judged, 0.5);
+  const centre = quantileOf(judged, 0.5);
   const reach = outlyingDeviations * 1.4826 * medianDeviation(judged, centre);
   if (!(reach > 0)) return { start, end, onLogScale };
   let [first, last] = [0, judged.length - 1];

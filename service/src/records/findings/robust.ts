@@ -1,16 +1,10 @@
-/** The q-quantile of sorted values by linear interpolation (Hyndman and Fan 1996, definition 7). */
-export function quantile(sorted: Float64Array, q: number): number {
-  const at = (sorted.length - 1) * q;
-  const below = Math.floor(at);
-  const above = Math.min(sorted.length - 1, below + 1);
-  return sorted[below] + (sorted[above] - sorted[below]) * (at - below);
-}
+import { quantileOf } from '../reading/sorted-figures';
 
 export const sortedPresent = (values: Float64Array): Float64Array => values.filter((value) => value === value).sort();
 
 export const median = (values: Float64Array): number => {
   const sorted = sortedPresent(values);
-  return sorted.length === 0 ? NaN : quantile(sorted, 0.5);
+  return sorted.length === 0 ? NaN : quantileOf(sorted, 0.5);
 };
 
 /**

@@ -1,8 +1,8 @@
 import type { DateRecordColumn } from '../../regression/records';
 import { dateText } from '../reading/date-cell';
+import { quantileOf } from '../reading/sorted-figures';
 import { oneOfTexts } from './conditions';
 import { listRows, type Finding } from './finding';
-import { quantile } from './robust';
 
 const fewestDays = 20;
 /** The longest gaps of a column that are told. */
@@ -20,8 +20,8 @@ function sortedDays(values: Float64Array): Float64Array {
  */
 function longStep(steps: Float64Array): number {
   const ordered = steps.slice().sort();
-  const middle = quantile(ordered, 0.5);
-  return Math.max(10 * middle, 3 * quantile(ordered, 0.95), (middle / Math.LN2) * (Math.log(steps.length) + 5));
+  const middle = quantileOf(ordered, 0.5);
+  return Math.max(10 * middle, 3 * quantileOf(ordered, 0.95), (middle / Math.LN2) * (Math.log(steps.length) + 5));
 }
 
 /** Spans without a record that are long beside the usual step: the five longest, in their order. Cost: one sort. */

@@ -30,7 +30,7 @@ function namesIn(node: FormulaNode): string[] {
 }
 
 /** Names of the columns that a formula speaks of, each once. */
-export const columnsOfFormula = (formula: string): string[] => [...new Set(namesIn(parseFormula(formula)))];
+const columnsOfFormula = (formula: string): string[] => [...new Set(namesIn(parseFormula(formula)))];
 
 /** Only the columns that the formula names are read. Cost: one pass over them. */
 export function matchingRows(

@@ -6,7 +6,7 @@ export interface ScatterPoints {
   readonly points: readonly { readonly x: number; readonly y: number; readonly row: number }[];
 }
 
-export const scatterPoints = 2000;
+const scatterPoints = 2000;
 /** Any number would do; a fixed one gives the same rows every time. */
 const seed = 1;
 

@@ -18,7 +18,7 @@ const isSingleForm = (forms: number): boolean => forms !== 0 && (forms & (forms 
 const bothOrders = DateForm.dayFirst | DateForm.monthFirst;
 const plainForms = DateForm.iso | DateForm.isoMonth | DateForm.named;
 
-export const formsOfOrder: Readonly<Record<DateOrder, number>> = {
+const formsOfOrder: Readonly<Record<DateOrder, number>> = {
   'year-first': plainForms,
   'day-first': plainForms | DateForm.dayFirst,
   'month-first': plainForms | DateForm.monthFirst,
@@ -31,7 +31,7 @@ export function orderOfForms(forms: number): DateOrder {
 }
 
 /** The unit that stands most often in the cells; the first one seen, between equals. */
-export function mostFrequentUnit(units: ReadonlyMap<Unit, number>): Unit | null {
+function mostFrequentUnit(units: ReadonlyMap<Unit, number>): Unit | null {
   let found: Unit | null = null;
   for (const [unit, count] of units) if (!found || count > (units.get(found) ?? 0)) found = unit;
   return found;

@@ -114,7 +114,7 @@ export class DateStore implements CellStore {
   }
 }
 
-export function requireCellLength(text: string, name: string): void {
+function requireCellLength(text: string, name: string): void {
   if (text.length <= maximumCellLength) return;
   throw new TableProblem(
     'file-not-table',

@@ -77,7 +77,7 @@ function refuseMarkup(text: string): void {
   if (/^(\{\s*"|\[\s*[{["])/.test(start)) throw notTable('JSON', 'Ask for the table as a CSV file.');
 }
 
-export function encodingOf(sample: Buffer): TextEncoding {
+function encodingOf(sample: Buffer): TextEncoding {
   if (sample[0] === 0xff && sample[1] === 0xfe) return 'utf-16le';
   if (sample[0] === 0xfe && sample[1] === 0xff) return 'utf-16be';
   return 'utf-8';

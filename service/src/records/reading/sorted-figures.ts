@@ -1,7 +1,7 @@
 import type { Outlying, Quantile } from './column-statistics';
 
 /** Shares at which quantiles are given. */
-export const quantileShares = [0.01, 0.05, 0.25, 0.5, 0.75, 0.95, 0.99] as const;
+const quantileShares = [0.01, 0.05, 0.25, 0.5, 0.75, 0.95, 0.99] as const;
 
 /** So many scaled median absolute deviations from the median a reading counts as outlying (common practice, no source). */
 const outlyingDeviations = 5;
@@ -47,7 +47,7 @@ function firstBeyond(sorted: Float64Array, bound: number, orEqual: boolean): num
  * The median of |xᵢ − centre|, the mean of the two middle ones when n is even. Deviations grow from the centre to
  * either side, so the two sides are merged up to the middle. Cost: n / 2 steps.
  */
-function medianDeviation(sorted: Float64Array, centre: number): number {
+export function medianDeviation(sorted: Float64Array, centre: number): number {
   const { length } = sorted;
   let right = firstBeyond(sorted, centre, true);
   let left = right - 1;

@@ -135,7 +135,7 @@ const placedBlocks = ({ columns, blockRowCounts }: BlockPlaces): SpilledBlock[] 
   );
 
 /** At least one block, and further ones as long as they fit. */
-export function endOfBatch(placed: readonly SpilledBlock[], start: number): number {
+function endOfBatch(placed: readonly SpilledBlock[], start: number): number {
   let end = start + 1;
   let bytes = placed[start].length;
   while (end < placed.length && bytes + placed[end].length <= transactionBytes) bytes += placed[end++].length;

@@ -53,9 +53,6 @@ function writtenCells(column: RecordColumn): Cells {
 export const comparableCells = (from: RecordColumn, to: RecordColumn): readonly [Cells, Cells] =>
   classOf(from) === classOf(to) ? [plainCells(from), plainCells(to)] : [writtenCells(from), writtenCells(to)];
 
-export const comparableKinds = (from: Pick<RecordColumn, 'kind'>, to: Pick<RecordColumn, 'kind'>): boolean =>
-  classOf(from) === classOf(to);
-
 /** Names that both sides have, in the order of `to`. */
 export function sharedNames(from: ComparedTable, to: ComparedTable): string[] {
   const names = new Set(from.columns.map(({ name }) => name));

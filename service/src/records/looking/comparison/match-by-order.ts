@@ -13,7 +13,7 @@ interface Stretch {
  * Positions of a longest rising subsequence (Fredman 1975, "On computing the length of longest increasing
  * subsequences"). Cost: n log n.
  */
-export function longestRising(values: ArrayLike<number>): number[] {
+function longestRising(values: ArrayLike<number>): number[] {
   const tails: number[] = [];
   const before = new Int32Array(values.length);
   for (let at = 0; at < values.length; at++) {
