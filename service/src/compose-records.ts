@@ -58,8 +58,9 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
     ...{ database, records: store, files: keptFiles, cells, clock, databasePath, threadArguments },
   });
   const bringingIn = new BringingIn({ records: store, importer, journal, clock });
+  const proposals = new ReadingProposals({ records: store, threadArguments });
   const records = new RecordsService({
-    ...{ records: store, files: keptFiles, bringingIn, tasks: recordTasks, maximumFileBytes },
+    ...{ records: store, files: keptFiles, bringingIn, tasks: recordTasks, proposals, maximumFileBytes },
   });
   const recordFindings = new FindingsService({ records: store, databasePath, threadArguments });
   const recordLooking = new LookingService({ records: store, databasePath, threadArguments });
@@ -70,7 +71,6 @@ export function composeRecords(options: RecordsOptions): RecordsRoom {
   });
   const mendingDrafts = new MendingDrafts({ database, records: store, drafts, clock });
   const incoming = new IncomingFilesStore(database);
-  const proposals = new ReadingProposals({ records: store, threadArguments });
   const incomingFiles = new IncomingFilesService({
     ...{ incoming, files: keptFiles, proposals, bringingIn, tasks: recordTasks, clock, maximumFileBytes },
   });

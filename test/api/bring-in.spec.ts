@@ -95,7 +95,7 @@ describe('bringing in a file that has arrived', () => {
     ]);
     expect(await newestNote()).toMatchObject({
       action: 'record-revision-appended',
-      summary: 'Revision 2 of Monthly is revision 1 with november.csv appended: 2 rows added, 5 in all',
+      summary: 'Revision 2 of Monthly is revision 1 with november.csv appended: 2 rows added, 5 rows in all',
     });
   });
 

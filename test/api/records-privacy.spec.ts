@@ -54,7 +54,8 @@ describe('a column that is set aside', () => {
     const live = readFileSync(`${databasePathOf(config)}.copy`, 'latin1');
     const readings = (await knex('recordRevisions').pluck('reading')) as string[];
     const inReadings = readings.join('').split('skipper').length - 1;
-    expect([inReadings, live.split('skipper').length - 1]).toEqual([1, 1]);
+    // As what was chosen, and as what came of it.
+    expect([inReadings, live.split('skipper').length - 1]).toEqual([2, 2]);
   });
 
   it('is told by the journal to have cost the original, which is answered as not kept', async () => {
@@ -65,6 +66,20 @@ describe('a column that is set aside', () => {
     const { body: list } = await analyst.get('/api/record-sets');
     const original = await analyst.get(`/api/record-revisions/${list.items[0].revision.id}/original`);
     expect([original.status, original.body.code]).toEqual([410, 'original-not-kept']);
+  });
+
+  it('stays aside in the newer file that a script sends without looking', async () => {
+    const { body: list } = await analyst.get('/api/record-sets');
+    const newer = await analyst
+      .post(`/api/record-sets/${list.items[0].id}/revisions`)
+      .attach('file', Buffer.from(withSkippers), 'newer.csv');
+    expect(newer.status).toBe(201);
+    expect(newer.body).toMatchObject({ number: 2, columnCount: 2, originalKept: false });
+    expect(bytesOf(service).includes(skipper)).toBe(false);
+    const without = await analyst
+      .post(`/api/record-sets/${list.items[0].id}/revisions`)
+      .attach('file', Buffer.from('length (m);hull\n7;steel\n'), 'without.csv');
+    expect(without.body).toMatchObject({ number: 3, columnCount: 2, originalKept: true });
   });
 
   it('leaves nothing of itself when the work fails or is cancelled, but in the file that waits', async () => {

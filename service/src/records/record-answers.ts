@@ -47,6 +47,7 @@ export function toRevisionAnswer(
       ...reading,
       missingMarks: [...reading.missingMarks],
       setAside: [...reading.setAside],
+      choices: reading.choices,
       unreadable: reading.unreadable.map((column) => ({ ...column })),
     },
     mending: toMending(revision.mendedFrom, mending),

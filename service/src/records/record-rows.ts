@@ -11,7 +11,7 @@ import type {
 } from './records-store';
 
 /** What the readings of files said before they said more. */
-const plainReading = { sheet: null, headerLine: 1, missingMarks: [], setAside: [], unreadable: [] };
+const plainReading = { sheet: null, headerLine: 1, missingMarks: [], setAside: [], unreadable: [], choices: {} };
 
 export type SetRow = NewRecordSet & { lastNumber: number; createdByName: string; revisionCount: number };
 export type RevisionRow = Omit<NewRevision, 'reading' | 'mending' | 'originalKept'> & {

@@ -4,6 +4,8 @@ import { DeskError, notFound } from '../errors';
 import type { Page } from '../http/page';
 import type { Download } from '../http/send-download';
 import type { BringingIn, Destination } from './incoming/bringing-in';
+import { carriedChoices, hasChoices } from './incoming/carried-choices';
+import type { ReadingProposals } from './incoming/reading-proposals';
 import { nameTaken, readWords, type SetWords } from './incoming/record-set-words';
 import type { KeptFiles, ReceivedFile } from './kept-files';
 import type { ReadingChoices } from './reading/reading-choices';
@@ -20,6 +22,7 @@ export interface RecordsParts {
   readonly files: KeptFiles;
   readonly bringingIn: BringingIn;
   readonly tasks: RecordTasks;
+  readonly proposals: ReadingProposals;
   readonly maximumFileBytes: number;
 }
 
@@ -106,9 +109,10 @@ export class RecordsService {
   ): Promise<Schemas['RecordRevision']> {
     await this.requireSet(recordSetId);
     const { file, fileName } = await this.receive(request);
-    return this.discardingOnFailure(file, () =>
-      this.addRevision({ kind: 'revision', recordSetId }, { file, fileName, personId }, signal),
-    );
+    return this.discardingOnFailure(file, async () => {
+      const choices = await this.choicesCarriedTo(file, recordSetId, signal);
+      return this.addRevision({ kind: 'revision', recordSetId }, { file, fileName, personId, choices }, signal);
+    });
   }
 
   /** A new record set from a file on this machine, which is copied. */
@@ -129,6 +133,18 @@ export class RecordsService {
     const destination: Destination =
       appendTo === undefined ? { kind: 'revision', recordSetId } : { kind: 'appended', revisionId: appendTo };
     return this.discardingOnFailure(file, () => this.addRevision(destination, { file, fileName, personId, choices }));
+  }
+
+  /** What an analyst has set aside or taken as missing once does not come back because nobody looked. */
+  private async choicesCarriedTo(
+    { path }: ReceivedFile,
+    recordSetId: string,
+    signal: AbortSignal,
+  ): Promise<ReadingChoices> {
+    const { reading } = requireNewest(await this.parts.records.revisionsOf([recordSetId]));
+    if (!hasChoices(reading)) return {};
+    const { columns } = await this.parts.proposals.of(path, {}, { signal });
+    return carriedChoices(reading, new Set(columns.map(({ name }) => name)));
   }
 
   private async contentsOf(id: string): Promise<RevisionContents> {

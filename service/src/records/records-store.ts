@@ -5,6 +5,7 @@ import type { MendStep } from './mending/step-change';
 import type { Outlying, Quantile } from './reading/column-statistics';
 import type { Histogram } from './reading/histogram';
 import type { FinishedColumn, Level } from './reading/finished-column';
+import type { ReadingChoices } from './reading/reading-choices';
 import {
   parsed,
   revisionColumns,
@@ -28,6 +29,8 @@ export interface Reading {
   readonly missingMarks: readonly string[];
   /** Columns of the file that were never stored. */
   readonly setAside: readonly string[];
+  /** What a person chose; the rest was found out from the file. */
+  readonly choices: ReadingChoices;
   /** Columns with cells that do not fit the kind chosen for them. */
   readonly unreadable: readonly { readonly column: string; readonly count: number }[];
 }

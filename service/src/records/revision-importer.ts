@@ -109,14 +109,14 @@ export class RevisionImporter {
     const task = { path: file.path, spillPath: spills.read, choices };
     if (!base) {
       const table = await readTableInThread({ ...task, ahead: { databasePath, revisionId } }, watch);
-      return { table, reading: readingOf(table), spillPath: spills.read };
+      return { table, reading: readingOf(table, choices), spillPath: spills.read };
     }
     const columns = await this.parts.records.columnsOf(base.id);
     const added = await readTableInThread({ ...task, base: columns.map(toBaseColumn) }, watch);
     requireSameColumns(columns, added, base);
     const places = { addedSpillPath: spills.read, spillPath: spills.whole };
     const table = await appendInThread({ databasePath, baseRevisionId: base.id, added, ...places }, watch);
-    return { table, reading: readingOf(added), spillPath: spills.whole };
+    return { table, reading: readingOf(added, choices), spillPath: spills.whole };
   }
 
   private async keep(given: Import, made: MadeTable, context: TaskContext, around: Around): Promise<void> {
@@ -152,9 +152,12 @@ export class RevisionImporter {
   }
 }
 
-const readingOf = ({ format, decimal, sheet, missingMarks, setAside, unreadable }: TableReading): Reading => ({
+const readingOf = (
+  { format, decimal, sheet, missingMarks, setAside, unreadable }: TableReading,
+  choices: ReadingChoices,
+): Reading => ({
   ...{ encoding: format.encoding, delimiter: format.delimiter, decimal, header: true },
-  ...{ sheet, headerLine: format.headerLine, missingMarks, setAside, unreadable },
+  ...{ sheet, headerLine: format.headerLine, missingMarks, setAside, unreadable, choices },
 });
 
 const toBaseColumn = ({ name, kind, unit }: ColumnRecord): BaseColumn => ({ name, kind, unit });

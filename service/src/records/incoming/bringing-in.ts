@@ -5,6 +5,7 @@ import { newId } from '../../database/new-id';
 import { DeskError, notFound } from '../../errors';
 import type { Journal } from '../../journal/journal';
 import { requireNotPast } from '../keeping/retention-date';
+import { rowsText } from '../findings/finding';
 import { requireExpectedNewest } from '../newest-guard';
 import type { RecordsStore, RevisionRecord } from '../records-store';
 import { revisionWithRows, withRowsOf } from '../required-rows';
@@ -133,7 +134,10 @@ export class BringingIn {
 }
 
 function rowsOf({ rowCount, appendedRowCount, setAsideCount }: StoredRevision): string {
-  const rows = appendedRowCount === null ? `${rowCount} rows` : `${appendedRowCount} rows added, ${rowCount} in all`;
+  const rows =
+    appendedRowCount === null
+      ? rowsText(rowCount)
+      : `${rowsText(appendedRowCount)} added, ${rowsText(rowCount)} in all`;
   if (setAsideCount === 0) return rows;
   const columns = setAsideCount === 1 ? '1 column was' : `${setAsideCount} columns were`;
   return `${rows}; ${columns} set aside, so the file itself was not kept`;

@@ -229,7 +229,7 @@ export const revision: RecordRevision = {
   recordSetName: 'Refit jobs',
   reading: {
     ...{ encoding: 'utf-8', delimiter: ',', decimal: '.', header: true, sheet: null, headerLine: 1 },
-    ...{ missingMarks: [], setAside: [], unreadable: [] },
+    ...{ missingMarks: [], setAside: [], unreadable: [], choices: {} },
   },
   columns: [
     { ...emptyColumn, name: 'hours', position: 0, kind: 'numeric', unit: 'h' },

@@ -10,6 +10,7 @@ import { nameComplaint } from '../../ui/text-rules';
 import { retentionComplaint } from '../keeping/retention-complaint';
 import { AppendingOutlook } from './appending-outlook';
 import { namesInShort } from './names-in-short';
+import { broughtBack } from './carried-choices';
 import { Destination, asRecordSet, bringInAs, nextNumber } from './destination';
 import type { RecordSetWords } from './kept-bring-in';
 import { ProposedReading } from './proposed-reading';
@@ -62,6 +63,18 @@ export class BringInForm {
     const { choices } = this.reading();
     const chosen = new Map((choices().columns ?? []).map((column) => [column.name, column.setAside]));
     return this.proposal().columns.filter((column) => chosen.get(column.name) ?? column.setAside);
+  });
+  /** What an earlier revision set aside and this one would store. */
+  protected readonly broughtBack = computed(() => {
+    const destination = this.destination();
+    const aside = new Set(this.setAside().map(({ name }) => name));
+    const stored = this.proposal().columns.filter(({ name }) => !aside.has(name));
+    return destination
+      ? broughtBack(
+          destination,
+          stored.map(({ name }) => name),
+        )
+      : [];
   });
   protected readonly setAsideNames = computed(() => namesInShort(this.setAside().map(({ name }) => name)));
   protected readonly wasChanged = computed(() => this.form.problem()?.code === 'record-set-changed');

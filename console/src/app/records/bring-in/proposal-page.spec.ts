@@ -362,6 +362,24 @@ describe('ProposalPage, for a record set that is there', () => {
     });
   });
 
+  it('begins with what was chosen for the newest revision, and warns of what was set aside and would be stored', async () => {
+    const reading = {
+      ...REVISION.reading,
+      choices: { missingMarks: ['k.A.'] },
+      setAside: ['owner', 'no longer there'],
+    };
+    const room = await openProposal('?recordSet=records1');
+    await room.answer(FILE_PATH, INCOMING);
+    await room.answer(SET_PATH, { ...RECORD_SET, revision: { ...REVISION, reading } });
+    const { body } = await propose(room, PROPOSAL);
+    expect(body).toEqual({ missingMarks: ['k.A.'], columns: [{ name: 'owner', setAside: true }] });
+    expect(room.text).toContain('What was chosen for revision 2');
+    expect(room.text).not.toContain('and stored now');
+    await room.press('Back to what was found');
+    await propose(room, PROPOSAL);
+    expect(room.text).toContain('Set aside in revision 2, and stored now: owner');
+  });
+
   it('appends the rows to a revision, whose kinds and units cannot be chosen', async () => {
     const room = await appending({ additional: ['owner'], differing: ['crew'] });
     expect(room.text).toContain(

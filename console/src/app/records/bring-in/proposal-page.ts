@@ -31,6 +31,7 @@ import { SheetSection } from '../../ui/sheet/sheet-section';
 import { FollowedTask } from '../task-progress/followed-task';
 import { TaskProgress } from '../task-progress/task-progress';
 import { BringInForm } from './bring-in-form';
+import { carriedChoices } from './carried-choices';
 import { readDestination } from './destination';
 import { nameFromFile } from './file-complaint';
 import { FileReading } from './file-reading';
@@ -94,6 +95,11 @@ export class ProposalPage {
   private readonly begun = signal<string | undefined>(undefined);
 
   private readonly needsDestination = computed(() => (this.recordSet() ?? this.appendTo()) !== undefined);
+  private readonly waitsForDestination = computed(
+    () => this.needsDestination() && this.destination.state() === 'loading',
+  );
+  /** The revision whose choices the page began with. */
+  protected readonly carriedFrom = signal<number | undefined>(undefined);
   protected readonly problem: Signal<Problem | undefined> = computed(
     () => this.destination.problem() ?? this.file.problem() ?? this.firstRefusal(),
   );
@@ -101,8 +107,9 @@ export class ProposalPage {
     if (this.task() !== undefined) return 'working';
     if (this.isGone()) return 'gone';
     if (this.problem()) return 'error';
-    const waits = this.needsDestination() && this.destination.state() === 'loading';
-    return waits || this.file.value() === undefined || this.reading.proposal() === undefined ? 'loading' : 'ready';
+    return this.waitsForDestination() || this.file.value() === undefined || this.reading.proposal() === undefined
+      ? 'loading'
+      : 'ready';
   });
   protected readonly fileName = computed(() => this.file.value()?.fileName ?? 'the file');
   protected readonly suggestedName = computed(() => nameFromFile(this.file.value()?.fileName ?? ''));
@@ -123,7 +130,8 @@ export class ProposalPage {
   constructor() {
     effect(() => {
       const file = this.file.value();
-      if (file) untracked(() => this.begin(file));
+      // An earlier file's choices are known with the set.
+      if (file && !this.waitsForDestination()) untracked(() => this.begin(file));
     });
     effect(() => {
       const draft = { choices: this.reading.choices(), words: this.words() };
@@ -167,12 +175,15 @@ export class ProposalPage {
   private begin(file: IncomingFile): void {
     if (this.begun() === file.id) return;
     const draft = this.kept.read(file.id);
+    const destination = this.destination.value();
+    const carried = destination && !draft ? carriedChoices(destination) : {};
+    if (Object.keys(carried).length > 0) this.carriedFrom.set(destination?.set.revision.number);
     this.words.set(draft?.words ?? NO_WORDS);
     this.reading.begin({
       incomingId: file.id,
       appendTo: this.appendTo(),
       found: file.proposal,
-      choices: draft?.choices,
+      choices: draft?.choices ?? carried,
     });
     this.begun.set(file.id);
   }

@@ -78,6 +78,11 @@ export class MendingBoard implements OnInit {
   protected readonly run = new MendingRun();
   protected readonly adding = signal(false);
   protected readonly editing = signal<MendStep | undefined>(undefined);
+  private readonly unfinished = signal(false);
+  /** A step that is still being written would be lost: told from the try on until it is added or cancelled. */
+  protected readonly toldOfUnfinished = computed(
+    () => this.unfinished() && (this.adding() || this.editing() !== undefined),
+  );
 
   protected readonly revision = computed(() => this.opening().revision);
   protected readonly steps = this.history.steps;
@@ -163,6 +168,8 @@ export class MendingBoard implements OnInit {
   }
 
   protected make(): void {
+    this.unfinished.set(this.adding() || this.editing() !== undefined);
+    if (this.unfinished()) return;
     const { id } = this.revision();
     const [steps, expectedNewest] = [this.steps(), this.newest().number];
     const request = this.keeper.flush().pipe(switchMap(() => this.mending.mend(id, { steps, expectedNewest })));

@@ -282,6 +282,16 @@ describe('steps of another revision', () => {
 });
 
 describe('making the revision', () => {
+  it('is not made past a step that is still being written', async () => {
+    const room = await openWith(draftOfSteps(FEET));
+    await room.press('Add a step');
+    await room.press('Make revision 3');
+    expect(room.text).toContain('A step is still being written.');
+    room.expectNoCall(MAKING);
+    await room.press('Cancel');
+    expect(room.text).not.toContain('A step is still being written.');
+  });
+
   it('sends the steps with the newest revision that is known, shows how far it is and opens what came out', async () => {
     const room = await openTwo();
     await room.press('Make revision 3');

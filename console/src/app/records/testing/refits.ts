@@ -95,7 +95,7 @@ export const REVISION: RecordRevision = {
   columns: [LENGTH, FINISHED, HULL],
   reading: {
     ...{ encoding: 'UTF-8', delimiter: ';', decimal: ',', header: true, sheet: null, headerLine: 1 },
-    ...{ missingMarks: [], setAside: [], unreadable: [] },
+    ...{ missingMarks: [], setAside: [], unreadable: [], choices: {} },
   },
 };
 
