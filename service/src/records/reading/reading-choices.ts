@@ -14,7 +14,7 @@ export interface BaseColumn {
   readonly unit: string | null;
 }
 
-/** How far a reading has come: bytes of the file as it lies on disk, rows of a workbook, or columns measured. */
+/** How far a reading has come: bytes of the file as it lies on disk, or columns measured. */
 export interface ReadingProgress {
   readonly stage: 'reading' | 'measuring';
   readonly done: number;

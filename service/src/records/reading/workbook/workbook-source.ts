@@ -1,8 +1,9 @@
+import { stat } from 'node:fs/promises';
 import type { SampleRecord } from '../delimiter';
 import type { FileFormat } from '../file-format';
 import { findHeaderLine } from '../header-line';
 import type { ReadingChoices } from '../reading-choices';
-import type { OnProgress, OnRow, RowSource } from '../row-source';
+import type { OnRow, RowSource } from '../row-source';
 import { TableProblem } from '../table-problem';
 import { cellText, hasCommas, readSheetRows, type SheetRow } from './workbook-cells';
 import { WorkbookParts, type Sheet } from './workbook-parts';
@@ -73,19 +74,26 @@ function sampleOf({ rows, positions }: SheetTable): SampleRecord[] {
 }
 
 /** Hands over the rows from the header on as text; wholly blank ones are passed over. */
-function readRows({ rows, positions }: SheetTable, headerLine: number, onRow: OnRow, onProgress?: OnProgress): void {
+function readRows(
+  { rows, positions }: SheetTable,
+  headerLine: number,
+  onRow: OnRow,
+  told: (share: number) => void,
+): void {
   const total = rows.length;
   const columns = positions.map((position) => ({ position, withComma: hasCommas(rows, position) }));
   for (let at = headerLine - 1; at < total; at++) {
     const row = rows[at];
     if (row.some(isFilled)) onRow(columns.map(({ position, withComma }) => cellText(row[position], withComma)));
-    if ((at + 1) % progressRows === 0 || at + 1 === total) onProgress?.({ stage: 'reading', done: at + 1, total });
+    if ((at + 1) % progressRows === 0 || at + 1 === total) told((at + 1) / total);
   }
 }
 
 /** Opens one sheet of a workbook: the one chosen, or the first that has a table. Its cells are held in memory. */
 export async function openWorkbook(path: string, choices: ReadingChoices): Promise<RowSource> {
   const parts = await WorkbookParts.open(path);
+  // A workbook's bytes are not read in order: its share of rows stands for the share of its bytes.
+  const { size: bytes } = await stat(path);
   const whole = choices.sheet === undefined ? await readFirstTable(parts) : await readChosen(parts, choices.sheet);
   const headerLine = choices.headerLine ?? findHeaderLine(sampleOf(whole));
   const table = { ...whole, positions: filledPositions(whole.rows, headerLine - 1) };
@@ -94,6 +102,9 @@ export async function openWorkbook(path: string, choices: ReadingChoices): Promi
     format,
     sheets: parts.sheets.map(({ name }) => name),
     sheet: table.sheet,
-    read: async (onRow, onProgress) => readRows(table, headerLine, onRow, onProgress),
+    read: async (onRow, onProgress) =>
+      readRows(table, headerLine, onRow, (share) =>
+        onProgress?.({ stage: 'reading', done: share * bytes, total: bytes }),
+      ),
   };
 }
