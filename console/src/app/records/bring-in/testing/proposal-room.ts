@@ -1,6 +1,7 @@
 import type { HttpRequest } from '@angular/common/http';
 import { TestBed } from '@angular/core/testing';
 import type { ReadingProposal } from '../../../api/contract';
+import { controlOf } from '../../../ui/testing/queries';
 import { Room } from '../../../ui/testing/room';
 import { recordsRoutes } from '../../records.routes';
 import { SETTLE_MS } from '../proposed-reading';
@@ -28,4 +29,21 @@ export async function readyProposal(proposal?: ReadingProposal): Promise<Room> {
 /** Answers a question for a proposal, and gives what was asked. */
 export async function propose(room: Room, proposal: ReadingProposal): Promise<HttpRequest<unknown>> {
   return (await room.answer(PROPOSAL_PATH, proposal, 'POST')).request as HttpRequest<unknown>;
+}
+
+/** Changes a control, by its label or its accessible name, and leaves it. */
+export async function enter(room: Room, name: string, value: string): Promise<void> {
+  const control = controlNamed(room, name);
+  control.value = value;
+  control.dispatchEvent(new Event('change'));
+  await room.settle();
+}
+
+export async function tickOf(room: Room, name: string): Promise<void> {
+  controlNamed(room, name).click();
+  await room.settle();
+}
+
+export function controlNamed({ page }: Room, name: string): HTMLInputElement {
+  return page.querySelector<HTMLInputElement>(`[aria-label="${name}"]`) ?? controlOf(page, name);
 }
