@@ -250,6 +250,24 @@ describe('looking at a revision', () => {
       ]);
     });
 
+    it('are followed through a renamed column, both ways, so that its changed cells are told', async () => {
+      const { id } = await bringIn(boats(before), 'Renamed');
+      const steps = [
+        { kind: 'map-levels', column: 'hull', levels: { steel: 'Steel' } },
+        { kind: 'rename', column: 'hull', to: 'material' },
+      ];
+      const asked = await analyst.post(`/api/record-revisions/${id}/mended-revisions`).send({ steps });
+      const task = await endOfTask(analyst, asked.body.id);
+      const forth = (await get(String(task.revisionId), 'comparison', { with: id })).body;
+      const back = (await get(id, 'comparison', { with: String(task.revisionId) })).body;
+      const names = ({ columns }: { columns: { name: string; formerName: string | null }[] }) =>
+        columns.filter(({ formerName }) => formerName !== null).map(({ name, formerName }) => [formerName, name]);
+      expect([names(forth), names(back)]).toEqual([[['hull', 'material']], [['material', 'hull']]]);
+      expect(forth.rows.changed).toBeGreaterThan(0);
+      expect(forth.rows).toEqual({ added: 0, removed: 0, changed: back.rows.changed, unchanged: back.rows.unchanged });
+      expect(forth.changes[0].cells).toEqual([{ column: 'material', from: 'steel', to: 'Steel' }]);
+    });
+
     it('are refused when they are of different sets, or when the key does not name the rows', async () => {
       const [one, other] = [await bringIn(boats(before), 'One'), await bringIn(boats(before), 'Other')];
       const apart = await get(one.id, 'comparison', { with: other.id });

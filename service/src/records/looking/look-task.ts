@@ -25,7 +25,13 @@ export interface LookTasks {
   };
   readonly comparison: {
     /** Key: null finds one, empty goes by order. */
-    readonly asked: { readonly fromId: string; readonly toId: string; readonly key: string | null };
+    readonly asked: {
+      readonly fromId: string;
+      readonly toId: string;
+      readonly key: string | null;
+      /** Columns of `from` that `to` calls otherwise. */
+      readonly renames: ReadonlyMap<string, string>;
+    };
     readonly answer: TableComparison | KeyProblem;
   };
 }

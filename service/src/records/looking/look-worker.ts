@@ -5,6 +5,7 @@ import { withReadingConnection } from '../reading-connection';
 import { readRecordTableWith, RecordsMissingError } from '../record-table-reader';
 import { clusteredOrder } from './clustered-order';
 import { compareTables } from './comparison/compare-tables';
+import { renamedTable } from './comparison/renamed-table';
 import { storedTable } from './comparison/stored-table';
 import { correlationMap } from './correlation-map';
 import type { LookTask, LookTasks } from './look-task';
@@ -38,8 +39,9 @@ async function answer(task: LookTask): Promise<unknown> {
       case 'scatter':
         return scatter(connection, task.asked);
       case 'comparison': {
-        const { fromId, toId, key } = task.asked;
-        return compareTables(storedTable(connection, fromId), storedTable(connection, toId), key);
+        const { fromId, toId, key, renames } = task.asked;
+        const from = renamedTable(storedTable(connection, fromId), renames);
+        return compareTables(from, storedTable(connection, toId), key);
       }
     }
   });

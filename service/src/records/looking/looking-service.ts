@@ -10,6 +10,7 @@ import { revisionWithRows, withRowsOf } from '../required-rows';
 import { readRows } from '../revision-rows';
 import { answerOfThread } from '../worker-answer';
 import type { TableComparison } from './comparison/compare-tables';
+import { renamesIn } from './comparison/renamed-table';
 import { mappedColumns, type CorrelationMap } from './correlation-map';
 import type { LookKind, LookTasks } from './look-task';
 import { Remembered } from './remembered';
@@ -101,26 +102,40 @@ export class LookingService {
     const [to, from] = [await this.readable(toId), await this.readable(fromId)];
     if (to.recordSetId !== from.recordSetId)
       throw invalid('#/with', 'both revisions must be of the same record set; choose another revision of this one');
-    const found = await this.comparisons.get([fromId, toId, key ?? null], () => this.compareAnew(from, to, key));
     const columnsOf = async (id: string): Promise<Map<string, ColumnRecord>> =>
       new Map((await this.parts.records.columnsOf(id)).map((column) => [column.name, column]));
     const [before, after] = [await columnsOf(fromId), await columnsOf(toId)];
+    const renames = withoutClashes(await this.renamesBetween(from, to), before);
+    const formerNames = new Map([...renames].map(([former, name]) => [name, former]));
+    const asked = { fromId, toId, key: key ?? null, renames };
+    const found = await this.comparisons.get([fromId, toId, asked.key], () => this.compareAnew(asked));
     return {
       ...toComparisonAnswer(found),
       ...{ from: toRevisionSummary(from), to: toRevisionSummary(to) },
-      columns: found.columns.map((column) => toComparedColumn(column, before.get(column.name), after.get(column.name))),
+      columns: found.columns.map((column) => {
+        const formerName = formerNames.get(column.name) ?? null;
+        const sides = { from: before.get(formerName ?? column.name), to: after.get(column.name) };
+        return toComparedColumn({ ...column, formerName }, sides);
+      }),
     };
   }
 
-  private async compareAnew(
-    from: RevisionRecord,
-    to: RevisionRecord,
-    key: string | undefined,
-  ): Promise<TableComparison> {
-    const found = await this.ask('comparison', { fromId: from.id, toId: to.id, key: key ?? null });
+  /** What `to` calls columns of `from` otherwise, when one was made from the other by steps. */
+  private async renamesBetween(from: RevisionRecord, to: RevisionRecord): Promise<ReadonlyMap<string, string>> {
+    const stepsOf = async ({ id }: RevisionRecord) => (await this.parts.records.mendingOf(id))?.steps ?? [];
+    if (to.mendedFrom === from.id) return renamesIn(await stepsOf(to));
+    if (from.mendedFrom !== to.id) return new Map();
+    return new Map([...renamesIn(await stepsOf(from))].map(([former, name]) => [name, former]));
+  }
+
+  private async compareAnew(asked: LookTasks['comparison']['asked']): Promise<TableComparison> {
+    const found = await this.ask('comparison', asked);
     if ('columns' in found) return found;
     const those = found.keys.length > 0 ? `; ${found.keys.slice(0, 10).join(', ')} can` : '; no column can';
-    throw invalid('#/key', `${key} cannot be the key, which must be in both, never missing and never repeated${those}`);
+    throw invalid(
+      '#/key',
+      `${String(asked.key)} cannot be the key, which must be in both, never missing and never repeated${those}`,
+    );
   }
 
   private numbersOf(text: string, { rowCount }: RevisionRecord): Uint32Array {
@@ -171,13 +186,21 @@ function toComparisonAnswer({ key, keys, rows, changes, added, removed }: TableC
   };
 }
 
+/** A name that another column of the same side has already cannot be followed. */
+function withoutClashes(
+  renames: ReadonlyMap<string, string>,
+  columns: ReadonlyMap<string, ColumnRecord>,
+): ReadonlyMap<string, string> {
+  return new Map([...renames].filter(([, name]) => !columns.has(name) || renames.has(name)));
+}
+
 function toComparedColumn(
-  { shape, ...facts }: TableComparison['columns'][number],
-  from: ColumnRecord | undefined,
-  to: ColumnRecord | undefined,
+  { shape, ...facts }: TableComparison['columns'][number] & { readonly formerName: string | null },
+  { from, to }: { readonly from: ColumnRecord | undefined; readonly to: ColumnRecord | undefined },
 ): Schemas['ColumnComparison'] {
+  const state = facts.formerName !== null && facts.state === 'same' ? 'changed' : facts.state;
   return {
-    ...{ ...facts, from: from ? toColumn(from) : null, to: to ? toColumn(to) : null },
+    ...{ ...facts, state, from: from ? toColumn(from) : null, to: to ? toColumn(to) : null },
     shape: shape && {
       edges: [...shape.edges],
       levels: [...shape.levels],

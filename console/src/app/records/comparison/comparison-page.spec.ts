@@ -25,9 +25,10 @@ const FOUND: RevisionComparison = {
   added: [2001, 2002],
   removed: [17],
   columns: [
-    { name: 'Job', state: 'same', changedCount: 0, from: HULL, to: HULL, shape: null },
+    { name: 'Job', formerName: null, state: 'same', changedCount: 0, from: HULL, to: HULL, shape: null },
     {
       name: 'Length overall',
+      formerName: null,
       state: 'changed',
       changedCount: 12,
       from: { ...LENGTH, mean: 13.2, missingCount: 0 },
@@ -36,13 +37,14 @@ const FOUND: RevisionComparison = {
     },
     {
       name: 'Hull material',
+      formerName: 'Hull',
       state: 'changed',
       changedCount: 108,
       from: HULL,
       to: HULL,
       shape: { edges: [], levels: ['GRP', 'wood'], from: [1500, 192], to: [1500, 300] },
     },
-    { name: 'Yard', state: 'added', changedCount: null, from: null, to: HULL, shape: null },
+    { name: 'Yard', formerName: null, state: 'added', changedCount: null, from: null, to: HULL, shape: null },
   ],
 };
 
@@ -154,12 +156,13 @@ describe('ComparisonPage', () => {
     ]);
   });
 
-  it('lists columns that differ first, with their state', async () => {
+  it('lists columns that differ first, with their state and what they were called', async () => {
     const screen = await openReady();
     const rows = [...screen.page.querySelectorAll('tb-compared-columns tbody tr')];
-    expect(rows.map((row) => [row.children[0].textContent?.trim(), row.children[1].textContent])).toEqual([
+    const said = (cell: Element): string => (cell.textContent ?? '').replace(/\s+/g, ' ').trim();
+    expect(rows.map((row) => [said(row.children[0]), said(row.children[1])])).toEqual([
       ['Length overall', 'changed'],
-      ['Hull material', 'changed'],
+      ['Hull material Hull in revision 1', 'changed'],
       ['Yard', 'added'],
       ['Job', 'same'],
     ]);
