@@ -12,17 +12,17 @@ import { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { parse } from 'csv-parse';
 import { pino } from 'pino';
-import { compose, databasePathOf } from '../../service/src/compose';
+import { compose } from '../../service/src/compose';
 import { readConfig } from '../../service/src/config';
+import { migrationsFolder } from '../../service/src/database/migrations-folder';
+import { migrate } from '../../service/src/database/migrator';
 import { newId } from '../../service/src/database/new-id';
-import { copyTemplateDatabase } from '../support/template-database';
 
 const goals = { ratio: 0.6, memoryMegabytes: 700 };
 const runs = 2;
 const stallResolutionMs = 5;
 const columnCount = 30;
 const hulls = ['steel', 'aluminium', 'oak', 'larch on oak', 'glass fibre', 'ferrocement'];
-const hook = join(__dirname, '..', 'support', 'typescript-hook.js');
 
 interface Measured {
   readonly seconds: number;
@@ -58,16 +58,21 @@ async function merelyParse(path: string): Promise<number> {
   return rows;
 }
 
-async function bringIn(path: string): Promise<() => Promise<number>> {
+interface Side {
+  readonly work: () => Promise<number>;
+  /** Takes away what the bench made; no part of what is measured. */
+  readonly clear: () => Promise<void>;
+}
+
+async function bringIn(path: string): Promise<Side> {
   const folder = mkdtempSync(join(tmpdir(), 'tarebeam-bench-'));
   const config = readConfig({ DATA_DIR: folder, DEMO: 'off' });
-  await copyTemplateDatabase(databasePathOf(config));
   const services = compose({
     config,
     log: pino({ level: 'silent' }),
     sessionCleanupMs: 0,
-    fitThreadArguments: ['-r', hook],
   });
+  await migrate(services.knex, migrationsFolder);
   const person = {
     id: newId(),
     name: 'Bench',
@@ -79,7 +84,7 @@ async function bringIn(path: string): Promise<() => Promise<number>> {
     createdAt: new Date().toISOString(),
   } as const;
   await services.people.insert(person);
-  return async () => {
+  const work = async (): Promise<number> => {
     const set = await services.records.importFile({
       path,
       fileName: 'bench.csv',
@@ -89,14 +94,18 @@ async function bringIn(path: string): Promise<() => Promise<number>> {
     });
     const kinds = set.revision.columns.map((column) => column.kind).join(' ');
     if (!/^(numeric ){24}(category ){4}date date$/.test(kinds)) throw new Error(`The columns were read as ${kinds}.`);
-    await services.close();
-    rmSync(folder, { recursive: true });
     return set.revision.rowCount;
   };
+  const clear = async (): Promise<void> => {
+    await services.close();
+    rmSync(folder, { recursive: true });
+  };
+  return { work, clear };
 }
 
 async function measure(side: string, path: string): Promise<Measured> {
-  const work = side === 'parse' ? () => merelyParse(path) : await bringIn(path);
+  const { work, clear } =
+    side === 'parse' ? { work: () => merelyParse(path), clear: async () => undefined } : await bringIn(path);
   // What it measures includes the interval between two of its looks.
   const delays = monitorEventLoopDelay({ resolution: stallResolutionMs });
   delays.enable();
@@ -105,11 +114,13 @@ async function measure(side: string, path: string): Promise<Measured> {
   const seconds = Number(process.hrtime.bigint() - begun) / 1e9;
   delays.disable();
   const longestStallMs = Math.max(0, delays.max / 1e6 - stallResolutionMs);
-  return { seconds, rows, longestStallMs, memoryMegabytes: process.resourceUsage().maxRSS / 1024 };
+  const memoryMegabytes = process.resourceUsage().maxRSS / 1024;
+  await clear();
+  return { seconds, rows, longestStallMs, memoryMegabytes };
 }
 
 function inOwnProcess(side: 'parse' | 'import', path: string): Measured {
-  const child = spawnSync(process.execPath, ['-r', hook, __filename, side, path], {
+  const child = spawnSync(process.execPath, [__filename, side, path], {
     encoding: 'utf8',
     stdio: ['ignore', 'pipe', 'inherit'],
   });

@@ -15,6 +15,9 @@ export interface ReceivedFile {
   readonly byteCount: number;
 }
 
+/** Read at once when a file is copied: large enough that the handing over costs little. */
+const copyBytes = 1024 * 1024;
+
 const megabytes = (bytes: number): string => `${Math.floor(bytes / 1_000_000).toLocaleString('en-GB')} MB`;
 
 /** A file of ours: on its way in, its cells, or under its lasting name. */
@@ -55,7 +58,7 @@ export class KeptFiles {
 
   /** A copy of a file that lies elsewhere. */
   async receiveCopy(path: string): Promise<ReceivedFile> {
-    return this.receive(createReadStream(path));
+    return this.receive(createReadStream(path, { highWaterMark: copyBytes }));
   }
 
   spillPathOf(file: ReceivedFile): string {
